@@ -1,0 +1,3 @@
+import { webConfig } from '../../tools/presets/eslint.base.mjs';
+
+export default webConfig(import.meta.dirname);

@@ -1,0 +1,1 @@
+module.exports = require('../../tools/presets/jest.web.cjs')(__dirname, 'web');

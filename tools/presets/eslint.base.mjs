@@ -1,0 +1,138 @@
+import js from '@eslint/js';
+import nx from '@nx/eslint-plugin';
+import angular from 'angular-eslint';
+import tseslint from 'typescript-eslint';
+
+const any = ['platform:any'];
+const node = ['platform:any', 'platform:node'];
+const web = ['platform:any', 'platform:web'];
+const framework = ['@angular/*', 'express', 'commander'];
+
+/** The arrows of DEVELOPERS.md, as lint. */
+const depConstraints = [
+  {
+    sourceTag: 'type:values',
+    onlyDependOnLibsWithTags: [],
+    bannedExternalImports: ['kysely', 'pg', 'exceljs', ...framework],
+  },
+  {
+    sourceTag: 'type:rules',
+    onlyDependOnLibsWithTags: ['type:values'],
+    allowedExternalImports: ['fast-check'],
+  },
+  {
+    sourceTag: 'type:contract',
+    onlyDependOnLibsWithTags: ['type:values'],
+    bannedExternalImports: ['kysely', 'pg', 'exceljs', 'decimal.js', ...framework],
+  },
+  {
+    sourceTag: 'type:data',
+    onlyDependOnLibsWithTags: ['type:contract', 'type:rules', 'type:values', 'type:migrations'],
+    bannedExternalImports: ['decimal.js', ...framework],
+  },
+  {
+    sourceTag: 'type:use-cases',
+    onlyDependOnLibsWithTags: ['type:data', 'type:rules', 'type:contract', 'type:values'],
+    bannedExternalImports: ['pg', 'exceljs', 'decimal.js', ...framework],
+  },
+  {
+    sourceTag: 'type:ui',
+    onlyDependOnLibsWithTags: ['type:contract', 'type:values', 'type:ui'],
+    bannedExternalImports: ['kysely', 'pg', 'exceljs', 'decimal.js', 'express', 'commander'],
+  },
+  {
+    sourceTag: 'type:web-app',
+    onlyDependOnLibsWithTags: ['type:ui', 'type:rules', 'type:contract', 'type:values'],
+    bannedExternalImports: [
+      'kysely',
+      'pg',
+      'exceljs',
+      'decimal.js',
+      'express',
+      'commander',
+      'ag-grid*',
+      'echarts*',
+      'ngx-echarts',
+    ],
+  },
+  {
+    sourceTag: 'type:app',
+    onlyDependOnLibsWithTags: ['type:use-cases', 'type:contract', 'type:values', 'type:tools'],
+    bannedExternalImports: ['kysely', 'exceljs', 'decimal.js', '@angular/*'],
+  },
+  { sourceTag: 'type:migrations', onlyDependOnLibsWithTags: [], allowedExternalImports: ['kysely'] },
+  {
+    sourceTag: 'type:tools',
+    onlyDependOnLibsWithTags: [
+      'type:use-cases',
+      'type:data',
+      'type:contract',
+      'type:rules',
+      'type:values',
+      'type:migrations',
+    ],
+  },
+  { sourceTag: 'type:tests', onlyDependOnLibsWithTags: ['*'] },
+  { sourceTag: 'platform:any', onlyDependOnLibsWithTags: any },
+  { sourceTag: 'platform:node', onlyDependOnLibsWithTags: node },
+  { sourceTag: 'platform:web', onlyDependOnLibsWithTags: web },
+];
+
+const typescript = (dir) =>
+  tseslint.config(
+    { ignores: ['**/dist/**', '**/*.cjs'] },
+    js.configs.recommended,
+    ...tseslint.configs.recommended,
+    {
+      files: ['**/*.ts', '**/*.mjs'],
+      plugins: { '@nx': nx },
+      languageOptions: { parserOptions: { tsconfigRootDir: dir } },
+      rules: {
+        '@nx/enforce-module-boundaries': [
+          'error',
+          { enforceBuildableLibDependency: false, allow: [], depConstraints },
+        ],
+        '@typescript-eslint/consistent-type-imports': ['error', { fixStyle: 'inline-type-imports' }],
+        '@typescript-eslint/no-unused-vars': ['error', { argsIgnorePattern: '^_', varsIgnorePattern: '^_' }],
+        'no-nested-ternary': 'error',
+        'no-console': 'error',
+        eqeqeq: 'error',
+        'no-restricted-properties': [
+          'error',
+          { object: 'it', property: 'only', message: 'Run the whole suite.' },
+          { object: 'describe', property: 'only', message: 'Run the whole suite.' },
+          { object: 'test', property: 'only', message: 'Run the whole suite.' },
+        ],
+        'no-undef': 'off',
+      },
+    },
+  );
+
+/** ESLint for Node projects and the pure libs. */
+export const nodeConfig = (dir) => typescript(dir);
+
+/** ESLint for Angular projects: the same, and angular-eslint for code and templates. */
+export const webConfig = (dir) =>
+  tseslint.config(
+    ...typescript(dir),
+    {
+      files: ['**/*.ts'],
+      extends: [...angular.configs.tsRecommended],
+      processor: angular.processInlineTemplates,
+      rules: {
+        '@angular-eslint/component-selector': [
+          'error',
+          { type: 'element', prefix: 'app', style: 'kebab-case' },
+        ],
+        '@angular-eslint/directive-selector': [
+          'error',
+          { type: 'attribute', prefix: 'app', style: 'camelCase' },
+        ],
+        '@angular-eslint/prefer-on-push-component-change-detection': 'error',
+      },
+    },
+    {
+      files: ['**/*.html'],
+      extends: [...angular.configs.templateRecommended, ...angular.configs.templateAccessibility],
+    },
+  );

@@ -1,0 +1,3 @@
+const { setupZonelessTestEnv } = require('jest-preset-angular/setup-env/zoneless');
+
+setupZonelessTestEnv({ errorOnUnknownElements: true, errorOnUnknownProperties: true });
