@@ -1,0 +1,24 @@
+import { hoursEndpoints } from './hours';
+import { jobEndpoints } from './jobs';
+import { machineEndpoints } from './machines';
+import { paybackEndpoints } from './payback';
+import { peopleEndpoints } from './people';
+import { rollupEndpoints } from './rollup';
+import { sessionEndpoints } from './session';
+import { setupEndpoints } from './setup';
+import { timesheetEndpoints } from './timesheets';
+import { workingsEndpoints } from './workings';
+
+/** Every route of the API; the server mounts them from here and the OpenAPI document lists them. */
+export const ENDPOINTS = {
+  ...sessionEndpoints,
+  ...peopleEndpoints,
+  ...machineEndpoints,
+  ...jobEndpoints,
+  ...hoursEndpoints,
+  ...timesheetEndpoints,
+  ...setupEndpoints,
+  ...rollupEndpoints,
+  ...paybackEndpoints,
+  ...workingsEndpoints,
+};
