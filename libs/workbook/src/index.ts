@@ -1,1 +1,4 @@
-export {};
+export * from './setup-data';
+export * from './sheet-file';
+export * from './timesheet-row';
+export * from './workbook-error';

@@ -1,0 +1,100 @@
+import { type JobStatus, type MachineCostKind } from '@brakeven/contract';
+import { type LocalDate } from '@brakeven/values';
+
+/** Where a row of the set-up workbook stands: its row number and the cell behind each column. */
+export interface SetupRowSource {
+  readonly row: number;
+  readonly cells: Readonly<Record<string, string>>;
+}
+
+export interface SetupPerson {
+  readonly number: string;
+  readonly name: string;
+  /** Null together with the wage and the burden when the row states no rate. */
+  readonly rateFrom: LocalDate | null;
+  readonly wagePerHour: string | null;
+  readonly burdenPercent: string | null;
+}
+
+export interface SetupCustomer {
+  readonly name: string;
+}
+
+export interface SetupOperation {
+  readonly code: string;
+  readonly name: string;
+  /** Code of the machine the operation uses when an entry names none. */
+  readonly machine: string | null;
+}
+
+export interface SetupMachine {
+  readonly code: string;
+  readonly name: string;
+  readonly kind: string | null;
+  readonly inServiceOn: LocalDate | null;
+  /** Kilonewtons, exact decimal text. */
+  readonly ratedForceKn: string | null;
+  /** Millimetres, exact decimal text. */
+  readonly bedLengthMm: string | null;
+}
+
+export interface SetupMachineCost {
+  readonly machine: string;
+  readonly date: LocalDate;
+  readonly kind: MachineCostKind;
+  readonly description: string | null;
+  /** Money with 2 decimals. */
+  readonly amount: string;
+}
+
+export interface SetupMachineRate {
+  readonly machine: string;
+  readonly validFrom: LocalDate;
+  readonly machineHourRate: string;
+  readonly chargeOutRate: string;
+  readonly runningCostPerHour: string;
+}
+
+export interface SetupOverhead {
+  readonly validFrom: LocalDate;
+  readonly ratePerLabourHour: string;
+}
+
+export interface SetupJob {
+  readonly number: string;
+  readonly customer: string | null;
+  readonly title: string | null;
+  readonly quantity: number | null;
+  readonly openedOn: LocalDate | null;
+  readonly dueOn: LocalDate | null;
+  readonly quotedPrice: string | null;
+  readonly isBillable: boolean;
+  readonly status: JobStatus;
+}
+
+/** All that a set-up workbook can state, each list in sheet order. */
+export interface SetupData {
+  readonly people: readonly SetupPerson[];
+  readonly customers: readonly SetupCustomer[];
+  readonly operations: readonly SetupOperation[];
+  readonly machines: readonly SetupMachine[];
+  readonly machineCosts: readonly SetupMachineCost[];
+  readonly machineRates: readonly SetupMachineRate[];
+  readonly overhead: readonly SetupOverhead[];
+  readonly jobs: readonly SetupJob[];
+}
+
+export interface SetupProblem {
+  readonly code: string;
+  /** A refused row is missing from the lists, so nothing may be imported; a warning hinders nothing. */
+  readonly severity: 'refused' | 'warning';
+  readonly message: string;
+  readonly sheet: string;
+  /** The cell, or `A1` when the whole sheet is meant. */
+  readonly cell: string;
+}
+
+/** A set-up workbook as read: the rows that could be read whole, each with its source, and all problems. */
+export type SetupFile = {
+  readonly [List in keyof SetupData]: readonly (SetupData[List][number] & SetupRowSource)[];
+} & { readonly problems: readonly SetupProblem[] };

@@ -1,0 +1,30 @@
+/** Why a file as a whole cannot be read. A problem in one cell is never a WorkbookError. */
+export type WorkbookErrorCode =
+  | 'file_empty'
+  | 'file_too_large'
+  | 'file_old_xls'
+  | 'file_encrypted'
+  | 'file_truncated'
+  | 'file_not_workbook'
+  | 'file_form_unsupported'
+  | 'file_unpacks_too_large'
+  | 'file_needs_too_much_memory'
+  | 'too_many_rows'
+  | 'too_many_cells'
+  | 'csv_not_utf8'
+  | 'csv_quotes_broken'
+  | 'csv_separator_unknown'
+  | 'header_not_found'
+  | 'sheet_not_found';
+
+/** A file that is refused whole; the message says what to do about it. */
+export class WorkbookError extends Error {
+  override readonly name = 'WorkbookError';
+
+  constructor(
+    readonly code: WorkbookErrorCode,
+    message: string,
+  ) {
+    super(message);
+  }
+}
