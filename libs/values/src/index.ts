@@ -1,1 +1,14 @@
-export {};
+export * from './date-text';
+export * from './decimal';
+export * from './force';
+export * from './hours';
+export * from './length';
+export * from './local-date';
+export * from './mass';
+export * from './money';
+export { findNumberInText, formatNumber } from './number-text';
+export * from './parsed';
+export * from './percent';
+export * from './rate';
+export * from './serial-date';
+export * from './unit-system';

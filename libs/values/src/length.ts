@@ -1,0 +1,51 @@
+import { type Branded, D, type DecimalInput, type Decimal, roundHalfUp } from './decimal';
+import { formatNumber } from './number-text';
+import { type Parsed } from './parsed';
+import { findUnit, fromBaseUnit, parseQuantity, toBaseUnit, type UnitTable } from './quantity';
+import { type UnitSystem } from './unit-system';
+
+/** A length; millimetres inside. */
+export type Length = Branded<'Length'>;
+
+/** Units in which a length is written. */
+export type LengthUnit = 'mm' | 'in' | 'ft';
+
+// Source: international yard and pound agreement of 1959 (NIST SP 811, appendix B): 1 in = 25.4 mm exactly.
+const LENGTHS: UnitTable<LengthUnit> = {
+  mm: { factor: '1', words: ['mm', 'millimeter', 'millimeters', 'millimetre', 'millimetres'] },
+  in: { factor: '25.4', words: ['in', 'inch', 'inches', '"', '″'] },
+  ft: { factor: '304.8', words: ['ft', 'foot', 'feet', "'", '′'] },
+};
+
+/** A length of so many units, exactly. */
+export function toLength(value: DecimalInput, unit: LengthUnit): Length {
+  return toBaseUnit(LENGTHS, D(value), unit) as Length;
+}
+
+/** How many of `unit` a length is. */
+export function lengthIn(length: Length, unit: LengthUnit): Decimal {
+  return fromBaseUnit(LENGTHS, length, unit);
+}
+
+/** A length as it is stored: millimetres, five decimals, half-up: '1828.80000'. */
+export function lengthText(length: Length): string {
+  return roundHalfUp(length, 5).toFixed(5);
+}
+
+/** Reads '72', '72 in', '6 ft' or '1828.8 mm'; a bare number is in `unitIfNone`. Codes as in `parseQuantity`. */
+export function parseLength(text: string, unitIfNone: LengthUnit): Parsed<Length> {
+  const example = 'Write a length such as 72 in, 6 ft or 1828.8 mm.';
+  return parseQuantity(LENGTHS, text, unitIfNone, example) as Parsed<Length>;
+}
+
+/** Finds the unit of length that a word names: 'in', 'inches', 'mm', 'ft'. */
+export function findLengthUnit(word: string): LengthUnit | undefined {
+  return findUnit(LENGTHS, word);
+}
+
+/** A length for people: '72 in' (up to four decimals) or '1,828.8 mm' (up to two). */
+export function formatLength(length: Length, system: UnitSystem, locale = 'en-US'): string {
+  const unit = system === 'us' ? 'in' : 'mm';
+  const number = lengthIn(length, unit);
+  return `${formatNumber(number, locale, { maximumFractionDigits: system === 'us' ? 4 : 2 })}\u00a0${unit}`;
+}
