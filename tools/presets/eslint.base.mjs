@@ -80,7 +80,7 @@ const depConstraints = [
 
 const typescript = (dir) =>
   tseslint.config(
-    { ignores: ['**/dist/**', '**/*.cjs'] },
+    { ignores: ['**/dist/**', '**/*.cjs', '**/eslint.config.mjs'] },
     js.configs.recommended,
     ...tseslint.configs.recommended,
     {

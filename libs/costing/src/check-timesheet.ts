@@ -6,6 +6,7 @@ import {
   type Hours,
   type LocalDate,
   sum,
+  toHours,
 } from '@brakeven/values';
 
 /** Columns of a timesheet row that a problem can point at. */
@@ -89,7 +90,7 @@ const HOURS_PER_DAY = D(24);
 /** An employee's day: what is stored, and what this file adds. */
 interface DayTotal {
   onFile: Hours | undefined;
-  inFile: Hours[];
+  inFile: Hours;
 }
 
 function checkHours(candidate: TimesheetCandidate): TimesheetProblem[] {
@@ -118,9 +119,8 @@ function sumDays(
   for (const candidate of fresh) {
     if (checkHours(candidate).length > 0) continue;
     const key = employeeDayKey(candidate.employeeId, candidate.workedOn);
-    const total = totals.get(key) ?? { onFile: hoursOnFile.get(key), inFile: [] };
-    total.inFile.push(candidate.hours);
-    totals.set(key, total);
+    const total = totals.get(key) ?? { onFile: hoursOnFile.get(key), inFile: toHours(0) };
+    totals.set(key, { ...total, inFile: sum([total.inFile, candidate.hours]) });
   }
   return totals;
 }
@@ -128,12 +128,10 @@ function sumDays(
 function checkDay(candidate: TimesheetCandidate, totals: ReadonlyMap<string, DayTotal>): TimesheetProblem[] {
   const total = totals.get(employeeDayKey(candidate.employeeId, candidate.workedOn));
   if (!total || checkHours(candidate).length > 0) return [];
-  const inFile = sum(total.inFile);
-  const whole = sum(total.onFile ? [inFile, total.onFile] : [inFile]);
+  const { inFile, onFile } = total;
+  const whole = onFile ? sum([inFile, onFile]) : inFile;
   if (whole.lte(HOURS_PER_DAY)) return [];
-  const parts = total.onFile
-    ? ` (${formatHours(inFile)} new in this file, ${formatHours(total.onFile)} on file)`
-    : '';
+  const parts = onFile ? ` (${formatHours(inFile)} new in this file, ${formatHours(onFile)} on file)` : '';
   const day = formatLocalDate(candidate.workedOn, 'weekday');
   const message = `This employee's ${day} adds up to ${formatHours(whole)} hours${parts}; a day has 24. Correct the hours or the date of one of its rows.`;
   return [refuse(candidate, 'hours', 'day_over_24', message)];

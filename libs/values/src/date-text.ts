@@ -1,6 +1,6 @@
 import { parseDate } from '@internationalized/date';
 import { findLocalDate, type LocalDate } from './local-date';
-import { accepted, type Parsed, refused } from './parsed';
+import { accepted, type Parsed, quoted, refused } from './parsed';
 
 /** Orders in which a column of text dates may be declared to be written. */
 export const DATE_FORMATS = [
@@ -69,12 +69,15 @@ export function isDateFormat(text: string): text is DateFormat {
 export function parseDateText(text: string, format: DateFormat): Parsed<LocalDate> {
   const found = PATTERNS.get(format)?.exec(text.trim())?.groups;
   const wanted = `Dates here are declared as ${format}, such as ${EXAMPLES[format]}.`;
-  if (!found) return refused('not_a_date', `'${text}' is not a date in that order. ${wanted}`);
+  if (!found) return refused('not_a_date', `${quoted(text)} is not a date in that order. ${wanted}`);
   if (found['year']?.length !== 4) {
-    return refused('two_digit_year', `'${text}' does not say which century: write four digits. ${wanted}`);
+    return refused(
+      'two_digit_year',
+      `${quoted(text)} does not say which century: write four digits. ${wanted}`,
+    );
   }
   const date = findLocalDate(Number(found['year']), monthNumber(found), Number(found['day']));
-  return date ? accepted(date) : refused('no_such_day', `There is no day '${text}'. ${wanted}`);
+  return date ? accepted(date) : refused('no_such_day', `There is no day ${quoted(text)}. ${wanted}`);
 }
 
 /** Ways of showing a date. */

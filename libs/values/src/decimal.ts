@@ -1,4 +1,5 @@
 import { Decimal as BaseDecimal } from 'decimal.js';
+import { quoted } from './parsed';
 
 // A clone of our own, so that no other package can change our precision or rounding. Forty digits hold every
 // product of stored values exactly (hours 9 digits × rate 14 × burden factor 9), so the only rounding is ours.
@@ -20,16 +21,21 @@ declare const brand: unique symbol;
 /** A decimal that stands for one kind of quantity; brands keep hours out of money at compile time. */
 export type Branded<Kind extends string> = Decimal & { readonly [brand]: Kind };
 
-const NUMBER_TEXT = /^[+-]?(\d+(\.\d*)?|\.\d+)(e[+-]?\d+)?$/i;
+const NUMBER_TEXT = /^[+-]?(\d+(\.\d*)?|\.\d+)(e[+-]?\d{1,3})?$/i;
 
 /**
- * The one door to decimals. Reads a number, a decimal, or a text such as `-12.5` or `1e-3`.
+ * The one door to decimals. Reads a number, a decimal, or a text such as `-12.5` or `1e-3`
+ * (exponents of up to three digits, so that no short text can become a number of a million digits).
  * @throws RangeError if the input is empty, not finite, or not a plain decimal number.
  */
 export function D(x: DecimalInput): Decimal {
-  const isReadable = typeof x === 'string' ? NUMBER_TEXT.test(x) : Number.isFinite(Number(x));
-  if (!isReadable) throw new RangeError(`'${String(x)}' is not a decimal number such as 12.5.`);
+  if (!isReadable(x)) throw new RangeError(`${quoted(String(x))} is not a decimal number such as 12.5.`);
   return new Exact(x);
+}
+
+function isReadable(x: DecimalInput): boolean {
+  if (typeof x === 'string') return NUMBER_TEXT.test(x);
+  return typeof x === 'number' ? Number.isFinite(x) : x.isFinite();
 }
 
 /** Nought, for sums that start empty. */

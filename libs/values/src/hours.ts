@@ -1,6 +1,6 @@
 import { type Branded, D, type Decimal, type DecimalInput, roundHalfUp } from './decimal';
 import { findNumberInText, formatNumber } from './number-text';
-import { accepted, type Parsed, refused } from './parsed';
+import { accepted, type Parsed, quoted, refused } from './parsed';
 
 /** Hours of work or of a machine, four decimals. */
 export type Hours = Branded<'Hours'>;
@@ -36,10 +36,14 @@ export function hoursFromDays(serialDays: DecimalInput): Hours {
 export function parseHoursText(text: string): Parsed<Hours> {
   const clock = CLOCK.exec(text.trim());
   const decimal = clock ? undefined : findNumberInText(text);
-  if (!clock && !decimal) return refused('not_hours', `'${text}' is not a number of hours. ${HOURS_EXAMPLE}`);
+  if (!clock && !decimal)
+    return refused('not_hours', `${quoted(text)} is not a number of hours. ${HOURS_EXAMPLE}`);
   const hours = decimal ? toHours(decimal) : hoursFromClock(clock?.slice(1) ?? []);
   if (hours.abs().gte(HOURS_LIMIT)) {
-    return refused('too_large', `'${text}' is more hours than can be kept (below 100,000). ${HOURS_EXAMPLE}`);
+    return refused(
+      'too_large',
+      `${quoted(text)} is more hours than can be kept (below 100,000). ${HOURS_EXAMPLE}`,
+    );
   }
   return accepted(hours);
 }

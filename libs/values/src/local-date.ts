@@ -5,7 +5,7 @@ import {
   parseDate,
   toCalendarDate,
 } from '@internationalized/date';
-import { accepted, type Parsed, refused } from './parsed';
+import { accepted, type Parsed, quoted, refused } from './parsed';
 
 declare const brand: unique symbol;
 
@@ -32,7 +32,10 @@ export function isLocalDate(text: string): text is LocalDate {
 /** Reads YYYY-MM-DD, years 0001 to 9999. Code: `not_a_date`. */
 export function parseLocalDate(text: string): Parsed<LocalDate> {
   if (isLocalDate(text)) return accepted(text);
-  return refused('not_a_date', `'${text}' is not a date. Write year, month and day, such as 2026-03-02.`);
+  return refused(
+    'not_a_date',
+    `${quoted(text)} is not a date. Write year, month and day, such as 2026-03-02.`,
+  );
 }
 
 /**
@@ -124,8 +127,9 @@ export function todayIn(timeZone: string, now: Date = new Date()): LocalDate {
   return toCalendarDate(fromDate(now, timeZone)).toString() as LocalDate;
 }
 
-/** Whether a text is an IANA time zone that this machine knows, such as 'America/Chicago'. */
+/** Whether a text is an IANA time zone that this machine knows, such as 'America/Chicago'; offsets are not zones. */
 export function isTimeZone(text: string): boolean {
+  if (!/^[A-Za-z]/.test(text)) return false;
   try {
     return new Intl.DateTimeFormat('en-US', { timeZone: text }).resolvedOptions().timeZone !== '';
   } catch {

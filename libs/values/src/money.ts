@@ -1,6 +1,6 @@
 import { type Branded, D, type Decimal, type DecimalInput, roundHalfUp } from './decimal';
 import { findNumberInText, formatNumber } from './number-text';
-import { accepted, type Parsed, refused } from './parsed';
+import { accepted, type Parsed, quoted, refused } from './parsed';
 
 /** An amount in the shop's currency, whole cents. */
 export type Money = Branded<'Money'>;
@@ -24,12 +24,12 @@ export function moneyText(money: Money): string {
  */
 export function parseMoney(text: string): Parsed<Money> {
   const amount = findNumberInText(text.trim().replace(/^([+−-]?)\p{Sc}\s?/u, '$1'));
-  if (!amount) return refused('not_money', `'${text}' is not an amount. ${MONEY_EXAMPLE}`);
+  if (!amount) return refused('not_money', `${quoted(text)} is not an amount. ${MONEY_EXAMPLE}`);
   if (amount.decimalPlaces() > 2) {
-    return refused('too_many_decimals', `'${text}' goes below the cent. ${MONEY_EXAMPLE}`);
+    return refused('too_many_decimals', `${quoted(text)} goes below the cent. ${MONEY_EXAMPLE}`);
   }
   if (amount.abs().gte(MONEY_LIMIT)) {
-    return refused('too_large', `'${text}' is more than 999,999,999,999.99. ${MONEY_EXAMPLE}`);
+    return refused('too_large', `${quoted(text)} is more than 999,999,999,999.99. ${MONEY_EXAMPLE}`);
   }
   return accepted(toMoney(amount));
 }

@@ -10,3 +10,8 @@ export function accepted<T>(value: T): Parsed<T> {
 export function refused<T>(code: string, message: string): Parsed<T> {
   return { ok: false, code, message };
 }
+
+/** A text as messages quote it: in quotation marks, cut after 40 characters, so that no cell floods a message. */
+export function quoted(text: string): string {
+  return `'${text.length > 40 ? `${text.slice(0, 40)}…` : text}'`;
+}

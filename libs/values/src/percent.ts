@@ -1,6 +1,6 @@
 import { type Branded, D, type Decimal, type DecimalInput, roundHalfUp } from './decimal';
 import { findNumberInText, formatNumber } from './number-text';
-import { accepted, type Parsed, refused } from './parsed';
+import { accepted, type Parsed, quoted, refused } from './parsed';
 
 /** A percentage as written: 28.5 means 28.5 %. Up to four decimals. */
 export type Percent = Branded<'Percent'>;
@@ -29,12 +29,12 @@ export function factorOf(percent: Percent): Decimal {
  */
 export function parsePercent(text: string): Parsed<Percent> {
   const percent = findNumberInText(text.trim().replace(/\s?%$/, ''));
-  if (!percent) return refused('not_a_percentage', `'${text}' is not a percentage. ${PERCENT_EXAMPLE}`);
+  if (!percent) return refused('not_a_percentage', `${quoted(text)} is not a percentage. ${PERCENT_EXAMPLE}`);
   if (percent.decimalPlaces() > 4) {
-    return refused('too_many_decimals', `'${text}' has more than four decimals. ${PERCENT_EXAMPLE}`);
+    return refused('too_many_decimals', `${quoted(text)} has more than four decimals. ${PERCENT_EXAMPLE}`);
   }
   if (percent.lt(0) || percent.gt(1000)) {
-    return refused('out_of_range', `'${text}' is not from 0 to 1000 percent. ${PERCENT_EXAMPLE}`);
+    return refused('out_of_range', `${quoted(text)} is not from 0 to 1000 percent. ${PERCENT_EXAMPLE}`);
   }
   return accepted(toPercent(percent));
 }

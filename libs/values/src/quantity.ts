@@ -1,6 +1,6 @@
 import { D, type Decimal } from './decimal';
 import { findNumberInText } from './number-text';
-import { accepted, type Parsed, refused } from './parsed';
+import { accepted, type Parsed, quoted, refused } from './parsed';
 
 /** Units of one kind of quantity: how many base units each holds, and the words that name it. */
 export type UnitTable<Unit extends string> = Readonly<
@@ -29,10 +29,10 @@ export function parseQuantity<U extends string>(
 ): Parsed<Decimal> {
   const [, numberText = '', unitText = ''] = /^([+−-]?[\d.,]+)\s*(.*)$/.exec(text.trim()) ?? [];
   const number = findNumberInText(numberText);
-  if (!number) return refused('not_a_quantity', `'${text}' cannot be read. ${example}`);
-  if (number.lt(0)) return refused('negative', `'${text}' is below 0. ${example}`);
+  if (!number) return refused('not_a_quantity', `${quoted(text)} cannot be read. ${example}`);
+  if (number.lt(0)) return refused('negative', `${quoted(text)} is below 0. ${example}`);
   const unit = unitText === '' ? unitIfNone : findUnit(table, unitText);
-  if (!unit) return refused('unknown_unit', `'${unitText}' is not a unit known here. ${example}`);
+  if (!unit) return refused('unknown_unit', `${quoted(unitText)} is not a unit known here. ${example}`);
   return accepted(toBaseUnit(table, number, unit));
 }
 

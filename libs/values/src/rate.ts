@@ -1,6 +1,6 @@
 import { type Branded, D, type Decimal, type DecimalInput, roundHalfUp } from './decimal';
 import { findNumberInText, formatNumber } from './number-text';
-import { accepted, type Parsed, refused } from './parsed';
+import { accepted, type Parsed, quoted, refused } from './parsed';
 
 /** Money per hour, up to six decimals. */
 export type Rate = Branded<'Rate'>;
@@ -25,13 +25,14 @@ export function rateText(rate: Rate): string {
  */
 export function parseRate(text: string): Parsed<Rate> {
   const rate = findNumberInText(text.trim().replace(/^([+−-]?)\p{Sc}\s?/u, '$1'));
-  if (!rate) return refused('not_a_rate', `'${text}' is not a rate. ${RATE_EXAMPLE}`);
+  if (!rate) return refused('not_a_rate', `${quoted(text)} is not a rate. ${RATE_EXAMPLE}`);
   if (rate.lt(0))
-    return refused('negative', `A rate cannot be below 0, but this one is '${text}'. ${RATE_EXAMPLE}`);
+    return refused('negative', `A rate cannot be below 0, but this one is ${quoted(text)}. ${RATE_EXAMPLE}`);
   if (rate.decimalPlaces() > 6) {
-    return refused('too_many_decimals', `'${text}' has more than six decimals. ${RATE_EXAMPLE}`);
+    return refused('too_many_decimals', `${quoted(text)} has more than six decimals. ${RATE_EXAMPLE}`);
   }
-  if (rate.gte(RATE_LIMIT)) return refused('too_large', `'${text}' is 100,000,000 or more. ${RATE_EXAMPLE}`);
+  if (rate.gte(RATE_LIMIT))
+    return refused('too_large', `${quoted(text)} is 100,000,000 or more. ${RATE_EXAMPLE}`);
   return accepted(toRate(rate));
 }
 
