@@ -1,0 +1,25 @@
+import { HttpClient } from '@angular/common/http';
+import { inject, Injectable } from '@angular/core';
+import { type FigureRef, type Workings } from '@brakeven/contract';
+import { type Observable } from 'rxjs';
+import { toQueryParams } from './query-params';
+
+const HOURS_OF_JOBS = ['job.hours', 'job.machineHours'];
+
+/** How a figure was made. */
+@Injectable({ providedIn: 'root' })
+export class WorkingsApi {
+  private readonly http = inject(HttpClient);
+
+  /** One page of a figure's workings; hours of jobs have an address of their own, open to those without money. */
+  getWorkings(ref: FigureRef, cursor?: string): Observable<Workings> {
+    return this.http.get<Workings>(`/api/workings/${findSource(ref)}`, {
+      params: toQueryParams({ ...ref, cursor }),
+    });
+  }
+}
+
+function findSource({ figure }: FigureRef): string {
+  if (figure.startsWith('payback.')) return 'payback';
+  return HOURS_OF_JOBS.includes(figure) ? 'job-hours' : 'jobs';
+}
