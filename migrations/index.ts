@@ -1,0 +1,15 @@
+import { type Migration } from 'kysely';
+import * as createShopAndAccounts from './202612010900-create-shop-and-accounts';
+import * as createRegister from './202612010910-create-register';
+import * as createTimeEntry from './202612010920-create-time-entry';
+import * as createCosts from './202612010930-create-costs';
+import * as markDirtyDays from './202612010940-mark-dirty-days';
+
+/** All migrations by name, in order; listed here so that they can be bundled with the command line. */
+export const migrations: Record<string, Migration> = {
+  '202612010900-create-shop-and-accounts': createShopAndAccounts,
+  '202612010910-create-register': createRegister,
+  '202612010920-create-time-entry': createTimeEntry,
+  '202612010930-create-costs': createCosts,
+  '202612010940-mark-dirty-days': markDirtyDays,
+};
