@@ -1,0 +1,90 @@
+import {
+  chooseDatabasePort,
+  getConfiguration,
+  programEnvironment,
+  saveConfiguration,
+} from './configuration.mjs';
+import { ensureDatabase, ensureRoles } from './database-bootstrap.mjs';
+import { DatabaseCluster } from './database-cluster.mjs';
+import { forgetStamp } from './stamps.mjs';
+
+/** @typedef {import('./configuration.mjs').Configuration} Configuration */
+/** @typedef {import('./progress.mjs').Progress} Progress */
+
+/**
+ * @param {Configuration} configuration
+ * @returns {DatabaseCluster} this checkout's own cluster
+ */
+export function openApplicationCluster({ database }) {
+  return new DatabaseCluster(database);
+}
+
+/**
+ * Starts this checkout's cluster when it does not run, made first when there is none, with its roles and its
+ * database.
+ * @param {Progress} progress
+ * @returns {Promise<{ cluster: DatabaseCluster, hasStarted: boolean, environment: ReturnType<typeof programEnvironment> }>}
+ */
+export async function ensureApplicationDatabase(progress) {
+  const configuration = await getConfiguration();
+  const { database } = configuration;
+  let cluster = openApplicationCluster(configuration);
+  if (!cluster.exists()) {
+    forgetStamp('migrated');
+    await progress.step('Making a PostgreSQL cluster', () => cluster.initialise());
+  }
+  await cluster.settle();
+  const server = cluster.findServer();
+  if (server) {
+    cluster.port = server.port;
+  } else {
+    cluster = await progress.step('Starting PostgreSQL', () => startOnSomePort(configuration, cluster));
+  }
+  await admitUs(cluster);
+  await ensureRoles(cluster, database);
+  await ensureDatabase(cluster, 'brakeven');
+  return {
+    cluster,
+    hasStarted: !server,
+    environment: programEnvironment({
+      ...database,
+      port: cluster.port,
+      sessionSecret: configuration.sessionSecret,
+    }),
+  };
+}
+
+/**
+ * Starts on the remembered port, or on another one, remembered from then on, when somebody has taken that.
+ * @param {Configuration} configuration
+ * @param {DatabaseCluster} cluster
+ */
+async function startOnSomePort(configuration, cluster) {
+  for (let attempt = 1; ; attempt += 1) {
+    try {
+      await cluster.start();
+      return cluster;
+    } catch (error) {
+      const isTaken = error instanceof Error && 'code' in error && error.code === 'EADDRINUSE';
+      if (!isTaken || attempt === 5) {
+        throw error;
+      }
+    }
+    configuration.database.port = await chooseDatabasePort();
+    saveConfiguration(configuration);
+    cluster = openApplicationCluster(configuration);
+  }
+}
+
+/**
+ * The data outlives a lost `.local/config.json`; the new passwords are then set from inside.
+ * @param {DatabaseCluster} cluster
+ */
+async function admitUs(cluster) {
+  const { code, output } = await cluster.query('select 1;');
+  if (code !== 0 && /password authentication failed/.test(output)) {
+    await cluster.stop();
+    await cluster.resetSuperuserPassword();
+    await cluster.start();
+  }
+}

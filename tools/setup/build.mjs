@@ -1,0 +1,89 @@
+import { existsSync } from 'node:fs';
+import { join } from 'node:path';
+import { runOrThrow } from './processes.mjs';
+import { findStamp, setStamp, stateOf } from './stamps.mjs';
+import { root } from './workspace.mjs';
+
+/** @typedef {'web' | 'api' | 'cli' | 'demo-shop'} Program */
+
+const presets = ['nx.json', 'package-lock.json', 'tsconfig.base.json', 'tools/presets'];
+const nodeLibs = ['libs', 'migrations'];
+
+/** @type {Record<Program, { output: string, sources: string[] }>} */
+const programs = {
+  web: { output: 'dist/apps/web/browser/index.html', sources: ['apps/web', 'libs', ...presets] },
+  api: { output: 'dist/apps/api/main.js', sources: ['apps/api', ...nodeLibs, ...presets] },
+  cli: { output: 'dist/apps/cli/main.js', sources: ['apps/cli', ...nodeLibs, ...presets] },
+  'demo-shop': {
+    output: 'dist/tools/demo-shop/main.js',
+    sources: ['tools/demo-shop', ...nodeLibs, ...presets],
+  },
+};
+
+/** Folder of the built web application. */
+export const webRoot = join(root, 'dist/apps/web/browser');
+
+/**
+ * @param {Program} program
+ * @returns {string} its built file
+ */
+export function builtFile(program) {
+  return join(root, programs[program].output);
+}
+
+/**
+ * @param {Program[]} wanted
+ * @returns {boolean} whether all of them were built from the sources as they are now
+ */
+export function areBuilt(wanted) {
+  return wanted.every((program) => isBuilt(program, stateOf(programs[program].sources)));
+}
+
+/**
+ * Builds those programs whose sources have changed.
+ * @param {Program[]} wanted
+ * @param {import('./progress.mjs').Progress} progress
+ */
+export async function ensureBuilt(wanted, progress) {
+  // Taken before building, so that a change made during it is seen next time.
+  const states = new Map(wanted.map((program) => [program, stateOf(programs[program].sources)]));
+  const stale = wanted.filter((program) => !isBuilt(program, states.get(program) ?? ''));
+  if (stale.length > 0) {
+    await progress.step(`Building ${stale.join(', ')}`, () => buildAll(stale));
+    stale.forEach((program) => setStamp(`built ${program}`, states.get(program) ?? ''));
+  }
+}
+
+/**
+ * Builds whatever the state of the sources; Nx answers from its cache what it has built before.
+ * @param {Program[]} wanted
+ */
+export async function buildAll(wanted) {
+  await runNx('Building failed', ['run-many', '-t', 'build', '-p', wanted.join(','), '--parallel=2']);
+}
+
+/**
+ * @param {string} what what was being done, for the message
+ * @param {string[]} args
+ */
+export function runNx(what, args) {
+  return runOrThrow(what, process.execPath, [nxProgram, ...args, '--outputStyle=static'], {
+    env: nxEnvironment(),
+  });
+}
+
+/** Nx's own entry, run by this Node. */
+export const nxProgram = join(root, 'node_modules/nx/dist/bin/nx.js');
+
+/** @returns {NodeJS.ProcessEnv} an environment in which Nx and Angular ask nothing and leave no server behind */
+export function nxEnvironment() {
+  return { ...process.env, NX_DAEMON: 'false', NX_TUI: 'false', NG_CLI_ANALYTICS: 'false', CI: 'true' };
+}
+
+/**
+ * @param {Program} program
+ * @param {string} state
+ */
+function isBuilt(program, state) {
+  return findStamp(`built ${program}`) === state && existsSync(builtFile(program));
+}

@@ -1,0 +1,79 @@
+import { performance } from 'node:perf_hooks';
+import { shutDown, stopOnSignals } from './shutdown.mjs';
+import { SetupError, errorText } from './workspace.mjs';
+
+const quietMs = 4_000;
+
+/**
+ * @typedef {object} Progress
+ * @property {<T>(title: string, work: () => Promise<T>) => Promise<T>} step does the work and prints a line with its duration
+ * @property {(text: string) => void} say prints a line
+ */
+
+/**
+ * Prints what a script is doing, one line a step. Nothing is printed for a step that took no noticeable time,
+ * so a second start stays short.
+ * @param {NodeJS.WriteStream} stream where to
+ * @returns {Progress}
+ */
+export function createProgress(stream) {
+  const say = (/** @type {string} */ text) => void stream.write(`${text}\n`);
+  return {
+    say,
+    async step(title, work) {
+      const begin = performance.now();
+      const slow = setTimeout(() => say(`… ${title}`), stream.isTTY ? 500 : quietMs);
+      try {
+        const result = await work();
+        const ms = performance.now() - begin;
+        if (ms > 50) {
+          say(`✓ ${title} (${formatDuration(ms)})`);
+        }
+        return result;
+      } finally {
+        clearTimeout(slow);
+      }
+    },
+  };
+}
+
+/**
+ * @param {number} ms
+ * @returns {string} '0.3 s', '12 s', '3 min 05 s'
+ */
+export function formatDuration(ms) {
+  const seconds = ms / 1000;
+  if (seconds < 10) {
+    return `${seconds.toFixed(1)} s`;
+  }
+  if (seconds < 60) {
+    return `${Math.round(seconds)} s`;
+  }
+  const whole = Math.round(seconds);
+  return `${Math.floor(whole / 60)} min ${String(whole % 60).padStart(2, '0')} s`;
+}
+
+/**
+ * Runs a script: a failure it foresaw is told in its own words, everything started is stopped, and the exit
+ * code is set.
+ * @param {() => Promise<number | void>} main its exit code, 0 unless told
+ * @param {(signal: string) => void} [announce] told once when a signal ends it
+ */
+export async function runScript(main, announce) {
+  stopOnSignals(announce);
+  let code;
+  try {
+    code = (await main()) ?? 0;
+  } catch (error) {
+    const foreseen = error instanceof SetupError;
+    process.stderr.write(`\n${foreseen ? error.message : stackText(error)}\n`);
+    code = foreseen ? error.exitCode : 1;
+  }
+  await shutDown();
+  process.exit(code);
+}
+
+/** @param {unknown} error */
+function stackText(error) {
+  return error instanceof Error && error.stack ? error.stack : errorText(error);
+}
