@@ -1,4 +1,7 @@
+export { CSV_SHEET } from './read-csv';
+export { READ_LIMITS } from './read-limits';
+export { readSheets } from './read-sheets';
 export * from './setup-data';
 export * from './sheet-file';
 export * from './timesheet-row';
-export * from './workbook-error';
+export { WorkbookError, type WorkbookErrorCode } from './workbook-error';

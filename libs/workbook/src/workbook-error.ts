@@ -28,3 +28,12 @@ export class WorkbookError extends Error {
     super(message);
   }
 }
+
+/** The error for a file that is no workbook at all; `found` says what it seems to be. */
+export function toNotWorkbookError(found = 'something else'): WorkbookError {
+  return new WorkbookError(
+    'file_not_workbook',
+    `This file is not a workbook but ${found}, whatever its name says. ` +
+      'Send the timesheet itself, saved as .xlsx or as .csv.',
+  );
+}
