@@ -27,11 +27,31 @@ describe('exact conversions, from their definitions', () => {
 // Rounded factors as printed in tables that others made.
 describe('conversions, against printed tables', () => {
   it.each([
-    [toForce(1, 'US ton'), 5, '8.89644', 'US Navy facilities handbook 1004/6, appendix B: 1 tonf = 8.896 44 kN'],
-    [toForce(1000, 'lbf'), 5, '4.44822', 'US Navy facilities handbook 1004/6, appendix B: 1 kip = 4.448 22 kN'],
-    [toMass(2000, 'lb'), 3, '907.185', 'US Navy facilities handbook 1004/6, appendix B: 2000 lb = 0.907 185 t'],
+    [
+      toForce(1, 'US ton'),
+      5,
+      '8.89644',
+      'US Navy facilities handbook 1004/6, appendix B: 1 tonf = 8.896 44 kN',
+    ],
+    [
+      toForce(1000, 'lbf'),
+      5,
+      '4.44822',
+      'US Navy facilities handbook 1004/6, appendix B: 1 kip = 4.448 22 kN',
+    ],
+    [
+      toMass(2000, 'lb'),
+      3,
+      '907.185',
+      'US Navy facilities handbook 1004/6, appendix B: 2000 lb = 0.907 185 t',
+    ],
     [toMass(1, 'lb'), 6, '0.453592', 'US Navy facilities handbook 1004/6, appendix B: 1 lb = 0.453 592 kg'],
-    [toMass(2000, 'lb'), 4, '907.1847', 'US Army Engineers hydraulics report: tons (2,000 pounds, mass) = 907.1847 kg'],
+    [
+      toMass(2000, 'lb'),
+      4,
+      '907.1847',
+      'US Army Engineers hydraulics report: tons (2,000 pounds, mass) = 907.1847 kg',
+    ],
     [
       forceIn(toForce(1, 'tonne'), 'US ton'),
       7,
@@ -39,7 +59,12 @@ describe('conversions, against printed tables', () => {
       'encyclopaedia article on the ton-force: 1 tf = 1.1023113 short tons-force',
     ],
     [lengthIn(toLength(1000, 'mm'), 'ft'), 4, '3.2808', 'engineering tables: 1 m = 3.2808 ft'],
-    [massIn(toMass(1000, 'kg'), 'lb'), 3, '2204.623', 'encyclopaedia article on the ton-force: 1 tf = 2204.623 lbf'],
+    [
+      massIn(toMass(1000, 'kg'), 'lb'),
+      3,
+      '2204.623',
+      'encyclopaedia article on the ton-force: 1 tf = 2204.623 lbf',
+    ],
   ])('gives %s to %d decimals as %s (%s)', (quantity, places, printed) => {
     expect(roundHalfUp(quantity, places).toFixed(places)).toBe(printed);
   });
