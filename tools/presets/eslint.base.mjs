@@ -78,7 +78,13 @@ const depConstraints = [
   { sourceTag: 'platform:web', onlyDependOnLibsWithTags: web },
 ];
 
-const typescript = (dir) =>
+/**
+ * Specs may use the test database's builders, which know every lib.
+ * @param {string[]} allow imports that no arrow forbids
+ */
+const boundaries = (allow) => ['error', { enforceBuildableLibDependency: false, allow, depConstraints }];
+
+const typescript = (/** @type {string} */ dir) =>
   tseslint.config(
     { ignores: ['**/dist/**', '**/*.cjs', '**/eslint.config.mjs'] },
     js.configs.recommended,
@@ -88,10 +94,7 @@ const typescript = (dir) =>
       plugins: { '@nx': nx },
       languageOptions: { parserOptions: { tsconfigRootDir: dir } },
       rules: {
-        '@nx/enforce-module-boundaries': [
-          'error',
-          { enforceBuildableLibDependency: false, allow: [], depConstraints },
-        ],
+        '@nx/enforce-module-boundaries': boundaries([]),
         '@typescript-eslint/consistent-type-imports': ['error', { fixStyle: 'inline-type-imports' }],
         '@typescript-eslint/no-unused-vars': ['error', { argsIgnorePattern: '^_', varsIgnorePattern: '^_' }],
         'no-nested-ternary': 'error',
@@ -106,12 +109,22 @@ const typescript = (dir) =>
         'no-undef': 'off',
       },
     },
+    {
+      files: ['**/*.spec.ts'],
+      rules: { '@nx/enforce-module-boundaries': boundaries(['@brakeven/test-shop']) },
+    },
   );
 
-/** ESLint for Node projects and the pure libs. */
+/**
+ * ESLint for Node projects and the pure libs.
+ * @param {string} dir folder of the project
+ */
 export const nodeConfig = (dir) => typescript(dir);
 
-/** ESLint for Angular projects: the same, and angular-eslint for code and templates. */
+/**
+ * ESLint for Angular projects: the same, and angular-eslint for code and templates.
+ * @param {string} dir folder of the project
+ */
 export const webConfig = (dir) =>
   tseslint.config(
     ...typescript(dir),
