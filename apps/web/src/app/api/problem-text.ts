@@ -46,7 +46,8 @@ const TITLES: Readonly<Record<ErrorCode, string>> = {
 
 /** Own words where the server's detail would not help the person at the screen. */
 const TEXTS: Partial<Record<ErrorCode, string>> = {
-  internal: 'Nothing was changed. Try again; if it stays, tell whoever looks after the server the number below.',
+  internal:
+    'Nothing was changed. Try again; if it stays, tell whoever looks after the server the number below.',
   database_unreachable: 'Nothing was changed. Try again in a minute.',
   token_missing: 'Nothing was changed. Load the page again and repeat the last step.',
 };

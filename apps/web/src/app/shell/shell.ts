@@ -1,0 +1,82 @@
+import {
+  afterNextRender,
+  ChangeDetectionStrategy,
+  Component,
+  computed,
+  type ElementRef,
+  inject,
+  viewChild,
+} from '@angular/core';
+import { NgTemplateOutlet } from '@angular/common';
+import { takeUntilDestroyed } from '@angular/core/rxjs-interop';
+import { NavigationEnd, Router, RouterLink, RouterLinkActive, RouterOutlet } from '@angular/router';
+import { filter, map, pairwise } from 'rxjs';
+import { SessionStore } from '../session/session-store';
+import { WorkingsPanel } from '../workings/workings-panel';
+import { WorkingsStore } from '../workings/workings-store';
+import { AccountMenu } from './account-menu';
+import { Mark } from './mark';
+import { listNavigation } from './navigation';
+import { RollupChip } from './rollup-chip';
+
+/** The frame of every page: bar above, rail at the left (a drawer where it is narrow), the page, the workings. */
+@Component({
+  selector: 'app-shell',
+  imports: [
+    AccountMenu,
+    Mark,
+    NgTemplateOutlet,
+    RollupChip,
+    RouterLink,
+    RouterLinkActive,
+    RouterOutlet,
+    WorkingsPanel,
+  ],
+  templateUrl: './shell.html',
+  styleUrl: './shell.scss',
+  changeDetection: ChangeDetectionStrategy.OnPush,
+})
+export class Shell {
+  private readonly session = inject(SessionStore);
+  protected readonly workings = inject(WorkingsStore);
+  private readonly drawer = viewChild.required<ElementRef<HTMLDialogElement>>('drawer');
+  private readonly main = viewChild.required<ElementRef<HTMLElement>>('main');
+
+  protected readonly shop = this.session.shop;
+  protected readonly groups = computed(() => {
+    const user = this.session.user();
+    return user && !user.mustChangePassword ? listNavigation(user.role) : [];
+  });
+  protected readonly canSeeRollup = computed(() => this.session.can('rollup.view'));
+
+  constructor() {
+    const pageChanges = inject(Router).events.pipe(
+      filter((event) => event instanceof NavigationEnd),
+      map((event) => event.urlAfterRedirects.split(/[?#]/)[0]),
+      pairwise(),
+      filter(([before, after]) => before !== after),
+      takeUntilDestroyed(),
+    );
+    afterNextRender(() => pageChanges.subscribe(() => this.leaveForPage()));
+  }
+
+  protected openDrawer(): void {
+    this.drawer().nativeElement.showModal();
+  }
+
+  protected closeDrawer(): void {
+    this.drawer().nativeElement.close();
+  }
+
+  protected skipToPage(event: Event): void {
+    event.preventDefault();
+    this.main().nativeElement.focus();
+  }
+
+  /** Keyboard and screen reader go on at the new page, not in the rail. */
+  private leaveForPage(): void {
+    this.workings.close();
+    this.closeDrawer();
+    this.main().nativeElement.focus({ preventScroll: true });
+  }
+}
