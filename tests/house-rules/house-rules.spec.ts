@@ -68,11 +68,11 @@ describe('house rules', () => {
   });
 
   it('has migrations in order, each listed in the index, importing kysely alone', () => {
-    const migrations = files.filter((file) => /^migrations\/\d{12}-[a-z-]+\.ts$/.test(file));
+    const migrations = files.filter((file) => /^migrations\/\d{12}-[a-z-]+\.ts$/.test(file)).sort();
     const index = read('migrations/index.ts');
     expect(migrations.length).toBeGreaterThan(0);
-    expect(migrations.filter((file) => !index.includes(`'./${basename(file, '.ts')}'`))).toEqual([]);
-    expect([...migrations].sort()).toEqual(migrations);
+    const listed = [...index.matchAll(/'\.\/(\d{12}-[a-z-]+)'/g)].map((match) => `migrations/${match[1]}.ts`);
+    expect(listed).toEqual(migrations);
     expect(findLines(/^import .* from '(?!kysely')/, migrations)).toEqual([]);
   });
 
