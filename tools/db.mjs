@@ -7,6 +7,7 @@ import { createProgress, runScript } from './setup/progress.mjs';
 import { findRunningInstance } from './setup/running-instance.mjs';
 import { withSetupLock } from './setup/setup-lock.mjs';
 import { forgetStamp } from './setup/stamps.mjs';
+import { tellWaiting } from './setup/set-up.mjs';
 import { SetupError } from './setup/workspace.mjs';
 
 const usage = `Usage: npm run db -- start | stop | status | reset [--yes]
@@ -30,9 +31,7 @@ await runScript(async () => {
   }
   return command === status
     ? status()
-    : withSetupLock(command, (pid) =>
-        progress.say(`Waiting for another script of this checkout (process ${pid})`),
-      );
+    : withSetupLock(command, tellWaiting(progress));
 });
 
 async function start() {

@@ -6,9 +6,11 @@ import {
 } from './configuration.mjs';
 import { ensureDatabase, ensureRoles } from './database-bootstrap.mjs';
 import { DatabaseCluster } from './database-cluster.mjs';
+import { atShutdown } from './shutdown.mjs';
 import { forgetStamp } from './stamps.mjs';
 
 /** @typedef {import('./configuration.mjs').Configuration} Configuration */
+/** @typedef {import('./configuration.mjs').DatabaseEnvironment} DatabaseEnvironment */
 /** @typedef {import('./progress.mjs').Progress} Progress */
 
 /**
@@ -23,9 +25,10 @@ export function openApplicationCluster({ database }) {
  * Starts this checkout's cluster when it does not run, made first when there is none, with its roles and its
  * database.
  * @param {Progress} progress
- * @returns {Promise<{ cluster: DatabaseCluster, hasStarted: boolean, environment: ReturnType<typeof programEnvironment> }>}
+ * @param {{ stopsAtEnd?: boolean }} [options] whether a cluster started here stops when the script ends
+ * @returns {Promise<{ cluster: DatabaseCluster, environment: DatabaseEnvironment }>}
  */
-export async function ensureApplicationDatabase(progress) {
+export async function ensureApplicationDatabase(progress, { stopsAtEnd = false } = {}) {
   const configuration = await getConfiguration();
   const { database } = configuration;
   let cluster = openApplicationCluster(configuration);
@@ -38,6 +41,9 @@ export async function ensureApplicationDatabase(progress) {
   if (server) {
     cluster.port = server.port;
   } else {
+    if (stopsAtEnd) {
+      atShutdown(() => openApplicationCluster(configuration).stop());
+    }
     cluster = await progress.step('Starting PostgreSQL', () => startOnSomePort(configuration, cluster));
   }
   await admitUs(cluster);
@@ -45,7 +51,6 @@ export async function ensureApplicationDatabase(progress) {
   await ensureDatabase(cluster, 'brakeven');
   return {
     cluster,
-    hasStarted: !server,
     environment: programEnvironment({
       ...database,
       port: cluster.port,

@@ -2,7 +2,7 @@ import { existsSync } from 'node:fs';
 import { join } from 'node:path';
 import { runOrThrow } from './processes.mjs';
 import { findStamp, setStamp, stateOf } from './stamps.mjs';
-import { root } from './workspace.mjs';
+import { SetupError, root } from './workspace.mjs';
 
 /** @typedef {'web' | 'api' | 'cli' | 'demo-shop'} Program */
 
@@ -11,7 +11,7 @@ const nodeLibs = ['libs', 'migrations'];
 
 /** @type {Record<Program, { output: string, sources: string[] }>} */
 const programs = {
-  web: { output: 'dist/apps/web/browser/index.html', sources: ['apps/web', 'libs', ...presets] },
+  web: { output: 'dist/apps/web/index.html', sources: ['apps/web', 'libs', ...presets] },
   api: { output: 'dist/apps/api/main.js', sources: ['apps/api', ...nodeLibs, ...presets] },
   cli: { output: 'dist/apps/cli/main.js', sources: ['apps/cli', ...nodeLibs, ...presets] },
   'demo-shop': {
@@ -21,7 +21,7 @@ const programs = {
 };
 
 /** Folder of the built web application. */
-export const webRoot = join(root, 'dist/apps/web/browser');
+export const webRoot = join(root, 'dist/apps/web');
 
 /**
  * @param {Program} program
@@ -50,6 +50,10 @@ export async function ensureBuilt(wanted, progress) {
   const stale = wanted.filter((program) => !isBuilt(program, states.get(program) ?? ''));
   if (stale.length > 0) {
     await progress.step(`Building ${stale.join(', ')}`, () => buildAll(stale));
+    const absent = stale.filter((program) => !existsSync(builtFile(program)));
+    if (absent.length > 0) {
+      throw new SetupError(`Nx reported success, but ${absent.map(builtFile).join(', ')} is not there.`);
+    }
     stale.forEach((program) => setStamp(`built ${program}`, states.get(program) ?? ''));
   }
 }

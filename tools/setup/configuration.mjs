@@ -33,6 +33,13 @@ const configurationFile = join(localDirectory, 'config.json');
  * @property {DatabaseConfiguration} database
  */
 
+/**
+ * @typedef {object} DatabaseEnvironment
+ * @property {string} DATABASE_URL as brakeven_app
+ * @property {string} DATABASE_OWNER_URL as brakeven_owner
+ * @property {string} SESSION_SECRET
+ */
+
 /** @returns {boolean} whether the script runs as root */
 export function isRoot() {
   return process.getuid?.() === 0;
@@ -117,7 +124,7 @@ export async function chooseDatabasePort() {
  * Environment of the programs under `dist`, for one database.
  * @param {{ port: number, ownerPassword: string, applicationPassword: string, sessionSecret: string }} access
  * @param {string} [database]
- * @returns {{ DATABASE_URL: string, DATABASE_OWNER_URL: string, SESSION_SECRET: string }}
+ * @returns {DatabaseEnvironment}
  */
 export function programEnvironment(access, database = 'brakeven') {
   const at = `127.0.0.1:${access.port}/${database}`;

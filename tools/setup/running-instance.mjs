@@ -3,7 +3,7 @@ import { join } from 'node:path';
 import { builtFile } from './build.mjs';
 import { commandLine } from './processes.mjs';
 import { atShutdown } from './shutdown.mjs';
-import { findJson, localDirectory, root, writeJson } from './workspace.mjs';
+import { SetupError, findJson, localDirectory, root, writeJson } from './workspace.mjs';
 
 const instanceFile = join(localDirectory, 'running.json');
 
@@ -19,6 +19,14 @@ export function findRunningInstance() {
   const found = readInstance();
   const isOurs = found && commandLine(found.pid).some((word) => /(^|\/)tools\/(start|dev)\.mjs$/.test(word));
   return isOurs ? found : null;
+}
+
+/** Refuses to serve when this checkout is being served already. */
+export function refuseSecondInstance() {
+  const instance = findRunningInstance();
+  if (instance) {
+    throw new SetupError(`Brakeven is already running at ${instance.address} (process ${instance.pid}).`);
+  }
 }
 
 /** Ends the server that a killed `npm start` has left behind. */
