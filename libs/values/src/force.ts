@@ -35,9 +35,9 @@ export function forceIn(force: Force, unit: ForceUnit): Decimal {
   return fromBaseUnit(FORCES, force, unit);
 }
 
-/** A force as it is stored: kilonewtons, six decimals, half-up: '533.786594'. */
+/** A force as it is stored: kilonewtons, five decimals, half-up: '533.78659'. */
 export function forceText(force: Force): string {
-  return roundHalfUp(force, 6).toFixed(6);
+  return roundHalfUp(force, 5).toFixed(5);
 }
 
 /** Reads '60', '60 tons', '54.4 tonnes' or '534 kN'; a bare number is in `unitIfNone`. Codes as in `parseQuantity`. */

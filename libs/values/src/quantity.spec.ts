@@ -43,13 +43,13 @@ describe('lengths', () => {
 
 describe('forces', () => {
   it.each([
-    ['60', '533.786594'],
-    ['60 tons', '533.786594'],
-    ['60 US tons', '533.786594'],
-    ['120,000 lbf', '533.786594'],
-    ['54.4 tonnes', '533.481760'],
-    ['54.4 metric tons', '533.481760'],
-    ['534 kN', '534.000000'],
+    ['60', '533.78659'],
+    ['60 tons', '533.78659'],
+    ['60 US tons', '533.78659'],
+    ['120,000 lbf', '533.78659'],
+    ['54.4 tonnes', '533.48176'],
+    ['54.4 metric tons', '533.48176'],
+    ['534 kN', '534.00000'],
   ])('are read from %p, bare numbers as US tons', (text, expected) => {
     const read = parseForce(text, 'US ton');
     expect(read.ok && forceText(read.value)).toBe(expected);
@@ -68,10 +68,10 @@ describe('forces', () => {
     expect(formatForce(toForce(60, 'US ton'), 'metric')).toBe('533.8\u00a0kN');
   });
 
-  it('come back from the six decimals that are stored', () => {
+  it('come back from the five decimals that are stored', () => {
     const stored = toForce(forceText(toForce(60, 'US ton')), 'kN');
     expect(formatForce(stored, 'us')).toBe('60\u00a0US tons');
-    expect(forceIn(stored, 'US ton').toNumber()).toBeCloseTo(60, 6);
+    expect(forceIn(stored, 'US ton').toNumber()).toBeCloseTo(60, 5);
   });
 });
 
