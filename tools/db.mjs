@@ -29,9 +29,7 @@ await runScript(async () => {
   if (!command || options.some((option) => !known.includes(option))) {
     throw new SetupError(usage, 2);
   }
-  return command === status
-    ? status()
-    : withSetupLock(command, tellWaiting(progress));
+  return command === status ? status() : withSetupLock(command, tellWaiting(progress));
 });
 
 async function start() {
