@@ -53,8 +53,6 @@ export async function up(db: Kysely<unknown>): Promise<void> {
       password_hash text not null,
       password_changed_at timestamptz not null default now(),
       must_change_password boolean not null default false,
-      failed_sign_ins integer not null default 0,
-      locked_until timestamptz,
       last_sign_in_at timestamptz,
       created_at timestamptz not null default now(),
       primary key (shop_id, user_id),
@@ -87,7 +85,7 @@ async function createAuditTrigger(db: Kysely<unknown>): Promise<void> {
   // The argument names the id column. What only sign-in changes is left out, and a change of nothing else is no event.
   await sql`
     create function audit_visible(row_data jsonb) returns jsonb language sql immutable as $$
-      select row_data - '{password_hash,failed_sign_ins,locked_until,last_sign_in_at,created_at}'::text[]
+      select row_data - '{password_hash,last_sign_in_at,created_at}'::text[]
     $$`.execute(db);
   await sql`
     create function write_audit_events() returns trigger language plpgsql as $$

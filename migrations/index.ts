@@ -4,6 +4,7 @@ import * as createRegister from './202612010910-create-register';
 import * as createTimeEntry from './202612010920-create-time-entry';
 import * as createCosts from './202612010930-create-costs';
 import * as markDirtyDays from './202612010940-mark-dirty-days';
+import * as supportSignIn from './202612010950-support-sign-in';
 
 /** All migrations by name, in order; listed here so that they can be bundled with the command line. */
 export const migrations: Record<string, Migration> = {
@@ -12,4 +13,5 @@ export const migrations: Record<string, Migration> = {
   '202612010920-create-time-entry': createTimeEntry,
   '202612010930-create-costs': createCosts,
   '202612010940-mark-dirty-days': markDirtyDays,
+  '202612010950-support-sign-in': supportSignIn,
 };

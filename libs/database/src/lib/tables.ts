@@ -27,8 +27,6 @@ export interface UserAccountTable {
   passwordHash: string;
   passwordChangedAt: Instant;
   mustChangePassword: Generated<boolean>;
-  failedSignIns: Generated<number>;
-  lockedUntil: InstantOrNull;
   lastSignInAt: InstantOrNull;
   createdAt: Instant;
 }
