@@ -1,3 +1,4 @@
+export { createReader, type ReaderOptions, type SheetReader } from './create-reader';
 export { CSV_SHEET } from './read-csv';
 export { READ_LIMITS } from './read-limits';
 export { readSheets } from './read-sheets';
@@ -5,3 +6,12 @@ export * from './setup-data';
 export * from './sheet-file';
 export * from './timesheet-row';
 export { WorkbookError, type WorkbookErrorCode } from './workbook-error';
+export { readTimesheetRows } from './read-timesheet-rows';
+export {
+  describeTimesheetHeader,
+  findTimesheetHeader,
+  getSheet,
+  type HeaderCell,
+  headerSignature,
+  type TimesheetHeader,
+} from './timesheet-mapping';

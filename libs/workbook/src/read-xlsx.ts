@@ -1,4 +1,4 @@
-import { Workbook, type Worksheet } from 'exceljs';
+import exceljs, { type Workbook, type Worksheet } from 'exceljs';
 import { listCoveredCells } from './merged-cells';
 import { findTaggedFormat, packPlainWorkbook } from './plain-package';
 import { type CellContext, toRawCell, toStoredCell } from './raw-cell';
@@ -76,7 +76,7 @@ function assertKnownForm(names: readonly string[]): void {
 }
 
 async function loadPlainWorkbook(opened: WorkbookPackage): Promise<Workbook> {
-  const workbook = new Workbook();
+  const workbook = new exceljs.Workbook();
   const packed = packPlainWorkbook(opened);
   try {
     await workbook.xlsx.load(toArrayBuffer(packed), { ignoreNodes: IGNORED_NODES });
