@@ -11,7 +11,8 @@ import {
   withComponentInputBinding,
   withInMemoryScrolling,
 } from '@angular/router';
-import { SHOP_FORMAT, WORKINGS_OPENER } from '@brakeven/ui';
+import { PROBLEM_WORDS, SHOP_FORMAT, WORKINGS_OPENER } from '@brakeven/ui';
+import { toShownProblem } from './api/problem-text';
 import { routes } from './app.routes';
 import { sessionInterceptor } from './session/session-interceptor';
 import { SessionStore } from './session/session-store';
@@ -34,6 +35,7 @@ export const appConfig: ApplicationConfig = {
     provideAppInitializer(() => inject(ThemeStore).apply()),
     { provide: TitleStrategy, useExisting: PageTitle },
     { provide: SHOP_FORMAT, useFactory: () => inject(SessionStore).shopFormat },
+    { provide: PROBLEM_WORDS, useValue: toShownProblem },
     { provide: WORKINGS_OPENER, useExisting: WorkingsStore },
   ],
 };
