@@ -1,8 +1,9 @@
 import { type Kysely, sql } from 'kysely';
 
 /**
- * What the rollup writes. Cost lines carry no foreign keys: only the rollup writes them, from rows that have
- * them, and a million checks would cost more than the lines. Every read joins on shop_id and id.
+ * What the rollup writes. Cost lines and gaps carry no foreign keys: only the rollup writes them, from rows that
+ * have them, and a million checks would cost more than the lines. Every read joins on shop_id and id.
+ * The hours of a job day are those of all entries that owe the category, whether or not a rate was found.
  */
 export async function up(db: Kysely<unknown>): Promise<void> {
   await sql`
@@ -58,13 +59,15 @@ export async function up(db: Kysely<unknown>): Promise<void> {
       shop_id uuid not null references shop,
       machine_id uuid not null,
       worked_on date not null,
+      job_id uuid not null,
       hours numeric(12,4) not null,
       billable_hours numeric(12,4) not null,
       earned numeric(16,2) not null,
       operator_labour numeric(16,2) not null,
       running numeric(16,2) not null,
-      primary key (shop_id, machine_id, worked_on),
-      foreign key (shop_id, machine_id) references machine
+      primary key (shop_id, machine_id, worked_on, job_id),
+      foreign key (shop_id, machine_id) references machine,
+      foreign key (shop_id, job_id) references job
     )`.execute(db);
   await sql`create index machine_day_day on machine_day (shop_id, worked_on)`.execute(db);
   await sql`
@@ -74,14 +77,13 @@ export async function up(db: Kysely<unknown>): Promise<void> {
       category text not null,
       entry_id uuid not null,
       job_id uuid not null,
+      operation_id uuid not null,
       employee_id uuid not null,
       machine_id uuid,
-      primary key (shop_id, worked_on, entry_id, category),
-      foreign key (shop_id, job_id) references job,
-      foreign key (shop_id, employee_id) references employee,
-      foreign key (shop_id, machine_id) references machine
+      hours numeric(9,4) not null,
+      primary key (shop_id, worked_on, entry_id, category)
     )`.execute(db);
-  await sql`create index rate_gap_job on rate_gap (shop_id, job_id)`.execute(db);
+  await sql`create index rate_gap_job on rate_gap (shop_id, job_id, entry_id)`.execute(db);
   await sql`
     create table payback_snapshot (
       shop_id uuid not null references shop,

@@ -54,7 +54,8 @@ export const emailInputSchema = z
 
 /** Query parameters of a page of a long list: the cursor is what the page before returned. */
 export const pageQuerySchema = z.object({
-  cursor: z.string().max(600).optional(),
+  /** Holds a sort value, of which a name may take 200 characters of four bytes. */
+  cursor: z.string().max(1_500).optional(),
   limit: z.coerce.number().int().min(1).max(500).default(100),
 });
 export const directionSchema = z.enum(['asc', 'desc']);

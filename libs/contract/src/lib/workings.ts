@@ -59,7 +59,8 @@ export type FigureRef = z.infer<typeof figureRefSchema>;
 
 export const workingsLineSchema = z.object({
   lineId: z.string(),
-  on: localDateSchema,
+  /** Null for a job without dates. */
+  on: localDateSchema.nullable(),
   category: z.string(),
   /** Who or what: the employee, or the description of a cost item. */
   label: z.string(),

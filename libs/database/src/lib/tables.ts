@@ -219,14 +219,17 @@ export interface JobDayTable {
   jobId: string;
   workedOn: string;
   category: CostLineTable['category'];
+  /** Of all entries that owe the category, with or without a rate. */
   hours: Numeric;
   amount: Numeric;
   lines: number;
 }
+/** What a machine in service did for one job on one day. */
 export interface MachineDayTable {
   shopId: string;
   machineId: string;
   workedOn: string;
+  jobId: string;
   hours: Numeric;
   billableHours: Numeric;
   earned: Numeric;
@@ -239,8 +242,10 @@ export interface RateGapTable {
   category: CostLineTable['category'];
   entryId: string;
   jobId: string;
+  operationId: string;
   employeeId: string;
   machineId: string | null;
+  hours: Numeric;
 }
 export interface PaybackSnapshotTable {
   shopId: string;

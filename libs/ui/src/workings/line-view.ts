@@ -4,7 +4,7 @@ import { toFigureText } from '../figure/figure';
 
 export interface LineView {
   lineId: string;
-  on: string;
+  on: string | null;
   label: string;
   /** Job, operation, machine, as far as there are. */
   where: string;
