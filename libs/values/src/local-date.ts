@@ -109,11 +109,6 @@ export function endOfMonth(date: LocalDate): LocalDate {
   return lastOfMonth(parseDate(date)).toString() as LocalDate;
 }
 
-/** The earlier of two dates. */
-export function earlierOf(a: LocalDate, b: LocalDate): LocalDate {
-  return a < b ? a : b;
-}
-
 /** The later of two dates. */
 export function laterOf(a: LocalDate, b: LocalDate): LocalDate {
   return a > b ? a : b;
