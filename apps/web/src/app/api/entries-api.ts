@@ -9,7 +9,7 @@ import {
 } from '@brakeven/contract';
 import { type Observable } from 'rxjs';
 
-import { toParams } from './to-params';
+import { toQueryParams } from './query-params';
 
 /** Time entries, page by page, their totals, and what the filters offer. */
 @Injectable({ providedIn: 'root' })
@@ -17,11 +17,11 @@ export class EntriesApi {
   private readonly http = inject(HttpClient);
 
   list(query: Partial<EntryListQuery>): Observable<EntryPage> {
-    return this.http.get<EntryPage>('/api/entries', { params: toParams(query) });
+    return this.http.get<EntryPage>('/api/entries', { params: toQueryParams(query) });
   }
 
   getTotals(filter: EntryFilter): Observable<EntryTotals> {
-    return this.http.get<EntryTotals>('/api/entries/totals', { params: toParams(filter) });
+    return this.http.get<EntryTotals>('/api/entries/totals', { params: toQueryParams(filter) });
   }
 
   getChoices(): Observable<EntryChoices> {

@@ -14,7 +14,7 @@ import {
 } from '@brakeven/contract';
 import { type Observable } from 'rxjs';
 
-import { toParams } from './to-params';
+import { toQueryParams } from './query-params';
 
 export interface AuditPage {
   items: AuditEvent[];
@@ -75,7 +75,7 @@ export class ShopApi {
   }
 
   listAuditEvents(cursor?: string): Observable<AuditPage> {
-    return this.http.get<AuditPage>('/api/audit', { params: toParams({ cursor }) });
+    return this.http.get<AuditPage>('/api/audit', { params: toQueryParams({ cursor }) });
   }
 }
 

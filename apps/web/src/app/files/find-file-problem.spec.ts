@@ -20,7 +20,9 @@ describe('findFileProblem', () => {
   it('refuses an empty file and one over the limit, with both sizes', () => {
     expect(findFileProblem({ name: 'week.xlsx', size: 0 }, rule)).toMatch(/is empty/);
     expect(findFileProblem({ name: 'week.xlsx', size: rule.bytesMax }, rule)).toBeNull();
-    expect(findFileProblem({ name: 'week.xlsx', size: 12 * 1024 * 1024 }, rule)).toMatch(/12 MB; the most is 10 MB/);
+    expect(findFileProblem({ name: 'week.xlsx', size: 12 * 1024 * 1024 }, rule)).toMatch(
+      /12 MB; the most is 10 MB/,
+    );
   });
 });
 

@@ -12,7 +12,9 @@ describe('parsedBy', () => {
   it('passes what can be read, and an empty field, which is for required to refuse', () => {
     expect(findFieldError(new FormControl('28.50', parsedBy(parseRate)))).toBeNull();
     expect(findFieldError(new FormControl(' ', parsedBy(parseRate)))).toBeNull();
-    expect(findFieldError(new FormControl('', [Validators.required, parsedBy(parseRate)]))).toBe('Fill this in.');
+    expect(findFieldError(new FormControl('', [Validators.required, parsedBy(parseRate)]))).toBe(
+      'Fill this in.',
+    );
   });
 });
 

@@ -12,7 +12,11 @@ describe('toMappingDraft', () => {
       { name: 'Cover', rows: 0, isHidden: false },
       { name: 'Week 48', rows: 60, isHidden: false },
     ];
-    expect(toMappingDraft({ mapping: null, sheets })).toEqual({ sheet: 'Week 48', headerRow: 1, columns: {} });
+    expect(toMappingDraft({ mapping: null, sheets })).toEqual({
+      sheet: 'Week 48',
+      headerRow: 1,
+      columns: {},
+    });
   });
 });
 

@@ -1,8 +1,4 @@
-import {
-  type TimesheetCheck,
-  type TimesheetField,
-  type TimesheetMapping,
-} from '@brakeven/contract';
+import { type TimesheetCheck, type TimesheetField, type TimesheetMapping } from '@brakeven/contract';
 
 /** The mapping to begin with: the one that the check used, or the first sheet in sight with nothing mapped. */
 export function toMappingDraft(check: Pick<TimesheetCheck, 'mapping' | 'sheets'>): TimesheetMapping {
@@ -17,7 +13,9 @@ export function withColumn(
   field: TimesheetField,
   column: string | null,
 ): TimesheetMapping {
-  const others = Object.entries(mapping.columns).filter(([name, letter]) => name !== field && letter !== column);
+  const others = Object.entries(mapping.columns).filter(
+    ([name, letter]) => name !== field && letter !== column,
+  );
   const columns = Object.fromEntries(column === null ? others : [...others, [field, column]]);
   return { ...mapping, columns };
 }

@@ -36,7 +36,10 @@ describe('toTableRows', () => {
 });
 
 describe('filterRows', () => {
-  const rows = toTableRows({ rows: [row(7), row(8, 'already-there'), row(9, 'refused')], problems: [problem(9)] });
+  const rows = toTableRows({
+    rows: [row(7), row(8, 'already-there'), row(9, 'refused')],
+    problems: [problem(9)],
+  });
 
   it('leaves those with problems, those of a state, or all', () => {
     expect(filterRows(rows, 'problems').map((item) => item.row)).toEqual([9]);

@@ -1,4 +1,9 @@
-import { type CheckedRow, type TimesheetCheck, type TimesheetField, type TimesheetProblem } from '@brakeven/contract';
+import {
+  type CheckedRow,
+  type TimesheetCheck,
+  type TimesheetField,
+  type TimesheetProblem,
+} from '@brakeven/contract';
 
 /** A row of the check table with what is wrong in it. */
 export interface TableRow extends CheckedRow {

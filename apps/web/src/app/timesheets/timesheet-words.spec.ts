@@ -22,7 +22,11 @@ describe('commitWords', () => {
 
 describe('count', () => {
   it('groups thousands and knows one from many', () => {
-    expect([count(1, 'row'), count(1204, 'row'), countEntries(0)]).toEqual(['1 row', '1,204 rows', '0 entries']);
+    expect([count(1, 'row'), count(1204, 'row'), countEntries(0)]).toEqual([
+      '1 row',
+      '1,204 rows',
+      '0 entries',
+    ]);
   });
 });
 

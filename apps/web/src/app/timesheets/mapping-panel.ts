@@ -1,0 +1,97 @@
+import {
+  ChangeDetectionStrategy,
+  Component,
+  computed,
+  effect,
+  input,
+  output,
+  signal,
+  untracked,
+} from '@angular/core';
+import { type TimesheetCheck, type TimesheetField, type TimesheetMapping } from '@brakeven/contract';
+import { DATE_FORMATS } from '@brakeven/values';
+import { toMappingDraft, withColumn, withHeaderAt } from './mapping-draft';
+import { FIELD_WORDS } from './timesheet-words';
+
+const QUIET_MS = 600;
+const OPTIONAL_FIELDS: readonly TimesheetField[] = ['machine', 'good', 'scrap', 'note'];
+
+/** Says which column holds what; every change is checked again after a short pause. */
+@Component({
+  selector: 'app-mapping-panel',
+  templateUrl: './mapping-panel.html',
+  styleUrl: './mapping-panel.scss',
+  changeDetection: ChangeDetectionStrategy.OnPush,
+})
+export class MappingPanel {
+  readonly check = input.required<TimesheetCheck>();
+  readonly mapping = input<TimesheetMapping | null>(null);
+  readonly isBusy = input(false);
+  readonly changed = output<TimesheetMapping>();
+
+  protected readonly fields = Object.keys(FIELD_WORDS) as TimesheetField[];
+  protected readonly words = FIELD_WORDS;
+  protected readonly dateFormats = DATE_FORMATS;
+  protected readonly draft = signal<TimesheetMapping>({ sheet: '', headerRow: 1, columns: {} });
+  protected readonly columns = computed(() =>
+    this.check().headerCells.map(({ column, text, sample }) => ({
+      column,
+      label: `${column} · ${text || 'no header'}${sample ? `, such as ${sample}` : ''}`,
+    })),
+  );
+  protected readonly samples = computed(
+    () => new Map(this.check().headerCells.map(({ column, sample }) => [column, sample])),
+  );
+  protected readonly missing = computed(() => {
+    const { columns } = this.draft();
+    return this.fields.filter((field) => !OPTIONAL_FIELDS.includes(field) && !columns[field]);
+  });
+  protected readonly missingWords = computed(() =>
+    this.missing()
+      .map((field) => FIELD_WORDS[field])
+      .join(', '),
+  );
+  private timer: ReturnType<typeof setTimeout> | undefined;
+
+  constructor() {
+    effect(() => {
+      const mapping = this.mapping() ?? toMappingDraft(this.check());
+      untracked(() => this.draft.set(mapping));
+    });
+  }
+
+  protected isRequired(field: TimesheetField): boolean {
+    return !OPTIONAL_FIELDS.includes(field);
+  }
+
+  protected setColumn(field: TimesheetField, column: string): void {
+    this.change(withColumn(this.draft(), field, column || null));
+  }
+
+  protected setSheet(sheet: string): void {
+    this.change(withHeaderAt(this.draft(), sheet, 1));
+  }
+
+  protected setHeaderRow(text: string): void {
+    const headerRow = Number(text);
+    if (Number.isInteger(headerRow) && headerRow >= 1 && headerRow <= 1000) {
+      this.change(withHeaderAt(this.draft(), this.draft().sheet, headerRow));
+    }
+  }
+
+  protected setDateFormat(text: string): void {
+    const dateFormat = DATE_FORMATS.find((format) => format === text);
+    this.change({ ...this.draft(), dateFormat });
+  }
+
+  protected setDecimalMark(text: string): void {
+    const decimalMark = text === '.' || text === ',' ? text : undefined;
+    this.change({ ...this.draft(), decimalMark });
+  }
+
+  private change(mapping: TimesheetMapping): void {
+    this.draft.set(mapping);
+    clearTimeout(this.timer);
+    this.timer = setTimeout(() => this.changed.emit(mapping), QUIET_MS);
+  }
+}

@@ -1,0 +1,111 @@
+import { ChangeDetectionStrategy, Component, computed, input, output } from '@angular/core';
+import { type TimesheetProblem } from '@brakeven/contract';
+import { type ChosenName, groupUnknownNames, type UnknownName } from './group-unknown-names';
+import { type KnownName } from './known-names';
+import { NameChoice } from './name-choice';
+import { count, KIND_WORDS } from './timesheet-words';
+
+const LISTED_MAX = 40;
+
+/** What is to be settled, beside the table: names once for all their rows, then everything else cell by cell. */
+@Component({
+  selector: 'app-problem-panel',
+  imports: [NameChoice],
+  template: `
+    @if (names().length > 0) {
+      <section aria-labelledby="names-heading">
+        <h3 id="names-heading">
+          Names to settle <span class="muted">{{ names().length }}</span>
+        </h3>
+        <ul>
+          @for (name of names(); track name.kind + name.spelling) {
+            <li class="name">
+              <p>
+                <strong>“{{ name.spelling }}”</strong>
+                <span class="muted"
+                  >{{ kindWords[name.kind].one }}, {{ rowsOf(name) }}, first in {{ name.firstCell }}</span
+                >
+              </p>
+              <app-name-choice [name]="name" [isDisabled]="isBusy()" (chosen)="choose(name, $event)" />
+            </li>
+          }
+        </ul>
+      </section>
+    }
+    @if (chosen().length > 0) {
+      <section aria-labelledby="chosen-heading">
+        <h3 id="chosen-heading">Settled</h3>
+        <p class="muted">Remembered for the next timesheet when this one is added.</p>
+        <ul>
+          @for (name of chosen(); track name.kind + name.spelling) {
+            <li class="settled">
+              <span
+                >“{{ name.spelling }}” is <strong>{{ name.label }}</strong></span
+              >
+              <button
+                type="button"
+                class="button quiet"
+                [disabled]="isBusy()"
+                [attr.aria-label]="'Take back: ' + name.spelling + ' is ' + name.label"
+                (click)="takenBack.emit(name)"
+              >
+                Take back
+              </button>
+            </li>
+          }
+        </ul>
+      </section>
+    }
+    @if (others().length > 0) {
+      <section aria-labelledby="others-heading">
+        <h3 id="others-heading">
+          Cells to correct <span class="muted">{{ others().length }}</span>
+        </h3>
+        <p class="muted">
+          Correct them in your workbook, save, and drop the file again. Nothing is added twice.
+        </p>
+        <ul class="cells">
+          @for (problem of listed(); track problem.cell + problem.code) {
+            <li>
+              <button type="button" class="jump" (click)="shown.emit(problem)">
+                <span class="cell" [class.doubtful]="problem.severity === 'warning'">{{ problem.cell }}</span>
+                <span>
+                  @if (problem.severity === 'warning') {
+                    <strong>Warning:</strong>
+                  }
+                  {{ problem.message }}
+                </span>
+              </button>
+            </li>
+          }
+        </ul>
+        @if (others().length > listed().length) {
+          <p class="muted">{{ others().length - listed().length }} more in the table.</p>
+        }
+      </section>
+    }
+  `,
+  styleUrl: './problem-panel.scss',
+  changeDetection: ChangeDetectionStrategy.OnPush,
+})
+export class ProblemPanel {
+  readonly problems = input.required<readonly TimesheetProblem[]>();
+  readonly chosen = input.required<readonly ChosenName[]>();
+  readonly isBusy = input(false);
+  readonly nameChosen = output<ChosenName>();
+  readonly takenBack = output<ChosenName>();
+  readonly shown = output<TimesheetProblem>();
+
+  protected readonly kindWords = KIND_WORDS;
+  protected readonly names = computed(() => groupUnknownNames(this.problems()));
+  protected readonly others = computed(() => this.problems().filter(({ alias }) => alias === null));
+  protected readonly listed = computed(() => this.others().slice(0, LISTED_MAX));
+
+  protected rowsOf(name: UnknownName): string {
+    return count(name.rows.length, 'row');
+  }
+
+  protected choose(name: UnknownName, known: KnownName): void {
+    this.nameChosen.emit({ kind: name.kind, spelling: name.spelling, ...known });
+  }
+}
