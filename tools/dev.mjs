@@ -1,7 +1,7 @@
 import './setup/node-version.mjs';
 import { nxEnvironment, nxProgram } from './setup/build.mjs';
 import { findFreePort, startService } from './setup/processes.mjs';
-import { seedDemoShop, startApi, turnApiLog } from './setup/programs.mjs';
+import { apiLog, seedDemoShop, startApi, turnApiLog } from './setup/programs.mjs';
 import { createProgress, runScript } from './setup/progress.mjs';
 import { announceInstance, refuseSecondInstance, stopAbandonedServer } from './setup/running-instance.mjs';
 import { setUp, tellWaiting } from './setup/set-up.mjs';
@@ -56,7 +56,13 @@ function startReloadingApi(environment, port) {
   const restart = async () => {
     await api?.stop();
     try {
-      api = await startApi({ environment, port, onError: (line) => progress.say(line), mode: 'development' });
+      api = await startApi({
+        environment,
+        port,
+        logFile: apiLog,
+        onError: (line) => progress.say(line),
+        mode: 'development',
+      });
       progress.say('✓ The API is up');
     } catch (error) {
       api = null;

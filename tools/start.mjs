@@ -59,7 +59,12 @@ async function startOnSomePort(environment, wantedPort) {
   for (let attempt = 1; ; attempt += 1) {
     const port = wantedPort ?? (await findFreePort(configuration.webPort));
     try {
-      const service = await startApi({ environment, port, onError: (line) => progress.say(line) });
+      const service = await startApi({
+        environment,
+        port,
+        logFile: apiLog,
+        onError: (line) => progress.say(line),
+      });
       saveConfiguration({ ...configuration, webPort: port });
       return service;
     } catch (error) {

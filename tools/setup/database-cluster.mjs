@@ -16,6 +16,7 @@ import { setTimeout as sleep } from 'node:timers/promises';
 import { isRoot } from './configuration.mjs';
 import { getPostgresPrograms } from './postgres-programs.mjs';
 import { commandLine, isAlive, isPortFree, lastLines, run, runOrThrow, waitUntil } from './processes.mjs';
+import { atShutdown } from './shutdown.mjs';
 import { SetupError } from './workspace.mjs';
 
 /**
@@ -73,6 +74,7 @@ export class DatabaseCluster {
     drafts.forEach((name) => rmSync(join(directory, name), { recursive: true, force: true }));
     const draft = join(directory, `draft-${process.pid}`);
     const passwordFile = `${draft}.password`;
+    const forget = atShutdown(() => rmSync(passwordFile, { force: true }));
     try {
       writeFileSync(passwordFile, superuserPassword, { mode: 0o600 });
       if (user) {
@@ -85,6 +87,7 @@ export class DatabaseCluster {
       ]);
     } finally {
       rmSync(passwordFile, { force: true });
+      forget();
     }
     renameSync(draft, this.dataDirectory);
   }

@@ -11,6 +11,7 @@ import { SetupError, root } from './workspace.mjs';
  * @property {NodeJS.ProcessEnv} [env] the script's own unless told
  * @property {string} [input] text for its standard input
  * @property {{ uid: number, gid: number } | null} [user] whom to run it as, when not oneself
+ * @property {number} [timeLimitMs] after which it is stopped, with code 124
  * @property {(text: string) => void} [onOutput] both outputs as they come
  */
 
@@ -30,6 +31,14 @@ export function run(command, args, options = {}) {
     ...options.user,
   });
   const forget = atShutdown(() => stopGroup(child));
+  let isLate = false;
+  const limit = setTimeout(
+    () => {
+      isLate = true;
+      void stopGroup(child);
+    },
+    options.timeLimitMs ?? 2 ** 31 - 1,
+  );
   let stdout = '';
   let output = '';
   const keep = (/** @type {string} */ text) => {
@@ -44,12 +53,14 @@ export function run(command, args, options = {}) {
   child.stdin.on('error', () => undefined).end(options.input ?? '');
   return new Promise((done) => {
     child.on('error', (error) => {
+      clearTimeout(limit);
       forget();
       done({ code: 127, stdout, output: `${output}${error.message}\n` });
     });
     child.on('close', (code) => {
+      clearTimeout(limit);
       forget();
-      done({ code: code ?? 1, stdout, output });
+      done({ code: isLate ? 124 : (code ?? 1), stdout, output });
     });
   });
 }

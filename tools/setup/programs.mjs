@@ -68,6 +68,7 @@ export async function seedDemoShop(environment) {
  * @typedef {object} ApiOptions
  * @property {DatabaseEnvironment} environment
  * @property {number} port on 127.0.0.1
+ * @property {string} logFile where its log is added to
  * @property {(line: string) => void} onError told of each error that the server logs
  * @property {string} [mode] NODE_ENV
  */
@@ -77,7 +78,7 @@ export async function seedDemoShop(environment) {
  * @param {ApiOptions} options
  * @returns {Promise<import('./processes.mjs').Service & { address: string }>}
  */
-export async function startApi({ environment, port, onError, mode = 'production' }) {
+export async function startApi({ environment, port, logFile, onError, mode = 'production' }) {
   const address = `http://127.0.0.1:${port}`;
   let said = '';
   const service = startService(process.execPath, [builtFile('api')], {
@@ -91,7 +92,7 @@ export async function startApi({ environment, port, onError, mode = 'production'
     },
     onOutput: (text) => {
       said = (said + text).slice(-20_000);
-      appendFileSync(apiLog, text);
+      appendFileSync(logFile, text);
       text.split('\n').filter(isErrorLine).forEach(onError);
     },
   });

@@ -58,8 +58,9 @@ export function formatDuration(ms) {
  * code is set.
  * @param {() => Promise<number | void>} main its exit code, 0 unless told
  * @param {(signal: string) => void} [announce] told once when a signal ends it
+ * @param {() => void} [conclude] has the last word, after everything started has been stopped
  */
-export async function runScript(main, announce) {
+export async function runScript(main, announce, conclude) {
   stopOnSignals(announce);
   let code;
   try {
@@ -70,6 +71,7 @@ export async function runScript(main, announce) {
     code = foreseen ? error.exitCode : 1;
   }
   await shutDown();
+  conclude?.();
   process.exit(code);
 }
 

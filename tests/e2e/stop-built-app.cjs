@@ -1,0 +1,2 @@
+/** Stops what serve-built-app.cjs has started. */
+module.exports = () => globalThis.builtApp?.stop();
