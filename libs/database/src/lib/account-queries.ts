@@ -58,13 +58,19 @@ export async function findSessionUserRow(
   shopId: string,
   userId: string,
 ): Promise<SessionUserRow | null> {
-  const { rows } = await sql<SessionUserRow>`select * from find_session_user(${shopId}, ${userId})`.execute(db);
+  const { rows } = await sql<SessionUserRow>`select * from find_session_user(${shopId}, ${userId})`.execute(
+    db,
+  );
   return rows[0] ?? null;
 }
 
 /** Notes that somebody has signed in. */
 export async function markSignedIn(trx: ShopTransaction, userId: string): Promise<void> {
-  await trx.updateTable('userAccount').set({ lastSignInAt: sql`now()` }).where('userId', '=', userId).execute();
+  await trx
+    .updateTable('userAccount')
+    .set({ lastSignInAt: sql`now()` })
+    .where('userId', '=', userId)
+    .execute();
 }
 
 /** The hash of an account's password, with the address that its attempts are counted by. */
@@ -111,11 +117,7 @@ export function listUserRows(trx: ShopTransaction) {
 
 /** One account of the shop. */
 export function findUserRow(trx: ShopTransaction, userId: string) {
-  return trx
-    .selectFrom('userAccount')
-    .select(USER_COLUMNS)
-    .where('userId', '=', userId)
-    .executeTakeFirst();
+  return trx.selectFrom('userAccount').select(USER_COLUMNS).where('userId', '=', userId).executeTakeFirst();
 }
 
 /** Adds an account. */

@@ -34,7 +34,8 @@ const UNREACHABLE = new Set([
   '57P02',
   '57P03',
 ]);
-const LOST = /timeout exceeded when trying to connect|Connection terminated|SASL|server closed the connection/i;
+const LOST =
+  /timeout exceeded when trying to connect|Connection terminated|SASL|server closed the connection/i;
 
 /** Whether an error means that the database cannot be reached, or not as this user. */
 export function isUnreachable(error: unknown): boolean {
