@@ -16,7 +16,8 @@ import { showIssues } from './parsed-by';
     <form [formGroup]="form()" (ngSubmit)="submit()" novalidate>
       <h2 mat-dialog-title>{{ heading() }}</h2>
       <mat-dialog-content>
-        <ng-content />
+        <ng-content select="[lead]" />
+        <div class="fields"><ng-content /></div>
         @if (problem(); as problem) {
           <div class="problem" role="alert">
             <strong>{{ problem.title }}</strong>

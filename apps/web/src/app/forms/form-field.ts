@@ -52,6 +52,9 @@ export interface FieldOption {
     :host {
       padding: 7px 0;
     }
+    :host(.wide) {
+      grid-column: 1 / -1;
+    }
   `,
   changeDetection: ChangeDetectionStrategy.OnPush,
 })
