@@ -1,3 +1,4 @@
 import { type Routes } from '@angular/router';
+import { PaybackPage } from './payback-page';
 
-export const paybackRoutes: Routes = [];
+export const paybackRoutes: Routes = [{ path: '', title: 'Payback', component: PaybackPage }];

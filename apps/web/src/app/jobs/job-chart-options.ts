@@ -1,0 +1,129 @@
+import { type JobDetail } from '@brakeven/contract';
+import { type ChartOption, type ChartPalette, type ChartTable } from '@brakeven/ui';
+import { formatHours, formatLocalDate, formatMoney, toLocalDate } from '@brakeven/values';
+
+type Category = 'labour' | 'machine' | 'overhead';
+
+const CATEGORIES: readonly { field: Category; word: string; colour: keyof ChartPalette }[] = [
+  { field: 'labour', word: 'Labour', colour: 'layoutBlue' },
+  { field: 'machine', word: 'Machine', colour: 'brass' },
+  { field: 'overhead', word: 'Overhead', colour: 'inkMuted' },
+];
+
+/** A job's cost by category, as bars with their share. */
+export function toCategoryChartOption(job: JobDetail, currency: string, palette: ChartPalette): ChartOption {
+  const bars = CATEGORIES.map(({ field, colour }) => ({
+    value: Number(job[field] ?? 0),
+    itemStyle: { color: palette[colour] },
+    label: { formatter: toShareText(job, field, currency) },
+  }));
+  return {
+    ...toFrame(palette),
+    xAxis: { type: 'value', show: false, max: ({ max }: { max: number }) => max * 1.5 || 1 },
+    yAxis: {
+      type: 'category',
+      inverse: true,
+      data: CATEGORIES.map(({ word }) => word),
+      axisLine: { show: false },
+      axisTick: { show: false },
+      axisLabel: { color: palette.ink, fontSize: 13 },
+    },
+    series: [
+      {
+        type: 'bar',
+        data: bars,
+        barWidth: 22,
+        silent: true,
+        itemStyle: { borderRadius: 2 },
+        label: { show: true, position: 'right', color: palette.ink },
+      },
+    ],
+  };
+}
+
+/** A job's cost, or its hours where money is not shown, by week. */
+export function toWeekChartOption(job: JobDetail, currency: string, palette: ChartPalette): ChartOption {
+  const hasMoney = job.total !== undefined;
+  const toText = (value: unknown) =>
+    hasMoney ? formatMoney(Number(value).toFixed(2), currency) : `${formatHours(String(value))} h`;
+  return {
+    ...toFrame(palette),
+    tooltip: {
+      trigger: 'axis',
+      backgroundColor: palette.sheet,
+      borderColor: palette.line,
+      textStyle: { color: palette.ink },
+      valueFormatter: toText,
+    },
+    xAxis: {
+      type: 'category',
+      data: job.byWeek.map(({ weekFrom }) => formatLocalDate(toLocalDate(weekFrom), 'dayMonth')),
+      axisLine: { lineStyle: { color: palette.line } },
+      axisTick: { show: false },
+      axisLabel: { color: palette.inkMuted, hideOverlap: true },
+    },
+    yAxis: {
+      type: 'value',
+      splitNumber: 3,
+      splitLine: { lineStyle: { color: palette.line } },
+      axisLabel: { color: palette.inkMuted },
+    },
+    series: [
+      {
+        name: hasMoney ? 'Cost' : 'Hours',
+        type: 'bar',
+        data: job.byWeek.map((week) => Number(week.total ?? week.hours)),
+        barMaxWidth: 34,
+        itemStyle: { color: palette.layoutBlue, borderRadius: [2, 2, 0, 0] },
+      },
+    ],
+  };
+}
+
+/** Cost by category, for reading. */
+export function toCategoryTable(job: JobDetail, currency: string): ChartTable {
+  return {
+    headers: ['Category', 'Cost', 'Share'],
+    rows: CATEGORIES.map(({ field, word }) => [
+      word,
+      formatMoney(job[field] ?? '0', currency),
+      `${toShare(job, field)} %`,
+    ]),
+  };
+}
+
+/** Hours and cost by week, for reading. */
+export function toWeekTable(job: JobDetail, currency: string): ChartTable {
+  const hasMoney = job.total !== undefined;
+  return {
+    headers: ['Week from', 'Hours', ...(hasMoney ? ['Cost'] : [])],
+    rows: job.byWeek.map(({ weekFrom, hours, total }) => [
+      formatLocalDate(toLocalDate(weekFrom)),
+      formatHours(hours),
+      ...(total === undefined ? [] : [formatMoney(total, currency)]),
+    ]),
+  };
+}
+
+/** What the chart by category says. */
+export function toCategorySummary(job: JobDetail, currency: string): string {
+  return CATEGORIES.map(({ field, word }) => `${word} ${toShareText(job, field, currency)}`).join(', ');
+}
+
+function toShareText(job: JobDetail, field: Category, currency: string): string {
+  return `${formatMoney(job[field] ?? '0', currency)} · ${toShare(job, field)} %`;
+}
+
+/** A whole percentage, only for the eye. */
+function toShare(job: JobDetail, field: Category): number {
+  const total = Number(job.total ?? 0);
+  return total === 0 ? 0 : Math.round((Number(job[field] ?? 0) / total) * 100);
+}
+
+function toFrame(palette: ChartPalette): ChartOption {
+  return {
+    animation: false,
+    textStyle: { fontFamily: 'Roboto, sans-serif', color: palette.inkMuted },
+    grid: { left: 0, right: 8, top: 14, bottom: 0, outerBoundsMode: 'same', outerBoundsContain: 'axisLabel' },
+  };
+}

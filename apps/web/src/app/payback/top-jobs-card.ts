@@ -1,0 +1,56 @@
+import { ChangeDetectionStrategy, Component, input } from '@angular/core';
+import { RouterLink } from '@angular/router';
+import { type FigureRef, type Payback } from '@brakeven/contract';
+import { EmptyState, Figure, MoneyPipe } from '@brakeven/ui';
+import { toJobShareRef } from './payback-refs';
+
+/** The jobs that have added most to the payback. */
+@Component({
+  selector: 'app-top-jobs-card',
+  imports: [EmptyState, Figure, MoneyPipe, RouterLink],
+  template: `
+    <h2>Jobs that paid most</h2>
+    @if (payback().topJobs.length > 0) {
+      <table class="figures">
+        <tbody>
+          @for (job of payback().topJobs; track job.jobId) {
+            <tr>
+              <th scope="row">
+                <a [routerLink]="['/jobs', job.jobId]">{{ job.number }}</a> {{ job.title }}
+              </th>
+              <td class="number">
+                <app-figure [value]="job.net" [ref]="ref(job.jobId)" [label]="'Net of job ' + job.number" />
+              </td>
+            </tr>
+          }
+          @if (payback().otherJobs.jobs > 0) {
+            <tr class="muted">
+              <th scope="row">
+                {{ payback().otherJobs.jobs }} more {{ payback().otherJobs.jobs === 1 ? 'job' : 'jobs' }}
+              </th>
+              <td class="number">{{ payback().otherJobs.net | money }}</td>
+            </tr>
+          }
+        </tbody>
+      </table>
+    } @else {
+      <app-empty-state
+        title="No job has run on it yet"
+        text="Hours on the machine from its first day in service appear here once they are rolled up."
+      />
+    }
+  `,
+  styles: `
+    :host {
+      display: block;
+    }
+  `,
+  changeDetection: ChangeDetectionStrategy.OnPush,
+})
+export class TopJobsCard {
+  readonly payback = input.required<Payback>();
+
+  protected ref(jobId: string): FigureRef {
+    return toJobShareRef(this.payback().machine.machineId, jobId);
+  }
+}
