@@ -1,7 +1,7 @@
 import { type Kysely, sql } from 'kysely';
 
 /**
- * What the rollup writes. Cost lines and gaps carry no foreign keys: only the rollup writes them, from rows that
+ * What the rollup writes. Lines, gaps and days carry no foreign keys: only the rollup writes them, from rows that
  * have them, and a million checks would cost more than the lines. Every read joins on shop_id and id.
  * The hours of a job day are those of all entries that owe the category, whether or not a rate was found.
  */
@@ -43,20 +43,19 @@ export async function up(db: Kysely<unknown>): Promise<void> {
   );
   await sql`
     create table job_day (
-      shop_id uuid not null references shop,
+      shop_id uuid not null,
       job_id uuid not null,
       worked_on date not null,
       category text not null,
       hours numeric(12,4) not null,
       amount numeric(16,2) not null,
       lines integer not null,
-      primary key (shop_id, job_id, worked_on, category),
-      foreign key (shop_id, job_id) references job
+      primary key (shop_id, job_id, worked_on, category)
     )`.execute(db);
   await sql`create index job_day_day on job_day (shop_id, worked_on)`.execute(db);
   await sql`
     create table machine_day (
-      shop_id uuid not null references shop,
+      shop_id uuid not null,
       machine_id uuid not null,
       worked_on date not null,
       job_id uuid not null,
@@ -65,14 +64,12 @@ export async function up(db: Kysely<unknown>): Promise<void> {
       earned numeric(16,2) not null,
       operator_labour numeric(16,2) not null,
       running numeric(16,2) not null,
-      primary key (shop_id, machine_id, worked_on, job_id),
-      foreign key (shop_id, machine_id) references machine,
-      foreign key (shop_id, job_id) references job
+      primary key (shop_id, machine_id, worked_on, job_id)
     )`.execute(db);
   await sql`create index machine_day_day on machine_day (shop_id, worked_on)`.execute(db);
   await sql`
     create table rate_gap (
-      shop_id uuid not null references shop,
+      shop_id uuid not null,
       worked_on date not null,
       category text not null,
       entry_id uuid not null,
