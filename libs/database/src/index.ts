@@ -6,6 +6,7 @@ export * from './lib/constraint-violation';
 export * from './lib/machine-queries';
 export * from './lib/migrate';
 export * from './lib/people-queries';
+export * from './lib/register-rows';
 export * from './lib/shop-queries';
 export * from './lib/tables';
 export * from './lib/tenancy';

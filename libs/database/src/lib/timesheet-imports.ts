@@ -4,7 +4,10 @@ import { type ShopTransaction } from './tenancy';
 
 export type TimesheetImportRow = Selectable<TimesheetImportTable>;
 /** An import without what only its own page shows. */
-export type TimesheetImportSummaryRow = Omit<TimesheetImportRow, 'problems' | 'mapping' | 'shopId' | 'fileSha256'>;
+export type TimesheetImportSummaryRow = Omit<
+  TimesheetImportRow,
+  'problems' | 'mapping' | 'shopId' | 'fileSha256'
+>;
 /** The kept file with how it was read. */
 export interface KeptFile {
   fileName: string;
