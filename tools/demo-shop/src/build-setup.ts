@@ -1,7 +1,24 @@
-import { addDays, forceText, type LocalDate, lengthText, toForce, toLength, toLocalDate } from '@brakeven/values';
+import {
+  addDays,
+  forceText,
+  type LocalDate,
+  lengthText,
+  toForce,
+  toLength,
+  toLocalDate,
+} from '@brakeven/values';
 import { type SetupData } from '@brakeven/workbook';
 import { type PlannedJob } from './plan-jobs';
-import { CUSTOMERS, type DemoMachine, MACHINES, OPERATIONS, PEOPLE, PRESS_COSTS, PRESS_WEEK, WEEKS } from './story';
+import {
+  CUSTOMERS,
+  type DemoMachine,
+  MACHINES,
+  OPERATIONS,
+  PEOPLE,
+  PRESS_COSTS,
+  PRESS_WEEK,
+  WEEKS,
+} from './story';
 
 const LONG_AGO = toLocalDate('2018-05-14');
 /** Weeks into the history at which raises and the new overhead rate came. */
@@ -23,9 +40,23 @@ export function buildSetup(
   const ratesFrom = addDays(firstMonday, -60);
   return {
     people: PEOPLE.flatMap((person) => [
-      { number: person.number, name: person.name, rateFrom: ratesFrom, wagePerHour: person.wagePerHour, burdenPercent: person.burdenPercent },
+      {
+        number: person.number,
+        name: person.name,
+        rateFrom: ratesFrom,
+        wagePerHour: person.wagePerHour,
+        burdenPercent: person.burdenPercent,
+      },
       ...(person.raisedTo
-        ? [{ number: person.number, name: person.name, rateFrom: inWeek(RAISE_WEEK), wagePerHour: person.raisedTo, burdenPercent: person.burdenPercent }]
+        ? [
+            {
+              number: person.number,
+              name: person.name,
+              rateFrom: inWeek(RAISE_WEEK),
+              wagePerHour: person.raisedTo,
+              burdenPercent: person.burdenPercent,
+            },
+          ]
         : []),
     ]),
     customers: CUSTOMERS.map((name) => ({ name })),
