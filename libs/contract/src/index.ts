@@ -5,6 +5,7 @@ export * from './lib/hours';
 export * from './lib/jobs';
 export * from './lib/limits';
 export * from './lib/machines';
+export * from './lib/openapi';
 export * from './lib/payback';
 export * from './lib/people';
 export * from './lib/problem';

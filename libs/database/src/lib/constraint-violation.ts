@@ -44,3 +44,17 @@ export function isUnreachable(error: unknown): boolean {
   const { code } = error as { code?: string };
   return (code !== undefined && UNREACHABLE.has(code)) || LOST.test(error.message);
 }
+
+const NOT_STORABLE: Readonly<Record<string, string>> = {
+  '22003': 'A number is too large to be kept.',
+  '22007': 'A date cannot be read.',
+  '22008': 'A date is outside the years that can be kept.',
+  '22021': 'A text holds a character that cannot be kept. Type it anew.',
+  '22P05': 'A text holds a character that cannot be kept. Type it anew.',
+};
+
+/** Words for a value that the database cannot keep; null if an error is about something else. */
+export function findUnstorableValue(error: unknown): string | null {
+  const code = error instanceof Error ? (error as { code?: string }).code : undefined;
+  return (code !== undefined && NOT_STORABLE[code]) || null;
+}

@@ -1,12 +1,7 @@
-import {
-  connect,
-  type Database,
-  isUnreachable,
-  listPendingMigrations,
-  migrateToLatest,
-} from '@brakeven/database';
+import { connect, type Database, listPendingMigrations, migrateToLatest } from '@brakeven/database';
 
-export { isUnreachable, listPendingMigrations, type Database };
+export { findUnstorableValue, isUnreachable } from '@brakeven/database';
+export { listPendingMigrations, type Database };
 
 /** Opens a pool of connections; nothing is connected before the first query. */
 export const openDatabase = connect;

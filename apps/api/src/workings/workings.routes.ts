@@ -1,0 +1,10 @@
+import { ENDPOINTS } from '@brakeven/contract';
+import { getJobHoursWorkings, getJobWorkings, getPaybackWorkings } from '@brakeven/use-cases';
+import { type Api } from '../api';
+
+/** How each figure was made. */
+export function mountWorkings({ mount }: Api): void {
+  mount(ENDPOINTS.getJobWorkings, ({ context, query }) => getJobWorkings(context, query));
+  mount(ENDPOINTS.getJobHoursWorkings, ({ context, query }) => getJobHoursWorkings(context, query));
+  mount(ENDPOINTS.getPaybackWorkings, ({ context, query }) => getPaybackWorkings(context, query));
+}
