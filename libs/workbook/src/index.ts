@@ -15,3 +15,7 @@ export {
   headerSignature,
   type TimesheetHeader,
 } from './timesheet-mapping';
+export { readSetupWorkbook } from './read-setup-workbook';
+export { EXPLAINING_SHEET } from './setup-columns';
+export { writeSetupTemplate, writeSetupWorkbook } from './write-setup-workbook';
+export { type TimesheetLine, type TimesheetWorkbook, writeTimesheetWorkbook } from './write-timesheet';

@@ -37,7 +37,7 @@ export function sortTimesheetRows(
   const lastHours = guesses.findLastIndex(({ guess }) => ['entry', 'total', 'bare'].includes(guess));
   return guesses.map(({ guess, ...one }, index) => {
     if (guess === 'bare') return { ...one, role: index === lastHours ? 'total' : 'entry' };
-    if (guess === 'text') return { ...one, role: index > lastEntry ? 'text' : 'entry' };
+    if (guess === 'text' && index < lastEntry) return { ...one, role: isUnmapped(one) ? 'blank' : 'entry' };
     return { ...one, role: guess };
   });
 }
@@ -50,9 +50,13 @@ function guessRole({ row, fields }: Omit<SortedRow, 'role'>, header: FieldCells)
   const isCounting = COUNTED.some((field) => holdsValue(fields[field]));
   if (labels.length > 0 && isCounting && (isBare || isNameless)) return 'total';
   if (isBare && holdsValue(fields.hours)) return 'bare';
-  if (Object.keys(fields).length === 0) return row.cells.length === 1 ? 'text' : 'blank';
+  if (isUnmapped({ fields })) return row.cells.length === 1 ? 'text' : 'blank';
   if (repeatsHeader(fields, header)) return 'header';
   return isFooter(fields) ? 'text' : 'entry';
+}
+
+function isUnmapped({ fields }: Pick<SortedRow, 'fields'>): boolean {
+  return Object.keys(fields).length === 0;
 }
 
 function isTotalLabel({ kind, text }: RawCell): boolean {
@@ -75,5 +79,6 @@ function repeatsHeader(fields: FieldCells, header: FieldCells): boolean {
 
 function isFooter(fields: FieldCells): boolean {
   const hasCounts = COUNTED.some((field) => fields[field]);
-  return !hasCounts && fields.date?.kind !== 'date' && Object.keys(fields).length <= FOOTER_FIELDS_MAX;
+  const isDated = fields.date?.kind === 'date' || /^\d/.test(fields.date?.text ?? '');
+  return !hasCounts && !isDated && Object.keys(fields).length <= FOOTER_FIELDS_MAX;
 }
