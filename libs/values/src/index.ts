@@ -11,4 +11,5 @@ export * from './parsed';
 export * from './percent';
 export * from './rate';
 export * from './serial-date';
+export * from './stress';
 export * from './unit-system';

@@ -1,6 +1,7 @@
 import { type Branded, D, type DecimalInput, type Decimal, roundHalfUp } from './decimal';
+import { findFractionInches } from './fraction-length';
 import { formatNumber } from './number-text';
-import { type Parsed } from './parsed';
+import { accepted, type Parsed } from './parsed';
 import { findUnit, fromBaseUnit, parseQuantity, toBaseUnit, type UnitTable } from './quantity';
 import { type UnitSystem } from './unit-system';
 
@@ -13,8 +14,8 @@ export type LengthUnit = 'mm' | 'in' | 'ft';
 // Source: international yard and pound agreement of 1959 (NIST SP 811, appendix B): 1 in = 25.4 mm exactly.
 const LENGTHS: UnitTable<LengthUnit> = {
   mm: { factor: '1', words: ['mm', 'millimeter', 'millimeters', 'millimetre', 'millimetres'] },
-  in: { factor: '25.4', words: ['in', 'inch', 'inches', '"', '″'] },
-  ft: { factor: '304.8', words: ['ft', 'foot', 'feet', "'", '′'] },
+  in: { factor: '25.4', words: ['in', 'inch', 'inches', '"', '″', '”'] },
+  ft: { factor: '304.8', words: ['ft', 'foot', 'feet', "'", '′', '’'] },
 };
 
 /** A length of so many units, exactly. */
@@ -32,10 +33,22 @@ export function lengthText(length: Length): string {
   return roundHalfUp(length, 5).toFixed(5);
 }
 
-/** Reads '72', '72 in', '6 ft' or '1828.8 mm'; a bare number is in `unitIfNone`. Codes as in `parseQuantity`. */
+/**
+ * Reads '72', '72 in', '6 ft', '1828.8 mm', and inches with a fraction or behind feet: '3/16', '1 1/2 in', `5' 6 1/2"`.
+ * A bare number is in `unitIfNone`, a bare fraction in inches. Codes as in `parseQuantity`.
+ */
 export function parseLength(text: string, unitIfNone: LengthUnit): Parsed<Length> {
+  const inches = findFractionInches(text);
+  if (inches) return accepted(toLength(inches, 'in'));
   const example = 'Write a length such as 72 in, 6 ft or 1828.8 mm.';
   return parseQuantity(LENGTHS, text, unitIfNone, example) as Parsed<Length>;
+}
+
+/** The unit that a length is written in, feet with inches behind them counting as inches; undefined for a bare number. */
+export function findWrittenLengthUnit(text: string): LengthUnit | undefined {
+  if (findFractionInches(text)) return 'in';
+  const [, unit = ''] = /^[+−-]?[\d.,]+\s*(.*)$/.exec(text.trim()) ?? [];
+  return findUnit(LENGTHS, unit);
 }
 
 /** Finds the unit of length that a word names: 'in', 'inches', 'mm', 'ft'. */
