@@ -81,7 +81,14 @@ export const nxProgram = join(root, 'node_modules/nx/dist/bin/nx.js');
 
 /** @returns {NodeJS.ProcessEnv} an environment in which Nx and Angular ask nothing and leave no server behind */
 export function nxEnvironment() {
-  return { ...process.env, NX_DAEMON: 'false', NX_TUI: 'false', NG_CLI_ANALYTICS: 'false', CI: 'true' };
+  return {
+    ...process.env,
+    NX_DAEMON: 'false',
+    NX_TUI: 'false',
+    NX_ISOLATE_PLUGINS: 'false',
+    NG_CLI_ANALYTICS: 'false',
+    CI: 'true',
+  };
 }
 
 /**
