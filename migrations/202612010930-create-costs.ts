@@ -58,15 +58,27 @@ export async function up(db: Kysely<unknown>): Promise<void> {
       shop_id uuid not null,
       machine_id uuid not null,
       worked_on date not null,
+      hours numeric(12,4) not null,
+      billable_hours numeric(12,4) not null,
+      earned numeric(16,2) not null,
+      operator_labour numeric(16,2) not null,
+      running numeric(16,2) not null,
+      primary key (shop_id, machine_id, worked_on)
+    )`.execute(db);
+  await sql`create index machine_day_day on machine_day (shop_id, worked_on)`.execute(db);
+  await sql`
+    create table machine_job_day (
+      shop_id uuid not null,
+      worked_on date not null,
+      machine_id uuid not null,
       job_id uuid not null,
       hours numeric(12,4) not null,
       billable_hours numeric(12,4) not null,
       earned numeric(16,2) not null,
       operator_labour numeric(16,2) not null,
       running numeric(16,2) not null,
-      primary key (shop_id, machine_id, worked_on, job_id)
+      primary key (shop_id, worked_on, machine_id, job_id)
     )`.execute(db);
-  await sql`create index machine_day_day on machine_day (shop_id, worked_on)`.execute(db);
   await sql`
     create table rate_gap (
       shop_id uuid not null,
@@ -98,10 +110,20 @@ export async function up(db: Kysely<unknown>): Promise<void> {
       foreign key (shop_id, machine_id) references machine,
       foreign key (shop_id, run_id) references rollup_run
     )`.execute(db);
-  for (const table of ['rollup_run', 'cost_line', 'job_day', 'machine_day', 'rate_gap', 'payback_snapshot'])
+  for (const table of [
+    'rollup_run',
+    'cost_line',
+    'job_day',
+    'machine_day',
+    'machine_job_day',
+    'rate_gap',
+    'payback_snapshot',
+  ])
     await sql`select secure_table(${table}, null)`.execute(db);
 }
 
 export async function down(db: Kysely<unknown>): Promise<void> {
-  await sql`drop table payback_snapshot, rate_gap, machine_day, job_day, cost_line, rollup_run`.execute(db);
+  await sql`drop table payback_snapshot, rate_gap, machine_job_day, machine_day, job_day, cost_line, rollup_run`.execute(
+    db,
+  );
 }

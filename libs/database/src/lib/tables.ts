@@ -224,17 +224,20 @@ export interface JobDayTable {
   amount: Numeric;
   lines: number;
 }
-/** What a machine in service did for one job on one day. */
+/** What a machine in service did on one day. */
 export interface MachineDayTable {
   shopId: string;
   machineId: string;
   workedOn: string;
-  jobId: string;
   hours: Numeric;
   billableHours: Numeric;
   earned: Numeric;
   operatorLabour: Numeric;
   running: Numeric;
+}
+/** The part of a machine's day that belongs to one job. */
+export interface MachineJobDayTable extends MachineDayTable {
+  jobId: string;
 }
 export interface RateGapTable {
   shopId: string;
@@ -284,6 +287,7 @@ export interface Tables {
   costLine: CostLineTable;
   jobDay: JobDayTable;
   machineDay: MachineDayTable;
+  machineJobDay: MachineJobDayTable;
   rateGap: RateGapTable;
   paybackSnapshot: PaybackSnapshotTable;
 }
