@@ -1,3 +1,4 @@
 import { type Routes } from '@angular/router';
+import { HoursPage } from './hours-page';
 
-export const hoursRoutes: Routes = [];
+export const hoursRoutes: Routes = [{ path: '', title: 'Hours', component: HoursPage }];

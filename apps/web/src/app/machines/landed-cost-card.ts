@@ -78,7 +78,7 @@ import { COST_KIND_WORDS } from './machine-words';
       }
     </section>
   `,
-  styleUrl: './dated-card.scss',
+  styleUrl: '../rates/dated-card.scss',
   changeDetection: ChangeDetectionStrategy.OnPush,
 })
 export class LandedCostCard {

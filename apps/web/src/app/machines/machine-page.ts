@@ -13,7 +13,7 @@ import { LoadError } from '../shell/load-error';
 import { Notifier } from '../shell/notifier';
 import { RollupStore } from '../shell/rollup-store';
 import { CostItemDialog, type CostItemDialogData } from './cost-item-dialog';
-import { findCurrentRate } from './current-rate';
+import { findCurrentRate } from '../rates/current-rate';
 import { LandedCostCard } from './landed-cost-card';
 import { MachineDialog, type MachineDialogData } from './machine-dialog';
 import { MachineRateDialog, type MachineRateDialogData } from './machine-rate-dialog';

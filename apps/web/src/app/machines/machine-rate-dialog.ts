@@ -8,7 +8,7 @@ import { FormDialog } from '../forms/form-dialog';
 import { FormField } from '../forms/form-field';
 import { parsedBy } from '../forms/parsed-by';
 import { textControl } from '../forms/text-control';
-import { toRateText } from '../forms/to-rate-text';
+import { toRateText } from '../rates/to-rate-text';
 
 export interface MachineRateDialogData {
   machineId: string;

@@ -1,7 +1,7 @@
 import { ChangeDetectionStrategy, Component, computed, input, output } from '@angular/core';
 import { type MachineRate } from '@brakeven/contract';
 import { EmptyState, LocalDatePipe, RatePipe, StatusTag } from '@brakeven/ui';
-import { stateRates } from './current-rate';
+import { stateRates } from '../rates/current-rate';
 
 /** The machine's rates from each day on; which one holds today is said in a word. */
 @Component({
@@ -78,7 +78,7 @@ import { stateRates } from './current-rate';
       }
     </section>
   `,
-  styleUrl: './dated-card.scss',
+  styleUrl: '../rates/dated-card.scss',
   changeDetection: ChangeDetectionStrategy.OnPush,
 })
 export class MachineRatesCard {

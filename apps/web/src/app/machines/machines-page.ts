@@ -18,7 +18,7 @@ import { todayIn } from '@brakeven/values';
 import { MachinesApi } from '../api/machines-api';
 import { SessionStore } from '../session/session-store';
 import { LoadError } from '../shell/load-error';
-import { findCurrentRate } from './current-rate';
+import { findCurrentRate } from '../rates/current-rate';
 import { MachineDialog, type MachineDialogData } from './machine-dialog';
 import { PlateCaution } from './plate-caution';
 

@@ -13,7 +13,7 @@ import { StatusTag } from '@brakeven/ui';
 import { type ChosenName } from './group-unknown-names';
 import { NameChoice } from './name-choice';
 import { filterRows, type RowFilter, stepThrough, type TableRow, toTableRows } from './row-problems';
-import { count, FIELD_WORDS, STATE_WORDS } from './timesheet-words';
+import { count, FIELD_WORDS_SHORT, STATE_WORDS } from './timesheet-words';
 
 const ROWS_AT_ONCE = 100;
 const STATE_TONES = { ready: 'good', 'already-there': 'plain', refused: 'loss' } as const;
@@ -35,13 +35,15 @@ export class CheckTable {
   private readonly host = inject<ElementRef<HTMLElement>>(ElementRef);
   private readonly chosenFilter = signal<RowFilter | null>(null);
   private readonly rowsShown = signal(ROWS_AT_ONCE);
-  protected readonly words = FIELD_WORDS;
+  protected readonly words = FIELD_WORDS_SHORT;
   protected readonly stateWords = STATE_WORDS;
   protected readonly stateTones = STATE_TONES;
 
   protected readonly fields = computed(() => {
     const columns = this.check().mapping?.columns ?? {};
-    return (Object.keys(FIELD_WORDS) as TimesheetField[]).filter((field) => columns[field] !== undefined);
+    return (Object.keys(FIELD_WORDS_SHORT) as TimesheetField[]).filter(
+      (field) => columns[field] !== undefined,
+    );
   });
   private readonly rows = computed(() => toTableRows(this.check()));
   protected readonly filters = computed(() => this.listFilters());

@@ -46,7 +46,7 @@ import { HoursPipe, LocalDatePipe } from '@brakeven/ui';
         @for (one of byDay(); track one.workedOn) {
           <tr>
             <th scope="row">
-              {{ one.workedOn | localDate }}
+              {{ one.workedOn | localDate: 'weekday' }}
               <span class="bar" aria-hidden="true" [style.inline-size.%]="one.share"></span>
             </th>
             <td class="number">{{ one.entries }}</td>

@@ -32,7 +32,7 @@ import { ImportHistoryStore } from './import-history-store';
             text="Drop the first week’s workbook above. What it adds shows up under Hours, on the jobs and in the payback."
           />
         } @else {
-          <div class="scroll-x" tabindex="0" role="region" aria-labelledby="history-heading">
+          <div class="scroll-x" tabindex="0" role="region" aria-label="Table of imports">
             <table class="figures">
               <thead>
                 <tr>

@@ -20,6 +20,13 @@ export const FIELD_WORDS: Record<TimesheetField, string> = {
   note: 'Note',
 };
 
+/** The same where there is little room. */
+export const FIELD_WORDS_SHORT: Record<TimesheetField, string> = {
+  ...FIELD_WORDS,
+  good: 'Good',
+  scrap: 'Scrap',
+};
+
 export const STATE_WORDS: Record<CheckedRow['state'], string> = {
   ready: 'Ready',
   'already-there': 'Already there',
