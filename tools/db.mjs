@@ -93,7 +93,9 @@ async function confirm(directory) {
     throw new SetupError('This deletes every shop and its books. Add --yes if that is what you want.', 2);
   }
   const terminal = createInterface({ input: process.stdin, output: process.stdout });
-  const answer = await terminal.question(`Delete every shop and its books in ${directory}? Type yes: `);
+  const answer = await terminal
+    .question(`Delete every shop and its books in ${directory}? Type yes: `)
+    .catch(() => '');
   terminal.close();
   if (answer.trim().toLowerCase() !== 'yes') {
     throw new SetupError('Nothing was deleted.');

@@ -1,5 +1,5 @@
 import { performance } from 'node:perf_hooks';
-import { shutDown, stopOnSignals } from './shutdown.mjs';
+import { isShuttingDown, shutDown, stopOnSignals } from './shutdown.mjs';
 import { SetupError, errorText } from './workspace.mjs';
 
 const quietMs = 4_000;
@@ -12,26 +12,44 @@ const quietMs = 4_000;
 
 /**
  * Prints what a script is doing, one line a step. Nothing is printed for a step that took no noticeable time,
- * so a second start stays short.
+ * so a second start stays short. On a terminal the step under way shows at once, and its result takes its place.
  * @param {NodeJS.WriteStream} stream where to
  * @returns {Progress}
  */
 export function createProgress(stream) {
-  const say = (/** @type {string} */ text) => void stream.write(`${text}\n`);
+  let pending = '';
+  const clear = () => void (pending && stream.write('\r\x1b[2K'));
+  const say = (/** @type {string} */ text) => {
+    clear();
+    stream.write(`${text}\n${pending}`);
+  };
+  const announce = (/** @type {string} */ title) => {
+    if (stream.isTTY) {
+      clear();
+      pending = `… ${title}`;
+      stream.write(pending);
+    } else {
+      say(`… ${title}`);
+    }
+  };
   return {
     say,
     async step(title, work) {
       const begin = performance.now();
-      const slow = setTimeout(() => say(`… ${title}`), stream.isTTY ? 500 : quietMs);
+      const slow = setTimeout(() => announce(title), stream.isTTY ? 100 : quietMs);
+      let mark = '✗';
       try {
         const result = await work();
-        const ms = performance.now() - begin;
-        if (ms > 50) {
-          say(`✓ ${title} (${formatDuration(ms)})`);
-        }
+        mark = '✓';
         return result;
       } finally {
         clearTimeout(slow);
+        clear();
+        pending = '';
+        const ms = performance.now() - begin;
+        if (!isShuttingDown() && (ms > 50 || mark === '✗')) {
+          say(`${mark} ${title} (${formatDuration(ms)})`);
+        }
       }
     },
   };
