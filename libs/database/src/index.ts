@@ -3,6 +3,7 @@ export * from './lib/account-queries';
 export * from './lib/audit-queries';
 export * from './lib/connect';
 export * from './lib/constraint-violation';
+export * from './lib/health-queries';
 export * from './lib/machine-queries';
 export * from './lib/migrate';
 export * from './lib/people-queries';
