@@ -27,6 +27,8 @@ export class MappingPanel {
   readonly check = input.required<TimesheetCheck>();
   readonly mapping = input<TimesheetMapping | null>(null);
   readonly isBusy = input(false);
+  /** What the server said of the mapping, field by field: `mapping.headerRow`. */
+  readonly issues = input<readonly { field: string; message: string }[]>([]);
   readonly changed = output<TimesheetMapping>();
 
   protected readonly fields = Object.keys(FIELD_WORDS) as TimesheetField[];
@@ -50,6 +52,9 @@ export class MappingPanel {
     this.missing()
       .map((field) => FIELD_WORDS[field])
       .join(', '),
+  );
+  protected readonly mappingIssues = computed(() =>
+    this.issues().filter(({ field }) => field.startsWith('mapping')),
   );
   private timer: ReturnType<typeof setTimeout> | undefined;
 

@@ -27,6 +27,15 @@ describe('toGrid', () => {
     ]);
   });
 
+  it('marks where rows are left out', () => {
+    const rows = [1, 2, 7].map((row) => ({ row, cells: [] }));
+    expect(toGrid({ columns: ['A'], rows }).map(({ isAfterGap }) => isAfterGap)).toEqual([
+      false,
+      false,
+      true,
+    ]);
+  });
+
   it('sets numbers and durations at the right, dates and words at the left', () => {
     const row = {
       row: 1,

@@ -35,6 +35,14 @@ import { type SheetExcerpt } from '@brakeven/contract';
         </thead>
         <tbody>
           @for (row of rows(); track row.row) {
+            @if (row.isAfterGap) {
+              <tr class="gap">
+                <th scope="row">
+                  <span class="visually-hidden">Rows left out</span><span aria-hidden="true">⋮</span>
+                </th>
+                <td [attr.colspan]="excerpt().columns.length"></td>
+              </tr>
+            }
             <tr>
               <th scope="row" [class.here]="row.row === markedRow()">{{ row.row }}</th>
               @for (cell of row.cells; track cell.address) {
@@ -87,15 +95,20 @@ interface GridCell {
   isNumber: boolean;
 }
 
+interface GridRow {
+  row: number;
+  /** Rows between the one above and this are not shown. */
+  isAfterGap: boolean;
+  cells: GridCell[];
+}
+
 /** Fills the gaps between the cells that hold something, so that each stands under its letter. */
-export function toGrid({
-  columns,
-  rows,
-}: Pick<SheetExcerpt, 'columns' | 'rows'>): { row: number; cells: GridCell[] }[] {
-  return rows.map(({ row, cells }) => {
+export function toGrid({ columns, rows }: Pick<SheetExcerpt, 'columns' | 'rows'>): GridRow[] {
+  return rows.map(({ row, cells }, index) => {
     const texts = new Map(cells.map(({ address, text }) => [address, text]));
     return {
       row,
+      isAfterGap: index > 0 && row > (rows[index - 1]?.row ?? row) + 1,
       cells: columns.map((column) => {
         const address = `${column}${row}`;
         const text = texts.get(address) ?? '';

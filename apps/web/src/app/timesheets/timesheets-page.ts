@@ -58,6 +58,16 @@ export class TimesheetsPage {
     const check = this.store.check();
     return check !== null && (check.mapping === null || check.missingFields.length > 0);
   });
+  /** What is to be said of the file as a whole rather than of one of its rows. */
+  protected readonly fileProblems = computed(() =>
+    (this.store.check()?.problems ?? []).filter(({ row, alias }) => row === null && alias === null),
+  );
+  protected readonly rowProblems = computed(() =>
+    (this.store.check()?.problems ?? []).filter(({ row, alias }) => row !== null || alias !== null),
+  );
+  protected readonly hasToSettle = computed(
+    () => this.rowProblems().length > 0 || this.store.chosenNames().length > 0,
+  );
   protected readonly isMappingOpen = computed(() => this.isMappingNeeded() || this.wantsMapping());
   protected readonly commitWords = computed(() => {
     const check = this.store.check();
