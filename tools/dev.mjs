@@ -33,7 +33,7 @@ async function serve() {
   const environment = await setUp(['cli', 'demo-shop'], progress, { stopsAtEnd: true });
   const signIns = await progress.step('Looking after the demo shop', () => seedDemoShop(environment));
   turnApiLog();
-  const apiPort = await findFreePort(4190);
+  const apiPort = await findFreePort(4280);
   const webPort = await findFreePort(4200);
   startReloadingApi(environment, apiPort);
   const webServer = startNx(['run', 'web:serve', `--port=${webPort}`], {
@@ -66,7 +66,9 @@ function startReloadingApi(environment, port) {
       progress.say('✓ The API is up');
     } catch (error) {
       api = null;
-      progress.say(errorText(error));
+      if (!isShuttingDown()) {
+        progress.say(errorText(error));
+      }
     }
   };
   let queue = Promise.resolve();

@@ -2,7 +2,7 @@ import './setup/node-version.mjs';
 import { performance } from 'node:perf_hooks';
 import { parseArgs } from 'node:util';
 import { getConfiguration, saveConfiguration } from './setup/configuration.mjs';
-import { findFreePort, isPortFree } from './setup/processes.mjs';
+import { findFreePort, isPortFree, isWebPort } from './setup/processes.mjs';
 import { apiLog, seedDemoShop, startApi, turnApiLog } from './setup/programs.mjs';
 import { createProgress, formatDuration, runScript } from './setup/progress.mjs';
 import { announceInstance, refuseSecondInstance, stopAbandonedServer } from './setup/running-instance.mjs';
@@ -79,8 +79,10 @@ async function startOnSomePort(environment, wantedPort) {
 function readPort() {
   try {
     const { port } = parseArgs({ options: { port: { type: 'string' } } }).values;
-    if (port !== undefined && !(Number(port) >= 1024 && Number(port) <= 65_535)) {
-      throw new SetupError('--port takes a number from 1024 to 65535.');
+    if (port !== undefined && !isWebPort(Number(port))) {
+      throw new SetupError(
+        '--port takes a number from 1024 to 65535, but none that browsers refuse, such as 6000.',
+      );
     }
     return port === undefined ? undefined : Number(port);
   } catch (error) {

@@ -87,7 +87,6 @@ export function nxEnvironment() {
     NX_TUI: 'false',
     NX_ISOLATE_PLUGINS: 'false',
     NG_CLI_ANALYTICS: 'false',
-    CI: 'true',
   };
 }
 

@@ -175,13 +175,27 @@ export function isPortFree(port) {
   });
 }
 
+/** Ports above 1023 that browsers and `fetch` refuse to speak to (the Fetch standard's list of bad ports). */
+const badPorts = [
+  1719, 1720, 1723, 2049, 3659, 4045, 4190, 5060, 5061, 6000, 6566, 6665, 6666, 6667, 6668, 6669, 6679, 6697,
+  10080,
+];
+
+/**
+ * @param {number} port
+ * @returns {boolean} whether an ordinary user may serve there and a browser will go there
+ */
+export function isWebPort(port) {
+  return Number.isInteger(port) && port >= 1024 && port <= 65_535 && !badPorts.includes(port);
+}
+
 /**
  * @param {number} first
- * @returns {Promise<number>} the first free port from there on
+ * @returns {Promise<number>} the first free port from there on that a browser will go to
  */
 export async function findFreePort(first) {
   for (let port = first; port < Math.min(first + 200, 65_536); port += 1) {
-    if (await isPortFree(port)) {
+    if (isWebPort(port) && (await isPortFree(port))) {
       return port;
     }
   }
