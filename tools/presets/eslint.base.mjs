@@ -110,7 +110,7 @@ const typescript = (/** @type {string} */ dir) =>
       },
     },
     {
-      files: ['**/*.spec.ts'],
+      files: ['**/*.spec.ts', '**/testing/*.ts'],
       rules: { '@nx/enforce-module-boundaries': boundaries(['@brakeven/test-shop']) },
     },
   );

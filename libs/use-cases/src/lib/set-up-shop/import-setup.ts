@@ -51,8 +51,7 @@ export async function importSetup(
     await lockBooks(trx, context.shop.shopId);
     const planned = await draftSetup(trx, context, sheetFile);
     refuseProblems(toSetupResult(planned));
-    tools.onProgress?.({ stage: 'writing', done: 0, total: null, message: 'Writing the register' });
-    await writeSetup(trx, context.shop.shopId, planned);
+    await writeSetup(trx, context.shop.shopId, planned, tools);
     return planned;
   }).catch(refuseRace);
   await rollUpAfter(context, tools);
@@ -109,8 +108,14 @@ function listFilledCells({ sheets }: SheetFile, sheetName: string): Set<string> 
   );
 }
 
-async function writeSetup(trx: ShopTransaction, shopId: string, draft: SetupDraft): Promise<void> {
-  for (const table of WRITE_ORDER) {
+async function writeSetup(
+  trx: ShopTransaction,
+  shopId: string,
+  draft: SetupDraft,
+  { onProgress }: UploadTools,
+): Promise<void> {
+  for (const [done, table] of WRITE_ORDER.entries()) {
+    onProgress?.({ stage: 'writing', done, total: WRITE_ORDER.length, message: 'Writing the register' });
     await insertRegisterRows(trx, shopId, table, draft.tables[table].inserts);
     await updateRegisterRows(trx, shopId, table, draft.tables[table].listUpdates());
   }
