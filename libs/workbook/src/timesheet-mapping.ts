@@ -49,13 +49,16 @@ interface Candidate {
 const REQUIRED_WEIGHT = 10;
 const HEADER_CELLS_MIN = 3;
 const TEXTS_LOOKED_AT = 500;
+/** Orders of day and month that cannot be taken for another one. */
+const PLAIN_ORDERS: readonly DateFormat[] = ['YYYY-MM-DD', 'YYYY/MM/DD', 'DD MMM YYYY', 'MMM DD YYYY'];
 
 /**
  * Finds the row that heads a timesheet's columns, on any sheet within its first 30 rows: the row with most known
  * wordings, or else the row with most texts, to be mapped by hand.
  *
- * Text dates are declared only as 2026-03-02, when such stand below, and a decimal comma only when a file of
- * semicolon-separated values can mean nothing else; all other readings are the user's to choose.
+ * An order of text dates is declared only when those below can mean nothing else (2026-03-02, 2 Mar 2026), and a
+ * decimal comma only when a file of semicolon-separated values can mean nothing else; all other readings are the
+ * user's to choose.
  * @throws WorkbookError `header_not_found`
  */
 export function findTimesheetHeader(file: SheetFile): TimesheetHeader {
@@ -157,7 +160,7 @@ function describeHeader(
   const headerCells = listHeaderCells(row, below);
   const dateFormats = listFittingFormats(listTexts(below, columns.date));
   const decimalMark = hasDecimalCommas(file, listTexts(below, columns.hours)) ? ',' : undefined;
-  const dateFormat = dateFormats.find((format) => format === 'YYYY-MM-DD');
+  const dateFormat = dateFormats.find((format) => PLAIN_ORDERS.includes(format));
   return {
     mapping: {
       sheet: sheet.name,
