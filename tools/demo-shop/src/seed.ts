@@ -99,7 +99,7 @@ const fileName = (monday: LocalDate): string => `Timesheet ${monday}.xlsx`;
 async function importHistory(context: ShopContext, demo: Demo, tools: DemoTools): Promise<void> {
   const importWorkbook = async (isHistory: boolean): Promise<void> => {
     const bytes = await writeSetupWorkbook(buildSetup(demo.firstMonday, demo.jobs, { isHistory }));
-    await importSetup(context, { name: 'Set-up.xlsx', bytes }, {}, tools);
+    await importSetup(context, { name: 'Set-up.xlsx', bytes }, {}, { reader: tools.reader });
   };
   await importWorkbook(true);
   // The last week stays out, for whoever tries the import.
