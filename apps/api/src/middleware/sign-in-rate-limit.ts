@@ -12,6 +12,8 @@ export function signInRateLimit(failuresMax: number): RequestHandler {
     skipSuccessfulRequests: true,
     standardHeaders: 'draft-8',
     legacyHeaders: false,
+    // Without a proxy in front the header is somebody's invention, and is not looked at.
+    validate: { xForwardedForHeader: false },
     handler: (_request, _response, next) => {
       const message = `Too many attempts from this network. Wait ${WINDOW_MINUTES} minutes, then try again.`;
       next(new AppError('too_many_requests', message));

@@ -13,8 +13,7 @@ const KINDS: Readonly<Record<string, ConstraintViolation['kind']>> = {
 
 /** Which constraint an error is about; null if it is another error. */
 export function findConstraintViolation(error: unknown): ConstraintViolation | null {
-  if (!(error instanceof Error)) return null;
-  const { code, constraint } = error as { code?: string; constraint?: string };
+  const { code, constraint } = toFields(error);
   const kind = KINDS[code ?? ''];
   return kind && constraint ? { kind, constraint } : null;
 }
@@ -39,10 +38,22 @@ const LOST =
 
 /** Whether an error means that the database cannot be reached, or not as this user. */
 export function isUnreachable(error: unknown): boolean {
-  if (error instanceof AggregateError) return error.errors.some(isUnreachable);
-  if (!(error instanceof Error)) return false;
-  const { code } = error as { code?: string };
-  return (code !== undefined && UNREACHABLE.has(code)) || LOST.test(error.message);
+  const { code, message, errors } = toFields(error);
+  if (errors) return errors.some(isUnreachable);
+  return (code !== undefined && UNREACHABLE.has(code)) || LOST.test(message ?? '');
+}
+
+interface ErrorFields {
+  code?: string;
+  constraint?: string;
+  message?: string;
+  /** Of an AggregateError: a name that has several addresses, none of which answers. */
+  errors?: unknown[];
+}
+
+/** By its fields alone: errors of the runtime itself need not be instances of this module's `Error`. */
+function toFields(error: unknown): ErrorFields {
+  return typeof error === 'object' && error !== null ? error : {};
 }
 
 const NOT_STORABLE: Readonly<Record<string, string>> = {
@@ -55,6 +66,6 @@ const NOT_STORABLE: Readonly<Record<string, string>> = {
 
 /** Words for a value that the database cannot keep; null if an error is about something else. */
 export function findUnstorableValue(error: unknown): string | null {
-  const code = error instanceof Error ? (error as { code?: string }).code : undefined;
+  const { code } = toFields(error);
   return (code !== undefined && NOT_STORABLE[code]) || null;
 }
