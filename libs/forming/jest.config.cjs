@@ -1,0 +1,1 @@
+module.exports = require('../../tools/presets/jest.node.cjs')(__dirname, 'forming');
