@@ -74,8 +74,8 @@ export class ShopApi {
     return this.http.post<SetupResult>('/api/setup', fileBody(file));
   }
 
-  listAuditEvents(cursor?: string): Observable<AuditPage> {
-    return this.http.get<AuditPage>('/api/audit', { params: toQueryParams({ cursor }) });
+  listAuditEvents(cursor: string | undefined, limit: number): Observable<AuditPage> {
+    return this.http.get<AuditPage>('/api/audit', { params: toQueryParams({ cursor, limit }) });
   }
 }
 

@@ -52,6 +52,13 @@ export interface FieldOption {
     :host {
       padding: 7px 0;
     }
+    input {
+      height: 24px;
+      line-height: 24px;
+    }
+    [matTextSuffix] {
+      white-space: nowrap;
+    }
     :host(.wide) {
       grid-column: 1 / -1;
     }

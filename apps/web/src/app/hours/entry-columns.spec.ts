@@ -12,8 +12,14 @@ const column = (rights: Parameters<typeof toEntryColumns>[0], id: string) =>
   toEntryColumns(rights).find((one) => one.id === id);
 
 describe('toEntryColumns', () => {
-  const all = { canOpenJobs: true, canOpenSources: true, voidEntry: jest.fn() };
-  const operator = { canOpenJobs: false, canOpenSources: false };
+  const all = {
+    canSeeOthers: true,
+    canOpenJobs: true,
+    canOpenSources: true,
+    isNarrow: false,
+    voidEntry: jest.fn(),
+  };
+  const operator = { canSeeOthers: false, canOpenJobs: false, canOpenSources: false, isNarrow: true };
 
   it('leads to the job and to the cell of the workbook', () => {
     expect(column(all, 'job')?.href?.(entry)).toBe('/jobs/j1');
@@ -27,6 +33,12 @@ describe('toEntryColumns', () => {
     expect(column(operator, 'actions')).toBeUndefined();
   });
 
+  it('puts the hours beside the date on a telephone, and leaves out who it is where there is only one', () => {
+    const ids = (view: Parameters<typeof toEntryColumns>[0]) => toEntryColumns(view).map(({ id }) => id);
+    expect(ids(operator).slice(0, 3)).toEqual(['workedOn', 'hours', 'job']);
+    expect(ids(all).slice(0, 3)).toEqual(['workedOn', 'employee', 'job']);
+  });
+
   it('voids the entry of the row', () => {
     column(all, 'actions')?.actions?.(entry)[0]?.run();
     expect(all.voidEntry).toHaveBeenCalledWith(entry);
@@ -36,7 +48,7 @@ describe('toEntryColumns', () => {
 describe('toEntryTotals', () => {
   it('counts the entries in words and sums the rest by column', () => {
     const totals = toEntryTotals({ entries: 1204, hours: '8123.5000', goodPieces: 9000, scrapPieces: 31 });
-    expect(totals['employee']?.value).toBe('1,204 entries');
+    expect(totals['job']?.value).toBe('1,204 entries');
     expect(totals['hours']?.value).toBe('8123.5000');
   });
 });

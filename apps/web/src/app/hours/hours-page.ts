@@ -1,4 +1,12 @@
-import { ChangeDetectionStrategy, Component, computed, inject, input, viewChild } from '@angular/core';
+import {
+  ChangeDetectionStrategy,
+  Component,
+  computed,
+  DOCUMENT,
+  inject,
+  input,
+  viewChild,
+} from '@angular/core';
 import { rxResource, takeUntilDestroyed } from '@angular/core/rxjs-interop';
 import { Router, RouterLink } from '@angular/router';
 import { type EntryFilter, type EntryListQuery, type TimeEntry } from '@brakeven/contract';
@@ -51,6 +59,7 @@ export class HoursPage {
   private readonly rollup = inject(RollupStore);
   private readonly router = inject(Router);
   private readonly grid = viewChild<Grid<TimeEntry>>(Grid);
+  private readonly isNarrow = inject(DOCUMENT).defaultView?.matchMedia('(width < 640px)').matches ?? false;
   private readonly typed = new Subject<string>();
 
   protected readonly periods = Object.entries(PERIODS).map(([id, label]) => ({ id: id as Period, label }));
@@ -88,6 +97,8 @@ export class HoursPage {
   protected readonly isOwnOnly = computed(() => !this.session.can('hours.all'));
   protected readonly columns = computed(() =>
     toEntryColumns({
+      canSeeOthers: !this.isOwnOnly(),
+      isNarrow: this.isNarrow,
       canOpenJobs: this.session.can('jobs.view'),
       canOpenSources: this.session.can('timesheets.use'),
       ...(this.session.can('hours.edit') && { voidEntry: (entry: TimeEntry) => this.void(entry) }),

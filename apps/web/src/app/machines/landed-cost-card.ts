@@ -37,7 +37,7 @@ import { COST_KIND_WORDS } from './machine-words';
             <tbody>
               @for (item of items(); track item.machineCostItemId) {
                 <tr>
-                  <td>{{ item.incurredOn | localDate }}</td>
+                  <td class="date">{{ item.incurredOn | localDate }}</td>
                   <th scope="row">{{ words[item.kind] }}</th>
                   <td>{{ item.description }}</td>
                   <td class="number">{{ item.amount | money }}</td>

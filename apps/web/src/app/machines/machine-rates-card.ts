@@ -10,7 +10,7 @@ import { stateRates } from '../rates/current-rate';
   template: `
     <section class="card" aria-labelledby="rates-heading">
       <div class="head">
-        <h2 id="rates-heading">Rates an hour</h2>
+        <h2 id="rates-heading">Hourly rates</h2>
         @if (canEdit()) {
           <button type="button" class="button" (click)="added.emit()">Add rates from a day on</button>
         }
@@ -38,7 +38,7 @@ import { stateRates } from '../rates/current-rate';
             <tbody>
               @for (rate of stated(); track rate.machineRateId) {
                 <tr [class.past]="rate.state === 'earlier'">
-                  <th scope="row">{{ rate.validFrom | localDate }}</th>
+                  <th scope="row" class="date">{{ rate.validFrom | localDate }}</th>
                   <td>
                     @if (rate.state !== 'earlier') {
                       <app-status-tag

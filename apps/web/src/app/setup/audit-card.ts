@@ -5,6 +5,8 @@ import { ShopApi } from '../api/shop-api';
 import { LoadError } from '../shell/load-error';
 import { toAuditLine } from './audit-change';
 
+const EVENTS_AT_ONCE = 25;
+
 /** Who changed what, latest first. */
 @Component({
   selector: 'app-audit-card',
@@ -55,7 +57,7 @@ import { toAuditLine } from './audit-change';
       } @else if (isLoading()) {
         <app-loading-skeleton [lines]="4" />
       } @else if (!isDone()) {
-        <button type="button" class="button" (click)="load()">Load 50 more</button>
+        <button type="button" class="button" (click)="load()">Load earlier changes</button>
       }
     </section>
   `,
@@ -78,7 +80,7 @@ export class AuditCard {
   protected load(): void {
     this.isLoading.set(true);
     this.error.set(null);
-    this.api.listAuditEvents(this.cursor ?? undefined).subscribe({
+    this.api.listAuditEvents(this.cursor ?? undefined, EVENTS_AT_ONCE).subscribe({
       next: ({ items, nextCursor }) => {
         this.events.update((events) => [...events, ...items]);
         this.cursor = nextCursor;

@@ -19,7 +19,7 @@ import { OverheadRateDialog, type OverheadRateDialogData } from './overhead-rate
   template: `
     <section class="card" aria-labelledby="overhead-heading">
       <div class="head">
-        <h2 id="overhead-heading">Overhead, a labour hour</h2>
+        <h2 id="overhead-heading">Overhead per labour hour</h2>
         @if (canEdit()) {
           <button type="button" class="button" (click)="edit(null)">New overhead rate</button>
         }
@@ -47,7 +47,7 @@ import { OverheadRateDialog, type OverheadRateDialogData } from './overhead-rate
             <tbody>
               @for (rate of stated(); track rate.overheadRateId) {
                 <tr [class.past]="rate.state === 'earlier'">
-                  <th scope="row">{{ rate.validFrom | localDate }}</th>
+                  <th scope="row" class="date">{{ rate.validFrom | localDate }}</th>
                   <td>
                     @if (rate.state !== 'earlier') {
                       <app-status-tag

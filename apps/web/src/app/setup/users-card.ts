@@ -55,7 +55,7 @@ import { UserDialog, type UserDialogData } from './user-dialog';
                   </th>
                   <td [attr.title]="roles[user.role].text">{{ roles[user.role].label }}</td>
                   <td>{{ nameOf(user.employeeId) }}</td>
-                  <td>{{ user.lastSignInAt ? (user.lastSignInAt | instant) : 'never' }}</td>
+                  <td class="date">{{ user.lastSignInAt ? (user.lastSignInAt | instant) : 'never' }}</td>
                   <td class="actions">
                     <button
                       type="button"

@@ -54,14 +54,14 @@ import { ImportHistoryStore } from './import-history-store';
                       <a [routerLink]="['/timesheets', one.importId]">{{ one.fileName }}</a>
                       <span class="muted sheet">{{ one.sheet }}</span>
                     </th>
-                    <td>
+                    <td class="date">
                       @if (one.firstDay && one.lastDay) {
                         {{ one.firstDay | localDate: 'dayMonth' }} – {{ one.lastDay | localDate }}
                       } @else {
                         –
                       }
                     </td>
-                    <td>
+                    <td class="date">
                       {{ one.importedAt | instant }}
                       <span class="muted sheet">{{ one.importedBy }}</span>
                     </td>
@@ -116,6 +116,8 @@ import { ImportHistoryStore } from './import-history-store';
       color: var(--ink-muted);
     }
     th a {
+      display: inline-block;
+      min-width: 130px;
       overflow-wrap: anywhere;
     }
     .actions {
