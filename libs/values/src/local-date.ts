@@ -2,6 +2,7 @@ import {
   CalendarDate,
   endOfMonth as lastOfMonth,
   fromDate,
+  GregorianCalendar,
   parseDate,
   toCalendarDate,
 } from '@internationalized/date';
@@ -16,6 +17,7 @@ export type LocalDate = string & { readonly [brand]: 'LocalDate' };
 export type DayOfWeek = 0 | 1 | 2 | 3 | 4 | 5 | 6;
 
 const ISO_DATE = /^(?!0000)\d{4}-\d{2}-\d{2}$/;
+const calendar = new GregorianCalendar();
 const A_SUNDAY = new CalendarDate(2000, 1, 2);
 
 /** Whether a text is a day that exists, written YYYY-MM-DD. */
@@ -61,8 +63,10 @@ export function findLocalDate(year: number, month: number, day: number): LocalDa
  */
 export function addDays(date: LocalDate, days: number): LocalDate {
   const from = parseDate(date);
-  const to = from.add({ days });
-  const isReached = Number.isSafeInteger(days) && to.era === 'AD' && to.compare(from) === days;
+  // By day numbers: adding to a calendar date goes month by month, too slow for a sheet of serial dates.
+  const day = calendar.toJulianDay(from) + days;
+  const to = Number.isSafeInteger(day) ? calendar.fromJulianDay(day) : from;
+  const isReached = to.era === 'AD' && to.compare(from) === days;
   if (!isReached) throw new RangeError(`Cannot add ${days} days to ${date}.`);
   return to.toString() as LocalDate;
 }
