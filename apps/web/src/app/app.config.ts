@@ -10,15 +10,13 @@ import {
   TitleStrategy,
   withComponentInputBinding,
   withInMemoryScrolling,
+  withNavigationErrorHandler,
 } from '@angular/router';
-import { PROBLEM_WORDS, SHOP_FORMAT, WORKINGS_OPENER } from '@brakeven/ui';
-import { toShownProblem } from './api/problem-text';
 import { routes } from './app.routes';
 import { sessionInterceptor } from './session/session-interceptor';
-import { SessionStore } from './session/session-store';
+import { Notifier } from './shell/notifier';
 import { PageTitle } from './shell/page-title';
 import { ThemeStore } from './shell/theme-store';
-import { WorkingsStore } from './workings/workings-store';
 
 export const appConfig: ApplicationConfig = {
   providers: [
@@ -27,6 +25,7 @@ export const appConfig: ApplicationConfig = {
       routes,
       withComponentInputBinding(),
       withInMemoryScrolling({ scrollPositionRestoration: 'enabled', anchorScrolling: 'enabled' }),
+      withNavigationErrorHandler(warnOfUnloadedPage),
     ),
     provideHttpClient(
       withInterceptors([sessionInterceptor]),
@@ -34,8 +33,10 @@ export const appConfig: ApplicationConfig = {
     ),
     provideAppInitializer(() => inject(ThemeStore).apply()),
     { provide: TitleStrategy, useExisting: PageTitle },
-    { provide: SHOP_FORMAT, useFactory: () => inject(SessionStore).shopFormat },
-    { provide: PROBLEM_WORDS, useValue: toShownProblem },
-    { provide: WORKINGS_OPENER, useExisting: WorkingsStore },
   ],
 };
+
+/** A page's code could not be fetched: the network, or a newer version has taken its place. */
+function warnOfUnloadedPage(): void {
+  inject(Notifier).warn('That page could not be loaded. Nothing was changed.', () => location.reload());
+}

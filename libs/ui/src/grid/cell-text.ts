@@ -2,7 +2,7 @@ import { formatHours, formatLocalDate, formatMoney, formatRate, toLocalDate } fr
 import { type ShopFormat } from '../shop-format';
 import { type GridKind } from './grid-column';
 
-const NUMBERS: readonly GridKind[] = ['money', 'rate', 'hours', 'count'];
+const NUMBERS: readonly GridKind[] = ['money', 'rate', 'hours', 'count', 'number'];
 
 /** Whether a kind is written at the right and sorted as a number. */
 export function isNumeric(kind: GridKind = 'text'): boolean {

@@ -1,7 +1,7 @@
 import { type FigureRef } from '@brakeven/contract';
 import { type Tone } from '../states/status-tag';
 
-export type GridKind = 'text' | 'money' | 'rate' | 'hours' | 'date' | 'count';
+export type GridKind = 'text' | 'money' | 'rate' | 'hours' | 'date' | 'count' | 'number';
 
 export interface GridAction {
   label: string;

@@ -8,7 +8,7 @@ export const gridTheme = themeQuartz.withParams({
   textColor: 'var(--ink)',
   borderColor: 'var(--line)',
   browserColorScheme: 'inherit',
-  cellHorizontalPadding: '14px',
+  cellHorizontalPadding: '10px',
   chromeBackgroundColor: 'var(--sheet)',
   columnBorder: false,
   dataFontSize: '13.5px',

@@ -33,7 +33,8 @@ const SCROLLBAR_PX = 18;
 })
 export class Grid<T> {
   private readonly toWords = inject(PROBLEM_WORDS);
-  private readonly engine = viewChild<GridEngine<T>>(GridEngine);
+  // By name: naming the class here would load ag-grid with every page.
+  private readonly engine = viewChild<GridEngine<T>>('engine');
 
   /** Read out as the grid's name. */
   readonly label = input.required<string>();

@@ -19,7 +19,7 @@ export function toCategoryChartOption(job: JobDetail, currency: string, palette:
   }));
   return {
     ...toFrame(palette),
-    xAxis: { type: 'value', show: false, max: ({ max }: { max: number }) => max * 1.5 || 1 },
+    xAxis: { type: 'value', show: false, max: ({ max }: { max: number }) => max * 1.9 || 1 },
     yAxis: {
       type: 'category',
       inverse: true,
@@ -44,6 +44,11 @@ export function toCategoryChartOption(job: JobDetail, currency: string, palette:
 /** A job's cost, or its hours where money is not shown, by week. */
 export function toWeekChartOption(job: JobDetail, currency: string, palette: ChartPalette): ChartOption {
   const hasMoney = job.total !== undefined;
+  const compact = new Intl.NumberFormat('en-US', {
+    notation: 'compact',
+    ...(hasMoney && { style: 'currency', currency }),
+  });
+  const toAxisText = (value: number) => `${compact.format(value)}${hasMoney ? '' : ' h'}`;
   const toText = (value: unknown) =>
     hasMoney ? formatMoney(Number(value).toFixed(2), currency) : `${formatHours(String(value))} h`;
   return {
@@ -66,7 +71,7 @@ export function toWeekChartOption(job: JobDetail, currency: string, palette: Cha
       type: 'value',
       splitNumber: 3,
       splitLine: { lineStyle: { color: palette.line } },
-      axisLabel: { color: palette.inkMuted },
+      axisLabel: { color: palette.inkMuted, formatter: (value: number) => toAxisText(value) },
     },
     series: [
       {
@@ -124,6 +129,6 @@ function toFrame(palette: ChartPalette): ChartOption {
   return {
     animation: false,
     textStyle: { fontFamily: 'Roboto, sans-serif', color: palette.inkMuted },
-    grid: { left: 0, right: 8, top: 14, bottom: 0, outerBoundsMode: 'same', outerBoundsContain: 'axisLabel' },
+    grid: { left: 0, right: 8, top: 14, bottom: 4, outerBoundsMode: 'same', outerBoundsContain: 'axisLabel' },
   };
 }

@@ -4,6 +4,15 @@ import { toStatusTone } from './job-status';
 
 type FigureField = 'hours' | 'machineHours' | 'labour' | 'machine' | 'overhead' | 'total';
 
+const WIDTHS: Readonly<Record<FigureField, number>> = {
+  hours: 92,
+  machineHours: 92,
+  labour: 106,
+  machine: 106,
+  overhead: 106,
+  total: 152,
+};
+
 /** Which jobs the totals are over. */
 export type JobFilter = Pick<FigureRef, 'search' | 'status'>;
 
@@ -21,7 +30,7 @@ const MONEY: readonly [FigureField, string][] = [
 /** The columns of the jobs grid; money only for those to whom the server sends it. */
 export function toJobColumns(withMoney: boolean): GridColumn<Job>[] {
   const money = withMoney ? [...MONEY.map((field) => toFigureColumn(field, 'money')), QUOTED] : [];
-  return [...WORDS, ...HOURS.map((field) => toFigureColumn(field, 'hours')), ...money, LAST_WORKED];
+  return [...WORDS, ...HOURS.map((field) => toFigureColumn(field, 'hours')), ...money, DUE, LAST_WORKED];
 }
 
 /** The totals over all jobs of the filter. */
@@ -51,9 +60,9 @@ const WORDS: readonly GridColumn<Job>[] = [
     href: (job) => `/jobs/${job.jobId}`,
     isSortable: true,
     isPinned: true,
-    width: 92,
+    width: 80,
   },
-  { id: 'title', header: 'Title', value: (job) => job.title, isSortable: true, minWidth: 150, flex: 2 },
+  { id: 'title', header: 'Title', value: (job) => job.title, isSortable: true, minWidth: 130, flex: 2 },
   {
     id: 'customer',
     header: 'Customer',
@@ -68,9 +77,8 @@ const WORDS: readonly GridColumn<Job>[] = [
     value: (job) => job.status,
     tone: (job) => toStatusTone(job.status),
     isSortable: true,
-    width: 104,
+    width: 94,
   },
-  { id: 'dueOn', header: 'Due', kind: 'date', value: (job) => job.dueOn, isSortable: true, width: 122 },
 ];
 
 const QUOTED: GridColumn<Job> = {
@@ -79,7 +87,16 @@ const QUOTED: GridColumn<Job> = {
   kind: 'money',
   value: (job) => job.quotedPrice,
   isSortable: true,
-  width: 118,
+  width: 106,
+};
+
+const DUE: GridColumn<Job> = {
+  id: 'dueOn',
+  header: 'Due',
+  kind: 'date',
+  value: (job) => job.dueOn,
+  isSortable: true,
+  width: 110,
 };
 
 const LAST_WORKED: GridColumn<Job> = {
@@ -88,7 +105,7 @@ const LAST_WORKED: GridColumn<Job> = {
   kind: 'date',
   value: (job) => job.lastWorkedOn,
   isSortable: true,
-  width: 126,
+  width: 112,
 };
 
 function toFigureColumn([field, header]: readonly [FigureField, string], kind: GridKind): GridColumn<Job> {
@@ -100,10 +117,11 @@ function toFigureColumn([field, header]: readonly [FigureField, string], kind: G
     figure: (job) => ({ figure: `job.${field}`, jobId: job.jobId }),
     note: field === 'total' ? toGapNote : undefined,
     isSortable: true,
-    width: kind === 'hours' ? 104 : 118,
+    width: WIDTHS[field],
   };
 }
 
+/** Entries without a rate cost nothing yet: the figure is not the whole. */
 function toGapNote({ entriesWithoutRate }: Job): GridNote | null {
-  return entriesWithoutRate > 0 ? { severity: 'warning', text: `${entriesWithoutRate} without rate` } : null;
+  return entriesWithoutRate > 0 ? { severity: 'warning', text: 'no rate' } : null;
 }

@@ -10,7 +10,7 @@ import { JobsApi } from '../api/jobs-api';
 import { FormDialog } from '../forms/form-dialog';
 import { FormField } from '../forms/form-field';
 import { toJobForm, toJobInput } from './job-form';
-import { JOB_STATUS_ORDER } from './job-status';
+import { JOB_STATUS_ORDER, toStatusWord } from './job-status';
 
 /** Adds a job, or changes the one it is given. */
 @Component({
@@ -80,7 +80,10 @@ export class JobDialog {
   protected readonly job = inject<Job | null>(MAT_DIALOG_DATA);
 
   protected readonly form = toJobForm(this.job);
-  protected readonly statuses = JOB_STATUS_ORDER.map((status) => ({ value: status, label: status }));
+  protected readonly statuses = JOB_STATUS_ORDER.map((status) => ({
+    value: status,
+    label: toStatusWord(status),
+  }));
   // Without the list the name can still be typed.
   protected readonly customers = toSignal(this.api.listCustomers().pipe(catchError(() => of([]))), {
     initialValue: [],

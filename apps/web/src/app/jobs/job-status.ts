@@ -25,6 +25,11 @@ export function toStatusTone(status: JobStatus): Tone {
   return TONES[status];
 }
 
+/** The status as a word that begins a line: 'Quoted'. */
+export function toStatusWord(status: JobStatus): string {
+  return status.charAt(0).toUpperCase() + status.slice(1);
+}
+
 /** Whether a text from the address names a status. */
 export function isJobStatus(text: string | undefined): text is JobStatus {
   return JOB_STATUS_ORDER.some((status) => status === text);

@@ -25,7 +25,7 @@ import { JobsApi } from '../api/jobs-api';
 import { SessionStore } from '../session/session-store';
 import { RollupStore } from '../shell/rollup-store';
 import { type JobFilter, toJobColumns, toJobTotals } from './job-columns';
-import { isJobStatus, JOB_STATUS_ORDER } from './job-status';
+import { isJobStatus, JOB_STATUS_ORDER, toStatusWord } from './job-status';
 
 const TYPING_PAUSE_MS = 300;
 
@@ -49,6 +49,7 @@ export class JobsPage {
   readonly status = input<string>();
 
   protected readonly statuses = JOB_STATUS_ORDER;
+  protected readonly toStatusWord = toStatusWord;
   protected readonly order = { sort: 'number', direction: 'desc' } as const;
   protected readonly rowId = (job: Job): string => job.jobId;
   protected readonly columns = computed(() => toJobColumns(this.session.can('jobs.money')));

@@ -31,7 +31,7 @@ const WORDS: readonly GridColumn<JobLine>[] = [
 
 const MONEY: readonly GridColumn<JobLine>[] = [
   { id: 'rate', header: 'Rate', kind: 'rate', value: (line) => line.rate, width: 96 },
-  { id: 'rateFactor', header: '× burden', value: (line) => line.rateFactor, width: 92 },
+  { id: 'rateFactor', header: '× burden', kind: 'number', value: (line) => line.rateFactor, width: 92 },
   { id: 'amount', header: 'Amount', kind: 'money', value: (line) => line.amount, width: 108 },
 ];
 

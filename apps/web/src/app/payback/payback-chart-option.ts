@@ -1,5 +1,13 @@
 import { type Payback } from '@brakeven/contract';
-import { addYears, formatLocalDate, type LocalDate, monthOf, toLocalDate } from '@brakeven/values';
+import {
+  addDays,
+  addYears,
+  daysBetween,
+  formatLocalDate,
+  type LocalDate,
+  monthOf,
+  toLocalDate,
+} from '@brakeven/values';
 import { type ChartOption, type ChartPalette, type ChartTable } from '@brakeven/ui';
 
 type Point = [on: string, netCash: number];
@@ -39,9 +47,13 @@ export function toPaybackChartOption(facts: PaybackChartFacts, palette: ChartPal
     },
     yAxis: {
       type: 'value',
-      max: ({ max }: { max: number }) => Math.max(max, 0) * 1.08 || 1,
-      splitLine: { lineStyle: { color: palette.line } },
-      axisLabel: { color: palette.inkMuted, formatter: (amount: number) => toAxisText(amount, currency) },
+      max: ({ min, max }: { min: number; max: number }) => Math.max(max, 0) + (max - min) * 0.1 || 1,
+      splitLine: { showMaxLine: false, lineStyle: { color: palette.line } },
+      axisLabel: {
+        color: palette.inkMuted,
+        showMaxLabel: false,
+        formatter: (amount: number) => (amount === 0 ? 'even' : toAxisText(amount, currency)),
+      },
     },
     series: [toActualSeries(facts, palette), toContinuationSeries(payback, continuation, palette)],
   };
@@ -81,7 +93,7 @@ function toActualSeries({ payback, today }: PaybackChartFacts, palette: ChartPal
     showSymbol: false,
     lineStyle: { color: palette.layoutBlue, width: 2.5 },
     itemStyle: { color: palette.layoutBlue },
-    areaStyle: { color: palette.layoutBlueTint, opacity: 0.7, origin: 0 },
+    areaStyle: { color: palette.layoutBlueTint, opacity: 0.6, origin: 'start' },
     markLine: toReferenceLines(today, palette),
     markPoint: method === 'reached' && date ? toEvenMark(date, palette) : undefined,
   };
@@ -108,7 +120,7 @@ function toReferenceLines(today: LocalDate, palette: ChartPalette): object {
       {
         yAxis: 0,
         lineStyle: { color: palette.ink, width: 1.5, type: 'solid' },
-        label: { formatter: 'even', position: 'insideStartTop', color: palette.ink, fontWeight: 500 },
+        label: { show: false },
       },
       {
         xAxis: today,
@@ -129,6 +141,7 @@ function toEvenMark(date: string, palette: ChartPalette): object {
       formatter: `even, ${formatLocalDate(toLocalDate(date), 'medium')}`,
       position: 'top',
       distance: 8,
+      offset: [-36, 0],
       color: palette.layoutBlue,
       fontWeight: 500,
     },
@@ -151,7 +164,9 @@ function findLastDay({ payback, today }: PaybackChartFacts): LocalDate {
   const even = payback.breakEven.date;
   const end = even && even > today ? toLocalDate(even) : today;
   const limit = addYears(today, YEARS_AHEAD_MAX);
-  return end < limit ? end : limit;
+  const first = toLocalDate(payback.curve[0]?.on ?? today);
+  // Room for the words beside the last mark.
+  return end < limit ? addDays(end, Math.ceil(daysBetween(first, end) * 0.08)) : limit;
 }
 
 function toAxisText(amount: number, currency: string): string {

@@ -9,7 +9,7 @@ import { RollupStore } from './rollup-store';
   imports: [LocalDatePipe],
   template: `
     @if (rollup.status(); as status) {
-      <div class="chip">
+      <div class="stand">
         <span class="words" role="status">
           @if (status.through) {
             <span class="wide">Costs through </span><b>{{ status.through | localDate: 'weekday' }}</b>

@@ -3,6 +3,7 @@ import {
   ChangeDetectionStrategy,
   Component,
   computed,
+  effect,
   type ElementRef,
   inject,
   viewChild,
@@ -10,6 +11,7 @@ import {
 import { NgTemplateOutlet } from '@angular/common';
 import { takeUntilDestroyed } from '@angular/core/rxjs-interop';
 import { NavigationEnd, Router, RouterLink, RouterLinkActive, RouterOutlet } from '@angular/router';
+import { SHOP_FORMAT } from '@brakeven/ui';
 import { filter, map, pairwise } from 'rxjs';
 import { SessionStore } from '../session/session-store';
 import { WorkingsPanel } from '../workings/workings-panel';
@@ -50,6 +52,9 @@ export class Shell {
   protected readonly canSeeRollup = computed(() => this.session.can('rollup.view'));
 
   constructor() {
+    const format = inject(SHOP_FORMAT);
+    format.set(this.session.shopFormat());
+    effect(() => format.set(this.session.shopFormat()));
     const pageChanges = inject(Router).events.pipe(
       filter((event) => event instanceof NavigationEnd),
       map((event) => event.urlAfterRedirects.split(/[?#]/)[0]),
