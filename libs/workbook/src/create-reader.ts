@@ -15,30 +15,46 @@ export interface ReaderOptions {
   readonly workerUrl?: URL;
   /** Memory that reading one file may take before it is refused. */
   readonly heapMbMax?: number;
+  /** Time that reading one file in a worker may take before it is refused. */
+  readonly secondsMax?: number;
 }
 
 /**
- * Makes a reader. With `workerUrl` each file is read in a worker thread of its own with bounded memory; a worker
- * that runs out of it becomes a WorkbookError `file_needs_too_much_memory`.
+ * Makes a reader. With `workerUrl` each file is read in a worker thread of its own with bounded memory and time; a
+ * worker that needs more becomes a WorkbookError `file_needs_too_much_memory` or `file_takes_too_long`.
  */
 export function createReader({
   workerUrl,
   heapMbMax = READ_LIMITS.workerHeapMbMax,
+  secondsMax = READ_LIMITS.readSecondsMax,
 }: ReaderOptions = {}): SheetReader {
   if (!workerUrl) return { readSheets };
-  return { readSheets: (file, onProgress) => readInWorker(workerUrl, heapMbMax, file, onProgress) };
+  return {
+    readSheets: async (file, onProgress = () => undefined) => {
+      const worker = new Worker(workerUrl, {
+        workerData: { name: file.name, bytes: file.bytes },
+        resourceLimits: { maxOldGenerationSizeMb: heapMbMax },
+      });
+      const watch = startWatch(secondsMax);
+      try {
+        return await Promise.race([receiveFile(worker, onProgress), watch.timeUp]);
+      } finally {
+        watch.stop();
+        await worker.terminate();
+      }
+    },
+  };
 }
 
-function readInWorker(
-  workerUrl: URL,
-  heapMbMax: number,
-  file: FileBytes,
-  onProgress: OnReadProgress = () => undefined,
-): Promise<SheetFile> {
-  const worker = new Worker(workerUrl, {
-    workerData: { name: file.name, bytes: file.bytes },
-    resourceLimits: { maxOldGenerationSizeMb: heapMbMax },
+function startWatch(secondsMax: number): { timeUp: Promise<never>; stop: () => void } {
+  let timer: NodeJS.Timeout;
+  const timeUp = new Promise<never>((_, reject) => {
+    timer = setTimeout(() => reject(toTimeError(secondsMax)), secondsMax * 1_000);
   });
+  return { timeUp, stop: () => clearTimeout(timer) };
+}
+
+function receiveFile(worker: Worker, onProgress: OnReadProgress): Promise<SheetFile> {
   const received = new ReceivedFile();
   return new Promise<SheetFile>((resolve, reject) => {
     worker.on('message', (message: WorkerMessage) => {
@@ -52,7 +68,7 @@ function readInWorker(
     });
     worker.on('error', (error) => reject(toReaderError(error)));
     worker.on('exit', () => reject(new Error('The reading worker ended before the file was read.')));
-  }).finally(() => worker.terminate());
+  });
 }
 
 /** The file as it comes in from the worker, piece by piece. */
@@ -82,5 +98,13 @@ function toReaderError(error: Error & { code?: string }): Error {
     'file_needs_too_much_memory',
     'This workbook needs more memory to read than is allowed. Copy the rows you need into a new workbook, ' +
       'or save it as .csv.',
+  );
+}
+
+function toTimeError(secondsMax: number): WorkbookError {
+  return new WorkbookError(
+    'file_takes_too_long',
+    `This workbook could not be read in ${secondsMax} seconds. Copy the rows you need into a new workbook, or save ` +
+      'it as .csv.',
   );
 }

@@ -1,3 +1,4 @@
+export { columnNumber } from './cell-address';
 export { createReader, type ReaderOptions, type SheetReader } from './create-reader';
 export { CSV_SHEET } from './read-csv';
 export { READ_LIMITS } from './read-limits';

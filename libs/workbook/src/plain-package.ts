@@ -1,3 +1,4 @@
+import { encodeEscapedText } from './escaped-text';
 import { type NumberFormat } from './number-format';
 import { packStoredZip } from './pack-stored-zip';
 import { type WorkbookPackage } from './workbook-package';
@@ -33,7 +34,8 @@ export function packPlainWorkbook({ sheets, formats, sharedStringsXml }: Workboo
     ['xl/_rels/workbook.xml.rels', toWorkbookRelationships(sheets.length, sharedStringsXml !== null)],
     ['xl/styles.xml', toStylesXml(formats)],
   ]);
-  if (sharedStringsXml !== null) parts.set('xl/sharedStrings.xml', sharedStringsXml);
+  // The library decodes escapes in shared texts and not in others; escaped once more, all come out as stored.
+  if (sharedStringsXml !== null) parts.set('xl/sharedStrings.xml', encodeEscapedText(sharedStringsXml));
   sheets.forEach(({ xml }, index) => parts.set(`xl/worksheets/sheet${index + 1}.xml`, xml));
   return packStoredZip(new Map([...parts].map(([name, xml]) => [name, Buffer.from(xml, 'utf8')])));
 }

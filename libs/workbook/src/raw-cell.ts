@@ -1,5 +1,6 @@
 import { dateFromSerial } from '@brakeven/values';
 import { type CellValue } from 'exceljs';
+import { decodeEscapedText } from './escaped-text';
 import { type NumberFormat } from './number-format';
 import { type RawCell } from './sheet-file';
 import { type StoredValue } from './sheet-xml';
@@ -16,8 +17,6 @@ interface CellPlace {
   readonly hasFormula: boolean;
 }
 
-// ISO/IEC 29500-1 18.9.1 ST_Xstring: _x000D_ stands for the character with that code.
-const ESCAPED = /_x([0-9a-f]{4})_/gi;
 const SIGNIFICANT_DIGITS = 15;
 const MS_PER_DAY = 86_400_000;
 /** Day 25,569 of the 1900 system is 1970-01-01. */
@@ -64,7 +63,7 @@ function toNumberCell(place: CellPlace, stored: number, context: CellContext): R
 }
 
 function toTextCell(place: CellPlace, stored: string): RawCell | null {
-  const value = stored.replace(ESCAPED, (_, code: string) => String.fromCharCode(Number.parseInt(code, 16)));
+  const value = decodeEscapedText(stored);
   return value.trim() === '' ? null : { ...place, kind: 'text', value, text: value.trim() };
 }
 

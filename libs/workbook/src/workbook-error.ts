@@ -9,6 +9,7 @@ export type WorkbookErrorCode =
   | 'file_form_unsupported'
   | 'file_unpacks_too_large'
   | 'file_needs_too_much_memory'
+  | 'file_takes_too_long'
   | 'too_many_rows'
   | 'too_many_cells'
   | 'csv_not_utf8'

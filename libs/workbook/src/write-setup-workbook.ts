@@ -2,6 +2,7 @@ import { JOB_STATUSES, MACHINE_COST_KINDS } from '@brakeven/contract';
 import { D, forceIn, lengthIn, toForce, toLength, toLocalDate, type UnitSystem } from '@brakeven/values';
 import exceljs, { type CellValue, type DataValidation, type Workbook, type Worksheet } from 'exceljs';
 import { columnLetters } from './cell-address';
+import { encodeEscapedText } from './escaped-text';
 import {
   EXPLAINING_SHEET,
   SETUP_PLANS,
@@ -154,7 +155,7 @@ function toCellValue(value: string | number | boolean, kind: SetupCellKind, unit
   if (kind === 'force') return forceIn(toForce(text, 'kN'), units === 'us' ? 'US ton' : 'kN').toNumber();
   if (kind === 'length') return lengthIn(toLength(text, 'mm'), units === 'us' ? 'in' : 'mm').toNumber();
   if (['money', 'rate', 'percent', 'count'].includes(kind)) return D(text).toNumber();
-  return text;
+  return encodeEscapedText(text);
 }
 
 async function toBuffer(workbook: Workbook): Promise<Buffer> {

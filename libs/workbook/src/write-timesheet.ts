@@ -3,6 +3,7 @@ import { PassThrough } from 'node:stream';
 import { setImmediate as nextTurn } from 'node:timers/promises';
 import { D, type LocalDate, sum } from '@brakeven/values';
 import exceljs, { type Cell, type CellValue, type Worksheet } from 'exceljs';
+import { encodeEscapedText } from './escaped-text';
 import {
   DATE_FORMAT,
   DURATION_FORMAT,
@@ -91,7 +92,7 @@ export async function writeTimesheetWorkbook(timesheet: TimesheetWorkbook): Prom
 function writeHeader(sheet: Worksheet, titles: readonly string[], headerRow: number): void {
   titles.forEach((title, index) => {
     const cell = sheet.getCell(index + 1, 1);
-    cell.value = title;
+    cell.value = encodeEscapedText(title);
     cell.font = index === 0 ? TITLE_FONT : QUIET_FONT;
   });
   HEADERS.forEach((header, index) => {
@@ -107,7 +108,8 @@ async function writeLines(sheet: Worksheet, timesheet: TimesheetWorkbook, firstR
   for (const [index, line] of timesheet.rows.entries()) {
     const row = sheet.getRow(firstRow + index);
     toCellValues(line).forEach((value, column) => {
-      if (value !== null) row.getCell(column + 1).value = value;
+      if (value !== null)
+        row.getCell(column + 1).value = typeof value === 'string' ? encodeEscapedText(value) : value;
     });
     row.getCell(1).numFmt = DATE_FORMAT;
     writeHours(row.getCell(HOURS_COLUMN), toStoredHours(line, timesheet), timesheet);
