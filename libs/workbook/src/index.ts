@@ -7,7 +7,7 @@ export * from './setup-data';
 export * from './sheet-file';
 export * from './timesheet-row';
 export { WorkbookError, type WorkbookErrorCode } from './workbook-error';
-export { readTimesheetRows } from './read-timesheet-rows';
+export { readTimesheetRows, readTimesheetRowsInTurns } from './read-timesheet-rows';
 export {
   describeTimesheetHeader,
   findTimesheetHeader,

@@ -1,6 +1,6 @@
 import { type TimesheetField, type TimesheetMapping } from '@brakeven/contract';
 import { columnOf } from './cell-address';
-import { type RawCell, type Sheet, type SheetFile, type SheetRow } from './sheet-file';
+import { type RawCell, type SheetFile, type SheetRow } from './sheet-file';
 import {
   type CellReading,
   readDateCell,
@@ -31,6 +31,34 @@ const REQUIRED_CODES = {
  * @throws WorkbookError `sheet_not_found`
  */
 export function readTimesheetRows(file: SheetFile, mapping: TimesheetMapping): TimesheetRows {
+  const steps = readInSteps(file, mapping);
+  for (;;) {
+    const step = steps.next();
+    if (step.done) return step.value;
+  }
+}
+
+/**
+ * The same as {@link readTimesheetRows}, for large sheets in a program that has others to serve: waits for `nextTurn`
+ * every thousand rows.
+ * @throws WorkbookError `sheet_not_found`
+ */
+export async function readTimesheetRowsInTurns(
+  file: SheetFile,
+  mapping: TimesheetMapping,
+  nextTurn: () => Promise<void>,
+): Promise<TimesheetRows> {
+  const steps = readInSteps(file, mapping);
+  for (;;) {
+    const step = steps.next();
+    if (step.done) return step.value;
+    await nextTurn();
+  }
+}
+
+const ROWS_PER_STEP = 1_000;
+
+function* readInSteps(file: SheetFile, mapping: TimesheetMapping): Generator<undefined, TimesheetRows> {
   const sheet = getSheet(file, mapping.sheet);
   const columns = Object.entries(mapping.columns) as [TimesheetField, string][];
   const forms: TextForms = {
@@ -38,25 +66,29 @@ export function readTimesheetRows(file: SheetFile, mapping: TimesheetMapping): T
     dateFormat: mapping.dateFormat,
     decimalMark: mapping.decimalMark ?? '.',
   };
-  const sorted = sortRows(sheet, mapping.headerRow, columns);
+  const header = sheet.rows.find(({ row }) => row === mapping.headerRow);
+  const below = sheet.rows.filter(({ row }) => row > mapping.headerRow);
+  const picked = yield* mapInSteps(below, (row) => ({ row, fields: pickFields(row, columns) }));
+  const sorted = sortTimesheetRows(picked, header ? pickFields(header, columns) : {});
   const entries = sorted.filter(({ role }) => role === 'entry');
   const lastEntryRow = entries.at(-1)?.row.row ?? mapping.headerRow;
   const total = findControlTotal(sorted, lastEntryRow);
   const control = total ? readControlTotal(total, forms) : { controlTotal: null, notices: [] };
   return {
     sheet: sheet.name,
-    rows: entries.map(({ row, fields }) => readEntry(row.row, fields, columns, forms)),
+    rows: yield* mapInSteps(entries, ({ row, fields }) => readEntry(row.row, fields, columns, forms)),
     controlTotal: control.controlTotal,
     problems: [...sorted.flatMap((one) => (one === total ? [] : toNotice(one))), ...control.notices],
   };
 }
 
-function sortRows(sheet: Sheet, headerRow: number, columns: Columns): SortedRow[] {
-  const header = sheet.rows.find(({ row }) => row === headerRow);
-  const rows = sheet.rows
-    .filter(({ row }) => row > headerRow)
-    .map((row) => ({ row, fields: pickFields(row, columns) }));
-  return sortTimesheetRows(rows, header ? pickFields(header, columns) : {});
+function* mapInSteps<T, R>(items: readonly T[], toResult: (item: T) => R): Generator<undefined, R[]> {
+  const results: R[] = [];
+  for (const item of items) {
+    results.push(toResult(item));
+    if (results.length % ROWS_PER_STEP === 0) yield;
+  }
+  return results;
 }
 
 function pickFields(row: SheetRow, columns: Columns): FieldCells {
