@@ -3,6 +3,7 @@ import { Command, CommanderError } from 'commander';
 import { Cli, EXIT, type ExitCode, UsageError } from './cli';
 import { addDatabase } from './commands/database';
 import { addDoctor } from './commands/doctor';
+import { addForming } from './commands/forming';
 import { addJobs } from './commands/jobs';
 import { addPayback } from './commands/payback';
 import { addRollup } from './commands/rollup';
@@ -47,6 +48,7 @@ function createProgram(cli: Cli): Command {
     addRollup,
     addJobs,
     addPayback,
+    addForming,
     addDatabase,
     addDoctor,
   ])

@@ -10,6 +10,7 @@ export * from './lib/gauges';
 export * from './lib/k-factor';
 export * from './lib/least-squares';
 export * from './lib/materials';
+export * from './lib/parse-angle';
 export * from './lib/parse-thickness';
 export * from './lib/ram-depth-answer';
 export * from './lib/ram-depth-fit';

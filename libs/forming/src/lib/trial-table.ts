@@ -8,6 +8,7 @@ import {
   quoted,
   refused,
 } from '@brakeven/values';
+import { parseAngle } from './parse-angle';
 import { type TrialBend } from './trial-bend';
 
 /** Trial bends as read from a table, and the unit of its first column of lengths. */
@@ -121,8 +122,8 @@ function readTrial(row: readonly string[], columns: readonly TrialColumn[], line
 }
 
 function readAngle(text: string): number | undefined {
-  const [, number] = /^(\d+(?:\.\d*)?|\.\d+)\s*(?:°|deg|degrees)?$/i.exec(text.trim()) ?? [];
-  return number === undefined ? undefined : Number(number);
+  const read = parseAngle(text);
+  return read.ok ? read.value : undefined;
 }
 
 /** A reading of the ram may lie below nought; ranges are checked with the fit. */
