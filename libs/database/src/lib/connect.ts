@@ -24,8 +24,9 @@ export function connect(url: string, options: { connectionsMax?: number } = {}):
     connectionTimeoutMillis: 5_000,
     application_name: 'brakeven',
   });
-  // An idle connection that the server closes must not end the process; the next query reports it.
+  // A connection that the server closes must not end the process, idle or in use; the query on it reports it.
   pool.on('error', () => undefined);
+  pool.on('connect', (client) => client.on('error', () => undefined));
   return new Kysely<Tables>({
     dialect: new PostgresDialect({ pool }),
     plugins: [new CamelCasePlugin({ maintainNestedObjectKeys: true })],
