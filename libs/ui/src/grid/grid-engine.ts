@@ -1,4 +1,13 @@
-import { ChangeDetectionStrategy, Component, computed, inject, input, output, signal } from '@angular/core';
+import {
+  ChangeDetectionStrategy,
+  Component,
+  computed,
+  CSP_NONCE,
+  inject,
+  input,
+  output,
+  signal,
+} from '@angular/core';
 import { AgGridAngular } from 'ag-grid-angular';
 import {
   type CellKeyDownEvent,
@@ -31,6 +40,7 @@ const PINNING_WIDTH_MIN = 720;
     <ag-grid-angular
       class="engine"
       [theme]="theme"
+      [styleNonce]="styleNonce"
       [modules]="modules"
       [columnDefs]="columnDefs()"
       [rowModelType]="source() ? 'infinite' : 'clientSide'"
@@ -90,6 +100,8 @@ export class GridEngine<T> {
   readonly failed = output<unknown>();
 
   protected readonly theme = gridTheme;
+  /** The server's policy lets in only style elements that carry the page's nonce. */
+  protected readonly styleNonce = inject(CSP_NONCE, { optional: true }) ?? undefined;
   protected readonly modules = GRID_MODULES;
   protected readonly blockSize = BLOCK_SIZE;
   private readonly api = signal<GridApi<T> | null>(null);
