@@ -100,6 +100,9 @@ export async function up(db: Kysely<unknown>): Promise<void> {
   await sql`create index time_entry_job on time_entry (shop_id, job_id, worked_on, entry_id) where voided_at is null`.execute(
     db,
   );
+  await sql`create index time_entry_voided on time_entry (shop_id, worked_on) where voided_at is not null`.execute(
+    db,
+  );
   await sql`create index time_entry_import on time_entry (shop_id, import_id)`.execute(db);
   await sql`select secure_table('timesheet_import', 'import_id')`.execute(db);
   await sql`select secure_table('timesheet_file', null)`.execute(db);

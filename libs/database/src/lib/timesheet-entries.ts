@@ -2,7 +2,7 @@ import { sql } from 'kysely';
 import { v7 as newId } from 'uuid';
 import { type ShopTransaction } from './tenancy';
 
-/** Live entries that are alike in everything that makes the natural key. */
+/** Entries that are alike in everything that makes the natural key. */
 export interface StoredEntryGroup {
   employeeId: string;
   workedOn: string;
@@ -45,6 +45,23 @@ export async function countStoredEntries(
     select employee_id, worked_on, job_id, operation_id, machine_id, hours, count(*) as entries
     from time_entry
     where shop_id = ${shopId} and worked_on = any(${[...days]}::date[]) and voided_at is null
+    group by employee_id, worked_on, job_id, operation_id, machine_id, hours`.execute(trx);
+  return rows;
+}
+
+/** The entries of the given days that somebody voided one by one, not by undoing their import; counted likewise. */
+export async function countVoidedEntries(
+  trx: ShopTransaction,
+  shopId: string,
+  days: readonly string[],
+): Promise<StoredEntryGroup[]> {
+  if (days.length === 0) return [];
+  const { rows } = await sql<StoredEntryGroup>`
+    select employee_id, worked_on, job_id, operation_id, machine_id, hours, count(*) as entries
+    from time_entry t
+    where shop_id = ${shopId} and worked_on = any(${[...days]}::date[]) and voided_at is not null
+      and not exists (select from timesheet_import i
+        where i.shop_id = t.shop_id and i.import_id = t.import_id and i.status = 'undone')
     group by employee_id, worked_on, job_id, operation_id, machine_id, hours`.execute(trx);
   return rows;
 }

@@ -2,13 +2,13 @@ import { type TimesheetOptions, type TimesheetProblem } from '@brakeven/contract
 import { checkTimesheet as checkRules, matchByNaturalKey } from '@brakeven/costing';
 import {
   countStoredEntries,
+  countVoidedEntries,
   findCommittedImport,
   readTimesheetRegister,
   type ShopTransaction,
   type TimesheetImportRow,
   type TimesheetRegister,
 } from '@brakeven/database';
-import { formatHours, formatLocalDate } from '@brakeven/values';
 import { type TimesheetRow } from '@brakeven/workbook';
 import { type ShopContext, todayOf } from '../context';
 import { groupBy } from '../group-by';
@@ -16,8 +16,9 @@ import { createNameIndexes } from './name-indexes';
 import { ITEMS_PER_TURN, nextTurn } from './next-turn';
 import { type TimesheetReading } from './read-timesheet';
 import { type EntryCandidate, type ResolvedRow, resolveRow, type RowLookup } from './resolve-row';
-import { type StoredEntries, toStoredEntries, workKey } from './stored-entries';
-import { listFileProblems, toCellProblem, toNoticeProblem, toRuleProblem } from './timesheet-problem';
+import { type StoredEntries, toStoredEntries } from './stored-entries';
+import { listStoredWarnings } from './stored-warnings';
+import { listFileProblems, toNoticeProblem, toRuleProblem } from './timesheet-problem';
 import { type UploadTools } from './upload';
 
 /** A row with its verdict. */
@@ -51,7 +52,10 @@ export async function assessTimesheet(
   const resolved = await resolveRows(reading, register, options, tools);
   const candidates = resolved.flatMap(({ candidate }) => candidate ?? []);
   const days = [...new Set(candidates.map(({ workedOn }) => workedOn))];
-  const stored = toStoredEntries(await countStoredEntries(trx, shopId, days));
+  const stored = toStoredEntries(
+    await countStoredEntries(trx, shopId, days),
+    await countVoidedEntries(trx, shopId, days),
+  );
   const judged = await judgeCandidates(candidates, stored, context);
   const problems = [
     ...listSheetProblems(reading),
@@ -107,7 +111,7 @@ async function judgeCandidates(
     for (const { row, isAlreadyThere } of checked) if (isAlreadyThere) rowsThere.add(row);
     const broken = checkRules({ candidates: checked, today, hoursOnFile: stored.hoursOnFile });
     for (const problem of broken) problems.push(toRuleProblem(problem));
-    for (const problem of warnOfCorrections(checked, stored)) problems.push(problem);
+    for (const problem of listStoredWarnings(checked, stored)) problems.push(problem);
     await nextTurn();
   }
   return { problems, rowsThere };
@@ -122,30 +126,6 @@ function* listDayBatches(candidates: readonly EntryCandidate[]): Generator<Entry
     batch = [];
   }
   if (batch.length > 0) yield batch;
-}
-
-/**
- * A new row beside a stored entry of the same work that the file does not have is most likely that entry
- * corrected. Both would count, so it is said.
- */
-function warnOfCorrections(checked: readonly EntryCandidate[], stored: StoredEntries): TimesheetProblem[] {
-  const left = new Map<string, number>();
-  for (const candidate of checked.filter(({ isAlreadyThere }) => isAlreadyThere)) {
-    const key = workKey(candidate);
-    left.set(key, (left.get(key) ?? stored.workCounts.get(key) ?? 0) - 1);
-  }
-  return checked.flatMap((candidate) => {
-    const key = workKey(candidate);
-    if (candidate.isAlreadyThere || (left.get(key) ?? stored.workCounts.get(key) ?? 0) <= 0) return [];
-    const day = formatLocalDate(candidate.workedOn);
-    const message = `Hours are already stored for this employee, job, operation and machine on ${day} that this file does not have. If the ${formatHours(candidate.hours)} hours here correct them, void the stored entry or undo its import; as it is, both count.`;
-    const problem = { code: 'may_correct_stored', severity: 'warning' as const, message };
-    return [toCellProblem(candidate.source.sheet, toPlace(candidate), 'hours', problem)];
-  });
-}
-
-function toPlace({ row, source }: EntryCandidate): Pick<TimesheetRow, 'row' | 'cells'> {
-  return { row, cells: source.cells };
 }
 
 function listSheetProblems(reading: TimesheetReading): TimesheetProblem[] {

@@ -1,6 +1,7 @@
 import { AppError, type TimesheetCheck, timesheetCheckSchema } from '@brakeven/contract';
 import { checkTimesheet } from './check-timesheet';
 import { createTimesheetShop, GOOD_ROWS, toCsv, type TimesheetShop } from './testing/timesheet-shop';
+import { undoImport } from './undo-import';
 
 const codes = ({ problems }: TimesheetCheck) =>
   problems.map(({ code, cell, severity }) => `${code} ${cell}${severity === 'warning' ? ' (warning)' : ''}`);
@@ -140,6 +141,24 @@ describe('checkTimesheet', () => {
     expect(await shop.check(toCsv(both))).toMatchObject({ alreadyThere: 1, entriesReady: 1, problems: [] });
   });
 
+  it('warns when a row would bring back an entry that was voided by hand, not one whose import was undone', async () => {
+    const rows = ['2026-03-02,12,J-1041,FORM,,2,,,', '2026-03-02,12,J-1041,FORM,,2,,,'];
+    const { importId } = await shop.take(toCsv(rows));
+    const [first] = await shop.inShop((trx) => trx.selectFrom('timeEntry').select('entryId').execute());
+    await shop.inShop((trx) =>
+      trx
+        .updateTable('timeEntry')
+        .set({ voidedAt: new Date(), voidedBy: 'Mara' })
+        .where('entryId', '=', first?.entryId ?? '')
+        .execute(),
+    );
+    const check = await shop.check(toCsv([...rows, ...GOOD_ROWS]));
+    expect(codes(check)).toEqual(['was_voided F3 (warning)']);
+    expect(check).toMatchObject({ alreadyThere: 1, entriesReady: 4 });
+    await undoImport(shop.bookkeeper, { importId: importId ?? '' });
+    expect(codes(await shop.check(toCsv(rows)))).toEqual([]);
+  });
+
   it('ties the total at the foot out against all hours read', async () => {
     const agreeing = await shop.check(toCsv([...GOOD_ROWS, 'Total,,,,,16.25,,,']));
     expect(agreeing.controlTotal).toEqual({
@@ -150,6 +169,7 @@ describe('checkTimesheet', () => {
     });
     const differing = await shop.check(toCsv([...GOOD_ROWS, 'Total,,,,,17.5,,,']));
     expect(differing.controlTotal).toMatchObject({ agrees: false, difference: '1.2500' });
+    expect(codes(differing)).toEqual(['control_total_differs F5 (warning)']);
     expect(differing.rowsRead).toBe(3);
   });
 

@@ -1,7 +1,7 @@
 import { createHash } from 'node:crypto';
 import { type TimesheetOptions } from '@brakeven/contract';
 import { listSavedMappings } from '@brakeven/database';
-import { readTimesheetRows, type SheetFile, type TimesheetRows } from '@brakeven/workbook';
+import { readTimesheetRowsInTurns, type SheetFile, type TimesheetRows } from '@brakeven/workbook';
 import { inShopOf, type ShopContext } from '../context';
 import { findMapping, type FoundMapping } from './find-mapping';
 import { nextTurn } from './next-turn';
@@ -34,14 +34,17 @@ export async function readTimesheet(
     ...found,
     file: { name: file.name, bytes: file.bytes.byteLength, sha256: toSha256(file.bytes) },
     sheetFile,
-    timesheet: readRows(sheetFile, found),
+    timesheet: await readRows(sheetFile, found),
   };
 }
 
-function readRows(file: SheetFile, { mapping, missingFields }: FoundMapping): TimesheetRows | null {
+async function readRows(
+  file: SheetFile,
+  { mapping, missingFields }: FoundMapping,
+): Promise<TimesheetRows | null> {
   if (!mapping || missingFields.length > 0) return null;
   try {
-    return readTimesheetRows(file, mapping);
+    return await readTimesheetRowsInTurns(file, mapping, nextTurn);
   } catch (error) {
     throw toFileError(error);
   }

@@ -7,7 +7,7 @@ import {
   type TimesheetProblem,
 } from '@brakeven/contract';
 import { type TimesheetRegister } from '@brakeven/database';
-import { D, type Hours, hoursText, type LocalDate, sum, toHours } from '@brakeven/values';
+import { D, formatHours, type Hours, hoursText, type LocalDate, sum, toHours } from '@brakeven/values';
 import { type SheetFile, type SheetRow, type TimesheetRow } from '@brakeven/workbook';
 import { groupBy } from '../group-by';
 import { type AssessedRow, type Assessment } from './assess-timesheet';
@@ -22,8 +22,10 @@ export const PROBLEMS_LISTED_MAX = 5_000;
  * asserted, since everything that is shown of a file rests on it.
  */
 export function toCheckResult(reading: TimesheetReading, assessment: Assessment): TimesheetCheck {
-  const { rows, problems, alreadyImported, register } = assessment;
+  const { rows, alreadyImported, register } = assessment;
   const totals = toTotals(rows);
+  const controlTotal = compareControlTotal(reading, totals.hoursRead);
+  const problems = [...listControlProblems(reading, totals.hoursRead, controlTotal), ...assessment.problems];
   const kept = rows.filter(({ state }) => state !== 'refused');
   const days = [...new Set(kept.flatMap(({ row }) => row.workedOn ?? []))].sort();
   const shown = chooseShownRows(rows, problems);
@@ -39,7 +41,7 @@ export function toCheckResult(reading: TimesheetReading, assessment: Assessment)
     headerCells: [...reading.headerCells],
     missingFields: reading.missingFields,
     ...totals,
-    controlTotal: compareControlTotal(reading, D(totals.hoursRead)),
+    controlTotal,
     alreadyImported: alreadyImported && {
       ...alreadyImported,
       importedAt: alreadyImported.importedAt.toISOString(),
@@ -97,11 +99,26 @@ function sumRows(rows: readonly AssessedRow[]): RowSum {
 }
 
 /** The sheet's own total against all hours that could be read, refused rows included: both saw the same cells. */
-function compareControlTotal({ timesheet }: TimesheetReading, hoursRead: Hours | ReturnType<typeof D>) {
+function compareControlTotal(
+  { timesheet }: TimesheetReading,
+  hoursRead: string,
+): TimesheetCheck['controlTotal'] {
   if (!timesheet?.controlTotal) return null;
   const { cell, hours } = timesheet.controlTotal;
-  const difference = toHours(D(hours).minus(hoursRead));
+  const difference = toHours(D(hours).minus(D(hoursRead)));
   return { cell, hours, agrees: difference.isZero(), difference: hoursText(difference) };
+}
+
+function listControlProblems(
+  { timesheet }: TimesheetReading,
+  hoursRead: string,
+  controlTotal: TimesheetCheck['controlTotal'],
+): TimesheetProblem[] {
+  if (!timesheet?.controlTotal || !controlTotal || controlTotal.agrees) return [];
+  const { hours, cell } = controlTotal;
+  const message = `The total in ${cell} says ${formatHours(hours)} hours, the rows above it that can be read add up to ${formatHours(hoursRead)}. Look for a row that is missing, unreadable or counted twice.`;
+  const place = { sheet: timesheet.sheet, cell, row: timesheet.controlTotal.row, field: 'hours' } as const;
+  return [{ ...place, code: 'control_total_differs', severity: 'warning', message, alias: null }];
 }
 
 function sumByEmployee(

@@ -6,6 +6,9 @@ import { checkTimesheet } from '../check-timesheet';
 import { importTimesheet } from '../import-timesheet';
 import { type UploadedFile, type UploadTools } from '../upload';
 
+// Each test makes a shop of its own on a real database, next to other suites.
+jest.setTimeout(30_000);
+
 /** A shop with two people, two jobs, two operations and a press, on Friday 6 March 2026. */
 export interface TimesheetShop extends TestShop {
   ids: Record<'dana' | 'ivo' | 'job1041' | 'job1042' | 'form' | 'weld' | 'press', string>;

@@ -5,6 +5,9 @@ import { createReader, type SetupData, writeSetupWorkbook } from '@brakeven/work
 import { type UploadedFile } from '../../import-timesheet/upload';
 import { checkSetup, importSetup } from '../import-setup';
 
+// Each test makes a shop of its own on a real database, next to other suites.
+jest.setTimeout(30_000);
+
 export const JANUARY = toLocalDate('2026-01-01');
 export const FEBRUARY = toLocalDate('2026-02-01');
 
