@@ -25,7 +25,7 @@ async function createPeople(db: Kysely<unknown>): Promise<void> {
       employee_id uuid not null,
       valid_from date not null,
       wage_per_hour numeric(14,6) not null check (wage_per_hour >= 0),
-      burden_percent numeric(9,4) not null check (burden_percent >= 0),
+      burden_percent numeric(9,4) not null check (burden_percent between 0 and 1000),
       primary key (shop_id, pay_rate_id),
       unique (shop_id, employee_id, valid_from),
       foreign key (shop_id, employee_id) references employee

@@ -32,7 +32,10 @@ const notNegative = (schema: z.ZodString) =>
   schema.refine((text) => !text.startsWith('-'), 'Must not be negative.');
 export const amountInputSchema = notNegative(decimal(2, '1234.50'));
 export const rateInputSchema = notNegative(decimal(6, '85.00'));
-export const percentInputSchema = notNegative(decimal(4, '28'));
+export const percentInputSchema = notNegative(decimal(4, '28')).refine(
+  (text) => Number(text) <= 1000,
+  'At most 1000 percent.',
+);
 export const quantityInputSchema = notNegative(decimal(5, '1828.8'));
 
 export const nameInputSchema = z
