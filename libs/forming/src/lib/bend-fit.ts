@@ -1,5 +1,5 @@
 import { checkForceInput, computeBendForce } from './bend-force';
-import { preferredOpeningRatio } from './die-choice';
+import { preferredOpeningRatios } from './die-choice';
 import {
   checkFitInput,
   findLowestRating,
@@ -20,7 +20,8 @@ export interface BendFit {
 
 /**
  * Judges every opening owned and picks the best: of those that fit (else of those that do with care) the one whose
- * opening ÷ thickness is nearest to the usual ratio, the lower share of the rating breaking ties.
+ * opening ÷ thickness is in the usual range or nearest to it, the narrower one breaking ties, as it makes the tighter
+ * radius and takes the shorter flange.
  * @throws RangeError for what `checkFitInput` refuses
  */
 export function computeBendFit(input: FitInput): BendFit {
@@ -28,25 +29,31 @@ export function computeBendFit(input: FitInput): BendFit {
   const rows = input.openings.map((opening) => toFitRow(input, opening));
   const fitting = rows.filter((row) => row.verdict === 'fits');
   const candidates = fitting.length > 0 ? fitting : rows.filter((row) => row.verdict === 'with-care');
-  const ratio = preferredOpeningRatio(input.thicknessMm);
+  const usual = preferredOpeningRatios(input.thicknessMm);
   const [best] = [...candidates].sort(
-    (a, b) => distanceTo(ratio, a) - distanceTo(ratio, b) || (a.share ?? 0) - (b.share ?? 0),
+    (a, b) => distanceTo(usual, a) - distanceTo(usual, b) || a.openingOverThickness - b.openingOverThickness,
   );
   return {
     rows,
     best: best?.opening.code ?? null,
-    reason: best ? wordsFor(best, ratio) : wordsForNone(rows),
+    reason: best ? wordsFor(best, usual) : wordsForNone(rows),
   };
 }
 
-function distanceTo(ratio: number, row: FitRow): number {
-  return Math.abs(Math.log(row.openingOverThickness / ratio));
+interface RatioRange {
+  from: number;
+  to: number;
 }
 
-function wordsFor(row: FitRow, ratio: number): string {
+/** Nought inside the range, else how far off, as a ratio, so that half and double count alike. */
+function distanceTo({ from, to }: RatioRange, { openingOverThickness }: FitRow): number {
+  return Math.max(0, Math.log(from / openingOverThickness), Math.log(openingOverThickness / to));
+}
+
+function wordsFor(row: FitRow, { from, to }: RatioRange): string {
   const share = row.share === null ? '' : `, at ${Math.round(row.share * 100)} % of the rating`;
   const care = row.objections.map((objection) => ` ${objection.words}`).join('');
-  return `Opening ÷ thickness of ${row.openingOverThickness.toFixed(1)} is nearest to the usual ${ratio}${share}.${care}`;
+  return `Opening ÷ thickness of ${row.openingOverThickness.toFixed(1)} is nearest to the usual ${from} to ${to}${share}.${care}`;
 }
 
 function wordsForNone(rows: readonly FitRow[]): string {

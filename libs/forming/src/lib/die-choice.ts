@@ -8,11 +8,9 @@ export function shortestFlangeMm(openingMm: number, insideAngle = 90): number {
   return openingMm / 2 / Math.cos(toRadians(180 - insideAngle) / 2);
 }
 
-/** Opening ÷ thickness that is usual for a thickness; `FORMING_RULES.preferredOpening`, common practice. */
-export function preferredOpeningRatio(thicknessMm: number): number {
-  if (thicknessMm < 2.7) return 6;
-  if (thicknessMm < 8.5) return 8;
-  return thicknessMm < 13 ? 10 : 12;
+/** From which to which opening ÷ thickness is usual for a thickness; `FORMING_RULES.preferredOpening`. */
+export function preferredOpeningRatios(thicknessMm: number): { from: number; to: number } {
+  return thicknessMm < 13 ? { from: 8, to: 10 } : { from: 10, to: 12 };
 }
 
 /** Degrees to radians. */

@@ -1,5 +1,5 @@
 import { type BendForce, checkForceInput, computeBendForce } from './bend-force';
-import { insideRadiusMm, preferredOpeningRatio, shortestFlangeMm } from './die-choice';
+import { insideRadiusMm, preferredOpeningRatios, shortestFlangeMm } from './die-choice';
 import { checkFigure, type FormingIssue } from './forming-issue';
 
 /** One opening of a die that the shop owns; null where it is not known. */
@@ -180,7 +180,8 @@ function ratioObjections(
   { thicknessMm }: FitInput,
   { openingOverThickness }: PlainRow,
 ): [Objection, string | null][] {
-  const usual = `usual here is ${preferredOpeningRatio(thicknessMm)}`;
+  const { from, to } = preferredOpeningRatios(thicknessMm);
+  const usual = `usual here is ${from} to ${to}`;
   const ratio = openingOverThickness.toFixed(1);
   return [
     [

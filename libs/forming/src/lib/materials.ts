@@ -41,7 +41,7 @@ export const MATERIALS: readonly FormingMaterial[] = [
     ...CARBON_STEEL,
     code: 'mild-steel',
     name: 'Mild steel',
-    aliases: ['mild steel', 'steel', 'ms'],
+    aliases: ['steel', 'ms'],
     tensileMin: null,
     tensileUsed: ksi(60),
     tensileSource: `60 ksi, the strength that shop charts for mild steel are made for (${CHART})`,

@@ -8,8 +8,7 @@ export const FORMING_RULES = {
     "A share of the die opening that depends on the material, and at least the punch's nose radius.",
   shortestFlange:
     'V ÷ 2 ÷ cos(half the angle turned): the slant from the bottom line of the V to its shoulder, about 0.7 V at 90°.',
-  preferredOpening:
-    'Opening ÷ thickness: 6 to about 2.5 mm (0.105 in), 8 to 8 mm (5/16 in), 10 to 13 mm (1/2 in), 12 above.',
+  preferredOpening: 'Opening ÷ thickness of 8 to 10, and of 10 to 12 for plate above 13 mm (1/2 in).',
   bendAllowance: 'BA = turned in radians · (R + K · t): the length of the neutral line in the bend.',
   bendDeduction:
     'BD = 2 · (R + t) · tan(turned ÷ 2) − BA for inside angles of 90° or more, flanges measured outside to the virtual sharp corner.',
