@@ -64,10 +64,6 @@ export class WorkingsDrawer {
     this.dialog().nativeElement.close();
   }
 
-  protected closeFromBackdrop(event: MouseEvent): void {
-    if (event.target === this.dialog().nativeElement) this.close();
-  }
-
   protected toText(amount: string): string {
     return toFigureText(amount, this.workings()?.unit ?? 'money', this.format().currency);
   }

@@ -4,6 +4,7 @@ import {
   computed,
   inject,
   input,
+  type OnInit,
   signal,
   viewChild,
 } from '@angular/core';
@@ -37,7 +38,7 @@ const TYPING_PAUSE_MS = 300;
   styleUrl: './jobs-page.scss',
   changeDetection: ChangeDetectionStrategy.OnPush,
 })
-export class JobsPage {
+export class JobsPage implements OnInit {
   private readonly api = inject(JobsApi);
   private readonly session = inject(SessionStore);
   private readonly dialog = inject(MatDialog);

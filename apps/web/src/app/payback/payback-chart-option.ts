@@ -174,6 +174,7 @@ function toAxisText(amount: number, currency: string): string {
     style: 'currency',
     currency,
     notation: 'compact',
+    minimumFractionDigits: 0,
     maximumFractionDigits: 1,
     signDisplay: 'exceptZero',
   });

@@ -1,0 +1,88 @@
+import { type Workings, type WorkingsLine } from '@brakeven/contract';
+import { checkWorkings } from './check-workings';
+import { toLineView } from './line-view';
+
+const line = (lineId: string, amount: string): WorkingsLine => ({
+  lineId,
+  on: '2026-11-02',
+  category: 'labour',
+  label: 'Jon Reyes',
+  job: '2231',
+  operation: 'Form',
+  machine: null,
+  hours: '1.5000',
+  rate: '26.00',
+  rateFactor: '1.28',
+  rateValidFrom: '2026-03-01',
+  amount,
+  source: null,
+});
+
+const workings = (part: Partial<Workings>): Workings => ({
+  figure: { figure: 'job.labour' },
+  title: 'Labour',
+  unit: 'money',
+  amount: '0.30',
+  rule: '',
+  inputs: [],
+  parts: [],
+  lineCount: 0,
+  lines: [],
+  nextCursor: null,
+  ...part,
+});
+
+describe('checkWorkings', () => {
+  it('adds rows up exactly where floating point would not', () => {
+    const check = checkWorkings(
+      workings({ lineCount: 3, lines: [line('1', '0.10'), line('2', '0.10'), line('3', '0.10')] }),
+      'USD',
+    );
+    expect(check).toEqual({ state: 'agrees', text: 'The 3 rows add up to $0.30, exactly the figure.' });
+  });
+
+  it('says by how much they do not agree, were it a cent', () => {
+    const check = checkWorkings(workings({ lineCount: 1, lines: [line('1', '0.29')] }), 'USD');
+    expect(check?.state).toBe('disagrees');
+    expect(check?.text).toMatch(/^The one row makes \$0\.29, not \$0\.30\./);
+  });
+
+  it('does not judge while rows are missing', () => {
+    const check = checkWorkings(workings({ lineCount: 240, lines: [line('1', '0.30')] }), 'USD');
+    expect(check).toEqual({ state: 'open', text: '1 of 240 rows shown; they make $0.30 so far.' });
+  });
+
+  it('holds signed parts against the figure', () => {
+    const parts = [
+      { label: 'Earned', amount: '10.00', figure: null },
+      { label: 'Running cost', amount: '-9.70', figure: null },
+    ];
+    expect(checkWorkings(workings({ parts }), 'USD')?.state).toBe('agrees');
+  });
+
+  it('has nothing to say about a figure without rows', () => {
+    expect(checkWorkings(workings({ amount: '0.00' }), 'USD')).toBeNull();
+  });
+});
+
+describe('toLineView', () => {
+  it('shows how a line was computed, and where it belongs', () => {
+    const view = toLineView(line('1', '49.92'), 'money', 'USD');
+    expect(view.sum).toBe('1.50\u00a0h × $26.00 × 1.28');
+    expect(view.where).toBe('2231 · Form');
+    expect(view.amount).toBe('$49.92');
+  });
+
+  it('leaves out what a line does not have', () => {
+    const cost = {
+      ...line('1', '1860.00'),
+      hours: null,
+      rate: null,
+      rateFactor: null,
+      job: null,
+      operation: null,
+    };
+    const view = toLineView(cost, 'money', 'USD');
+    expect([view.sum, view.where]).toEqual(['', '']);
+  });
+});
