@@ -4,7 +4,7 @@ import { mkdtemp, readFile, rm, writeFile } from 'node:fs/promises';
 import { tmpdir } from 'node:os';
 import { join } from 'node:path';
 import { runCli, runJson } from './run-cli';
-import { COST_OF_J100, PAYBACK_OF_PB2, SETUP, WEEK, WEEK_WITH_STRANGER } from './week';
+import { COST_OF_J100, PAYBACK_OF_PB2, SETUP, WEEK, WEEK_WITH_STRANGER } from '../fixtures/first-week';
 
 jest.setTimeout(120_000);
 
