@@ -1,5 +1,6 @@
 import './setup/node-version.mjs';
 import { nxEnvironment, nxProgram } from './setup/build.mjs';
+import { describeDemoShop } from './setup/demo-shop.mjs';
 import { findFreePort, startService } from './setup/processes.mjs';
 import { apiLog, seedDemoShop, startApi, turnApiLog } from './setup/programs.mjs';
 import { createProgress, runScript } from './setup/progress.mjs';
@@ -7,7 +8,6 @@ import { announceInstance, refuseSecondInstance, stopAbandonedServer } from './s
 import { setUp, tellWaiting } from './setup/set-up.mjs';
 import { withSetupLock } from './setup/setup-lock.mjs';
 import { atShutdown, isShuttingDown } from './setup/shutdown.mjs';
-import { describeSignIns } from './setup/sign-ins.mjs';
 import { SetupError, errorText } from './setup/workspace.mjs';
 
 const progress = createProgress(process.stdout);
@@ -31,7 +31,9 @@ async function serve() {
   refuseSecondInstance();
   stopAbandonedServer();
   const environment = await setUp(['cli', 'demo-shop'], progress, { stopsAtEnd: true });
-  const signIns = await progress.step('Looking after the demo shop', () => seedDemoShop(environment));
+  const demoShop = await progress.step('Looking after the demo shop', (note) =>
+    seedDemoShop(environment, note),
+  );
   turnApiLog();
   const apiPort = await findFreePort(4280);
   const webPort = await findFreePort(4200);
@@ -41,7 +43,7 @@ async function serve() {
   });
   announceInstance(`http://127.0.0.1:${webPort}`, 0);
   progress.say(`\nBrakeven in development: http://127.0.0.1:${webPort}, API on port ${apiPort}\n`);
-  progress.say(describeSignIns(signIns));
+  progress.say(describeDemoShop(demoShop));
   return webServer;
 }
 

@@ -2,6 +2,7 @@ import './setup/node-version.mjs';
 import { performance } from 'node:perf_hooks';
 import { parseArgs } from 'node:util';
 import { getConfiguration, saveConfiguration } from './setup/configuration.mjs';
+import { describeDemoShop } from './setup/demo-shop.mjs';
 import { findFreePort, isPortFree, isWebPort } from './setup/processes.mjs';
 import { apiLog, seedDemoShop, startApi, turnApiLog } from './setup/programs.mjs';
 import { createProgress, formatDuration, runScript } from './setup/progress.mjs';
@@ -9,7 +10,6 @@ import { announceInstance, refuseSecondInstance, stopAbandonedServer } from './s
 import { setUp, tellWaiting } from './setup/set-up.mjs';
 import { withSetupLock } from './setup/setup-lock.mjs';
 import { isShuttingDown } from './setup/shutdown.mjs';
-import { describeSignIns } from './setup/sign-ins.mjs';
 import { SetupError, errorText } from './setup/workspace.mjs';
 
 const usage = 'Usage: npm start [-- --port NUMBER]';
@@ -36,12 +36,14 @@ async function serve(wantedPort) {
   refuseSecondInstance();
   stopAbandonedServer();
   const environment = await setUp(['api', 'cli', 'demo-shop', 'web'], progress, { stopsAtEnd: true });
-  const signIns = await progress.step('Looking after the demo shop', () => seedDemoShop(environment));
+  const demoShop = await progress.step('Looking after the demo shop', (note) =>
+    seedDemoShop(environment, note),
+  );
   turnApiLog();
   const service = await progress.step('Starting the server', () => startOnSomePort(environment, wantedPort));
   announceInstance(service.address, service.pid);
   progress.say(`\nBrakeven is ready at ${service.address} (${formatDuration(performance.now() - begin)})\n`);
-  progress.say(describeSignIns(signIns));
+  progress.say(describeDemoShop(demoShop));
   progress.say('Ctrl-C stops it; the data stays.');
   return service;
 }

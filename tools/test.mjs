@@ -116,7 +116,7 @@ function chooseSpecs() {
  */
 async function runJourneys(cluster) {
   const environment = await cluster.makeDatabase('brakeven_e2e');
-  const signIns = await seedDemoShop(environment);
+  const { signIns } = await seedDemoShop(environment);
   return runJest({
     config: join(root, 'tests/e2e/jest.config.cjs'),
     environment: { ...environment, E2E_SIGN_INS: JSON.stringify(signIns) },

@@ -79,7 +79,7 @@ export async function runOrThrow(what, command, args, options = {}) {
     if (isShuttingDown()) {
       await new Promise(() => undefined);
     }
-    throw new SetupError(`${what}:\n${lastLines(output, 60)}`);
+    throw new SetupError(`${what}:\n${lastLines(output, 120)}`);
   }
   return stdout;
 }

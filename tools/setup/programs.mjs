@@ -48,20 +48,24 @@ export async function migrate(environment) {
  */
 
 /**
+ * @typedef {object} DemoShop
+ * @property {SignIn[]} signIns none when there are other shops but no demo shop
+ * @property {string | null} timesheet a workbook to try the import with
+ */
+
+/**
  * Fills a database that has no shop yet with the demo shop.
  * @param {DatabaseEnvironment} environment
- * @returns {Promise<SignIn[]>} the demo shop's sign-ins; none when there are other shops but no demo shop
+ * @param {(remark: string) => void} [note] told how far it is
+ * @returns {Promise<DemoShop>}
  */
-export async function seedDemoShop(environment) {
-  const answer = await runOrThrow(
-    'The demo shop could not be made',
-    process.execPath,
-    [builtFile('demo-shop')],
-    {
-      env: { ...process.env, ...environment },
-    },
-  );
-  return JSON.parse(answer).signIns;
+export async function seedDemoShop(environment, note) {
+  const args = [builtFile('demo-shop'), join(localDirectory, 'demo')];
+  const answer = await runOrThrow('The demo shop could not be made', process.execPath, args, {
+    env: { ...process.env, ...environment },
+    onOutput: (text) => text.startsWith('{') || note?.(lastLines(text, 1)),
+  });
+  return JSON.parse(answer);
 }
 
 /**

@@ -6,7 +6,8 @@ const quietMs = 4_000;
 
 /**
  * @typedef {object} Progress
- * @property {<T>(title: string, work: () => Promise<T>) => Promise<T>} step does the work and prints a line with its duration
+ * @property {<T>(title: string, work: (note: (remark: string) => void) => Promise<T>) => Promise<T>} step does the
+ *   work and prints a line with its duration; meanwhile a terminal shows what the work notes
  * @property {(text: string) => void} say prints a line
  */
 
@@ -39,7 +40,7 @@ export function createProgress(stream) {
       const slow = setTimeout(() => announce(title), stream.isTTY ? 100 : quietMs);
       let mark = '✗';
       try {
-        const result = await work();
+        const result = await work((remark) => void (pending && announce(`${title}: ${remark}`.slice(0, 78))));
         mark = '✓';
         return result;
       } finally {

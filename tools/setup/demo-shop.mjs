@@ -1,8 +1,8 @@
 /**
- * @param {import('./programs.mjs').SignIn[]} signIns
- * @returns {string} a table of the demo shop's sign-ins; a remark when there are none
+ * @param {import('./programs.mjs').DemoShop} demoShop
+ * @returns {string} its sign-ins as a table, and the timesheet to try; a remark when there is no demo shop
  */
-export function describeSignIns(signIns) {
+export function describeDemoShop({ signIns, timesheet }) {
   if (signIns.length === 0) {
     return 'Sign in with the e-mail address and password of your shop.\n';
   }
@@ -12,5 +12,6 @@ export function describeSignIns(signIns) {
     ({ role, email, password }) =>
       `  ${role.padEnd(width('role'))}  ${email.padEnd(width('email'))}  ${password}`,
   );
-  return `Sign-ins of the demo shop\n${lines.join('\n')}\n`;
+  const toTry = timesheet ? `\nA timesheet to try: ${timesheet}\n` : '';
+  return `Sign-ins of the demo shop\n${lines.join('\n')}\n${toTry}`;
 }
