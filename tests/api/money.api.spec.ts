@@ -1,0 +1,172 @@
+import { type Endpoint, ENDPOINTS, FIGURES, hasPermission, type Role } from '@brakeven/contract';
+import { importSetup, importTimesheet, createReader } from '@brakeven/use-cases';
+import { writeSetupWorkbook, writeTimesheetWorkbook } from '@brakeven/workbook';
+import { SETUP, WEEK } from '../fixtures/first-week';
+import { startTestApi, type TestApi, type Visitor } from './test-api';
+
+/** Names that only money goes by; `machine` is a code elsewhere, and `amount` may be hours. */
+const MONEY_NAMES = [
+  'wagePerHour',
+  'burdenPercent',
+  'ratePerLabourHour',
+  'machineHourRate',
+  'chargeOutRate',
+  'runningCostPerHour',
+  'labour',
+  'overhead',
+  'total',
+  'quotedPrice',
+  'outlay',
+  'costItems',
+  'earned',
+  'running',
+  'runningCost',
+  'earnedBack',
+  'remaining',
+];
+/** Money and rates are the only texts that are a number with two, three, five or six decimals. */
+const MONEY_TEXT = /^-?\d+\.(\d{2}|\d{3}|\d{5,6})$/;
+
+let api: TestApi;
+beforeAll(async () => {
+  api = await startTestApi();
+  const context = api.shop.context();
+  const tools = { reader: createReader() };
+  const toFile = (name: string, bytes: Uint8Array) => ({ name, bytes });
+  await importSetup(context, toFile('s.xlsx', await writeSetupWorkbook(SETUP, { units: 'us' })), {}, tools);
+  const week = await writeTimesheetWorkbook({ title: 'Week 10', rows: WEEK });
+  await importTimesheet(context, toFile('w.xlsx', week), {}, tools);
+});
+afterAll(() => api.close());
+
+/** Everything that a role can read, each endpoint with the ids and figures of what is there. */
+async function readEverything(role: Role): Promise<{ name: string; answer: unknown }[]> {
+  const visitor = await api.signIn(role);
+  const ids = await findIds();
+  const answers = [];
+  for (const [name, definition] of Object.entries<Endpoint>(ENDPOINTS)) {
+    if (!isReadable(definition, role)) continue;
+    for (const query of listQueries(name, ids)) {
+      const path = definition.path.replace(/:(\w+)/g, (_, id: string) => ids[id] ?? 'no such id');
+      answers.push(await read(visitor, name, path + query));
+    }
+  }
+  return answers;
+}
+
+async function read(visitor: Visitor, name: string, path: string) {
+  const response = await visitor.send('get', path);
+  expect([path, response.status]).toEqual([path, 200]);
+  return { name: `${name} ${path}`, answer: response.body as unknown };
+}
+
+function isReadable({ method, permission, response }: Endpoint, role: Role): boolean {
+  const isJson = response !== null && typeof response !== 'string';
+  return method === 'get' && isJson && permission !== null && hasPermission(role, permission);
+}
+
+function listQueries(name: string, ids: Record<string, string>): string[] {
+  const workings: Record<string, (figure: string) => boolean> = {
+    getJobWorkings: (figure) => figure.startsWith('job.'),
+    getJobHoursWorkings: (figure) => ['job.hours', 'job.machineHours'].includes(figure),
+    getPaybackWorkings: (figure) => figure.startsWith('payback.'),
+  };
+  const isMeant = workings[name];
+  if (isMeant) {
+    const of = name === 'getPaybackWorkings' ? `machineId=${ids['machineId']}` : `jobId=${ids['jobId']}`;
+    return FIGURES.filter(isMeant).map((figure) => `?figure=${figure}&${of}`);
+  }
+  return name === 'getSheetExcerpt' ? [`?sheet=${encodeURIComponent(ids['sheet'] ?? '')}&row=5`] : [''];
+}
+
+async function findIds(): Promise<Record<string, string>> {
+  return api.shop.inShop(async (trx) => {
+    const machine = await trx.selectFrom('machine').select('machineId').executeTakeFirstOrThrow();
+    const job = await trx
+      .selectFrom('job')
+      .select('jobId')
+      .where('number', '=', 'J-100')
+      .executeTakeFirstOrThrow();
+    const sheet = await trx
+      .selectFrom('timesheetImport')
+      .select(['importId', 'sheet'])
+      .executeTakeFirstOrThrow();
+    return { ...machine, ...job, ...sheet };
+  });
+}
+
+/** Paths of whatever looks like money in an answer. */
+function findMoney(value: unknown, path = ''): string[] {
+  if (typeof value === 'string') return MONEY_TEXT.test(value) ? [`${path} = ${value}`] : [];
+  if (typeof value !== 'object' || value === null) return [];
+  return Object.entries(value).flatMap(([key, inner]) =>
+    MONEY_NAMES.includes(key) ? [`${path}.${key}`] : findMoney(inner, `${path}.${key}`),
+  );
+}
+
+describe.each<Role>(['lead', 'operator'])('what the %s is sent', (role) => {
+  it('holds no wage and no money, whatever is asked for', async () => {
+    const answers = await readEverything(role);
+    expect(answers.length).toBeGreaterThan(5);
+    const found = answers.flatMap(({ name, answer }) =>
+      findMoney(answer).map((where) => `${name}: ${where}`),
+    );
+    expect(found).toEqual([]);
+  });
+});
+
+describe('what the owner is sent', () => {
+  it('is found to hold money by the same search, so that the search is worth something', async () => {
+    const answers = await readEverything('owner');
+    const names = answers
+      .filter(({ answer }) => findMoney(answer).length > 0)
+      .map(({ name }) => name.split(' ')[0]);
+    for (const name of [
+      'listEmployees',
+      'listOverheadRates',
+      'listMachines',
+      'getMachine',
+      'listJobs',
+      'getJob',
+      'listJobLines',
+      'getPayback',
+      'getJobWorkings',
+      'getPaybackWorkings',
+    ])
+      expect(names).toContain(name);
+  });
+
+  it('is costs of jobs for the bookkeeper too, but no payback and no machine', async () => {
+    const answers = await readEverything('bookkeeper');
+    const names = answers.map(({ name }) => name.split(' ')[0]);
+    expect(names).toEqual(expect.arrayContaining(['listJobs', 'listEmployees', 'getJobWorkings']));
+    expect(names).not.toContain('getPayback');
+    expect(names).not.toContain('listMachines');
+  });
+});
+
+describe('an operator', () => {
+  it('sees the own hours and nobody else’s', async () => {
+    const pia = await api.shop.inShop((trx) =>
+      trx.selectFrom('employee').select('employeeId').where('number', '=', '101').executeTakeFirstOrThrow(),
+    );
+    const { email } = await api.addAccount('operator', pia);
+    const visitor = await (await api.visit()).signIn(email);
+    const { items } = (await visitor.send('get', '/entries')).body;
+    expect(items).toMatchObject([{ employee: 'Pia Strand', hours: '7.5000' }]);
+    expect((await visitor.send('get', '/entries/totals')).body).toMatchObject({
+      entries: 1,
+      hours: '7.5000',
+    });
+    const choices = (await visitor.send('get', '/entries/choices')).body;
+    expect(choices.employees).toMatchObject([{ id: pia.employeeId }]);
+    const others = (await visitor.send('get', `/entries?search=${encodeURIComponent('Ola')}`)).body;
+    expect(others.items).toEqual([]);
+  });
+
+  it('without an employee sees none', async () => {
+    const visitor = await api.signIn('operator');
+    expect((await visitor.send('get', '/entries')).body.items).toEqual([]);
+    expect((await visitor.send('get', '/entries/totals')).body.entries).toBe(0);
+  });
+});
