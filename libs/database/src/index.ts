@@ -3,6 +3,8 @@ export * from './lib/account-queries';
 export * from './lib/audit-queries';
 export * from './lib/connect';
 export * from './lib/constraint-violation';
+export * from './lib/entry-pages';
+export * from './lib/entry-voiding';
 export * from './lib/health-queries';
 export * from './lib/machine-queries';
 export * from './lib/migrate';

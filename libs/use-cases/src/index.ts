@@ -24,6 +24,8 @@ export * from './lib/roll-up-costs/get-rollup-status';
 export * from './lib/roll-up-costs/run-rollup';
 export * from './lib/set-up-shop/get-setup-template';
 export * from './lib/set-up-shop/import-setup';
+export * from './lib/show-hours/entries';
+export * from './lib/show-hours/void-entry';
 export * from './lib/sign-in/change-password';
 export * from './lib/sign-in/find-session-user';
 export * from './lib/sign-in/sign-in';
