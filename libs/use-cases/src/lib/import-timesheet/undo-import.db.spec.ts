@@ -1,5 +1,8 @@
+import { sql } from 'kysely';
 import { createTimesheetShop, GOOD_ROWS, TODAY, toCsv, type TimesheetShop } from './testing/timesheet-shop';
 import { undoImport } from './undo-import';
+
+const FORMING = '2026-03-02,12,J-1041,FORM,,2,,,';
 
 describe('undoImport', () => {
   let shop: TimesheetShop;
@@ -10,14 +13,44 @@ describe('undoImport', () => {
 
   const undo = (importId: string | null) => undoImport(shop.bookkeeper, { importId: importId ?? '' });
 
+  const TOTALS = {
+    cost_line: ['worked_on', 'source_id', 'category', 'quantity', 'rate', 'amount'],
+    job_day: ['job_id', 'worked_on', 'category', 'hours', 'amount', 'lines'],
+    machine_day: ['machine_id', 'worked_on', 'hours', 'earned', 'operator_labour', 'running'],
+  };
+  const listTotals = () =>
+    shop.inShop(async (trx) => {
+      const totals: Record<string, unknown[]> = {};
+      for (const [table, columns] of Object.entries(TOTALS)) {
+        const names = sql.join(columns.map((column) => sql.ref(column)));
+        totals[table] = (
+          await sql`select ${names} from ${sql.table(table)} order by ${names}`.execute(trx)
+        ).rows;
+      }
+      return totals;
+    });
+
   it('voids all entries of the import, says what it took back, and lets the file come again', async () => {
-    await shop.take(toCsv(['2026-03-02,12,J-1041,FORM,,2,,,']));
+    await shop.take(toCsv([FORMING]));
     const before = await shop.listEntries();
     const { importId } = await shop.take(toCsv(GOOD_ROWS));
     expect(await undo(importId)).toEqual({ entriesVoided: 3, hoursVoided: '16.2500' });
     expect(await shop.listEntries()).toEqual(before);
     const again = await shop.take(toCsv(GOOD_ROWS));
     expect(again).toMatchObject({ entriesAdded: 3, alreadyThere: 0, alreadyImported: null });
+  });
+
+  it('gives every total back: cost lines, days of jobs and of machines', async () => {
+    await shop.addOverheadRate({ validFrom: '2026-01-01', ratePerLabourHour: '18' });
+    const rates = { machineHourRate: '34', chargeOutRate: '95', runningCostPerHour: '6.5' };
+    await shop.addMachineRate({ machineId: shop.ids.press, validFrom: '2026-01-01', ...rates });
+    await shop.take(toCsv([FORMING, '2026-03-03,14,J-1041,WELD,P2,3.3333,,,']));
+    const before = await listTotals();
+    for (const rows of Object.values(before)) expect(rows).not.toEqual([]);
+    const { importId } = await shop.take(toCsv(GOOD_ROWS));
+    expect(await listTotals()).not.toEqual(before);
+    await undo(importId);
+    expect(await listTotals()).toEqual(before);
   });
 
   it('leaves alone what was voided before', async () => {

@@ -40,7 +40,7 @@ export async function createTimesheetShop(): Promise<TimesheetShop> {
     job1042: await shop.addJob({ number: 'J-1042', title: 'Conveyor guards', status: 'finished' }),
     form: await shop.addOperation({ code: 'FORM', name: 'Forming' }),
     weld: await shop.addOperation({ code: 'WELD', name: 'Welding' }),
-    press: await shop.addMachine({ code: 'P2', name: 'Press 2' }),
+    press: await shop.addMachine({ code: 'P2', name: 'Press 2', inServiceOn: '2026-01-01' }),
   };
   const bookkeeper = shop.context('bookkeeper', { now: () => new Date(`${TODAY}T18:00:00Z`) });
   const tools = { reader: createReader() };
