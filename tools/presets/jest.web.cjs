@@ -12,6 +12,8 @@ module.exports = (rootDir, displayName) => ({
   displayName,
   preset: 'jest-preset-angular',
   testEnvironment: 'jsdom',
+  // Drawing Material in jsdom takes seconds on a busy machine.
+  testTimeout: 30_000,
   testMatch: ['<rootDir>/**/*.spec.ts'],
   setupFilesAfterEnv: [join(workspace, 'tools/presets/jest.web-setup.cjs')],
   transform: {

@@ -1,5 +1,5 @@
 import { ChangeDetectionStrategy, Component, inject } from '@angular/core';
-import { MAT_DIALOG_DATA, MatDialog, MatDialogModule } from '@angular/material/dialog';
+import { MAT_DIALOG_DATA, type MatDialog, MatDialogModule } from '@angular/material/dialog';
 import { map, type Observable } from 'rxjs';
 
 export interface Confirmation {

@@ -13,10 +13,9 @@ import { DATE_FORMATS } from '@brakeven/values';
 import { toMappingDraft, withColumn, withHeaderAt } from './mapping-draft';
 import { FIELD_WORDS } from './timesheet-words';
 
-const QUIET_MS = 600;
 const OPTIONAL_FIELDS: readonly TimesheetField[] = ['machine', 'good', 'scrap', 'note'];
 
-/** Says which column holds what; every change is checked again after a short pause. */
+/** Says which column holds what. */
 @Component({
   selector: 'app-mapping-panel',
   templateUrl: './mapping-panel.html',
@@ -56,7 +55,6 @@ export class MappingPanel {
   protected readonly mappingIssues = computed(() =>
     this.issues().filter(({ field }) => field.startsWith('mapping')),
   );
-  private timer: ReturnType<typeof setTimeout> | undefined;
 
   constructor() {
     effect(() => {
@@ -96,7 +94,6 @@ export class MappingPanel {
 
   private change(mapping: TimesheetMapping): void {
     this.draft.set(mapping);
-    clearTimeout(this.timer);
-    this.timer = setTimeout(() => this.changed.emit(mapping), QUIET_MS);
+    this.changed.emit(mapping);
   }
 }

@@ -68,8 +68,9 @@ const LISTED_MAX = 40;
           @for (problem of listed(); track problem.cell + problem.code) {
             <li>
               <button type="button" class="jump" (click)="shown.emit(problem)">
-                <span class="cell" [class.doubtful]="problem.severity === 'warning'">{{ problem.cell }}</span>
-                <span>
+                <span class="cell" [class.doubtful]="problem.severity === 'warning'">{{
+                  problem.cell
+                }}</span>&ngsp;<span>
                   @if (problem.severity === 'warning') {
                     <strong>Warning:</strong>
                   }

@@ -76,9 +76,22 @@ describe('TimesheetCheckStore', () => {
     api.answer = first;
     store.open(file);
     api.answer = of({ answer: check({ rowsRead: 12 }) });
-    store.setMapping({ sheet: 'Hours', headerRow: 4, columns: { date: 'A' } });
+    store.chooseName(name);
     first.next({ answer: check({ rowsRead: 11 }) });
     expect(store.check()?.rowsRead).toBe(12);
+    expect(store.isBusy()).toBe(false);
+  });
+
+  it('checks once after the last of several columns was set, and commits nothing meanwhile', async () => {
+    store.open(file);
+    const mapping = { sheet: 'Hours', headerRow: 4, columns: { date: 'A' } };
+    store.setMapping({ ...mapping, columns: {} });
+    store.setMapping(mapping);
+    store.commit(false, () => undefined);
+    expect(store.isBusy()).toBe(true);
+    expect(api.sent).toHaveLength(1);
+    await new Promise((resolve) => setTimeout(resolve, 700));
+    expect(api.sent.slice(1)).toEqual([expect.objectContaining({ mapping })]);
     expect(store.isBusy()).toBe(false);
   });
 

@@ -1,4 +1,4 @@
-import { computed, inject, Injectable, signal } from '@angular/core';
+import { computed, DestroyRef, inject, Injectable, signal } from '@angular/core';
 import {
   type Progress,
   type TimesheetCheck,
@@ -12,6 +12,9 @@ import { v4 as uuid } from 'uuid';
 import { ProgressApi } from '../api/progress-api';
 import { TimesheetsApi, type Upload } from '../api/timesheets-api';
 import { type ChosenName, withChosenName, withoutChosenName } from './group-unknown-names';
+
+/** Columns are set one after the other: the check waits until no more are. */
+const QUIET_MS = 600;
 
 /** What runs on the server for the file at hand. */
 export interface Activity {
@@ -28,6 +31,7 @@ export class TimesheetCheckStore {
   private readonly api = inject(TimesheetsApi);
   private readonly progressApi = inject(ProgressApi);
   private running: Subscription | null = null;
+  private timer: ReturnType<typeof setTimeout> | undefined;
 
   private readonly fileAtHand = signal<File | null>(null);
   private readonly lastCheck = signal<TimesheetCheck | null>(null);
@@ -45,7 +49,13 @@ export class TimesheetCheckStore {
   readonly problem = this.lastProblem.asReadonly();
   /** The mapping that the user has chosen, also when the server could not check it yet. */
   readonly mapping = computed(() => this.chosenMapping() ?? this.lastCheck()?.mapping ?? null);
-  readonly isBusy = computed(() => this.current() !== null);
+  private readonly isWaiting = signal(false);
+  /** A check is under way or about to be: what is shown may not be what would be committed. */
+  readonly isBusy = computed(() => this.isWaiting() || this.current() !== null);
+
+  constructor() {
+    inject(DestroyRef).onDestroy(() => this.stop());
+  }
 
   /** Takes a new file and checks it; choices made for another file are gone. */
   open(file: File): void {
@@ -56,7 +66,7 @@ export class TimesheetCheckStore {
 
   /** Puts the file away. */
   close(): void {
-    this.running?.unsubscribe();
+    this.stop();
     this.fileAtHand.set(null);
     this.lastCheck.set(null);
     this.lastImport.set(null);
@@ -67,7 +77,9 @@ export class TimesheetCheckStore {
 
   setMapping(mapping: TimesheetMapping): void {
     this.chosenMapping.set(mapping);
-    this.runCheck();
+    this.isWaiting.set(true);
+    clearTimeout(this.timer);
+    this.timer = setTimeout(() => this.runCheck(), QUIET_MS);
   }
 
   chooseName(name: ChosenName): void {
@@ -99,6 +111,12 @@ export class TimesheetCheckStore {
     });
   }
 
+  private stop(): void {
+    clearTimeout(this.timer);
+    this.isWaiting.set(false);
+    this.running?.unsubscribe();
+  }
+
   private toOptions(): Partial<TimesheetOptions> & { progressId: string } {
     const mapping = this.chosenMapping();
     return {
@@ -114,7 +132,7 @@ export class TimesheetCheckStore {
     upload: Observable<Upload<T>>,
     take: (answer: T) => void,
   ): void {
-    this.running?.unsubscribe();
+    this.stop();
     this.current.set({ kind, progress: null });
     this.lastProblem.set(null);
     const news = this.progressApi
