@@ -1,0 +1,132 @@
+import { type Insertable, sql, type Updateable } from 'kysely';
+import { JOB_SUMS, type JobSums } from './job-pages';
+import { inReadingOrder } from './keyset';
+import { type SourceColumns } from './entry-pages';
+import { type CostLineTable, type JobTable } from './tables';
+import { type ShopTransaction } from './tenancy';
+
+/** A job's figures by operation; gaps count with their hours, as in the job's own figures. */
+export async function listJobOperationSums(
+  trx: ShopTransaction,
+  jobId: string,
+): Promise<(JobSums & { operationId: string; operation: string })[]> {
+  const { rows } = await sql<JobSums & { operationId: string; operation: string }>`
+    select o.operation_id, o.name as operation, ${JOB_SUMS}
+    from (
+      select shop_id, operation_id, category, quantity as hours, amount from cost_line where job_id = ${jobId}::uuid
+      union all
+      select shop_id, operation_id, category, hours, 0 from rate_gap where job_id = ${jobId}::uuid
+    ) d
+    join operation o on o.shop_id = d.shop_id and o.operation_id = d.operation_id
+    group by o.operation_id, o.name
+    order by ${inReadingOrder(sql`o.name`)}, o.operation_id`.execute(trx);
+  return rows;
+}
+
+/** A job's hours and cost by week; `weekStart` is the first day of the week, Sunday 0. */
+export async function listJobWeekSums(
+  trx: ShopTransaction,
+  jobId: string,
+  weekStart: number,
+): Promise<{ weekFrom: string; hours: string; total: string }[]> {
+  const { rows } = await sql<JobSums & { weekFrom: string }>`
+    select d.worked_on - ((extract(dow from d.worked_on)::int - ${weekStart}::int + 7) % 7) as week_from, ${JOB_SUMS}
+    from job_day d
+    where d.job_id = ${jobId}::uuid
+    group by 1
+    order by 1`.execute(trx);
+  return rows.map(({ weekFrom, hours, total }) => ({ weekFrom, hours, total }));
+}
+
+/** Where a page of cost lines goes on: the key of the last line before it. */
+export interface LinePosition {
+  workedOn: string;
+  sourceId: string;
+  category: string;
+}
+
+export interface JobLineRow extends SourceColumns, LinePosition {
+  category: CostLineTable['category'];
+  employee: string;
+  operation: string;
+  machine: string | null;
+  hours: string;
+  rate: string;
+  rateFactor: string;
+  amount: string;
+}
+
+/** A page of a job's cost lines, latest first. */
+export async function listJobLineRows(
+  trx: ShopTransaction,
+  jobId: string,
+  categories: readonly string[],
+  after: LinePosition | null,
+  limit: number,
+): Promise<JobLineRow[]> {
+  const isAfter = after
+    ? sql`(l.worked_on, l.source_id, l.category) < (${after.workedOn}::date, ${after.sourceId}::uuid, ${after.category})`
+    : sql`true`;
+  const { rows } = await sql<JobLineRow>`
+    select l.worked_on, l.source_id, l.category, e.name as employee, o.name as operation, m.name as machine,
+      l.quantity as hours, l.rate, l.rate_factor, l.amount,
+      t.import_id, i.file_name, i.sheet, t.source_row, t.source_cell
+    from cost_line l
+    join employee e on e.shop_id = l.shop_id and e.employee_id = l.employee_id
+    join operation o on o.shop_id = l.shop_id and o.operation_id = l.operation_id
+    join time_entry t on t.shop_id = l.shop_id and t.entry_id = l.source_id
+    left join machine m on m.shop_id = l.shop_id and m.machine_id = l.machine_id
+    left join timesheet_import i on i.shop_id = t.shop_id and i.import_id = t.import_id
+    where l.job_id = ${jobId}::uuid and l.category = any (${categories}::text[]) and ${isAfter}
+    order by l.worked_on desc, l.source_id desc, l.category desc
+    limit ${limit}`.execute(trx);
+  return rows;
+}
+
+/** Adds a job. */
+export async function insertJob(trx: ShopTransaction, row: Insertable<JobTable>): Promise<void> {
+  await trx.insertInto('job').values(row).execute();
+}
+
+/** Changes a job; tells whether there was one. */
+export async function updateJobRow(
+  trx: ShopTransaction,
+  jobId: string,
+  change: Updateable<JobTable>,
+): Promise<boolean> {
+  const result = await trx.updateTable('job').set(change).where('jobId', '=', jobId).executeTakeFirst();
+  return result.numUpdatedRows > 0n;
+}
+
+/** Customers by name. */
+export function listCustomerRows(trx: ShopTransaction): Promise<{ customerId: string; name: string }[]> {
+  return trx
+    .selectFrom('customer')
+    .select(['customerId', 'name'])
+    .orderBy(inReadingOrder(sql`name`))
+    .execute();
+}
+
+/** The customer of a name, whatever its case; one that is new is added. */
+export async function obtainCustomer(trx: ShopTransaction, shopId: string, name: string): Promise<string> {
+  const find = () =>
+    trx
+      .selectFrom('customer')
+      .select('customerId')
+      .where(sql`lower(name)`, '=', sql`lower(${name})`)
+      .orderBy(sql`name = ${name}`, 'desc')
+      .executeTakeFirst();
+  const known = await find();
+  if (known) return known.customerId;
+  const added = await trx
+    .insertInto('customer')
+    .values({ shopId, name })
+    .onConflict((conflict) => conflict.doNothing())
+    .returning('customerId')
+    .executeTakeFirst();
+  if (added) return added.customerId;
+  // Somebody added the same name meanwhile: it can be seen now.
+  const theirs = await find();
+  if (!theirs) throw new Error('A customer is taken and yet not there.');
+  return theirs.customerId;
+}
