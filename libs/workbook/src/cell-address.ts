@@ -22,7 +22,9 @@ export function columnNumber(address: string): number {
 
 /** Column letters of an address: `AB12` → `AB`. */
 export function columnOf(address: string): string {
-  return /^[A-Z]+/.exec(address)?.[0] ?? '';
+  let end = 0;
+  while (address.charCodeAt(end) > CODE_BEFORE_A) end += 1;
+  return address.slice(0, end);
 }
 
 /** Row number of an address: `AB12` → 12. */

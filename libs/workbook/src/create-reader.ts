@@ -57,13 +57,21 @@ function startWatch(secondsMax: number): { timeUp: Promise<never>; stop: () => v
 function receiveFile(worker: Worker, onProgress: OnReadProgress): Promise<SheetFile> {
   const received = new ReceivedFile();
   return new Promise<SheetFile>((resolve, reject) => {
-    worker.on('message', (message: WorkerMessage) => {
+    const take = (message: WorkerMessage) => {
       if (message.kind === 'progress') onProgress(message.progress);
       else if (message.kind === 'refused') reject(new WorkbookError(message.code, message.message));
       else if (message.kind === 'end') resolve(received.toSheetFile());
       else {
         received.take(message);
         worker.postMessage(NEXT_ROWS);
+      }
+    };
+    worker.on('message', (message: WorkerMessage) => {
+      // What is thrown in an event handler would end the whole program, not just this reading.
+      try {
+        take(message);
+      } catch (error) {
+        reject(error);
       }
     });
     worker.on('error', (error) => reject(toReaderError(error)));

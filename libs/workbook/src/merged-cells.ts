@@ -12,6 +12,7 @@ interface MergedRange {
  * value that nobody sees.
  */
 export function listCoveredCells(merges: readonly string[]): (address: string) => boolean {
+  if (merges.length === 0) return () => false;
   const ranges = merges.map(toRange).sort((a, b) => a.top - b.top);
   const tallest = ranges.reduce((most, { top, bottom }) => Math.max(most, bottom - top), 0);
   return (address) => {

@@ -10,6 +10,8 @@ export interface CellContext {
   readonly address: string;
   readonly format: NumberFormat;
   readonly date1904: boolean;
+  /** Days already put into words; the same few stand in most rows of a sheet. */
+  readonly dayTexts: Map<number, string>;
 }
 
 interface CellPlace {
@@ -53,13 +55,16 @@ export function toStoredCell({ type, value, isFormula }: StoredValue, context: C
 
 /** Spreadsheets keep 15 digits; what a sum leaves behind them (0.1 + 0.2) is noise. */
 function toNumberCell(place: CellPlace, stored: number, context: CellContext): RawCell {
+  const { address, hasFormula } = place;
   const { format } = context;
   if (!Number.isFinite(stored)) return toErrorCell(place, '#NUM!');
-  const value = Number(stored.toPrecision(SIGNIFICANT_DIGITS));
-  if (format.kind === 'date') return { ...place, kind: 'date', value, text: formatDay(value, context) };
-  if (format.kind === 'duration') return { ...place, kind: 'duration', value, text: formatDuration(value) };
+  const value = Number.isInteger(stored) ? stored : Number(stored.toPrecision(SIGNIFICANT_DIGITS));
+  if (format.kind === 'date')
+    return { address, hasFormula, kind: 'date', value, text: formatDay(value, context) };
+  if (format.kind === 'duration')
+    return { address, hasFormula, kind: 'duration', value, text: formatDuration(value) };
   const isPercent = format.kind === 'percent';
-  return { ...place, kind: 'number', value, isPercent, text: formatNumber(value, format) };
+  return { address, hasFormula, kind: 'number', value, isPercent, text: formatNumber(value, format) };
 }
 
 function toTextCell(place: CellPlace, stored: string): RawCell | null {
@@ -90,11 +95,15 @@ function formatNumber(value: number, format: NumberFormat): string {
 }
 
 /** `2026-03-02`, with the time of day behind it if there is one. */
-function formatDay(serial: number, { date1904 }: CellContext): string {
+function formatDay(serial: number, { date1904, dayTexts }: CellContext): string {
+  const known = dayTexts.get(serial);
+  if (known !== undefined) return known;
   const day = dateFromSerial(serial, date1904 ? '1904' : '1900');
-  if (!day.ok) return String(serial);
   const time = serial - Math.floor(serial);
-  return time === 0 ? day.value : `${day.value} ${formatDuration(time)}`;
+  const date = day.ok ? day.value : String(serial);
+  const text = day.ok && time > 0 ? `${date} ${formatDuration(time)}` : date;
+  dayTexts.set(serial, text);
+  return text;
 }
 
 function formatDuration(days: number): string {

@@ -11,5 +11,5 @@ export const READ_LIMITS = {
   /** Smaller parts may pack better than that. */
   unpackRatioFreeBytes: 20 * 1024 * 1024,
   workerHeapMbMax: 1_536,
-  readSecondsMax: 120,
+  readSecondsMax: 300,
 } as const;

@@ -5,6 +5,8 @@ import { type SetupData, type SetupFile } from './setup-data';
 import { writeSetupTemplate, writeSetupWorkbook } from './write-setup-workbook';
 import { type LocalDate } from '@brakeven/values';
 
+jest.setTimeout(60_000);
+
 /** The lists without the places they came from. */
 function toData({ problems: _problems, ...lists }: SetupFile): SetupData {
   const bare = Object.entries(lists).map(([list, rows]) => [

@@ -5,6 +5,8 @@ import { type ReadProgress } from './sheet-file';
 import { assertSheetSize } from './sheet-xml';
 import { type WorkbookErrorCode } from './workbook-error';
 
+jest.setTimeout(60_000);
+
 describe('files that are refused whole', () => {
   it.each<[string, WorkbookErrorCode, RegExp]>([
     ['not-ok/empty.xlsx', 'file_empty', /save it again/i],

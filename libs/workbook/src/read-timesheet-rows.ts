@@ -65,6 +65,7 @@ function* readInSteps(file: SheetFile, mapping: TimesheetMapping): Generator<und
     date1904: sheet.date1904,
     dateFormat: mapping.dateFormat,
     decimalMark: mapping.decimalMark ?? '.',
+    knownDays: new Map(),
   };
   const header = sheet.rows.find(({ row }) => row === mapping.headerRow);
   const below = sheet.rows.filter(({ row }) => row > mapping.headerRow);

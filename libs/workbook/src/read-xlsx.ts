@@ -6,12 +6,7 @@ import { type OnReadProgress, type RawCell, type Sheet, type SheetRow } from './
 import { assertSheetSize, type SheetScan, scanSheetXml } from './sheet-xml';
 import { toDamagedError, unpackZip } from './unpack-zip';
 import { toNotWorkbookError, WorkbookError } from './workbook-error';
-import {
-  isWorkbookPart,
-  openWorkbookPackage,
-  type PackedSheet,
-  type WorkbookPackage,
-} from './workbook-package';
+import { isWorkbookPart, openWorkbookPackage, type PackedSheet } from './workbook-package';
 
 /** Parts of the sheet that hold no cells; reading them costs time and trips over what other programs write. */
 const IGNORED_NODES = [
@@ -41,26 +36,43 @@ const OTHER_FORMS: readonly (readonly [RegExp, string])[] = [
   [/^content\.xml$/i, 'an OpenDocument file (.ods)'],
 ];
 
+/** A workbook made ready for the library, and what the library does not tell about its sheets. */
+interface PreparedWorkbook {
+  readonly packed: Buffer;
+  readonly date1904: boolean;
+  readonly sheets: readonly (Pick<PackedSheet, 'name' | 'isHidden'> & { readonly scan: SheetScan })[];
+}
+
 /**
  * Reads every sheet of an .xlsx workbook.
  * @throws WorkbookError when the file as a whole cannot be read
  */
 export async function readXlsx(bytes: Uint8Array, onProgress: OnReadProgress): Promise<Sheet[]> {
+  const { packed, date1904, sheets } = await prepareWorkbook(bytes, onProgress);
+  const workbook = await loadPlainWorkbook(packed);
+  onProgress({ stage: 'parse', done: sheets.length, total: sheets.length });
+  const takenOver = sheets.map((sheet, index) => {
+    const worksheet = workbook.getWorksheet(String(index + 1));
+    if (!worksheet) throw toDamagedError();
+    return takeOverSheet(sheet, worksheet, date1904);
+  });
+  onProgress({ stage: 'rows', done: takenOver.length, total: takenOver.length });
+  return takenOver;
+}
+
+/** Apart from the reading itself, so that the unpacked parts are let go before it begins. */
+async function prepareWorkbook(bytes: Uint8Array, onProgress: OnReadProgress): Promise<PreparedWorkbook> {
   const { names, parts } = await unpackZip(bytes, isWorkbookPart, (done, total) =>
     onProgress({ stage: 'unpack', done, total }),
   );
   assertKnownForm(names);
   const opened = openWorkbookPackage(parts);
-  const scans = opened.sheets.map(({ name, xml }) => {
+  const sheets = opened.sheets.map(({ name, isHidden, xml }) => {
     const scan = scanSheetXml(xml);
     assertSheetSize(scan, name);
-    return scan;
+    return { name, isHidden, scan };
   });
-  const workbook = await loadPlainWorkbook(opened);
-  onProgress({ stage: 'parse', done: opened.sheets.length, total: opened.sheets.length });
-  const takeOver = takeOverSheets(opened, workbook, scans);
-  onProgress({ stage: 'rows', done: takeOver.length, total: takeOver.length });
-  return takeOver;
+  return { packed: packPlainWorkbook(opened), date1904: opened.date1904, sheets };
 }
 
 function assertKnownForm(names: readonly string[]): void {
@@ -75,9 +87,8 @@ function assertKnownForm(names: readonly string[]): void {
   if (!names.some((name) => /^xl\//i.test(name))) throw toNotWorkbookError('a folder of other files');
 }
 
-async function loadPlainWorkbook(opened: WorkbookPackage): Promise<Workbook> {
+async function loadPlainWorkbook(packed: Buffer): Promise<Workbook> {
   const workbook = new exceljs.Workbook();
-  const packed = packPlainWorkbook(opened);
   try {
     await workbook.xlsx.load(toArrayBuffer(packed), { ignoreNodes: IGNORED_NODES });
   } catch {
@@ -86,29 +97,26 @@ async function loadPlainWorkbook(opened: WorkbookPackage): Promise<Workbook> {
   return workbook;
 }
 
-function takeOverSheets(opened: WorkbookPackage, workbook: Workbook, scans: readonly SheetScan[]): Sheet[] {
-  return opened.sheets.map((sheet, index) => {
-    const worksheet = workbook.getWorksheet(String(index + 1));
-    const scan = scans[index];
-    if (!worksheet || !scan) throw toDamagedError();
-    return takeOverSheet(sheet, worksheet, scan, opened.date1904);
-  });
-}
-
-function takeOverSheet(sheet: PackedSheet, worksheet: Worksheet, scan: SheetScan, date1904: boolean): Sheet {
+function takeOverSheet(
+  { name, isHidden, scan }: PreparedWorkbook['sheets'][number],
+  worksheet: Worksheet,
+  date1904: boolean,
+): Sheet {
   const rows: SheetRow[] = [];
   const covered = listCoveredCells(scan.merges);
+  const dayTexts = new Map<number, string>();
   worksheet.eachRow((worksheetRow, row) => {
     const cells: RawCell[] = [];
     worksheetRow.eachCell((cell) => {
-      const context: CellContext = { address: cell.address, format: findTaggedFormat(cell.numFmt), date1904 };
-      const stored = scan.stored.get(cell.address);
+      const { address } = cell;
+      const context: CellContext = { address, format: findTaggedFormat(cell.numFmt), date1904, dayTexts };
+      const stored = scan.stored.get(address);
       const raw = stored ? toStoredCell(stored, context) : toRawCell(cell.value, context);
-      if (raw && !covered(cell.address)) cells.push(raw);
+      if (raw && !covered(address)) cells.push(raw);
     });
     if (cells.length > 0) rows.push({ row, cells });
   });
-  return { name: sheet.name, isHidden: sheet.isHidden, date1904, rows };
+  return { name, isHidden, date1904, rows };
 }
 
 /** The library asks for an ArrayBuffer in its types and takes any bytes. */

@@ -7,6 +7,7 @@ import {
   type LocalDate,
   parseDateText,
   parseHoursText,
+  type Parsed,
   toHours,
   toLocalDate,
 } from '@brakeven/values';
@@ -23,6 +24,8 @@ export interface TextForms {
   readonly date1904: boolean;
   readonly dateFormat: DateFormat | undefined;
   readonly decimalMark: '.' | ',';
+  /** Serial days read before; the same few stand in most rows of a sheet. */
+  readonly knownDays: Map<number, Parsed<LocalDate>>;
 }
 
 type Labelled = 'employee' | 'job' | 'operation' | 'machine';
@@ -40,7 +43,7 @@ export function readDateCell(cell: RawCell | undefined, forms: TextForms): CellR
   if (!cell) return blank;
   const stored = findStoredProblem(cell);
   if (stored) return stored;
-  if (cell.kind === 'date') return readSerialDate(cell.value, cell.address, forms.date1904);
+  if (cell.kind === 'date') return readSerialDate(cell.value, cell.address, forms);
   if (cell.kind !== 'text') {
     return refuse(
       'date_unreadable',
@@ -149,8 +152,10 @@ function findStoredProblem(cell: RawCell): (CellReading<never> & { ok: false }) 
   );
 }
 
-function readSerialDate(serial: number, address: string, date1904: boolean): CellReading<LocalDate> {
-  const date = dateFromSerial(serial, date1904 ? '1904' : '1900');
+function readSerialDate(serial: number, address: string, forms: TextForms): CellReading<LocalDate> {
+  const known = forms.knownDays.get(serial);
+  const date = known ?? dateFromSerial(serial, forms.date1904 ? '1904' : '1900');
+  if (!known) forms.knownDays.set(serial, date);
   if (!date.ok) return refuse('date_out_of_range', `Cell ${address}: ${date.message}`);
   return assertRange(date.value, address);
 }

@@ -48,7 +48,8 @@ interface Candidate {
 
 const REQUIRED_WEIGHT = 10;
 const HEADER_CELLS_MIN = 3;
-const TEXTS_LOOKED_AT = 500;
+/** Rows below the header that tell how dates and hours are written. */
+const ROWS_LOOKED_AT = 1_000;
 /** Orders of day and month that cannot be taken for another one. */
 const PLAIN_ORDERS: readonly DateFormat[] = ['YYYY-MM-DD', 'YYYY/MM/DD', 'DD MMM YYYY', 'MMM DD YYYY'];
 
@@ -156,7 +157,7 @@ function describeHeader(
   columns: Columns,
   file: SheetFile,
 ): Omit<TimesheetHeader, 'alsoOnSheets'> {
-  const below = sheet.rows.filter((one) => one.row > row.row);
+  const below = sheet.rows.filter((one) => one.row > row.row).slice(0, ROWS_LOOKED_AT);
   const headerCells = listHeaderCells(row, below);
   const dateFormats = listFittingFormats(listTexts(below, columns.date));
   const decimalMark = hasDecimalCommas(file, listTexts(below, columns.hours)) ? ',' : undefined;
@@ -200,8 +201,7 @@ function listTexts(rows: readonly SheetRow[], column: string | undefined): strin
 
 /** The orders that read most of the texts; none when no text is a date in any order. */
 function listFittingFormats(texts: readonly string[]): DateFormat[] {
-  const looked = texts.slice(0, TEXTS_LOOKED_AT);
-  const counts = DATE_FORMATS.map((format) => looked.filter((text) => parseDateText(text, format).ok).length);
+  const counts = DATE_FORMATS.map((format) => texts.filter((text) => parseDateText(text, format).ok).length);
   const most = Math.max(...counts);
   return most === 0 ? [] : DATE_FORMATS.filter((_, index) => counts[index] === most);
 }

@@ -5,6 +5,8 @@ import { readTimesheetRows } from './read-timesheet-rows';
 import { findTimesheetHeader } from './timesheet-mapping';
 import { type TimesheetLine, writeTimesheetWorkbook } from './write-timesheet';
 
+jest.setTimeout(60_000);
+
 const RUNS = 25;
 const TEN_THOUSANDTHS_PER_DAY = 240_000;
 
