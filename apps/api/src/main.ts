@@ -7,9 +7,12 @@ import { createApp } from './app';
 import { type Environment, readEnvironment } from './environment';
 import { ProgressHub } from './progress/progress-hub';
 import { createSessionStore } from './session/session-cookie';
+import { limitReader } from './timesheets/limited-reader';
 
 /** How long requests under way may take to end once the program is told to stop. */
 const STOP_MS = 10_000;
+/** Reading a large workbook may take half a gigabyte. */
+const FILES_READ_MAX = 2;
 
 function start(environment: Environment): void {
   const logger = pino({ level: environment.LOG_LEVEL });
@@ -22,13 +25,14 @@ function start(environment: Environment): void {
   });
   pool.on('error', (error) => logger.warn({ err: error }, 'an idle connection was lost'));
   const sessionStore = createSessionStore(pool, (message) => logger.error({ message }, 'session store'));
+  const reader = createReader({ workerUrl: new URL('./read-worker.js', import.meta.url) });
   const progress = new ProgressHub();
   const app = createApp({
     db,
     progress,
     sessionStore,
     sessionSecret: environment.SESSION_SECRET,
-    reader: createReader({ workerUrl: new URL('./read-worker.js', import.meta.url) }),
+    reader: limitReader(reader, FILES_READ_MAX),
     logger,
     webRoot: environment.WEB_ROOT,
     proxies: environment.TRUST_PROXY,

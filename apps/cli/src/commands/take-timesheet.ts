@@ -86,9 +86,9 @@ function answer(cli: Cli, taken: Taken, exitCode: ExitCode): void {
   cli.answer({ json: toJson(taken), text: () => toText(taken), exitCode });
 }
 
-/** Everything but the rows as the screen shows them. */
+/** Everything but the rows as the screen shows them; an import's id only if one was made. */
 function toJson({ rows: _rows, rowsNotShown: _rowsNotShown, headerCells: _cells, ...taken }: Taken): object {
-  return taken;
+  return 'importId' in taken && taken.importId === null ? { ...taken, importId: undefined } : taken;
 }
 
 function toText(taken: Taken): string {
