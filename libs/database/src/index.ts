@@ -11,6 +11,7 @@ export * from './lib/job-pages';
 export { type JobSelection } from './lib/job-selection';
 export * from './lib/machine-queries';
 export * from './lib/migrate';
+export * from './lib/payback-figures';
 export * from './lib/people-queries';
 export * from './lib/register-rows';
 export * from './lib/rollup';

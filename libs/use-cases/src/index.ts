@@ -29,6 +29,7 @@ export * from './lib/show-hours/void-entry';
 export * from './lib/show-jobs/change-job';
 export { getJob, getJobCost, type JobCostSummary, listJobLines } from './lib/show-jobs/get-job';
 export * from './lib/show-jobs/list-jobs';
+export * from './lib/show-payback/get-payback';
 export * from './lib/sign-in/change-password';
 export * from './lib/sign-in/find-session-user';
 export * from './lib/sign-in/sign-in';
