@@ -46,7 +46,7 @@ export function toWeekChartOption(job: JobDetail, currency: string, palette: Cha
   const hasMoney = job.total !== undefined;
   const compact = new Intl.NumberFormat('en-US', {
     notation: 'compact',
-    ...(hasMoney && { style: 'currency', currency }),
+    ...(hasMoney && { style: 'currency', currency, minimumFractionDigits: 0 }),
   });
   const toAxisText = (value: number) => `${compact.format(value)}${hasMoney ? '' : ' h'}`;
   const toText = (value: unknown) =>
