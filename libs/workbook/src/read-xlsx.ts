@@ -1,4 +1,5 @@
-import exceljs, { type Workbook, type Worksheet } from 'exceljs';
+import { type Workbook, type Worksheet } from 'exceljs';
+import { loadExceljs } from './load-exceljs';
 import { listCoveredCells } from './merged-cells';
 import { findTaggedFormat, packPlainWorkbook } from './plain-package';
 import { type CellContext, toRawCell, toStoredCell } from './raw-cell';
@@ -88,6 +89,7 @@ function assertKnownForm(names: readonly string[]): void {
 }
 
 async function loadPlainWorkbook(packed: Buffer): Promise<Workbook> {
+  const exceljs = await loadExceljs();
   const workbook = new exceljs.Workbook();
   try {
     await workbook.xlsx.load(toArrayBuffer(packed), { ignoreNodes: IGNORED_NODES });

@@ -1,8 +1,9 @@
 import { JOB_STATUSES, MACHINE_COST_KINDS } from '@brakeven/contract';
 import { D, forceIn, lengthIn, toForce, toLength, toLocalDate, type UnitSystem } from '@brakeven/values';
-import exceljs, { type CellValue, type DataValidation, type Workbook, type Worksheet } from 'exceljs';
+import { type Cell, type CellValue, type DataValidation, type Workbook, type Worksheet } from 'exceljs';
 import { columnLetters } from './cell-address';
 import { encodeEscapedText } from './escaped-text';
+import { loadExceljs } from './load-exceljs';
 import {
   EXPLAINING_SHEET,
   SETUP_PLANS,
@@ -59,6 +60,7 @@ const EXPLANATION = [
 export async function writeSetupTemplate(
   { units }: { units: UnitSystem } = { units: 'us' },
 ): Promise<Buffer> {
+  const exceljs = await loadExceljs();
   const workbook = new exceljs.Workbook();
   writeExplanation(workbook, units);
   for (const plan of SETUP_PLANS) writeSheet(workbook, plan, [], units);
@@ -70,6 +72,7 @@ export async function writeSetupWorkbook(
   data: SetupData,
   { units }: { units: UnitSystem } = { units: 'us' },
 ): Promise<Buffer> {
+  const exceljs = await loadExceljs();
   const workbook = new exceljs.Workbook();
   writeExplanation(workbook, units);
   for (const plan of SETUP_PLANS) writeSheet(workbook, plan, data[plan.list], units);
@@ -137,7 +140,7 @@ function addChoices(sheet: Worksheet, kind: SetupCellKind, at: number): void {
   });
 }
 
-function styleHeader(cell: exceljs.Cell): void {
+function styleHeader(cell: Cell): void {
   cell.font = HEADER_FONT;
   cell.fill = HEADER_FILL;
   cell.numFmt = TEXT_FORMAT;

@@ -2,8 +2,9 @@ import { buffer } from 'node:stream/consumers';
 import { PassThrough } from 'node:stream';
 import { setImmediate as nextTurn } from 'node:timers/promises';
 import { D, type LocalDate, sum } from '@brakeven/values';
-import exceljs, { type Cell, type CellValue, type Worksheet } from 'exceljs';
+import { type Cell, type CellValue, type Worksheet } from 'exceljs';
 import { encodeEscapedText } from './escaped-text';
+import { loadExceljs } from './load-exceljs';
 import {
   DATE_FORMAT,
   DURATION_FORMAT,
@@ -70,6 +71,7 @@ const SECONDS_PER_DAY = 86_400;
 export async function writeTimesheetWorkbook(timesheet: TimesheetWorkbook): Promise<Buffer> {
   const stream = new PassThrough();
   const written = buffer(stream);
+  const exceljs = await loadExceljs();
   const workbook = new exceljs.stream.xlsx.WorkbookWriter({
     stream,
     useStyles: true,
