@@ -15,7 +15,7 @@ afterAll(() => rm(folder, { recursive: true }));
 
 const FORCE = [
   ...['forming', 'force', '--material', 'mild-steel', '--thickness', '2mm'],
-  ...['--length', '3 m', '--opening', '16'],
+  ...['--length', '3 rods', '--opening', '16'],
 ];
 
 describe('forming at the command line', () => {
@@ -40,7 +40,7 @@ describe('forming at the command line', () => {
     expect(JSON.parse(stdout)).toMatchObject({
       error: { code: 'invalid_input', issues: [{ field: 'length', code: 'unknown_unit' }] },
     });
-    expect(stderr).toContain("'m' is not a unit known here");
+    expect(stderr).toContain("'rods' is not a unit known here");
   });
 
   it('answers a blank without any database', async () => {

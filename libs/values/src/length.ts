@@ -9,11 +9,13 @@ import { type UnitSystem } from './unit-system';
 export type Length = Branded<'Length'>;
 
 /** Units in which a length is written. */
-export type LengthUnit = 'mm' | 'in' | 'ft';
+export type LengthUnit = 'mm' | 'cm' | 'm' | 'in' | 'ft';
 
 // Source: international yard and pound agreement of 1959 (NIST SP 811, appendix B): 1 in = 25.4 mm exactly.
 const LENGTHS: UnitTable<LengthUnit> = {
   mm: { factor: '1', words: ['mm', 'millimeter', 'millimeters', 'millimetre', 'millimetres'] },
+  cm: { factor: '10', words: ['cm', 'centimeter', 'centimeters', 'centimetre', 'centimetres'] },
+  m: { factor: '1000', words: ['m', 'meter', 'meters', 'metre', 'metres'] },
   in: { factor: '25.4', words: ['in', 'inch', 'inches', '"', '″', '”'] },
   ft: { factor: '304.8', words: ['ft', 'foot', 'feet', "'", '′', '’'] },
 };

@@ -12,6 +12,8 @@ describe('lengths', () => {
     ['72"', '1828.80000'],
     ['1,828.8 mm', '1828.80000'],
     ['1828.8MM', '1828.80000'],
+    ['1.8288 m', '1828.80000'],
+    ['182.88 cm', '1828.80000'],
     ['0.0625 inches', '1.58750'],
   ])('are read from %p, bare numbers as inches', (text, expected) => {
     const read = parseLength(text, 'in');

@@ -62,6 +62,7 @@ it('every gauge is read as its table prints it, and the note of its system comes
 it.each([
   [['10 ga', '1200 mm'], 'in'],
   [['12', '1200 mm'], 'mm'],
+  [['1.2 m', '1 in'], 'mm'],
   [["5'", '3 mm'], 'in'],
   [['3/16', '3 mm'], 'in'],
   [['12', '4'], 'in'],

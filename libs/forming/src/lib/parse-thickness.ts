@@ -61,12 +61,17 @@ export function isGaugeText(text: string): boolean {
 
 /**
  * The unit that results are given in: that of the first text that is written with one (feet, fractions and gauges
- * count as inches); inches if none is.
+ * count as inches, metres and centimetres as millimetres); inches if none is.
  */
 export function findResultUnit(texts: readonly string[]): 'in' | 'mm' {
   for (const text of texts) {
     const unit = isGaugeText(text) ? 'in' : findWrittenLengthUnit(text);
-    if (unit !== undefined) return unit === 'mm' ? 'mm' : 'in';
+    if (unit !== undefined) return toResultUnit(unit);
   }
   return 'in';
+}
+
+/** Results are in inches or millimetres, whichever goes with a unit. */
+export function toResultUnit(unit: LengthUnit): 'in' | 'mm' {
+  return unit === 'in' || unit === 'ft' ? 'in' : 'mm';
 }

@@ -9,6 +9,7 @@ import {
   refused,
 } from '@brakeven/values';
 import { parseAngle } from './parse-angle';
+import { toResultUnit } from './parse-thickness';
 import { type TrialBend } from './trial-bend';
 
 /** Trial bends as read from a table, and the unit of its first column of lengths. */
@@ -61,7 +62,7 @@ export function parseTrialTable(
   }
   const refusal = findHeaderRefusal(columns) ?? findCountRefusal(rows.length);
   if (refusal) return refusal;
-  const unit = columns.find((column) => column.unit !== null)?.unit === 'mm' ? 'mm' : 'in';
+  const unit = toResultUnit(columns.find((column) => column.unit !== null)?.unit ?? 'in');
   const trials: TrialBend[] = [];
   for (const [index, row] of rows.entries()) {
     const trial = readTrial(row, columns, index + 2);
@@ -83,7 +84,7 @@ function readColumn(text: string, index: number): Parsed<TrialColumn> | undefine
     return refused('unit_missing', `Column ${quoted(text)} does not say its unit. ${EXAMPLE}`);
   const unit = findLengthUnit(unitText);
   if (unit) return accepted({ name, index, unit });
-  return refused('unknown_unit', `The unit of column ${quoted(text)} is not mm, in or ft. ${EXAMPLE}`);
+  return refused('unknown_unit', `The unit of column ${quoted(text)} is not mm, cm, m, in or ft. ${EXAMPLE}`);
 }
 
 function findHeaderRefusal(columns: readonly TrialColumn[]): Parsed<TrialTable> | undefined {
