@@ -134,15 +134,20 @@ function readRows(
 ): SheetReading {
   const problems = [...headerProblems];
   const rows: ReadRow[] = [];
+  const rowsByKey = new Map<string, ReadRow>();
   const isUnitKnown = !headerProblems.some(({ code }) => code === 'unit_unknown');
   for (const row of below) {
     const filled = row.cells.filter(({ address }) => columns.has(columnOf(address)));
     if (filled.length === 0 || !isUnitKnown) continue;
     const reading = readRow(sheet, plan, columns, row.row, filled);
     const completed = completeRow(plan, reading.row, rows);
-    const troubles = [...reading.problems, ...checkRow(sheet, plan, completed, rows, reading)];
+    const key = toUniqueKey(plan, completed);
+    const twin = key === null ? undefined : rowsByKey.get(key);
+    const troubles = [...reading.problems, ...checkRow(sheet, plan, completed, twin, reading)];
     problems.push(...troubles);
-    if (!troubles.some(({ severity }) => severity === 'refused')) rows.push(completed);
+    if (troubles.some(({ severity }) => severity === 'refused')) continue;
+    rows.push(completed);
+    if (key !== null) rowsByKey.set(key, completed);
   }
   return { rows, problems };
 }
@@ -196,7 +201,7 @@ function checkRow(
   sheet: Sheet,
   plan: SetupSheetPlan,
   row: ReadRow,
-  above: readonly ReadRow[],
+  twin: ReadRow | undefined,
   { filledKeys }: RowReading,
 ): SetupProblem[] {
   const problems: SetupProblem[] = [];
@@ -210,7 +215,6 @@ function checkRow(
       problems,
     )('refused', { code: 'cell_missing', message });
   }
-  const twin = above.find((one) => isTwin(plan, one, row));
   if (twin) {
     const words = plan.uniqueBy.map((key) => String(row.values[key])).join(', ');
     const message = `Row ${row.row} of sheet '${sheet.name}' states '${words}' again; it stands in row ${twin.row}.`;
@@ -227,9 +231,10 @@ function isNeeded(plan: SetupSheetPlan, key: string, isBlank: (key: string) => b
   return key === 'name' || !['rateFrom', 'wagePerHour', 'burdenPercent'].every(isBlank);
 }
 
-function isTwin({ uniqueBy }: SetupSheetPlan, a: ReadRow, b: ReadRow): boolean {
-  const toKey = (value: SetupValue | null | undefined) => String(value ?? '').toLowerCase();
-  return uniqueBy.length > 0 && uniqueBy.every((key) => toKey(a.values[key]) === toKey(b.values[key]));
+/** What no two rows of the sheet may share, as one text; null where equal rows may stand. */
+function toUniqueKey({ uniqueBy }: SetupSheetPlan, { values }: ReadRow): string | null {
+  if (uniqueBy.length === 0) return null;
+  return uniqueBy.map((key) => String(values[key] ?? '').toLowerCase()).join('\n');
 }
 
 function toMissingColumns(
