@@ -1,7 +1,7 @@
 import './setup/node-version.mjs';
 import { nxEnvironment, nxProgram } from './setup/build.mjs';
 import { describeDemoShop } from './setup/demo-shop.mjs';
-import { findFreePort, startService } from './setup/processes.mjs';
+import { findFreePort, startService, untilShutDown } from './setup/processes.mjs';
 import { apiLog, seedDemoShop, startApi, turnApiLog } from './setup/programs.mjs';
 import { createProgress, runScript } from './setup/progress.mjs';
 import { announceInstance, refuseSecondInstance, stopAbandonedServer } from './setup/running-instance.mjs';
@@ -19,9 +19,7 @@ await runScript(
   async () => {
     const webServer = await withSetupLock(serve, tellWaiting(progress));
     const code = await webServer.ended;
-    if (isShuttingDown()) {
-      await new Promise(() => undefined);
-    }
+    await untilShutDown();
     throw new SetupError(`The web development server has ended by itself (code ${code}).`);
   },
   () => progress.say('\nStopping …'),

@@ -3,13 +3,12 @@ import { performance } from 'node:perf_hooks';
 import { parseArgs } from 'node:util';
 import { getConfiguration, saveConfiguration } from './setup/configuration.mjs';
 import { describeDemoShop } from './setup/demo-shop.mjs';
-import { findFreePort, isPortFree, isWebPort } from './setup/processes.mjs';
+import { findFreePort, isPortFree, isWebPort, untilShutDown } from './setup/processes.mjs';
 import { apiLog, seedDemoShop, startApi, turnApiLog } from './setup/programs.mjs';
 import { createProgress, formatDuration, runScript } from './setup/progress.mjs';
 import { announceInstance, refuseSecondInstance, stopAbandonedServer } from './setup/running-instance.mjs';
 import { setUp, tellWaiting } from './setup/set-up.mjs';
 import { withSetupLock } from './setup/setup-lock.mjs';
-import { isShuttingDown } from './setup/shutdown.mjs';
 import { SetupError, errorText } from './setup/workspace.mjs';
 
 const usage = 'Usage: npm start [-- --port NUMBER]';
@@ -23,9 +22,7 @@ await runScript(
     const wantedPort = readPort();
     const service = await withSetupLock(() => serve(wantedPort), tellWaiting(progress));
     const code = await service.ended;
-    if (isShuttingDown()) {
-      await new Promise(() => undefined);
-    }
+    await untilShutDown();
     throw new SetupError(`The server has ended by itself (code ${code}). Its log: ${apiLog}`);
   },
   () => progress.say('\nStopping …'),

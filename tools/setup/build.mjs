@@ -1,6 +1,6 @@
 import { existsSync } from 'node:fs';
 import { join } from 'node:path';
-import { runOrThrow } from './processes.mjs';
+import { lastLines, run, untilShutDown } from './processes.mjs';
 import { findStamp, setStamp, stateOf } from './stamps.mjs';
 import { SetupError, root } from './workspace.mjs';
 
@@ -62,18 +62,27 @@ export async function ensureBuilt(wanted, progress) {
  * Builds whatever the state of the sources; Nx answers from its cache what it has built before.
  * @param {Program[]} wanted
  */
-export async function buildAll(wanted) {
-  await runNx('Building failed', ['run-many', '-t', 'build', '-p', wanted.join(','), '--parallel=2']);
+async function buildAll(wanted) {
+  const args = ['run-many', '-t', 'build', '-p', wanted.join(','), '--parallel=2', '--outputStyle=static'];
+  const { code, output } = await run(process.execPath, [nxProgram, ...args], {
+    env: { ...nxEnvironment(), FORCE_COLOR: '0' },
+  });
+  if (code !== 0) {
+    await untilShutDown();
+    throw new SetupError(`Building failed:\n${failingParts(output)}`);
+  }
 }
 
 /**
- * @param {string} what what was being done, for the message
- * @param {string[]} args
+ * @param {string} output of Nx: a part for each program, and the failed tasks' names at the end
+ * @returns {string} the parts of the programs that failed; all of it when none can be told apart
  */
-export function runNx(what, args) {
-  return runOrThrow(what, process.execPath, [nxProgram, ...args, '--outputStyle=static'], {
-    env: nxEnvironment(),
-  });
+function failingParts(output) {
+  const failed = [...output.matchAll(/^- (\S+:build)/gm)].map(([, task]) => task);
+  const parts = output
+    .split(/^(?=> nx run )/m)
+    .filter((part) => failed.some((task) => part.startsWith(`> nx run ${task}`)));
+  return parts.length > 0 ? parts.join('\n').trimEnd() : lastLines(output, 120);
 }
 
 /** Nx's own entry, run by this Node. */

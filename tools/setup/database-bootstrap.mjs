@@ -1,4 +1,4 @@
-import { SetupError } from './workspace.mjs';
+import { SetupError, databaseOutOfReach } from './workspace.mjs';
 
 /** @typedef {{ ownerPassword: string, applicationPassword: string }} RolePasswords */
 /** @typedef {import('./database-cluster.mjs').DatabaseCluster} DatabaseCluster */
@@ -58,6 +58,9 @@ export async function recreateDatabase(cluster, name) {
 async function execute(cluster, sql) {
   const { code, output } = await cluster.query(sql);
   if (code !== 0) {
-    throw new SetupError(`The database could not be prepared:\n${output}Its log: ${cluster.logFile}`);
+    throw new SetupError(
+      `The database could not be prepared:\n${output}Its log: ${cluster.logFile}`,
+      databaseOutOfReach,
+    );
   }
 }

@@ -17,7 +17,7 @@ import { isRoot } from './configuration.mjs';
 import { getPostgresPrograms } from './postgres-programs.mjs';
 import { commandLine, isAlive, isPortFree, lastLines, run, runOrThrow, waitUntil } from './processes.mjs';
 import { atShutdown } from './shutdown.mjs';
-import { SetupError } from './workspace.mjs';
+import { SetupError, databaseOutOfReach } from './workspace.mjs';
 
 /**
  * @typedef {object} ClusterSettings
@@ -109,7 +109,10 @@ export class DatabaseCluster {
       throw portTaken(this.port);
     }
     if (failure) {
-      throw new SetupError(`PostgreSQL did not start:\n${failure}\nIts log: ${this.logFile}`);
+      throw new SetupError(
+        `PostgreSQL did not start:\n${failure}\nIts log: ${this.logFile}`,
+        databaseOutOfReach,
+      );
     }
   }
 
@@ -252,9 +255,12 @@ export class DatabaseCluster {
 
 /** @param {number} port */
 function portTaken(port) {
-  return Object.assign(new SetupError(`Port ${port} on 127.0.0.1 is taken by another program.`), {
-    code: 'EADDRINUSE',
-  });
+  return Object.assign(
+    new SetupError(`Port ${port} on 127.0.0.1 is taken by another program.`, databaseOutOfReach),
+    {
+      code: 'EADDRINUSE',
+    },
+  );
 }
 
 /** What the caller has set for other servers must not reach ours. */

@@ -76,12 +76,17 @@ export function run(command, args, options = {}) {
 export async function runOrThrow(what, command, args, options = {}) {
   const { code, stdout, output } = await run(command, args, options);
   if (code !== 0) {
-    if (isShuttingDown()) {
-      await new Promise(() => undefined);
-    }
+    await untilShutDown();
     throw new SetupError(`${what}:\n${lastLines(output, 120)}`);
   }
   return stdout;
+}
+
+/** Holds whoever failed only because the script is being stopped; the script ends meanwhile. */
+export async function untilShutDown() {
+  if (isShuttingDown()) {
+    await new Promise(() => undefined);
+  }
 }
 
 /**

@@ -20,6 +20,9 @@ export const localDirectory = join(root, '.local');
 /** Short name of this checkout, different for every path. */
 export const checkoutName = createHash('sha256').update(root).digest('hex').slice(0, 12);
 
+/** Exit code of the command line when it does not get to the database. */
+export const databaseOutOfReach = 3;
+
 /**
  * A failure whose message tells the reader what to do; scripts print it without a stack.
  */
