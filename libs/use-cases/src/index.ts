@@ -30,6 +30,8 @@ export * from './lib/show-jobs/change-job';
 export { getJob, getJobCost, type JobCostSummary, listJobLines } from './lib/show-jobs/get-job';
 export * from './lib/show-jobs/list-jobs';
 export * from './lib/show-payback/get-payback';
+export * from './lib/show-workings/get-job-workings';
+export * from './lib/show-workings/get-payback-workings';
 export * from './lib/sign-in/change-password';
 export * from './lib/sign-in/find-session-user';
 export * from './lib/sign-in/sign-in';

@@ -1,0 +1,97 @@
+import { type FigureRef, type Workings, type WorkingsQuery } from '@brakeven/contract';
+import { type JobSelection, listQuoteRows, type ShopTransaction, sumQuotes } from '@brakeven/database';
+import { inShopOf, type ShopContext } from '../context';
+import { getJobRow } from '../show-jobs/get-job';
+import { LINE_FIGURES } from './figures';
+import { readItemWorkings } from './item-workings';
+import { readLineWorkings } from './line-workings';
+import {
+  describeNarrowing,
+  type LinePaging,
+  readStatus,
+  refused,
+  splitRequest,
+  type WorkingsHead,
+} from './workings-request';
+
+type JobFigure = Extract<FigureRef['figure'], `job.${string}`>;
+
+/**
+ * How a figure of a job, or of all jobs of a filter, was made; its lines add up to it.
+ * @throws AppError `not_found` (job), `invalid_input` (another figure, status or cursor)
+ */
+export function getJobWorkings(context: ShopContext, query: WorkingsQuery): Promise<Workings> {
+  const { ref, paging } = splitRequest(query);
+  const { figure } = ref;
+  if (!isJobFigure(figure)) throw refused('figure', 'This is a figure of a machine’s payback, not of jobs.');
+  return readWorkings(context, { ...ref, figure }, paging);
+}
+
+/**
+ * The entries behind hours of jobs; no rates and no money.
+ * @throws AppError `not_found` (job), `invalid_input` (another figure, status or cursor)
+ */
+export function getJobHoursWorkings(context: ShopContext, query: WorkingsQuery): Promise<Workings> {
+  const { ref, paging } = splitRequest(query);
+  const { figure } = ref;
+  if (figure !== 'job.hours' && figure !== 'job.machineHours') {
+    throw refused('figure', 'Only hours and machine hours of jobs can be opened here.');
+  }
+  return readWorkings(context, { ...ref, figure }, paging);
+}
+
+function isJobFigure(figure: FigureRef['figure']): figure is JobFigure {
+  return figure.startsWith('job.');
+}
+
+function readWorkings(
+  context: ShopContext,
+  ref: FigureRef & { figure: JobFigure },
+  paging: LinePaging,
+): Promise<Workings> {
+  const { figure, jobId, operationId, from, to, search } = ref;
+  const status = readStatus(ref);
+  // One job is meant whatever filter it was found by.
+  const jobs: JobSelection = jobId === undefined ? { search, status } : { jobId };
+  return inShopOf(context, async (trx) => {
+    if (figure === 'job.quotedPrice') return readQuotes(trx, ref, jobs, paging);
+    const lineFigure = LINE_FIGURES[figure];
+    const head = await readHead(trx, ref, lineFigure.title, jobs);
+    const selection = { jobId, operationId, from, to, jobs: jobId === undefined ? jobs : undefined };
+    return readLineWorkings(trx, head, lineFigure, selection, paging, context.shop.currency);
+  });
+}
+
+async function readHead(
+  trx: ShopTransaction,
+  ref: FigureRef,
+  title: string,
+  { jobId, search, status }: JobSelection,
+): Promise<WorkingsHead> {
+  const narrowing = await describeNarrowing(trx, ref);
+  if (jobId !== undefined) {
+    const job = await getJobRow(trx, { jobId });
+    return { figure: ref, title: `${title} of job ${job.number}, ${job.title}${narrowing}` };
+  }
+  const isFiltered = search !== undefined || status !== undefined;
+  return { figure: ref, title: `${title} of ${isFiltered ? 'the jobs found' : 'all jobs'}${narrowing}` };
+}
+
+async function readQuotes(
+  trx: ShopTransaction,
+  ref: FigureRef,
+  jobs: JobSelection,
+  paging: LinePaging,
+): Promise<Workings> {
+  const { operationId: _operationId, from: _from, to: _to, ...whole } = ref;
+  const head = await readHead(trx, whole, 'Quoted price', jobs);
+  const rule = 'The price quoted to the customer, as written on the job. Jobs without one are left out.';
+  return readItemWorkings(
+    { ...head, rule },
+    {
+      sum: () => sumQuotes(trx, jobs),
+      list: (after, limit) => listQuoteRows(trx, jobs, after, limit),
+    },
+    paging,
+  );
+}
