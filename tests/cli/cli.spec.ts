@@ -121,7 +121,7 @@ describe('a shop’s first week at the command line', () => {
   });
 
   it('tells how far the press has paid itself back', async () => {
-    expect(await runJson('payback', 'PB2', ...inShop)).toEqual({ code: 0, json: PAYBACK_OF_PB2 });
+    expect(await runJson('payback', 'PB2', ...inShop)).toMatchObject({ code: 0, json: PAYBACK_OF_PB2 });
   });
 
   it('rolls up anew without changing a figure', async () => {
