@@ -1,5 +1,6 @@
 import './setup/node-version.mjs';
 import { mkdirSync, readdirSync } from 'node:fs';
+import { availableParallelism, loadavg } from 'node:os';
 import { join } from 'node:path';
 import { pathToFileURL } from 'node:url';
 import { ensureBuilt, webRoot } from './setup/build.mjs';
@@ -16,6 +17,8 @@ import { SetupError, localDirectory, root } from './setup/workspace.mjs';
 const progress = createProgress(process.stdout);
 const sources = join(root, 'tests/bench');
 const output = join(root, 'dist/bench');
+/** What benches start beside themselves. */
+const separateThreads = ['libs/workbook/src/read-worker.ts', 'tests/bench/page-server.ts'];
 
 /** @typedef {import('../tests/bench/bench').BenchContext} BenchContext */
 /** @typedef {import('../tests/bench/bench').BenchRow} BenchRow */
@@ -28,11 +31,20 @@ await runScript(
     for (const file of files) {
       progress.say(`\n── ${file}`);
       const bench = await import(pathToFileURL(join(output, file.replace(/\.ts$/, '.js'))).href);
+      const before = loadText();
       printRows(await bench.default(context));
+      progress.say(
+        `Load of the machine: ${before} before, ${loadText()} after, ${availableParallelism()} cores`,
+      );
     }
   },
   () => progress.say('\nStopping …'),
 );
+
+/** @returns {string} the average of the last minute; what else runs makes figures worse, ratios less so */
+function loadText() {
+  return (loadavg()[0] ?? 0).toFixed(1);
+}
 
 /** @param {string[]} patterns parts of file names; all benches when there are none */
 function chooseFiles(patterns) {
@@ -60,7 +72,7 @@ async function bundle(files) {
   mkdirSync(output, { recursive: true });
   await build({
     absWorkingDir: root,
-    entryPoints: [...files.map((file) => join(sources, file)), 'libs/workbook/src/read-worker.ts'],
+    entryPoints: [...files.map((file) => join(sources, file)), ...separateThreads],
     entryNames: '[name]',
     outdir: output,
     bundle: true,
@@ -94,13 +106,27 @@ function createContext(cluster) {
   };
 }
 
+/**
+ * @param {number} ratio
+ * @param {BenchRow['aim']} aim
+ * @returns {string[]} the aim, and whether it holds
+ */
+function judge(ratio, aim) {
+  if (aim === null) {
+    return ['', ''];
+  }
+  const holds = 'atLeast' in aim ? ratio >= aim.atLeast : ratio <= aim.atMost;
+  return ['atLeast' in aim ? `≥ ${aim.atLeast}` : `≤ ${aim.atMost}`, holds ? 'holds' : 'MISSED'];
+}
+
 /** @param {BenchRow[]} rows */
 function printRows(rows) {
-  const cells = rows.map(({ measure, ratio, aim, detail }) => {
-    const holds = 'atLeast' in aim ? ratio >= aim.atLeast : ratio <= aim.atMost;
-    const wanted = 'atLeast' in aim ? `≥ ${aim.atLeast}` : `≤ ${aim.atMost}`;
-    return [measure, ratio.toFixed(2), wanted, holds ? 'holds' : 'MISSED', detail];
-  });
+  const cells = rows.map(({ measure, ratio, aim, detail }) => [
+    measure,
+    ratio.toFixed(2),
+    ...judge(ratio, aim),
+    detail,
+  ]);
   const header = ['measure', 'ratio', 'aim', '', 'behind it'];
   const table = [header, ...cells];
   const widths = header.map((_, column) => Math.max(...table.map((row) => (row[column] ?? '').length)));

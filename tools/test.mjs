@@ -8,6 +8,7 @@ import { ensureNpmPackages } from './setup/npm-packages.mjs';
 import { seedDemoShop } from './setup/programs.mjs';
 import { createProgress, runScript } from './setup/progress.mjs';
 import { tellWaiting } from './setup/set-up.mjs';
+import { runScriptTests } from './setup/script-suite.mjs';
 import { withSetupLock } from './setup/setup-lock.mjs';
 import { staticChecks } from './setup/static-checks.mjs';
 import { Tally, asOneCheck } from './setup/tally.mjs';
@@ -42,6 +43,9 @@ await runScript(
 async function runAll() {
   await withSetupLock(prepare, tellWaiting(progress));
   await runStaticChecks();
+  if (only === undefined || only === 'unit') {
+    await tally.run('Scripts', runScriptTests);
+  }
   await runBuilds();
   if (only !== 'lint') {
     await runSpecs(await startThrowAwayCluster(progress));

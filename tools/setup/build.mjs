@@ -77,7 +77,7 @@ async function buildAll(wanted) {
  * @param {string} output of Nx: a part for each program, and the failed tasks' names at the end
  * @returns {string} the parts of the programs that failed; all of it when none can be told apart
  */
-function failingParts(output) {
+export function failingParts(output) {
   const failed = [...output.matchAll(/^- (\S+:build)/gm)].map(([, task]) => task);
   const parts = output
     .split(/^(?=> nx run )/m)

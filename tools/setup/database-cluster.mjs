@@ -94,11 +94,13 @@ export class DatabaseCluster {
 
   /** Starts the server on its port; a port taken by somebody else is an error with code 'EADDRINUSE'. */
   async start() {
-    if (!(await isPortFree(this.port))) {
+    // Parts of a killed server, which has left its process file, need a moment to notice and leave the port; even
+    // then PostgreSQL may refuse to start for a while.
+    const patienceMs = this.#pidFileLines().length > 0 ? 10_000 : 500;
+    if (!(await waitUntil(() => isPortFree(this.port), patienceMs))) {
       throw portTaken(this.port);
     }
     this.#removeForeignPidFile();
-    // Parts of a killed server need a moment to notice and leave; until then PostgreSQL refuses to start.
     const end = Date.now() + 15_000;
     let failure = await this.#tryStart();
     while (failure && /already exists|still in use|shared memory/.test(failure) && Date.now() < end) {

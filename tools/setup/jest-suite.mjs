@@ -61,11 +61,12 @@ function toArguments({ config, paths = [], withoutPaths = [], workers = availabl
 }
 
 /**
- * @param {any} report
- * @param {number} code
+ * @param {any} report what Jest wrote, null when it wrote nothing
+ * @param {number} code its exit code
  * @param {string} output
+ * @returns {import('./tally.mjs').Outcome}
  */
-function countTests(report, code, output) {
+export function countTests(report, code, output) {
   if (!report) {
     return {
       passed: 0,

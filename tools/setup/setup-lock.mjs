@@ -5,7 +5,7 @@ import { isAlive } from './processes.mjs';
 import { atShutdown } from './shutdown.mjs';
 import { localDirectory, makeLocalDirectory } from './workspace.mjs';
 
-const lockFile = join(localDirectory, 'setup.lock');
+const checkoutLock = join(localDirectory, 'setup.lock');
 
 /**
  * Lets one script of this checkout at a time install, build, migrate or start the database. A lock left behind
@@ -13,16 +13,17 @@ const lockFile = join(localDirectory, 'setup.lock');
  * @template T
  * @param {() => Promise<T>} work
  * @param {(pid: number) => void} onWait told once, with the process that is being waited for
+ * @param {string} [lockFile] the checkout's unless told
  * @returns {Promise<T>}
  */
-export async function withSetupLock(work, onWait) {
+export async function withSetupLock(work, onWait, lockFile = checkoutLock) {
   makeLocalDirectory();
   const draft = `${lockFile}.${process.pid}`;
   writeFileSync(draft, `${process.pid} ${startTime(process.pid)}\n`);
   const discard = atShutdown(() => rmSync(draft, { force: true }));
   let told = false;
-  while (!tryLink(draft)) {
-    const holder = findHolder();
+  while (!tryLink(draft, lockFile)) {
+    const holder = findHolder(lockFile);
     if (holder && !told) {
       onWait(holder);
       told = true;
@@ -41,8 +42,11 @@ export async function withSetupLock(work, onWait) {
   }
 }
 
-/** @param {string} draft */
-function tryLink(draft) {
+/**
+ * @param {string} draft
+ * @param {string} lockFile
+ */
+function tryLink(draft, lockFile) {
   try {
     linkSync(draft, lockFile);
     return true;
@@ -52,9 +56,10 @@ function tryLink(draft) {
 }
 
 /**
+ * @param {string} lockFile
  * @returns {number | null} the living process that holds the lock; a dead one's lock is removed
  */
-function findHolder() {
+function findHolder(lockFile) {
   let text;
   try {
     text = readFileSync(lockFile, 'utf8');
@@ -65,15 +70,16 @@ function findHolder() {
   if (isAlive(Number(pid)) && startTime(Number(pid)) === started) {
     return Number(pid);
   }
-  removeStale(text);
+  removeStale(text, lockFile);
   return null;
 }
 
 /**
  * Removes a dead holder's lock, unless another script has taken the lock over in the meantime.
  * @param {string} staleText content of the lock when it was found stale
+ * @param {string} lockFile
  */
-function removeStale(staleText) {
+function removeStale(staleText, lockFile) {
   const aside = `${lockFile}.stale.${process.pid}`;
   try {
     renameSync(lockFile, aside);
