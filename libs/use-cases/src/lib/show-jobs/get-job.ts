@@ -48,7 +48,7 @@ export function getJob(context: ShopContext, { jobId }: { jobId: string }): Prom
  * A page of the lines that a job's cost is the sum of, latest first; of one category if asked for.
  * @throws AppError `not_found`, `invalid_input` for a cursor of another list
  */
-export function listJobLines(
+export async function listJobLines(
   context: ShopContext,
   query: { jobId: string } & JobLineQuery,
 ): Promise<JobLinePage> {

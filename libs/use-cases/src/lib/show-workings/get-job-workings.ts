@@ -20,7 +20,7 @@ type JobFigure = Extract<FigureRef['figure'], `job.${string}`>;
  * How a figure of a job, or of all jobs of a filter, was made; its lines add up to it.
  * @throws AppError `not_found` (job), `invalid_input` (another figure, status or cursor)
  */
-export function getJobWorkings(context: ShopContext, query: WorkingsQuery): Promise<Workings> {
+export async function getJobWorkings(context: ShopContext, query: WorkingsQuery): Promise<Workings> {
   const { ref, paging } = splitRequest(query);
   const { figure } = ref;
   if (!isJobFigure(figure)) throw refused('figure', 'This is a figure of a machine’s payback, not of jobs.');
@@ -31,7 +31,7 @@ export function getJobWorkings(context: ShopContext, query: WorkingsQuery): Prom
  * The entries behind hours of jobs; no rates and no money.
  * @throws AppError `not_found` (job), `invalid_input` (another figure, status or cursor)
  */
-export function getJobHoursWorkings(context: ShopContext, query: WorkingsQuery): Promise<Workings> {
+export async function getJobHoursWorkings(context: ShopContext, query: WorkingsQuery): Promise<Workings> {
   const { ref, paging } = splitRequest(query);
   const { figure } = ref;
   if (figure !== 'job.hours' && figure !== 'job.machineHours') {

@@ -23,7 +23,7 @@ type MachineRef = FigureRef & { figure: PaybackFigure; machineId: string };
  * of the whole machine, whatever job or days are named.
  * @throws AppError `not_found` (machine, job), `invalid_input` (another figure, no machine, cursor)
  */
-export function getPaybackWorkings(context: ShopContext, query: WorkingsQuery): Promise<Workings> {
+export async function getPaybackWorkings(context: ShopContext, query: WorkingsQuery): Promise<Workings> {
   const { ref, paging } = splitRequest(query);
   const { figure, machineId } = ref;
   if (!isPaybackFigure(figure))

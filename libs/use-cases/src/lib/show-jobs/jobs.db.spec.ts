@@ -1,0 +1,237 @@
+import {
+  type Job,
+  JOB_SORTS,
+  jobDetailSchema,
+  type JobInput,
+  jobLinePageSchema,
+  type JobListQuery,
+  jobPageSchema,
+} from '@brakeven/contract';
+import { computeJobCost } from '@brakeven/costing';
+import { D, hoursText, moneyText, sum } from '@brakeven/values';
+import { type ShopContext } from '../context';
+import { getRollupStatus } from '../roll-up-costs/get-rollup-status';
+import { computeExpectedCosts } from '../roll-up-costs/testing/expected-costs';
+import { createWorkedShop, WORKED_NOW, type WorkedShop } from '../testing/worked-shop';
+import { createJob, listCustomers, updateJob } from './change-job';
+import { getJob, getJobCost, listJobLines } from './get-job';
+import { listJobs } from './list-jobs';
+
+jest.setTimeout(30_000);
+
+const MONEY_KEYS = /"(labour|machine|overhead|total|quotedPrice|rate|rateFactor|amount)":/;
+
+describe('jobs', () => {
+  let shop: WorkedShop;
+  let owner: ShopContext;
+
+  beforeAll(async () => {
+    shop = await createWorkedShop();
+    owner = shop.context('owner', { now: WORKED_NOW });
+  });
+  afterAll(() => shop.close());
+
+  async function listAll(query: Partial<JobListQuery>, context = owner): Promise<Job[]> {
+    const items: Job[] = [];
+    let cursor: string | undefined;
+    do {
+      const page = jobPageSchema.parse(
+        await listJobs(context, { sort: 'number', direction: 'asc', limit: 1, ...query, cursor }),
+      );
+      items.push(...page.items);
+      cursor = page.nextCursor ?? undefined;
+    } while (cursor);
+    return items;
+  }
+  const numbers = (jobs: readonly Job[]) => jobs.map((job) => job.number);
+
+  it('cost what costing makes of their entries', async () => {
+    const { lines, gaps } = await computeExpectedCosts(shop);
+    const jobs = await listAll({});
+    expect(jobs).toHaveLength(4);
+    for (const job of jobs) {
+      const isOfJob = (trace: { jobId: string }) => trace.jobId === job.jobId;
+      const cost = computeJobCost(lines.filter(isOfJob), gaps.filter(isOfJob));
+      expect(job).toMatchObject({
+        hours: hoursText(cost.hours),
+        machineHours: hoursText(cost.machineHours),
+        labour: moneyText(cost.labour),
+        machine: moneyText(cost.machine),
+        overhead: moneyText(cost.overhead),
+        total: moneyText(cost.total),
+        entriesWithoutRate: new Set(gaps.filter(isOfJob).map((gap) => gap.entryId)).size,
+      });
+    }
+  });
+
+  it.each(JOB_SORTS)('come page by page in the order of %s, each once', async (sort) => {
+    for (const direction of ['asc', 'desc'] as const) {
+      const paged = numbers(await listAll({ sort, direction, limit: 1 }));
+      expect([...paged].sort()).toEqual(['1042', '1043', '1100', '900']);
+      expect(paged).toEqual(numbers(await listAll({ sort, direction, limit: 50 })));
+    }
+  });
+
+  it('without a value come last in either direction', async () => {
+    for (const direction of ['asc', 'desc'] as const) {
+      const jobs = await listAll({ sort: 'quotedPrice', direction });
+      expect(jobs.slice(0, 2).map((job) => job.quotedPrice)).not.toContain(null);
+      expect(jobs.slice(2).map((job) => job.quotedPrice)).toEqual([null, null]);
+    }
+  });
+
+  it('are found by number, title or customer, wildcards taken as they stand', async () => {
+    expect(numbers(await listAll({ search: 'trench' }))).toEqual(['1043']);
+    expect(numbers(await listAll({ search: 'NORTHGATE' }))).toEqual(['1042', '1100']);
+    expect(numbers(await listAll({ search: '100%_' }))).toEqual(['900']);
+    expect(numbers(await listAll({ search: '%' }))).toEqual(['900']);
+    expect(numbers(await listAll({ status: 'finished' }))).toEqual(['1043']);
+  });
+
+  it('have totals over all of the filter, whatever the page', async () => {
+    const jobs = await listAll({ search: '104' });
+    const page = await listJobs(owner, { sort: 'number', direction: 'asc', limit: 1, search: '104' });
+    expect(page.totals.jobs).toBe(2);
+    expect(page.totals.total).toBe(sum(jobs.map((job) => D(job.total ?? '0'))).toFixed(2));
+    expect(page.totals.hours).toBe(sum(jobs.map((job) => D(job.hours))).toFixed(4));
+    expect(page.totals.quotedPrice).toBe('10249.99');
+  });
+
+  it('show no money to who may not see it, not even by their order', async () => {
+    const lead = shop.context('lead');
+    const page = await listJobs(lead, { sort: 'number', direction: 'asc', limit: 10 });
+    const job = await getJob(lead, { jobId: shop.jobs.guards });
+    const lines = await listJobLines(lead, { jobId: shop.jobs.guards, limit: 10 });
+    expect(page.items).toHaveLength(4);
+    expect(lines.items).toHaveLength(10);
+    for (const sent of [page, job, lines]) expect(JSON.stringify(sent)).not.toMatch(MONEY_KEYS);
+    await expect(listJobs(lead, { sort: 'total', direction: 'asc', limit: 10 })).rejects.toMatchObject({
+      code: 'forbidden',
+    });
+  });
+
+  it('open by operation and by week, each adding up to the job', async () => {
+    const job = jobDetailSchema.parse(await getJob(owner, { jobId: shop.jobs.guards }));
+    expect(job.byOperation.length).toBeGreaterThan(1);
+    for (const parts of [job.byOperation, job.byWeek]) {
+      expect(sum(parts.map((part) => D(part.total ?? '0'))).toFixed(2)).toBe(job.total);
+      expect(sum(parts.map((part) => D(part.hours))).toFixed(4)).toBe(job.hours);
+    }
+    for (const { weekFrom } of job.byWeek) expect(new Date(`${weekFrom}T00:00:00Z`).getUTCDay()).toBe(1);
+  });
+
+  it('list their lines latest first, and these add up to the cost', async () => {
+    const { jobId } = await getJob(owner, { jobId: shop.jobs.guards });
+    const lines = [];
+    let cursor: string | undefined;
+    do {
+      const page = jobLinePageSchema.parse(await listJobLines(owner, { jobId, limit: 20, cursor }));
+      lines.push(...page.items);
+      cursor = page.nextCursor ?? undefined;
+    } while (cursor);
+    const job = await getJob(owner, { jobId });
+    expect(sum(lines.map((line) => D(line.amount ?? '0'))).toFixed(2)).toBe(job.total);
+    const dates = lines.map((line) => line.workedOn);
+    expect(dates).toEqual([...dates].sort().reverse());
+    const labour = await listJobLines(owner, { jobId, limit: 500, category: 'labour' });
+    expect(sum(labour.items.map((line) => D(line.amount ?? '0'))).toFixed(2)).toBe(job.labour);
+    expect(labour.items.every((line) => line.rateFactor !== null)).toBe(true);
+  });
+
+  it('tell the command line what they cost', async () => {
+    const job = await getJob(owner, { jobId: shop.jobs.guards });
+    const { hours, labour, machine, overhead, total } = job;
+    const { through } = await getRollupStatus(owner);
+    expect(await getJobCost(owner, ' 1042 ')).toEqual({
+      job: '1042',
+      through,
+      hours,
+      labour,
+      machine,
+      overhead,
+      total,
+    });
+    await expect(getJobCost(owner, '77')).rejects.toMatchObject({ code: 'not_found' });
+  });
+
+  it('are not found under an id of another shop', async () => {
+    const jobId = '0198aaaa-0000-7000-8000-000000000abc';
+    await expect(getJob(owner, { jobId })).rejects.toMatchObject({ code: 'not_found' });
+    await expect(listJobLines(owner, { jobId, limit: 5 })).rejects.toMatchObject({ code: 'not_found' });
+  });
+});
+
+describe('changing jobs', () => {
+  let shop: WorkedShop;
+  let owner: ShopContext;
+  const input = (change: Partial<JobInput> = {}): JobInput => ({
+    number: '2001',
+    customer: 'Hollow Creek Dairy',
+    title: 'Milk-room panels',
+    quantity: 4,
+    openedOn: '2026-05-01',
+    dueOn: null,
+    quotedPrice: '450.5',
+    isBillable: true,
+    status: 'open',
+    ...change,
+  });
+
+  beforeAll(async () => {
+    shop = await createWorkedShop();
+    owner = shop.context('owner', { now: WORKED_NOW });
+  });
+  afterAll(() => shop.close());
+
+  it('adds a job together with its new customer', async () => {
+    const job = await createJob(owner, input());
+    expect(job).toMatchObject({
+      number: '2001',
+      customer: 'Hollow Creek Dairy',
+      quotedPrice: '450.50',
+      total: '0.00',
+    });
+    expect((await listCustomers(owner)).map((customer) => customer.name)).toContain('Hollow Creek Dairy');
+  });
+
+  it('takes a customer that is known under the same name, whatever its case', async () => {
+    const before = await listCustomers(owner);
+    const job = await createJob(owner, input({ number: '2002', customer: 'northgate conveyors' }));
+    expect(job.customer).toBe('Northgate Conveyors');
+    expect(await listCustomers(owner)).toEqual(before);
+  });
+
+  it('refuses a number that is taken and names the field', async () => {
+    const before = await listCustomers(owner);
+    const twice = createJob(owner, input({ number: '1042', customer: 'Never added' }));
+    await expect(twice).rejects.toMatchObject({ code: 'conflict', issues: [{ field: 'number' }] });
+    expect(await listCustomers(owner)).toEqual(before);
+  });
+
+  it('changes a job, marks its days when it is no longer billable, and leaves a trail', async () => {
+    const { jobId } = await getJob(owner, { jobId: shop.jobs.guards });
+    const job = await updateJob(owner, { jobId }, input({ number: '1042', customer: '', isBillable: false }));
+    expect(job).toMatchObject({ customer: null, isBillable: false, title: 'Milk-room panels' });
+    expect((await getRollupStatus(owner)).daysWaiting).toBeGreaterThan(5);
+    const trail = await shop.inShop((trx) =>
+      trx
+        .selectFrom('auditEvent')
+        .select(['actor', 'action'])
+        .where('subjectId', '=', jobId)
+        .orderBy('eventId')
+        .execute(),
+    );
+    expect(trail).toEqual([
+      { actor: 'Test', action: 'added' },
+      { actor: 'Test owner', action: 'changed' },
+    ]);
+  });
+
+  it('does not find a job that is not there, and adds no customer for it', async () => {
+    const jobId = '0198aaaa-0000-7000-8000-000000000abc';
+    const before = await listCustomers(owner);
+    const change = updateJob(owner, { jobId }, input({ number: '9', customer: 'Nobody' }));
+    await expect(change).rejects.toMatchObject({ code: 'not_found' });
+    expect(await listCustomers(owner)).toEqual(before);
+  });
+});
