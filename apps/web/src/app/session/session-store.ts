@@ -45,7 +45,9 @@ export class SessionStore {
     return this.current();
   }
 
+  /** Asks for the session first: that answer brings a fresh token against forged requests, which sign-in needs too. */
   async signIn(email: string, password: string): Promise<Session> {
+    await this.reload();
     const session = await firstValueFrom(this.api.signIn({ email, password }));
     this.current.set(session);
     return session;

@@ -58,6 +58,10 @@ describe('the session', () => {
 
   const signInAs = async (role: Role, mustChangePassword = false) => {
     const signedIn = store.signIn('mara@ternhollow.example', 'secret');
+    http
+      .expectOne({ method: 'GET', url: '/api/session' })
+      .flush({}, { status: 401, statusText: 'Unauthorized' });
+    await new Promise((resolve) => setTimeout(resolve));
     http.expectOne({ method: 'POST', url: '/api/session' }).flush(sessionOf(role, mustChangePassword));
     await signedIn;
   };
