@@ -33,11 +33,11 @@ async function serve(wantedPort) {
   refuseSecondInstance();
   stopAbandonedServer();
   const environment = await setUp(['api', 'cli', 'demo-shop', 'web'], progress, { stopsAtEnd: true });
-  const demoShop = await progress.step('Looking after the demo shop', (note) =>
-    seedDemoShop(environment, note),
-  );
   turnApiLog();
-  const service = await progress.step('Starting the server', () => startOnSomePort(environment, wantedPort));
+  // Together, because the demo shop is there already at all starts but the first.
+  const [service, demoShop] = await progress.step('Starting the server and the demo shop', (note) =>
+    Promise.all([startOnSomePort(environment, wantedPort), seedDemoShop(environment, note)]),
+  );
   announceInstance(service.address, service.pid);
   progress.say(`\nBrakeven is ready at ${service.address} (${formatDuration(performance.now() - begin)})\n`);
   progress.say(describeDemoShop(demoShop));

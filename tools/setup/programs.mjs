@@ -15,12 +15,15 @@ export function isMigrated() {
 }
 
 /**
- * Brings this checkout's database to the newest schema.
+ * Brings this checkout's database to the newest schema when the migrations have changed since it was last done.
  * @param {DatabaseEnvironment} environment
  * @param {Progress} progress
  */
 export async function migrateApplicationDatabase(environment, progress) {
   const state = stateOf(['migrations']);
+  if (findStamp('migrated') === state) {
+    return;
+  }
   await progress.step('Migrating the database', () => migrate(environment));
   setStamp('migrated', state);
 }

@@ -40,7 +40,9 @@ export function createProgress(stream) {
       const slow = setTimeout(() => announce(title), stream.isTTY ? 100 : quietMs);
       let mark = '✗';
       try {
-        const result = await work((remark) => void (pending && announce(`${title}: ${remark}`.slice(0, 78))));
+        const result = await work(
+          (remark) => void (pending && announce(`${title}: ${remark}`.slice(0, (stream.columns ?? 80) - 4))),
+        );
         mark = '✓';
         return result;
       } finally {
