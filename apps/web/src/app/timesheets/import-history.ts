@@ -1,10 +1,12 @@
-import { ChangeDetectionStrategy, Component, inject } from '@angular/core';
+import { ChangeDetectionStrategy, Component, computed, inject, signal } from '@angular/core';
 import { RouterLink } from '@angular/router';
 import { type TimesheetImport } from '@brakeven/contract';
 import { EmptyState, HoursPipe, InstantPipe, LoadingSkeleton, LocalDatePipe, StatusTag } from '@brakeven/ui';
 import { TimesheetsApi } from '../api/timesheets-api';
 import { LoadError } from '../shell/load-error';
 import { ImportHistoryStore } from './import-history-store';
+
+const ROWS_AT_FIRST = 12;
 
 /** What has been imported: by whom, how much went in, and the ways to open, fetch and undo it. */
 @Component({
@@ -48,7 +50,7 @@ import { ImportHistoryStore } from './import-history-store';
                 </tr>
               </thead>
               <tbody>
-                @for (one of imports.value(); track one.importId) {
+                @for (one of shown(); track one.importId) {
                   <tr [class.undone]="one.status === 'undone'">
                     <th scope="row">
                       <a [routerLink]="['/timesheets', one.importId]">{{ one.fileName }}</a>
@@ -101,6 +103,11 @@ import { ImportHistoryStore } from './import-history-store';
               </tbody>
             </table>
           </div>
+          @if (imports.value().length > shown().length) {
+            <button type="button" class="button more" (click)="isWhole.set(true)">
+              Show all {{ imports.value().length }}
+            </button>
+          }
         }
       } @else {
         <app-loading-skeleton [lines]="6" />
@@ -120,6 +127,9 @@ import { ImportHistoryStore } from './import-history-store';
       min-width: 130px;
       overflow-wrap: anywhere;
     }
+    .more {
+      margin-top: 12px;
+    }
     .actions {
       text-align: right;
       white-space: nowrap;
@@ -130,6 +140,12 @@ import { ImportHistoryStore } from './import-history-store';
 export class ImportHistory {
   protected readonly store = inject(ImportHistoryStore);
   private readonly api = inject(TimesheetsApi);
+
+  protected readonly isWhole = signal(false);
+  protected readonly shown = computed(() => {
+    const all = this.store.imports.hasValue() ? this.store.imports.value() : [];
+    return this.isWhole() ? all : all.slice(0, ROWS_AT_FIRST);
+  });
 
   protected fileUrl(one: TimesheetImport): string {
     return this.api.fileUrl(one.importId);

@@ -1,4 +1,15 @@
-import { ChangeDetectionStrategy, Component, computed, inject, input, output, signal } from '@angular/core';
+import {
+  ChangeDetectionStrategy,
+  Component,
+  computed,
+  effect,
+  type ElementRef,
+  inject,
+  input,
+  output,
+  signal,
+  viewChild,
+} from '@angular/core';
 import { toObservable, toSignal } from '@angular/core/rxjs-interop';
 import { MatAutocompleteModule } from '@angular/material/autocomplete';
 import { RouterLink } from '@angular/router';
@@ -77,6 +88,7 @@ export class NameChoice {
   readonly chosen = output<KnownName>();
 
   private readonly known = inject(KnownNames);
+  private readonly box = viewChild<ElementRef<HTMLInputElement>>('box');
   protected readonly isSearching = signal(false);
   protected readonly text = signal('');
   protected readonly words = computed(() => KIND_WORDS[this.name().kind]);
@@ -93,6 +105,10 @@ export class NameChoice {
     ),
     { initialValue: NOTHING_YET },
   );
+
+  constructor() {
+    effect(() => this.box()?.nativeElement.focus());
+  }
 
   protected readonly toLabel = (known: KnownName | string | null): string =>
     typeof known === 'object' && known !== null ? known.label : (known ?? '');

@@ -1,6 +1,6 @@
 import { type CheckedRow, type TimesheetProblem } from '@brakeven/contract';
 
-import { filterRows, stepThrough, toTableRows } from './row-problems';
+import { filterRows, splitProblems, stepThrough, toTableRows } from './row-problems';
 
 const row = (number: number, state: CheckedRow['state'] = 'ready'): CheckedRow => ({
   row: number,
@@ -32,6 +32,19 @@ describe('toTableRows', () => {
     const warning = problem(9, { severity: 'warning', code: 'job_not_open' });
     const [only] = toTableRows({ rows: [row(9)], problems: [warning, problem(9)] });
     expect(only?.byField.hours?.severity).toBe('refused');
+  });
+});
+
+describe('splitProblems', () => {
+  it('parts what concerns the file, such as its total at the foot, from what stands in an entry', () => {
+    const total = problem(44, { severity: 'warning', code: 'control_total' });
+    const { ofRows, ofFile } = splitProblems({
+      rows: [row(9)],
+      problems: [problem(9), total, problem(null)],
+    });
+    expect(ofRows.map(({ cell }) => cell)).toEqual(['F9']);
+    expect(ofFile.map(({ row: at }) => at)).toEqual([44, null]);
+    expect(splitProblems(null)).toEqual({ ofRows: [], ofFile: [] });
   });
 });
 

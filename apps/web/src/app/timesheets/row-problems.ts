@@ -54,3 +54,16 @@ export function stepThrough<T>(items: readonly T[], current: T | null, step: 1 |
   if (index === -1) return (step === 1 ? items[0] : items.at(-1)) ?? null;
   return items[(index + step + items.length) % items.length] ?? null;
 }
+
+/** Parts the problems that stand in a row of the table from those of the file as a whole: its header, its total. */
+export function splitProblems(check: Pick<TimesheetCheck, 'rows' | 'problems'> | null): {
+  ofRows: TimesheetProblem[];
+  ofFile: TimesheetProblem[];
+} {
+  const rows = new Set<number | null>(check?.rows.map(({ row }) => row));
+  const problems = check?.problems ?? [];
+  return {
+    ofRows: problems.filter(({ row }) => rows.has(row)),
+    ofFile: problems.filter(({ row }) => !rows.has(row)),
+  };
+}

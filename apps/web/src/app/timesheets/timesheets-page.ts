@@ -18,6 +18,7 @@ import { KnownNames } from './known-names';
 import { MappingPanel } from './mapping-panel';
 import { ProblemPanel } from './problem-panel';
 import { TimesheetCheckStore } from './timesheet-check-store';
+import { splitProblems } from './row-problems';
 import { commitWords, count, countEntries, percentDone, STAGE_WORDS } from './timesheet-words';
 
 /** From the week's workbook to entries in the books: drop, settle, add, and the history to undo from. */
@@ -58,13 +59,10 @@ export class TimesheetsPage {
     const check = this.store.check();
     return check !== null && (check.mapping === null || check.missingFields.length > 0);
   });
-  /** What is to be said of the file as a whole rather than of one of its rows. */
-  protected readonly fileProblems = computed(() =>
-    (this.store.check()?.problems ?? []).filter(({ row, alias }) => row === null && alias === null),
-  );
-  protected readonly rowProblems = computed(() =>
-    (this.store.check()?.problems ?? []).filter(({ row, alias }) => row !== null || alias !== null),
-  );
+  private readonly problems = computed(() => splitProblems(this.store.check()));
+  /** What is to be said of the file as a whole rather than of one of its entries. */
+  protected readonly fileProblems = computed(() => this.problems().ofFile);
+  protected readonly rowProblems = computed(() => this.problems().ofRows);
   protected readonly hasToSettle = computed(
     () => this.rowProblems().length > 0 || this.store.chosenNames().length > 0,
   );
