@@ -1,0 +1,103 @@
+import { createTestShop, type TestShop } from '@brakeven/test-shop';
+import { type ShopContext } from '@brakeven/use-cases';
+import { sql } from 'kysely';
+import { type BenchDatabase } from './bench';
+
+/** A shop with people, machines, jobs and effective-dated rates, and as many entries as a bench wants. */
+export interface BenchShop extends TestShop {
+  owner: ShopContext;
+  /** Adds entries by one set-based statement, the days one after the other from `FIRST_DAY` on. */
+  addHistory(history: History): Promise<void>;
+  /** What autovacuum does sooner or later, now. */
+  tidy(): Promise<void>;
+}
+
+export interface History {
+  entries: number;
+  entriesPerDay: number;
+}
+
+export const FIRST_DAY = '2017-01-01';
+/** After every day of every bench, so that no entry lies in the future. */
+const NOW = new Date('2026-11-30T18:00:00Z');
+
+export const EMPLOYEES = 40;
+const OPERATIONS = 8;
+const MACHINES = 6;
+
+/** @param jobs a shop has some ten to twenty entries a job and operation, so give about a hundredth of its entries */
+export async function createBenchShop(database: BenchDatabase, jobs: number): Promise<BenchShop> {
+  Object.assign(process.env, database);
+  const shop = await createTestShop();
+  await addRegister(shop, jobs);
+  return {
+    ...shop,
+    owner: shop.context('owner', { now: () => NOW }),
+    addHistory: (history) => addHistory(shop, history),
+    tidy: async () => {
+      await sql`vacuum analyze`.execute(shop.ownerDb);
+    },
+  };
+}
+
+/** Every third operation has a default machine; every tenth job is not billable; each rate has changed twice. */
+async function addRegister({ inShop, shop: { shopId } }: TestShop, jobs: number): Promise<void> {
+  await inShop(async (trx) => {
+    await sql`insert into employee (shop_id, number, name)
+      select ${shopId}::uuid, n::text, 'Worker ' || n from generate_series(1, ${EMPLOYEES}::integer) n`.execute(
+      trx,
+    );
+    await sql`insert into machine (shop_id, code, name, kind, in_service_on)
+      select ${shopId}::uuid, 'M' || n, 'Machine ' || n, 'Press brake', ${FIRST_DAY}::date + n * 20
+      from generate_series(1, ${MACHINES}::integer) n`.execute(trx);
+    await sql`insert into operation (shop_id, code, name, default_machine_id)
+      select ${shopId}::uuid, 'OP' || n, 'Operation ' || n, (select machine_id from machine where n % 3 = 0 and code = 'M' || n / 3)
+      from generate_series(1, ${OPERATIONS}::integer) n`.execute(trx);
+    await sql`insert into job (shop_id, number, title, is_billable, status)
+      select ${shopId}::uuid, 'J-' || n, 'Job ' || n, n % 10 <> 0, 'open'
+      from generate_series(1, ${jobs}::integer) n`.execute(trx);
+    await addRates(trx, shopId);
+  });
+}
+
+const CHANGES = sql`generate_series(0, 2) step`;
+const validFrom = sql`${FIRST_DAY}::date - 30 + step * 400`;
+
+async function addRates(
+  trx: Parameters<Parameters<TestShop['inShop']>[0]>[0],
+  shopId: string,
+): Promise<void> {
+  await sql`insert into pay_rate (shop_id, employee_id, valid_from, wage_per_hour, burden_percent)
+    select ${shopId}::uuid, employee_id, ${validFrom}, 21.35 + number::integer * 0.4 + step, 28.5
+    from employee, ${CHANGES}`.execute(trx);
+  await sql`insert into overhead_rate (shop_id, valid_from, rate_per_labour_hour)
+    select ${shopId}::uuid, ${validFrom}, 17.25 + step from ${CHANGES}`.execute(trx);
+  await sql`insert into machine_rate (shop_id, machine_id, valid_from, machine_hour_rate, charge_out_rate, running_cost_per_hour)
+    select ${shopId}::uuid, machine_id, ${validFrom}, 31.75 + step, 95 + step, 6.4 + step
+    from machine, ${CHANGES}`.execute(trx);
+}
+
+/** Most rows name no machine, as people fill timesheets in; some then get their operation's. */
+async function addHistory(
+  { inShop, shop: { shopId } }: TestShop,
+  { entries, entriesPerDay }: History,
+): Promise<void> {
+  await inShop((trx) =>
+    sql`
+      with ids as (
+        select (select array_agg(employee_id order by number) from employee) as employees,
+          (select array_agg(job_id order by number) from job) as jobs,
+          (select array_agg(operation_id order by code) from operation) as operations,
+          (select array_agg(machine_id order by code) from machine) as machines
+      )
+      insert into time_entry (shop_id, worked_on, employee_id, job_id, operation_id, machine_id, hours, good_pieces,
+        source_row, source_cell)
+      select ${shopId}::uuid, ${FIRST_DAY}::date + n / ${entriesPerDay}::integer,
+        employees[1 + n % ${EMPLOYEES}::integer],
+        jobs[1 + (n::bigint * 7919 % array_length(jobs, 1))::integer],
+        operations[1 + n * 5 % ${OPERATIONS}::integer],
+        case when n % 4 = 0 then machines[1 + n % ${MACHINES}::integer] end,
+        0.25 + n % 29 * 0.25, n % 50, n % 10000, 'F' || n % 10000
+      from ids, generate_series(0, ${entries}::integer - 1) n`.execute(trx),
+  );
+}
