@@ -1,17 +1,33 @@
 import {
   AppError,
   type TimesheetCheck,
+  type TimesheetField,
   type TimesheetImported,
   type TimesheetMapping,
 } from '@brakeven/contract';
-import { type ShopContext, type UploadedFile, type UploadTools } from '@brakeven/use-cases';
+import {
+  type MappingChanges,
+  type ShopContext,
+  type UploadedFile,
+  type UploadTools,
+} from '@brakeven/use-cases';
 import { type Cli, EXIT, type ExitCode } from '../cli';
 import { withShop } from '../databases';
 import { openReader } from '../open-reader';
 import { printPairs, printTable } from '../print-table';
 import { readWorkbookFile } from '../read-file';
 import { showProgress } from '../show-progress';
-import { type TakeOptions } from './timesheets';
+
+/** Options of `timesheets check` and `timesheets import`. */
+export interface TakeOptions {
+  shop: string;
+  goodRows?: true;
+  dateFormat?: MappingChanges['dateFormat'];
+  decimalMark?: MappingChanges['decimalMark'];
+  sheet?: string;
+  headerRow?: number;
+  column?: Partial<Record<TimesheetField, string>>;
+}
 
 export type TimesheetAction = 'check' | 'import';
 type Taken = TimesheetCheck | TimesheetImported;

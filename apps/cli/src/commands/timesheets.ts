@@ -1,22 +1,10 @@
-import { DATE_FORMATS, idSchema, TIMESHEET_FIELDS, type TimesheetField } from '@brakeven/contract';
-import { type MappingChanges } from '@brakeven/use-cases';
+import { DATE_FORMATS, idSchema, TIMESHEET_FIELDS } from '@brakeven/contract';
 import { type Command, InvalidArgumentError, Option } from 'commander';
 import { type Cli } from '../cli';
 import { withShop } from '../databases';
 import { readBy } from '../option-parsers';
 import { printTable } from '../print-table';
-import { takeTimesheet, type TimesheetAction } from './take-timesheet';
-
-/** Options of `timesheets check` and `timesheets import`. */
-export interface TakeOptions {
-  shop: string;
-  goodRows?: true;
-  dateFormat?: MappingChanges['dateFormat'];
-  decimalMark?: MappingChanges['decimalMark'];
-  sheet?: string;
-  headerRow?: number;
-  column?: Partial<Record<TimesheetField, string>>;
-}
+import { type TakeOptions, takeTimesheet, type TimesheetAction } from './take-timesheet';
 
 /** `timesheets check`, `import`, `list`, `undo` */
 export function addTimesheets(program: Command, cli: Cli): void {

@@ -113,7 +113,12 @@ describe('the audit trail', () => {
       cursor = page.nextCursor ?? undefined;
     } while (cursor);
     // Two events within one millisecond may stand in either order.
-    expect(names.sort()).toEqual([0, 1, 2, 3, 4].map((n) => `Customer ${n}`).concat(shop.shop.name).sort());
+    expect(names.sort()).toEqual(
+      [0, 1, 2, 3, 4]
+        .map((n) => `Customer ${n}`)
+        .concat(shop.shop.name)
+        .sort(),
+    );
   });
 
   it('refuses a cursor that no page gave', async () => {
