@@ -1,13 +1,13 @@
-export { columnNumber } from './cell-address';
-export { createReader, type ReaderOptions, type SheetReader } from './create-reader';
-export { CSV_SHEET } from './read-csv';
-export { READ_LIMITS } from './read-limits';
-export { readSheets } from './read-sheets';
-export * from './setup-data';
-export * from './sheet-file';
-export * from './timesheet-row';
-export { WorkbookError, type WorkbookErrorCode } from './workbook-error';
-export { readTimesheetRows, readTimesheetRowsInTurns } from './read-timesheet-rows';
+export { columnNumber } from './lib/cell-address';
+export { createReader, type ReaderOptions, type SheetReader } from './lib/create-reader';
+export { CSV_SHEET } from './lib/read-csv';
+export { READ_LIMITS } from './lib/read-limits';
+export { readSheets } from './lib/read-sheets';
+export * from './lib/setup-data';
+export * from './lib/sheet-file';
+export * from './lib/timesheet-row';
+export { WorkbookError, type WorkbookErrorCode } from './lib/workbook-error';
+export { readTimesheetRows, readTimesheetRowsInTurns } from './lib/read-timesheet-rows';
 export {
   describeTimesheetHeader,
   findTimesheetHeader,
@@ -15,8 +15,8 @@ export {
   type HeaderCell,
   headerSignature,
   type TimesheetHeader,
-} from './timesheet-mapping';
-export { readSetupWorkbook } from './read-setup-workbook';
-export { EXPLAINING_SHEET } from './setup-columns';
-export { writeSetupTemplate, writeSetupWorkbook } from './write-setup-workbook';
-export { type TimesheetLine, type TimesheetWorkbook, writeTimesheetWorkbook } from './write-timesheet';
+} from './lib/timesheet-mapping';
+export { readSetupWorkbook } from './lib/read-setup-workbook';
+export { EXPLAINING_SHEET } from './lib/setup-columns';
+export { writeSetupTemplate, writeSetupWorkbook } from './lib/write-setup-workbook';
+export { type TimesheetLine, type TimesheetWorkbook, writeTimesheetWorkbook } from './lib/write-timesheet';

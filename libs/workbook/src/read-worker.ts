@@ -1,8 +1,8 @@
 import { parentPort, workerData } from 'node:worker_threads';
-import { readSheets } from './read-sheets';
-import { type FileBytes, type SheetFile } from './sheet-file';
-import { NEXT_ROWS, type WorkerMessage } from './worker-message';
-import { WorkbookError } from './workbook-error';
+import { readSheets } from './lib/read-sheets';
+import { type FileBytes, type SheetFile } from './lib/sheet-file';
+import { NEXT_ROWS, type WorkerMessage } from './lib/worker-message';
+import { WorkbookError } from './lib/workbook-error';
 
 const ROWS_PER_MESSAGE = 1_000;
 

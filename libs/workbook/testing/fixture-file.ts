@@ -1,7 +1,7 @@
 import { readFileSync } from 'node:fs';
 import { join } from 'node:path';
-import { readSheets } from '../src/read-sheets';
-import { type FileBytes, type RawCell, type SheetFile } from '../src/sheet-file';
+import { readSheets } from '../src/lib/read-sheets';
+import { type FileBytes, type RawCell, type SheetFile } from '../src/lib/sheet-file';
 
 const FOLDER = join(__dirname, '../../../tests/fixtures/workbooks');
 

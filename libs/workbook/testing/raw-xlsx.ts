@@ -1,4 +1,4 @@
-import { packStoredZip } from '../src/pack-stored-zip';
+import { packStoredZip } from '../src/lib/pack-stored-zip';
 
 const OFFICE = 'http://schemas.openxmlformats.org/officeDocument/2006/relationships';
 

@@ -1,4 +1,4 @@
-import { readFixture } from '../testing/fixture-file';
+import { readFixture } from '../../testing/fixture-file';
 import { readSetupWorkbook } from './read-setup-workbook';
 import { readSheets } from './read-sheets';
 import { type SetupData, type SetupFile } from './setup-data';

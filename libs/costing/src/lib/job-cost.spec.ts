@@ -1,5 +1,5 @@
 import { hoursText, moneyText } from '@brakeven/values';
-import { bookOf, entryOf } from '../testing/example-shop';
+import { bookOf, entryOf } from '../../testing/example-shop';
 import { computeLines, type CostedEntry } from './entry-lines';
 import { computeJobCost } from './job-cost';
 

@@ -1,4 +1,4 @@
-import { readFixture } from '../testing/fixture-file';
+import { readFixture } from '../../testing/fixture-file';
 import { findHeaderField } from './timesheet-header-words';
 import { describeTimesheetHeader, findTimesheetHeader, headerSignature } from './timesheet-mapping';
 import { readSheets } from './read-sheets';

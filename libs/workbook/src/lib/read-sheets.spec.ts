@@ -1,5 +1,5 @@
-import { getCell, loadFixture, readFixture } from '../testing/fixture-file';
-import { packRawXlsx } from '../testing/raw-xlsx';
+import { getCell, loadFixture, readFixture } from '../../testing/fixture-file';
+import { packRawXlsx } from '../../testing/raw-xlsx';
 import { readSheets } from './read-sheets';
 import { type ReadProgress } from './sheet-file';
 import { assertSheetSize } from './sheet-xml';

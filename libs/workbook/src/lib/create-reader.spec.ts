@@ -2,14 +2,14 @@ import { mkdirSync, rmSync } from 'node:fs';
 import { join } from 'node:path';
 import { pathToFileURL } from 'node:url';
 import { build } from 'esbuild';
-import { loadFixture } from '../testing/fixture-file';
-import { packRawXlsx } from '../testing/raw-xlsx';
+import { loadFixture } from '../../testing/fixture-file';
+import { packRawXlsx } from '../../testing/raw-xlsx';
 import { createReader } from './create-reader';
 import { readSheets } from './read-sheets';
 import { type ReadProgress } from './sheet-file';
 
 // Inside the workspace, so that the bundled worker finds the packages it needs.
-const folder = join(__dirname, '../../../dist/spec', `read-worker-${process.pid}`);
+const folder = join(__dirname, '../../../../dist/spec', `read-worker-${process.pid}`);
 const workerUrl = pathToFileURL(join(folder, 'read-worker.js'));
 
 jest.setTimeout(120_000);
@@ -17,7 +17,7 @@ jest.setTimeout(120_000);
 beforeAll(async () => {
   mkdirSync(folder, { recursive: true });
   await build({
-    entryPoints: [join(__dirname, 'read-worker.ts')],
+    entryPoints: [join(__dirname, '../read-worker.ts')],
     outdir: folder,
     bundle: true,
     platform: 'node',
@@ -32,7 +32,7 @@ beforeAll(async () => {
       'decimal.js',
       '@internationalized/date',
     ],
-    tsconfig: join(__dirname, '../../../tsconfig.base.json'),
+    tsconfig: join(__dirname, '../../../../tsconfig.base.json'),
   });
 });
 

@@ -10,7 +10,7 @@ import {
   toRate,
 } from '@brakeven/values';
 import fc from 'fast-check';
-import { bookOf } from '../testing/example-shop';
+import { bookOf } from '../../testing/example-shop';
 import {
   computeEntryLines,
   computeLines,

@@ -1,5 +1,5 @@
 import { hoursText, moneyText, rateText } from '@brakeven/values';
-import { bookOf, entryOf, payRateOf } from '../testing/example-shop';
+import { bookOf, entryOf, payRateOf } from '../../testing/example-shop';
 import { computeEntryLines, computeLines, type CostedEntry, isInService, type RateBook } from './entry-lines';
 
 function amountsOf(entry: CostedEntry, book: RateBook): Record<string, string> {

@@ -1,5 +1,5 @@
 import { type TimesheetMapping } from '@brakeven/contract';
-import { readFixture } from '../testing/fixture-file';
+import { readFixture } from '../../testing/fixture-file';
 import { readTimesheetRows } from './read-timesheet-rows';
 import { findTimesheetHeader } from './timesheet-mapping';
 import { type TimesheetRow, type TimesheetRows } from './timesheet-row';
