@@ -38,6 +38,19 @@ describe('toAuditLine', () => {
     ]);
   });
 
+  it('says that a password or a reference has changed without its value, and leaves out mere moments', () => {
+    const before = { password_changed_at: '2026-01-05T10:00:00Z', employee_id: 'e1', undone_at: null };
+    const after = {
+      password_changed_at: '2026-01-06T10:00:00Z',
+      employee_id: 'e2',
+      undone_at: '2026-01-06T10:00:00Z',
+    };
+    expect(toAuditLine(event({ before, after })).changes).toEqual([
+      { label: 'password', before: null, after: 'changed' },
+      { label: 'employee', before: null, after: 'another' },
+    ]);
+  });
+
   it('reads yes, no and lists instead of code', () => {
     const before = { is_active: true, problems: [1, 2] };
     expect(toAuditLine(event({ before, after: { is_active: false } })).changes).toEqual([

@@ -18,16 +18,18 @@ export interface AuditLine {
 
 /** Where the name of a thing is found, the plainest first. */
 const NAME_KEYS = ['name', 'title', 'file_name', 'spelling', 'description', 'email'] as const;
+/** Fingerprints and settings that only programs read. */
+const OMITTED: readonly string[] = ['file_sha256', 'header_signature', 'mapping'];
 const NUMBER_KEYS = ['number', 'code'] as const;
 
 /** Turns an event into what changed, value by value; what is only a key of the database is left out. */
 export function toAuditLine(event: AuditEvent): AuditLine {
   const before = event.before ?? {};
   const after = event.after ?? {};
-  const keys = [...new Set([...Object.keys(before), ...Object.keys(after)])].filter(isForPeople);
+  const keys = [...new Set([...Object.keys(before), ...Object.keys(after)])];
   const changes = keys
-    .map((key) => ({ label: toWords(key), before: toText(before[key]), after: toText(after[key]) }))
-    .filter(({ before: was, after: is }) => was !== is);
+    .filter((key) => toText(before[key]) !== toText(after[key]))
+    .flatMap((key) => toChange(key, before[key], after[key]) ?? []);
   return { event, subject: toWords(event.subjectKind), name: findName({ ...before, ...after }), changes };
 }
 
@@ -38,8 +40,13 @@ function findName(row: Record<string, unknown>): string | null {
   return words.length > 0 ? words.join(' ') : null;
 }
 
-function isForPeople(key: string): boolean {
-  return !key.endsWith('_id') && !key.endsWith('Id') && key !== 'file_sha256' && key !== 'header_signature';
+/** Keys of the database and moments say little by themselves: of those only that they changed, where it matters. */
+function toChange(key: string, before: unknown, after: unknown): AuditChange | null {
+  if (key === 'password_changed_at') return { label: 'password', before: null, after: 'changed' };
+  if (OMITTED.includes(key) || key.endsWith('_at')) return null;
+  if (!key.endsWith('_id')) return { label: toWords(key), before: toText(before), after: toText(after) };
+  const isAnother = toText(before) !== null && key !== 'shop_id';
+  return isAnother ? { label: toWords(key.slice(0, -3)), before: null, after: 'another' } : null;
 }
 
 /** 'wage_per_hour' and 'wagePerHour' are read 'wage per hour'. */
