@@ -12,7 +12,7 @@ import { NgTemplateOutlet } from '@angular/common';
 import { takeUntilDestroyed } from '@angular/core/rxjs-interop';
 import { NavigationEnd, Router, RouterLink, RouterLinkActive, RouterOutlet } from '@angular/router';
 import { SHOP_FORMAT } from '@brakeven/ui';
-import { filter, map, pairwise } from 'rxjs';
+import { filter, map, type Observable, pairwise, startWith } from 'rxjs';
 import { SessionStore } from '../session/session-store';
 import { WorkingsPanel } from '../workings/workings-panel';
 import { WorkingsStore } from '../workings/workings-store';
@@ -40,6 +40,7 @@ import { RollupChip } from './rollup-chip';
 })
 export class Shell {
   private readonly session = inject(SessionStore);
+  private readonly router = inject(Router);
   protected readonly workings = inject(WorkingsStore);
   private readonly drawer = viewChild.required<ElementRef<HTMLDialogElement>>('drawer');
   private readonly main = viewChild.required<ElementRef<HTMLElement>>('main');
@@ -55,14 +56,12 @@ export class Shell {
     const format = inject(SHOP_FORMAT);
     format.set(this.session.shopFormat());
     effect(() => format.set(this.session.shopFormat()));
-    const pageChanges = inject(Router).events.pipe(
-      filter((event) => event instanceof NavigationEnd),
-      map((event) => event.urlAfterRedirects.split(/[?#]/)[0]),
-      pairwise(),
-      filter(([before, after]) => before !== after),
-      takeUntilDestroyed(),
+    const destroyed = takeUntilDestroyed();
+    afterNextRender(() =>
+      this.pageChanges()
+        .pipe(destroyed)
+        .subscribe(() => this.leaveForPage()),
     );
-    afterNextRender(() => pageChanges.subscribe(() => this.leaveForPage()));
   }
 
   protected openDrawer(): void {
@@ -76,6 +75,18 @@ export class Shell {
   protected skipToPage(event: Event): void {
     event.preventDefault();
     this.main().nativeElement.focus();
+  }
+
+  /** Emits when another page opens; the same page with another question in its address is no other page. */
+  private pageChanges(): Observable<unknown> {
+    return this.router.events.pipe(
+      filter((event) => event instanceof NavigationEnd),
+      map((event) => event.urlAfterRedirects),
+      startWith(this.router.url),
+      map((url) => url.split(/[?#]/)[0]),
+      pairwise(),
+      filter(([before, after]) => before !== after),
+    );
   }
 
   /** Keyboard and screen reader go on at the new page, not in the rail. */
