@@ -42,13 +42,17 @@ export class ChartPaletteSource {
   }
 
   private read(): ChartPalette {
-    const probe = this.document.createElement('span');
-    this.document.body.append(probe);
-    const entries = Object.entries(TOKENS).map(([name, token]) => {
-      probe.style.color = `var(${token})`;
-      return [name, getComputedStyle(probe).color];
-    });
-    probe.remove();
+    const entries = Object.entries(TOKENS).map(([name, token]) => [name, this.resolve(token)]);
     return Object.fromEntries(entries) as ChartPalette;
+  }
+
+  /** Each by an element of its own: one that changes its colour still has the old one while it fades. */
+  private resolve(token: string): string {
+    const probe = this.document.createElement('span');
+    probe.style.color = `var(${token})`;
+    this.document.body.append(probe);
+    const { color } = getComputedStyle(probe);
+    probe.remove();
+    return color;
   }
 }
