@@ -25,5 +25,7 @@ module.exports = (rootDir, displayName) => ({
   transformIgnorePatterns: ['/node_modules/(?!(uuid)/)'],
   moduleNameMapper: aliases,
   modulePathIgnorePatterns: [join(workspace, 'dist')],
+  // A database and a busy machine may take their time; what hangs is still found.
+  testTimeout: 30_000,
   setupFiles: [join(workspace, 'tools/presets/jest.setup.cjs')],
 });
