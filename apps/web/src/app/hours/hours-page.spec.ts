@@ -1,4 +1,4 @@
-import { Component, input, output } from '@angular/core';
+import { ChangeDetectionStrategy, Component, input, output } from '@angular/core';
 import { TestBed } from '@angular/core/testing';
 import { provideRouter, Router } from '@angular/router';
 import { type Role, type TimeEntry } from '@brakeven/contract';
@@ -12,7 +12,11 @@ import { render } from '../testing/rendered';
 import { HoursPage } from './hours-page';
 
 /** The grid's place, without the grid: what it is asked to show. */
-@Component({ selector: 'app-grid', template: '<ng-content select="[empty]" />' })
+@Component({
+  selector: 'app-grid',
+  template: '<ng-content select="[empty]" />',
+  changeDetection: ChangeDetectionStrategy.OnPush,
+})
 class FakeGrid {
   readonly label = input<string>();
   readonly stateKey = input<string>();
