@@ -24,16 +24,27 @@ export interface EntrySelection {
   search?: string;
 }
 
+/** The table that a sort's names stand in, as far as the entry does not hold the value itself. */
+const EMPLOYEE = sql`join employee e on e.shop_id = t.shop_id and e.employee_id = t.employee_id`;
+const JOB = sql`join job j on j.shop_id = t.shop_id and j.job_id = t.job_id`;
+const OPERATION = sql`join operation o on o.shop_id = t.shop_id and o.operation_id = t.operation_id`;
+const MACHINE = sql`${OPERATION}
+    left join machine m on m.shop_id = t.shop_id and m.machine_id = coalesce(t.machine_id, o.default_machine_id)`;
+
+interface EntrySortKey extends SortKey {
+  joins: RawBuilder<unknown>;
+}
+
 const SORT_KEYS = {
-  workedOn: { expression: sql`t.worked_on`, type: 'date' },
-  employee: { expression: inReadingOrder(sql`e.name`), type: 'text' },
-  job: { expression: inReadingOrder(sql`j.number`), type: 'text' },
-  operation: { expression: inReadingOrder(sql`o.name`), type: 'text' },
-  machine: { expression: inReadingOrder(sql`m.name`), type: 'text', isNullable: true },
-  hours: { expression: sql`t.hours`, type: 'numeric' },
-  goodPieces: { expression: sql`t.good_pieces`, type: 'numeric', isNullable: true },
-  scrapPieces: { expression: sql`t.scrap_pieces`, type: 'numeric', isNullable: true },
-} as const satisfies Record<string, SortKey>;
+  workedOn: { expression: sql`t.worked_on`, type: 'date', joins: sql`` },
+  employee: { expression: inReadingOrder(sql`e.name`), type: 'text', joins: EMPLOYEE },
+  job: { expression: inReadingOrder(sql`j.number`), type: 'text', joins: JOB },
+  operation: { expression: inReadingOrder(sql`o.name`), type: 'text', joins: OPERATION },
+  machine: { expression: inReadingOrder(sql`m.name`), type: 'text', isNullable: true, joins: MACHINE },
+  hours: { expression: sql`t.hours`, type: 'numeric', joins: sql`` },
+  goodPieces: { expression: sql`t.good_pieces`, type: 'numeric', isNullable: true, joins: sql`` },
+  scrapPieces: { expression: sql`t.scrap_pieces`, type: 'numeric', isNullable: true, joins: sql`` },
+} as const satisfies Record<string, EntrySortKey>;
 
 export type EntrySort = keyof typeof SORT_KEYS;
 
@@ -76,27 +87,31 @@ export interface EntryRow extends SourceColumns {
   sortValue: string | null;
 }
 
-/** A page of live entries in the order of the sort, by keyset: as fast at any depth. */
+/**
+ * A page of live entries in the order of the sort, by keyset: as fast at any depth. The page is cut before it is
+ * joined to its names, so that only a page's rows are.
+ */
 export async function listEntryRows(
   trx: ShopTransaction,
   selection: EntrySelection,
   { sort, direction, after, limit }: EntryPaging,
 ): Promise<EntryRow[]> {
-  const key = SORT_KEYS[sort];
+  const key: EntrySortKey = SORT_KEYS[sort];
   const id = sql`t.entry_id`;
   const { rows } = await sql<EntryRow>`
+    with page as (
+      select t.*, ${key.expression} as sort_key
+      from time_entry t ${key.joins}
+      where ${isSelected(selection)} and ${isAfter(key, id, direction, after)}
+      order by ${orderByKey(key, id, direction)}
+      limit ${limit}
+    )
     select t.entry_id, t.worked_on, t.employee_id, e.name as employee, t.job_id, j.number as job_number,
       j.title as job_title, o.name as operation, m.name as machine, t.hours, t.good_pieces, t.scrap_pieces, t.note,
-      t.import_id, i.file_name, i.sheet, t.source_row, t.source_cell, (${key.expression})::text as sort_value
-    from time_entry t
-    join employee e on e.shop_id = t.shop_id and e.employee_id = t.employee_id
-    join job j on j.shop_id = t.shop_id and j.job_id = t.job_id
-    join operation o on o.shop_id = t.shop_id and o.operation_id = t.operation_id
-    left join machine m on m.shop_id = t.shop_id and m.machine_id = coalesce(t.machine_id, o.default_machine_id)
+      t.import_id, i.file_name, i.sheet, t.source_row, t.source_cell, t.sort_key::text as sort_value
+    from page t ${EMPLOYEE} ${JOB} ${MACHINE}
     left join timesheet_import i on i.shop_id = t.shop_id and i.import_id = t.import_id
-    where ${isSelected(selection)} and ${isAfter(key, id, direction, after)}
-    order by ${orderByKey(key, id, direction)}
-    limit ${limit}`.execute(trx);
+    order by ${orderByKey({ ...key, expression: sql`t.sort_key` }, id, direction)}`.execute(trx);
   return rows;
 }
 

@@ -15,12 +15,12 @@ export interface WrittenCosts {
 }
 
 /**
- * Keeps other rollups of the shop waiting, and shows to `getRollupState` that one is running. Sorting a whole
- * shop's lines in memory and not compiling the statements saves a third of a full run.
+ * Keeps other rollups of the shop waiting, and shows to `getRollupState` that one is running. A whole shop's
+ * entries are sorted in memory.
  */
 export async function beginRollup(trx: ShopTransaction, shopId: string): Promise<void> {
   await sql`select pg_advisory_xact_lock(hashtextextended('rollup:' || ${shopId}, 0)),
-    set_config('work_mem', '64MB', true), set_config('jit', 'off', true)`.execute(trx);
+    set_config('work_mem', '64MB', true)`.execute(trx);
 }
 
 /**

@@ -88,8 +88,7 @@ export async function listWorkingsLineRows(
       m.name as machine, l.quantity as hours, l.rate, l.rate_factor, ${RATE_VALID_FROM} as rate_valid_from,
       ${signedAmount(selection)} as amount, t.import_id, i.file_name, i.sheet, t.source_row, t.source_cell
     from (
-      select * from ${selectedLines(selection)} l
-      where ${isAfterLine(after)}
+      select * from ${selectedLines(selection, { after, limit })} l
       order by l.worked_on desc, l.source_id desc, l.category desc
       limit ${limit}
     ) l
@@ -104,23 +103,35 @@ export async function listWorkingsLineRows(
   return rows;
 }
 
-function isAfterLine(after: LinePosition | null): RawBuilder<boolean> {
-  if (after === null) return sql`true`;
-  return sql`(l.worked_on, l.source_id, l.category) <
-    (${after.workedOn}::date, ${after.sourceId}::uuid, ${after.category})`;
+interface LineCut {
+  after: LinePosition | null;
+  limit: number;
 }
 
-/** Cost lines, and for hours the gaps as well: an entry without a rate was worked all the same. */
-function selectedLines(selection: LineSelection): RawBuilder<unknown> {
+/**
+ * Cost lines, and for hours the gaps as well: an entry without a rate was worked all the same. For a page, each of
+ * the two is cut by its own index before they are put together.
+ */
+function selectedLines(selection: LineSelection, cut?: LineCut): RawBuilder<unknown> {
   const lines = sql`
-    select shop_id, worked_on, source_id, category, job_id, operation_id, employee_id, machine_id, quantity,
+    (select shop_id, worked_on, source_id, category, job_id, operation_id, employee_id, machine_id, quantity,
       rate, rate_factor, rate_id, amount
-    from cost_line where ${isSelected(selection)}`;
-  if (selection.unit === 'money') return sql`(${lines})`;
+    from cost_line where ${isSelected(selection)} ${cutBy('source_id', cut)})`;
+  if (selection.unit === 'money') return lines;
   return sql`(${lines} union all
-    select shop_id, worked_on, entry_id, category, job_id, operation_id, employee_id, machine_id, hours,
+    (select shop_id, worked_on, entry_id, category, job_id, operation_id, employee_id, machine_id, hours,
       null, null, null, null
-    from rate_gap where ${isSelected(selection)})`;
+    from rate_gap where ${isSelected(selection)} ${cutBy('entry_id', cut)}))`;
+}
+
+function cutBy(idColumn: 'source_id' | 'entry_id', cut: LineCut | undefined): RawBuilder<unknown> {
+  if (cut === undefined) return sql``;
+  const { after, limit } = cut;
+  const id = sql.ref(idColumn);
+  const isAfter = after
+    ? sql`and (worked_on, ${id}, category) < (${after.workedOn}::date, ${after.sourceId}::uuid, ${after.category})`
+    : sql``;
+  return sql`${isAfter} order by worked_on desc, ${id} desc, category desc limit ${limit}`;
 }
 
 function isSelected(selection: LineSelection): RawBuilder<boolean> {
