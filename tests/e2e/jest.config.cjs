@@ -6,6 +6,7 @@ module.exports = {
   testMatch: ['<rootDir>/**/*.e2e.ts'],
   globalSetup: '<rootDir>/serve-built-app.cjs',
   globalTeardown: '<rootDir>/stop-built-app.cjs',
-  testTimeout: 60_000,
+  // A journey takes seconds; where many suites share the machine, minutes.
+  testTimeout: 240_000,
   maxWorkers: 1,
 };
