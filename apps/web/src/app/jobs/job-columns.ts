@@ -86,6 +86,7 @@ const QUOTED: GridColumn<Job> = {
   header: 'Quoted',
   kind: 'money',
   value: (job) => job.quotedPrice,
+  figure: (job) => ({ figure: 'job.quotedPrice', jobId: job.jobId }),
   isSortable: true,
   width: 106,
 };
