@@ -105,7 +105,10 @@ export class CheckTable {
 
   protected choose(problem: TimesheetProblem, known: { targetId: string; label: string }): void {
     const alias = problem.alias;
-    if (alias) this.nameChosen.emit({ kind: alias.kind, spelling: alias.spelling, ...known });
+    if (!alias) return;
+    this.nameChosen.emit({ kind: alias.kind, spelling: alias.spelling, ...known });
+    // The button goes away with the next check; the keyboard goes on from the table.
+    this.host.nativeElement.querySelector<HTMLElement>('.frame')?.focus({ preventScroll: true });
   }
 
   protected idsOf(row: TableRow, field: TimesheetField): string | null {

@@ -37,10 +37,12 @@ describe('ProblemPanel', () => {
     ]);
   });
 
-  it('lists what is settled, and takes it back', async () => {
+  it('lists what is settled, takes it back, and keeps the keyboard in the panel', async () => {
     const page = await render(ProblemPanel, { problems: [], chosen: [settled] }, listen);
     expect(page.text).toContain('“Bo” is 105 Bo Tran');
+    page.find('Take back: Bo is 105 Bo Tran').focus();
     await page.press('Take back: Bo is 105 Bo Tran');
+    expect(document.activeElement).toBe(page.element);
     expect(heard).toEqual([settled]);
   });
 

@@ -1,4 +1,12 @@
-import { ChangeDetectionStrategy, Component, computed, input, output } from '@angular/core';
+import {
+  ChangeDetectionStrategy,
+  Component,
+  computed,
+  ElementRef,
+  inject,
+  input,
+  output,
+} from '@angular/core';
 import { type TimesheetProblem } from '@brakeven/contract';
 import { type ChosenName, groupUnknownNames, type UnknownName } from './group-unknown-names';
 import { type KnownName } from './known-names';
@@ -47,7 +55,7 @@ const LISTED_MAX = 40;
                 class="button quiet"
                 [disabled]="isBusy()"
                 [attr.aria-label]="'Take back: ' + name.spelling + ' is ' + name.label"
-                (click)="takenBack.emit(name)"
+                (click)="takeBack(name)"
               >
                 Take back
               </button>
@@ -87,6 +95,7 @@ const LISTED_MAX = 40;
     }
   `,
   styleUrl: './problem-panel.scss',
+  host: { tabindex: '-1' },
   changeDetection: ChangeDetectionStrategy.OnPush,
 })
 export class ProblemPanel {
@@ -97,6 +106,7 @@ export class ProblemPanel {
   readonly takenBack = output<ChosenName>();
   readonly shown = output<TimesheetProblem>();
 
+  private readonly host = inject<ElementRef<HTMLElement>>(ElementRef);
   protected readonly kindWords = KIND_WORDS;
   protected readonly names = computed(() => groupUnknownNames(this.problems()));
   protected readonly others = computed(() => this.problems().filter(({ alias }) => alias === null));
@@ -108,5 +118,16 @@ export class ProblemPanel {
 
   protected choose(name: UnknownName, known: KnownName): void {
     this.nameChosen.emit({ kind: name.kind, spelling: name.spelling, ...known });
+    this.keepFocus();
+  }
+
+  protected takeBack(name: ChosenName): void {
+    this.takenBack.emit(name);
+    this.keepFocus();
+  }
+
+  /** What was pressed goes away with the next check; the keyboard goes on from here. */
+  private keepFocus(): void {
+    this.host.nativeElement.focus({ preventScroll: true });
   }
 }

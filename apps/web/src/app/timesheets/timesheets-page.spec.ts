@@ -75,11 +75,13 @@ describe('TimesheetsPage', () => {
 
   it('adds a good timesheet at one press, then leads to its hours and tells the bar', async () => {
     const page = await drop(sampleCheck());
+    expect(page.textsOf('[role=status]')).toContain('3 rows read, 3 ready, 0 already there, 0 refused');
     const answer = { ...sampleCheck(), importId: 'i1', entriesAdded: 3, hoursAdded: '22.5000' };
     api.commit.mockReturnValue(of({ answer }));
     await page.press('Add 3 entries (22.50 h)');
     expect(api.commit.mock.calls[0]?.[1]).toMatchObject({ goodRows: false });
     expect(page.text).toContain('3 entries with 22.50 hours are in the books');
+    expect(document.activeElement?.id).toBe('done-heading');
     expect(page.find('See these hours').getAttribute('href')).toBe('/hours?importId=i1&period=all');
     expect(rollup.refresh).toHaveBeenCalled();
     expect(api.list).toHaveBeenCalledTimes(2);

@@ -1,4 +1,13 @@
-import { ChangeDetectionStrategy, Component, computed, inject, signal, viewChild } from '@angular/core';
+import {
+  ChangeDetectionStrategy,
+  Component,
+  computed,
+  effect,
+  type ElementRef,
+  inject,
+  signal,
+  viewChild,
+} from '@angular/core';
 import { MatDialog } from '@angular/material/dialog';
 import { MatProgressBarModule } from '@angular/material/progress-bar';
 import { LIMITS, type TimesheetImported } from '@brakeven/contract';
@@ -51,6 +60,7 @@ export class TimesheetsPage {
   private readonly rollup = inject(RollupStore);
   private readonly dialog = inject(MatDialog);
   private readonly table = viewChild(CheckTable);
+  private readonly doneHeading = viewChild<ElementRef<HTMLElement>>('doneHeading');
 
   protected readonly rule: FileRule = { endings: ['.xlsx', '.csv'], bytesMax: LIMITS.uploadBytesMax };
   protected readonly rowsMax = LIMITS.timesheetRowsMax.toLocaleString('en-US');
@@ -83,6 +93,18 @@ export class TimesheetsPage {
       percent,
     };
   });
+
+  /** Read out when a check has come back. */
+  protected readonly announcement = computed(() => {
+    const check = this.store.check();
+    if (!check || this.store.isBusy() || this.store.imported()) return '';
+    const found = [count(check.rowsRead, 'row') + ' read', `${check.entriesReady} ready`];
+    return [...found, `${check.alreadyThere} already there`, `${check.refused} refused`].join(', ');
+  });
+
+  constructor() {
+    effect(() => this.doneHeading()?.nativeElement.focus());
+  }
 
   protected open(file: File): void {
     this.wantsMapping.set(false);
