@@ -8,6 +8,9 @@ import { Shell } from './pages/shell';
 const MONEY =
   /"(?!entriesWithoutRate)(?:wage\w*|burden\w*|labour|overhead|total|amount|net|outlay|remaining|earned\w*|quotedPrice|\w+Rate|rate|runningCost\w*|costItems|rates)":(?!null|\[\])/;
 
+// What is refused is so before anything is looked up.
+const PAYBACK_OF_SOME_MACHINE = '/api/machines/01900000-0000-7000-8000-000000000000/payback';
+
 describe('Each role sees its own', () => {
   let visitors: Visitors;
   beforeAll(async () => {
@@ -36,7 +39,13 @@ describe('Each role sees its own', () => {
     for (const path of ['/payback', '/jobs', '/machines', '/people', '/timesheets', '/shop']) {
       await expectRefusedPage(shell, path);
     }
-    for (const path of ['/api/jobs', '/api/payback', '/api/machines', '/api/employees', '/api/users']) {
+    for (const path of [
+      '/api/jobs',
+      PAYBACK_OF_SOME_MACHINE,
+      '/api/machines',
+      '/api/employees',
+      '/api/users',
+    ]) {
       expect({ path, status: (await visitor.context.request.get(path)).status() }).toEqual({
         path,
         status: 403,
@@ -60,7 +69,8 @@ describe('Each role sees its own', () => {
     await shell.waitUntilSettled();
     await shell.goTo('/machines');
     await visitor.page.locator('main h2 a').first().click();
-    await visitor.page.getByText('Rated force').waitFor();
+    await visitor.page.waitForURL(/\/machines\/./);
+    await shell.waitUntilSettled();
     expect(await visitor.page.locator('main').innerText()).not.toMatch(/\$/);
 
     await expectRefusedPage(shell, '/payback');
