@@ -74,11 +74,11 @@ async function buildAll(wanted) {
 }
 
 /**
- * @param {string} output of Nx: a part for each program, and the failed tasks' names at the end
- * @returns {string} the parts of the programs that failed; all of it when none can be told apart
+ * @param {string} output of Nx: a part for each project, and the failed tasks' names at the end
+ * @returns {string} the parts of the projects that failed; all of it when none can be told apart
  */
 export function failingParts(output) {
-  const failed = [...output.matchAll(/^- (\S+:build)/gm)].map(([, task]) => task);
+  const failed = [...output.matchAll(/^- (\S+:\S+)/gm)].map(([, task]) => task);
   const parts = output
     .split(/^(?=> nx run )/m)
     .filter((part) => failed.some((task) => part.startsWith(`> nx run ${task}`)));

@@ -1,7 +1,7 @@
 import { existsSync, readdirSync } from 'node:fs';
 import { availableParallelism } from 'node:os';
 import { join } from 'node:path';
-import { nxEnvironment, nxProgram } from './build.mjs';
+import { failingParts, nxEnvironment, nxProgram } from './build.mjs';
 import { run } from './processes.mjs';
 import { root } from './workspace.mjs';
 
@@ -19,9 +19,11 @@ function checkFormat() {
   return runModule('prettier/bin/prettier.cjs', ['--check', '--log-level=warn', '.']);
 }
 
-function checkLint() {
+async function checkLint() {
   const args = ['run-many', '-t', 'lint', '--parallel=2', '--outputStyle=static'];
-  return run(process.execPath, [nxProgram, ...args], { env: nxEnvironment() });
+  const env = { ...nxEnvironment(), FORCE_COLOR: '0' };
+  const { code, output } = await run(process.execPath, [nxProgram, ...args], { env });
+  return { code, output: failingParts(output) };
 }
 
 /** TypeScript for each Node project and the scripts, Angular's own compiler for the web projects. */
