@@ -34,7 +34,7 @@ const workings = (part: Partial<Workings>): Workings => ({
 
 describe('checkWorkings', () => {
   it('adds rows up exactly where floating point would not', () => {
-    const check = checkWorkings(
+    const [check] = checkWorkings(
       workings({ lineCount: 3, lines: [line('1', '0.10'), line('2', '0.10'), line('3', '0.10')] }),
       'USD',
     );
@@ -42,13 +42,13 @@ describe('checkWorkings', () => {
   });
 
   it('says by how much they do not agree, were it a cent', () => {
-    const check = checkWorkings(workings({ lineCount: 1, lines: [line('1', '0.29')] }), 'USD');
+    const [check] = checkWorkings(workings({ lineCount: 1, lines: [line('1', '0.29')] }), 'USD');
     expect(check?.state).toBe('disagrees');
     expect(check?.text).toMatch(/^The one row makes \$0\.29, not \$0\.30\./);
   });
 
   it('does not judge while rows are missing', () => {
-    const check = checkWorkings(workings({ lineCount: 240, lines: [line('1', '0.30')] }), 'USD');
+    const [check] = checkWorkings(workings({ lineCount: 240, lines: [line('1', '0.30')] }), 'USD');
     expect(check).toEqual({ state: 'open', text: '1 of 240 rows shown; they make $0.30 so far.' });
   });
 
@@ -57,11 +57,17 @@ describe('checkWorkings', () => {
       { label: 'Earned', amount: '10.00', figure: null },
       { label: 'Running cost', amount: '-9.70', figure: null },
     ];
-    expect(checkWorkings(workings({ parts }), 'USD')?.state).toBe('agrees');
+    expect(checkWorkings(workings({ parts }), 'USD').map(({ state }) => state)).toEqual(['agrees']);
+  });
+
+  it('holds parts and rows against the figure each by itself', () => {
+    const parts = [{ label: 'Labour', amount: '0.30', figure: null }];
+    const checks = checkWorkings(workings({ parts, lineCount: 1, lines: [line('1', '0.31')] }), 'USD');
+    expect(checks.map(({ state }) => state)).toEqual(['agrees', 'disagrees']);
   });
 
   it('has nothing to say about a figure without rows', () => {
-    expect(checkWorkings(workings({ amount: '0.00' }), 'USD')).toBeNull();
+    expect(checkWorkings(workings({ amount: '0.00' }), 'USD')).toEqual([]);
   });
 });
 

@@ -9,24 +9,21 @@ export interface WorkingsCheck {
 }
 
 /**
- * Adds up what is shown and holds it against the figure, to the last decimal: the parts where there are parts,
- * otherwise the lines once all of them are loaded. Null if the figure has neither.
+ * Adds up what is shown and holds it against the figure, to the last decimal: the parts, and the rows once all of them
+ * are loaded. Empty if the figure has neither.
  */
-export function checkWorkings(workings: Workings, currency: string): WorkingsCheck | null {
+export function checkWorkings(workings: Workings, currency: string): WorkingsCheck[] {
   const { parts, lines, lineCount, unit } = workings;
-  if (parts.length > 0) {
-    return compare(sumOf(parts), workings, `The ${parts.length} parts`, currency);
-  }
-  if (lineCount === 0) return null;
+  const checks: WorkingsCheck[] = [];
+  if (parts.length > 0) checks.push(compare(sumOf(parts), workings, `The ${parts.length} parts`, currency));
+  if (lineCount === 0) return checks;
   if (lines.length < lineCount) {
     const shown = toFigureText(sumOf(lines).toFixed(), unit, currency);
-    return {
-      state: 'open',
-      text: `${countText(lines.length)} of ${countText(lineCount)} rows shown; they make ${shown} so far.`,
-    };
+    const text = `${countText(lines.length)} of ${countText(lineCount)} rows shown; they make ${shown} so far.`;
+    return [...checks, { state: 'open', text }];
   }
   const subject = lineCount === 1 ? 'The one row' : `The ${countText(lineCount)} rows`;
-  return compare(sumOf(lines), workings, subject, currency);
+  return [...checks, compare(sumOf(lines), workings, subject, currency)];
 }
 
 function compare(

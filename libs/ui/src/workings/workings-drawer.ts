@@ -46,13 +46,17 @@ export class WorkingsDrawer {
   readonly retried = output();
   readonly sourceFollowed = output<SourceCell>();
 
+  protected readonly signs = { agrees: '✓', disagrees: '!', open: '…' } as const;
+  /** A longer list of rates would push the rows out of sight. */
+  protected readonly inputsShown = 4;
+
   protected readonly lines = computed(() => {
     const workings = this.workings();
     return workings?.lines.map((line) => toLineView(line, workings.unit, this.format().currency)) ?? [];
   });
-  protected readonly check = computed(() => {
+  protected readonly checks = computed(() => {
     const workings = this.workings();
-    return workings && checkWorkings(workings, this.format().currency);
+    return workings ? checkWorkings(workings, this.format().currency) : [];
   });
 
   constructor() {

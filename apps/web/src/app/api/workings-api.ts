@@ -1,6 +1,6 @@
 import { HttpClient } from '@angular/common/http';
 import { inject, Injectable } from '@angular/core';
-import { type FigureRef, type Workings } from '@brakeven/contract';
+import { type FigureRef, LIMITS, type Workings } from '@brakeven/contract';
 import { type Observable } from 'rxjs';
 import { toQueryParams } from './query-params';
 
@@ -11,10 +11,10 @@ const HOURS_OF_JOBS = ['job.hours', 'job.machineHours'];
 export class WorkingsApi {
   private readonly http = inject(HttpClient);
 
-  /** One page of a figure's workings; hours of jobs have an address of their own, open to those without money. */
+  /** One page of a figure's workings, a short one first, long ones afterwards; hours of jobs have an address of their own, open to those without money. */
   getWorkings(ref: FigureRef, cursor?: string): Observable<Workings> {
     return this.http.get<Workings>(`/api/workings/${findSource(ref)}`, {
-      params: toQueryParams({ ...ref, cursor }),
+      params: toQueryParams({ ...ref, cursor, limit: cursor && LIMITS.pageSizeMax }),
     });
   }
 }

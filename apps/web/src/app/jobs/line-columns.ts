@@ -39,7 +39,7 @@ const SOURCE: GridColumn<JobLine> = {
   id: 'source',
   header: 'From',
   value: ({ source }) =>
-    source ? `${source.fileName} · ${source.sheet} · ${source.cell}` : 'entered by hand',
+    source ? `${source.cell} · ${source.sheet} · ${source.fileName}` : 'entered by hand',
   href: ({ source }) => source && toSourceUrl(source),
   minWidth: 200,
   flex: 2,

@@ -82,7 +82,7 @@ describe('WorkingsApi', () => {
     const urls = http.match(() => true).map(({ request }) => request.urlWithParams);
     expect(urls).toEqual([
       '/api/workings/job-hours?figure=job.hours&jobId=j',
-      '/api/workings/jobs?figure=job.total&cursor=c1',
+      '/api/workings/jobs?figure=job.total&cursor=c1&limit=500',
       '/api/workings/payback?figure=payback.earned&machineId=m&from=2026-11-01',
     ]);
   });
