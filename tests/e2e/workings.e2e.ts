@@ -49,7 +49,7 @@ describe('The owner follows a figure to its cell', () => {
   });
 
   it('opens what labour has cost a job, from the grid, down to a cell of the workbook', async () => {
-    await shell.goTo('/jobs');
+    await shell.goTo('/jobs?status=finished');
     const grid = new DataGrid(owner.page, 'Jobs');
     const labour = grid.cell(0, 'labour').locator('button.figure');
     const cents = toCents((await labour.textContent()) ?? '');

@@ -22,8 +22,8 @@ const pictures = {
     await page.locator('app-workings-drawer .part').first().click();
     await page.locator('app-workings-drawer ol > li').first().waitFor();
   },
-  jobs: (page) => goTo(page, '/jobs'),
-  hours: (page) => goTo(page, '/hours?period=all'),
+  jobs: (page) => openGrid(page, '/jobs'),
+  hours: (page) => openGrid(page, '/hours?period=all'),
   machines: async (page) => {
     await goTo(page, '/machines');
     await page.getByRole('link', { name: 'Press 2' }).click();
@@ -89,6 +89,15 @@ async function goTo(page, path) {
   await page.goto(path);
   await page.locator('app-shell main h1').first().waitFor();
   await waitUntilSettled(page);
+}
+
+/**
+ * @param {Page} page
+ * @param {string} path
+ */
+async function openGrid(page, path) {
+  await goTo(page, path);
+  await page.locator('app-grid .ag-row-pinned').filter({ hasText: /\d/ }).waitFor();
 }
 
 /** @param {Page} page */
