@@ -10,9 +10,9 @@ import { type PageServerOptions } from './page-server';
 
 const ENTRIES = 20_000;
 const PAGE = '/api/entries?limit=100';
-const REQUESTS = 400;
+const REQUESTS = 200;
 const AT_ONCE = 8;
-const ROUNDS = 7;
+const ROUNDS = 5;
 const EMAIL = 'owner@ternhollow.example';
 const PASSWORD = 'correct horse battery';
 
