@@ -5,12 +5,12 @@ import { toStatusTone } from './job-status';
 type FigureField = 'hours' | 'machineHours' | 'labour' | 'machine' | 'overhead' | 'total';
 
 const WIDTHS: Readonly<Record<FigureField, number>> = {
-  hours: 92,
-  machineHours: 92,
-  labour: 106,
-  machine: 106,
-  overhead: 106,
-  total: 152,
+  hours: 86,
+  machineHours: 90,
+  labour: 104,
+  machine: 104,
+  overhead: 104,
+  total: 142,
 };
 
 /** Which jobs the totals are over. */
@@ -77,7 +77,7 @@ const WORDS: readonly GridColumn<Job>[] = [
     value: (job) => job.status,
     tone: (job) => toStatusTone(job.status),
     isSortable: true,
-    width: 94,
+    width: 90,
   },
 ];
 
