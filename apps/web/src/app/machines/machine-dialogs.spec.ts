@@ -2,7 +2,7 @@ import { type Type } from '@angular/core';
 import { TestBed } from '@angular/core/testing';
 import { MatDialog } from '@angular/material/dialog';
 import { type Machine, type MachineRate } from '@brakeven/contract';
-import { of } from 'rxjs';
+import { firstValueFrom, of } from 'rxjs';
 import { MachinesApi } from '../api/machines-api';
 import { CostItemDialog } from './cost-item-dialog';
 import { MachineDialog } from './machine-dialog';
@@ -42,7 +42,11 @@ describe('dialogs of a machine', () => {
 
   /** Opens a dialog, types into its fields by label, and saves. */
   const fill = async (type: Type<unknown>, data: unknown, texts: Record<string, string>) => {
-    const dialog = TestBed.inject(MatDialog).open(type, { data, enterAnimationDuration: 0 });
+    const dialog = TestBed.inject(MatDialog).open(type, {
+      data,
+      enterAnimationDuration: 0,
+      exitAnimationDuration: 0,
+    });
     TestBed.tick();
     await new Promise((resolve) => setTimeout(resolve, 10));
     const fields = [...document.querySelectorAll('mat-form-field')];
@@ -56,7 +60,10 @@ describe('dialogs of a machine', () => {
     document.querySelector<HTMLButtonElement>('button[type=submit]')?.click();
     TestBed.tick();
     const words = document.querySelector('mat-dialog-container')?.textContent ?? '';
+    const closed = firstValueFrom(dialog.afterClosed());
     dialog.close();
+    TestBed.tick();
+    await closed;
     return words;
   };
 
