@@ -1,6 +1,7 @@
 import axe, { type AxeResults } from 'axe-core';
 import { type Role } from '@brakeven/contract';
 import { type Page } from 'playwright-core';
+import { eventually } from './browser/eventually';
 import { Visitors } from './browser/visitors';
 import { Shell } from './pages/shell';
 import { SignInPage } from './pages/sign-in-page';
@@ -41,11 +42,14 @@ describe.each(['light', 'dark'] as const)('In %s colours', (theme) => {
         expect({ path, found: await listBarriers(page) }).toEqual({ path, found: [] });
         for (const width of WIDTHS_PX) {
           await page.setViewportSize({ width, height: 900 });
-          expect({ path, width, overflowPx: Math.max(0, await shell.measureOverflowPx()) }).toEqual({
-            path,
-            width,
-            overflowPx: 0,
-          });
+          // Charts take their new width a moment after the page.
+          await eventually(async () =>
+            expect({ path, width, overflowPx: Math.max(0, await shell.measureOverflowPx()) }).toEqual({
+              path,
+              width,
+              overflowPx: 0,
+            }),
+          );
         }
       }
       expect(complaints).toEqual([]);
@@ -92,7 +96,7 @@ async function listPaths(role: Role, page: Page): Promise<string[]> {
 
 /** What axe-core finds serious or critical, shortly. */
 async function listBarriers(page: Page): Promise<string[]> {
-  // By the debugger's way in, which the content security policy does not stand against.
+  // By the browser's own way in, which the content security policy does not stand against.
   await page.evaluate(axe.source);
   const { violations } = await page.evaluate<AxeResults>(
     'axe.run(document, { resultTypes: ["violations"] })',

@@ -35,7 +35,7 @@ describe('Without a mouse', () => {
 
     await page.keyboard.press('Enter');
     const drawer = new WorkingsDrawer(page);
-    await drawer.dialog.locator('.check').waitFor();
+    await drawer.verdict.waitFor();
     for (let press = 0; press < TABS_MAX; press += 1) {
       await page.keyboard.press('Tab');
       expect(await page.evaluate(isFocusBehindDialog)).toBe(false);

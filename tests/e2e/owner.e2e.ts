@@ -36,7 +36,6 @@ describe('The owner sets the shop up', () => {
 
     const { page, complaints } = await visitors.visit();
     await new SignInPage(page).open();
-    complaints.length = 0;
     await new SignInPage(page).signIn(email, password);
     await page.waitForURL(/\/account/);
     const own = new Shell(page);

@@ -39,7 +39,7 @@ describe('The owner follows a figure to its cell', () => {
       await drawer.dialog
         .getByRole('button', { name: 'Back to the figure before' })
         .waitFor({ state: 'detached' });
-      await drawer.dialog.locator('.check').waitFor();
+      await drawer.verdict.waitFor();
     }
     await openDownToRows(drawer, parts[0]?.label ?? '');
     const rows = await drawer.listRows();

@@ -1,6 +1,6 @@
 import { setTimeout as pause } from 'node:timers/promises';
 
-const WITHIN_MS = 60_000;
+const WITHIN_MS = 15_000;
 const BETWEEN_LOOKS_MS = 50;
 
 /** Holds an expectation against the page again and again until it is met; fails with its last failure. */

@@ -17,10 +17,13 @@ export interface WorkingsRow {
 export class WorkingsDrawer {
   readonly dialog: Locator;
   private readonly rows: Locator;
+  /** Whether the parts, else the rows, add up to the figure. */
+  readonly verdict: Locator;
 
   constructor(private readonly page: Page) {
     this.dialog = page.locator('app-workings-drawer dialog[open]');
     this.rows = this.dialog.locator('ol > li');
+    this.verdict = this.dialog.locator('.check').first();
   }
 
   /** Presses what opens workings and waits until those are shown. */
@@ -29,7 +32,7 @@ export class WorkingsDrawer {
     await figure.click();
     const { title } = (await (await answer).json()) as { title: string };
     await this.dialog.getByRole('heading', { name: title, exact: true }).waitFor();
-    await this.dialog.locator('.check').waitFor();
+    await this.verdict.waitFor();
   }
 
   async openPart(label: string): Promise<void> {
@@ -69,7 +72,7 @@ export class WorkingsDrawer {
   }
 
   async readVerdict(): Promise<string> {
-    return (await this.dialog.locator('.check').textContent()) ?? '';
+    return (await this.verdict.textContent()) ?? '';
   }
 
   /** Follows a row to the cell of the workbook that it came from. */

@@ -50,7 +50,10 @@ export class Shell {
     const user = this.session.user();
     return user && !user.mustChangePassword ? listNavigation(user.role) : [];
   });
-  protected readonly canSeeRollup = computed(() => this.session.can('rollup.view'));
+  /** Until a temporary password is changed the server answers nothing else. */
+  protected readonly canSeeRollup = computed(
+    () => this.session.can('rollup.view') && !this.session.user()?.mustChangePassword,
+  );
 
   constructor() {
     const format = inject(SHOP_FORMAT);
