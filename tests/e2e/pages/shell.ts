@@ -53,6 +53,7 @@ export class Shell {
 
   /** How many pixels of the page stick out to the right. */
   async measureOverflowPx(): Promise<number> {
-    return this.page.evaluate(() => document.documentElement.scrollWidth - window.innerWidth);
+    // A scroll width is rounded up to whole pixels, so one more is a fraction and scrolls nothing.
+    return this.page.evaluate(() => document.documentElement.scrollWidth - window.innerWidth - 1);
   }
 }
