@@ -1,25 +1,28 @@
-import { type Hours, sum } from '@brakeven/values';
-import { type CostCategory, type CostLine, type RateGap } from './entry-lines';
+import { type Decimal, type Hours, sum, toHours } from '@brakeven/values';
+import { type CostCategory } from './cost-categories';
 
-/** A line or a gap: both know their entry and its hours. */
-type EntryTrace = CostLine | RateGap;
-
-/**
- * The hours of the entries behind lines and gaps, each entry once however many categories it has.
- * `isCounted` chooses which traces count, for example those with a machine.
- */
-export function sumEntryHours(
-  lines: Iterable<CostLine>,
-  gaps: Iterable<RateGap>,
-  isCounted: (trace: EntryTrace) => boolean = () => true,
-): Hours {
-  const hoursByEntry = new Map<string, Hours>();
-  for (const line of lines) if (isCounted(line)) hoursByEntry.set(line.entryId, line.quantity);
-  for (const gap of gaps) if (isCounted(gap)) hoursByEntry.set(gap.entryId, gap.hours);
-  return sum(hoursByEntry.values());
+/** What a line has to say of its hours. */
+export interface LineHours {
+  category: CostCategory;
+  quantity: Decimal;
 }
 
-/** A choice of traces for `sumEntryHours`: those of one category. */
-export function isOfCategory(category: CostCategory): (trace: EntryTrace) => boolean {
-  return (trace) => trace.category === category;
+/** What a gap has to say of its hours. */
+export interface GapHours {
+  category: CostCategory;
+  hours: Hours;
+}
+
+/**
+ * The hours of the entries that owe a category, whether or not a rate was found. Every entry owes labour, one on a
+ * machine owes machine: so these count an entry's hours once. A line that takes back another counts against it.
+ */
+export function sumHoursOf(
+  category: CostCategory,
+  lines: readonly LineHours[],
+  gaps: readonly GapHours[],
+): Hours {
+  const priced = lines.filter((line) => line.category === category).map((line) => line.quantity);
+  const unpriced = gaps.filter((gap) => gap.category === category).map((gap) => gap.hours);
+  return toHours(sum([...priced, ...unpriced]));
 }

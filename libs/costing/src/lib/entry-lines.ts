@@ -9,13 +9,11 @@ import {
   type Rate,
   toMoney,
 } from '@brakeven/values';
+import { type CostCategory } from './cost-categories';
 import { type EffectiveDated, findValidOn } from './effective-dated';
 
-/** Categories of cost lines; the first three make a job's cost, the others a machine's payback. */
-export const COST_CATEGORIES = ['labour', 'machine', 'overhead', 'earned', 'running'] as const;
-
-/** One category of cost lines. */
-export type CostCategory = (typeof COST_CATEGORIES)[number];
+/** The categories that a time entry owes by itself; overtime is owed by its whole week. */
+export type EntryCategory = Extract<CostCategory, 'labour' | 'machine' | 'overhead' | 'earned' | 'running'>;
 
 /** A time entry as costing sees it; `machineId` is already resolved (the row's own, else the operation's). */
 export interface CostedEntry {
@@ -129,16 +127,16 @@ export function isInService(inServiceOn: LocalDate | null | undefined, date: Loc
   return inServiceOn !== null && inServiceOn !== undefined && inServiceOn <= date;
 }
 
-function categoriesOf(entry: CostedEntry, book: RateBook): CostCategory[] {
+function categoriesOf(entry: CostedEntry, book: RateBook): EntryCategory[] {
   if (entry.machineId === null) return ['labour', 'overhead'];
-  const categories: CostCategory[] = ['labour', 'machine', 'overhead'];
+  const categories: EntryCategory[] = ['labour', 'machine', 'overhead'];
   if (!isInService(book.inServiceOn.get(entry.machineId), entry.workedOn)) return categories;
   if (entry.isBillable) categories.push('earned');
   categories.push('running');
   return categories;
 }
 
-function findRate(entry: CostedEntry, category: CostCategory, book: RateBook): LineRate | undefined {
+function findRate(entry: CostedEntry, category: EntryCategory, book: RateBook): LineRate | undefined {
   if (category === 'labour') return findLabourRate(entry, book);
   if (category === 'overhead') return findOverheadRate(entry, book);
   return findMachineRate(entry, category, book);

@@ -1,11 +1,12 @@
 import { type Hours, type LocalDate, type Money } from '@brakeven/values';
-import { isOfCategory, sumEntryHours } from './entry-hours';
-import { type CostLine, isInService, type RateGap } from './entry-lines';
-import { sumCategory } from './job-cost';
+import { type GapHours, sumHoursOf } from './entry-hours';
+import { isInService } from './entry-lines';
+import { type JobCostLine, sumCategory } from './job-cost';
 
 /** What one machine did on one day in service. */
 export interface MachineDay {
   machineId: string;
+  /** The day in the books where the lines have one, else the day of the work. */
   workedOn: LocalDate;
   /** All hours on the machine. */
   hours: Hours;
@@ -16,23 +17,38 @@ export interface MachineDay {
   running: Money;
 }
 
+/** Where and when a line or a gap belongs. */
+interface MachineTrace {
+  machineId: string | null;
+  workedOn: LocalDate;
+  /** The day in the books; later than `workedOn` for what came late. */
+  postedOn?: LocalDate;
+}
+
+/** What a line needs for a machine's day. */
+export interface MachineDayLine extends JobCostLine, MachineTrace {}
+
+/** What a gap needs for a machine's day. */
+export interface MachineDayGap extends GapHours, MachineTrace {}
+
 /** The lines and gaps of one machine on one day. */
 interface DayTraces {
   machineId: string;
   workedOn: LocalDate;
-  lines: CostLine[];
-  gaps: RateGap[];
+  lines: MachineDayLine[];
+  gaps: MachineDayGap[];
 }
 
 /**
- * Adds up lines by machine and day, from each machine's in-service date on; sorted by machine, then date. Give the
- * gaps too, so that hours without a rate still count as hours.
+ * Adds up lines by machine and day, from each machine's in-service date on; sorted by machine, then date. What came
+ * late counts on its day in the books, if the work itself was done in service. Give the gaps too, so that hours
+ * without a rate still count as hours.
  * Rules in words: `RULES.earned`, `.operatorLabour`, `.running`.
  */
 export function computeMachineDays(
-  lines: readonly CostLine[],
+  lines: readonly MachineDayLine[],
   inServiceOn: ReadonlyMap<string, LocalDate | null>,
-  gaps: readonly RateGap[] = [],
+  gaps: readonly MachineDayGap[] = [],
 ): MachineDay[] {
   const days = new Map<string, DayTraces>();
   for (const line of lines) findDay(days, line, inServiceOn)?.lines.push(line);
@@ -43,12 +59,12 @@ export function computeMachineDays(
 
 function findDay(
   days: Map<string, DayTraces>,
-  { machineId, workedOn }: CostLine | RateGap,
+  { machineId, workedOn, postedOn = workedOn }: MachineTrace,
   inServiceOn: ReadonlyMap<string, LocalDate | null>,
 ): DayTraces | undefined {
   if (machineId === null || !isInService(inServiceOn.get(machineId), workedOn)) return undefined;
-  const key = `${machineId} ${workedOn}`;
-  const day = days.get(key) ?? { machineId, workedOn, lines: [], gaps: [] };
+  const key = `${machineId} ${postedOn}`;
+  const day = days.get(key) ?? { machineId, workedOn: postedOn, lines: [], gaps: [] };
   days.set(key, day);
   return day;
 }
@@ -57,8 +73,8 @@ function toMachineDay({ machineId, workedOn, lines, gaps }: DayTraces): MachineD
   return {
     machineId,
     workedOn,
-    hours: sumEntryHours(lines, gaps),
-    billableHours: sumEntryHours(lines, gaps, isOfCategory('earned')),
+    hours: sumHoursOf('labour', lines, gaps),
+    billableHours: sumHoursOf('earned', lines, gaps),
     earned: sumCategory(lines, 'earned'),
     operatorLabour: sumCategory(lines, 'labour'),
     running: sumCategory(lines, 'running'),

@@ -2,17 +2,33 @@
 export const RULES = {
   labour:
     'Hours × wage × (1 + burden), with the wage and burden valid on the work date, rounded half-up to the cent on each entry.',
+  overtime:
+    "Hours above the week's threshold earn a premium of ½ × the regular rate of the week (its straight-time pay without burden ÷ its hours), rounded half-up to the cent for the week and shared out over its entries by hours, to overhead or to their jobs as the shop chose. State and local rules differ, and payroll decides.",
   machine:
     "Hours × the machine-hour rate valid on the work date, for entries with a machine (the row's own, else the operation's default), rounded half-up to the cent on each entry.",
   overhead:
     'Hours × the overhead rate valid on the work date, for every entry on a job, rounded half-up to the cent on each entry.',
+  material:
+    'Weight × the moving average of its moment (value of the stock ÷ its weight), rounded half-up to the cent on each issue; what empties the stock takes all its value, and returns come back at the average of theirs and count below 0.',
+  outside: 'The amounts of the outside services on the job, as entered.',
+  invoiced: 'The amounts of the invoices on the job, less its credit notes, as entered.',
   earned:
     "Hours on the machine × the charge-out rate valid on the work date, for billable jobs, from the machine's in-service date, rounded half-up to the cent on each entry.",
   running:
     "Hours on the machine × its running cost per hour valid on the work date, billable or not, from the machine's in-service date, rounded half-up to the cent on each entry.",
   hours: 'The hours of the time entries, each counted once.',
   machineHours: 'The hours of the time entries that have a machine, each counted once.',
-  jobTotal: 'Labour + machine + overhead; each is the sum of its lines.',
+  jobTotal: 'Labour + overtime + machine + overhead + material + outside; each is the sum of its lines.',
+  margin: 'Invoiced − total cost; provisional until the job is finished, since costs may still come.',
+  workInProgress:
+    'Total cost − invoiced of jobs that are open or finished, and 0 where more is invoiced than was spent.',
+  posting:
+    'What comes late for a closed month is posted on the first day that is open, at the rates of its own date, and marked late; what was posted in a closed month is taken back there by lines that count against it.',
+  stock:
+    'Landed cost of the lots − issues + returns, in order of date, lots first on their day; the average is the value ÷ the weight in stock.',
+  landedLotCost: 'Price of the lot + freight.',
+  materialWeight:
+    'Pieces × length × width × thickness × density, or the weight as given; kilograms, ten decimals.',
   operatorLabour:
     "The labour lines of all hours on the machine, billable or not, from the machine's in-service date.",
   runningCost: "Operator's labour + running lines of the machine, through the date given.",
