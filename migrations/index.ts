@@ -5,6 +5,10 @@ import * as createTimeEntry from './202612010920-create-time-entry';
 import * as createCosts from './202612010930-create-costs';
 import * as markDirtyDays from './202612010940-mark-dirty-days';
 import * as supportSignIn from './202612010950-support-sign-in';
+import * as createStock from './202612011000-create-stock';
+import * as createJobMoney from './202612011010-create-job-money';
+import * as closeMonths from './202612011020-close-months';
+import * as markMoneyDays from './202612011030-mark-money-days';
 
 /** All migrations by name, in order; listed here so that they can be bundled with the command line. */
 export const migrations: Record<string, Migration> = {
@@ -14,4 +18,8 @@ export const migrations: Record<string, Migration> = {
   '202612010930-create-costs': createCosts,
   '202612010940-mark-dirty-days': markDirtyDays,
   '202612010950-support-sign-in': supportSignIn,
+  '202612011000-create-stock': createStock,
+  '202612011010-create-job-money': createJobMoney,
+  '202612011020-close-months': closeMonths,
+  '202612011030-mark-money-days': markMoneyDays,
 };

@@ -12,13 +12,26 @@ export const sourceCellSchema = z.object({
 });
 export type SourceCell = z.infer<typeof sourceCellSchema>;
 
-export const COST_CATEGORIES = ['labour', 'machine', 'overhead', 'earned', 'running'] as const;
+export const COST_CATEGORIES = [
+  'labour',
+  'overtime',
+  'machine',
+  'overhead',
+  'material',
+  'outside',
+  'invoiced',
+  'earned',
+  'running',
+] as const;
 export type CostCategory = (typeof COST_CATEGORIES)[number];
 /** Those that a job's cost is the sum of. */
 export const JOB_COST_CATEGORIES = [
   'labour',
+  'overtime',
   'machine',
   'overhead',
+  'material',
+  'outside',
 ] as const satisfies readonly CostCategory[];
 
 export const FIGURES = [

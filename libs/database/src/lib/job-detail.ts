@@ -30,7 +30,7 @@ export async function listJobWeekSums(
   weekStart: number,
 ): Promise<{ weekFrom: string; hours: string; total: string }[]> {
   const { rows } = await sql<JobSums & { weekFrom: string }>`
-    select d.worked_on - ((extract(dow from d.worked_on)::int - ${weekStart}::int + 7) % 7) as week_from, ${JOB_SUMS}
+    select d.posted_on - ((extract(dow from d.posted_on)::int - ${weekStart}::int + 7) % 7) as week_from, ${JOB_SUMS}
     from job_day d
     where d.job_id = ${jobId}::uuid
     group by 1
@@ -40,13 +40,14 @@ export async function listJobWeekSums(
 
 /** Where a page of cost lines goes on: the key of the last line before it. */
 export interface LinePosition {
-  workedOn: string;
+  postedOn: string;
   sourceId: string;
   category: string;
 }
 
 export interface JobLineRow extends SourceColumns, LinePosition {
   category: CostLineTable['category'];
+  workedOn: string;
   employee: string;
   operation: string;
   machine: string | null;
@@ -65,10 +66,10 @@ export async function listJobLineRows(
   limit: number,
 ): Promise<JobLineRow[]> {
   const isAfter = after
-    ? sql`(l.worked_on, l.source_id, l.category) < (${after.workedOn}::date, ${after.sourceId}::uuid, ${after.category})`
+    ? sql`(l.posted_on, l.source_id, l.category) < (${after.postedOn}::date, ${after.sourceId}::uuid, ${after.category})`
     : sql`true`;
   const { rows } = await sql<JobLineRow>`
-    select l.worked_on, l.source_id, l.category, e.name as employee, o.name as operation, m.name as machine,
+    select l.posted_on, l.worked_on, l.source_id, l.category, e.name as employee, o.name as operation, m.name as machine,
       l.quantity as hours, l.rate, l.rate_factor, l.amount,
       t.import_id, i.file_name, i.sheet, t.source_row, t.source_cell
     from cost_line l
@@ -78,7 +79,7 @@ export async function listJobLineRows(
     left join machine m on m.shop_id = l.shop_id and m.machine_id = l.machine_id
     left join timesheet_import i on i.shop_id = t.shop_id and i.import_id = t.import_id
     where l.job_id = ${jobId}::uuid and l.category = any (${categories}::text[]) and ${isAfter}
-    order by l.worked_on desc, l.source_id desc, l.category desc
+    order by l.posted_on desc, l.source_id desc, l.category desc
     limit ${limit}`.execute(trx);
   return rows;
 }

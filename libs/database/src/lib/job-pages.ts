@@ -94,7 +94,7 @@ export async function listJobRows(
       ) as entries_without_rate
     from ${JOB_WITH_CUSTOMER}
     cross join lateral (
-      select ${JOB_SUMS}, max(d.worked_on) as last_worked_on
+      select ${JOB_SUMS}, max(d.posted_on) as last_worked_on
       from job_day d where d.shop_id = j.shop_id and d.job_id = j.job_id
     ) f
     where ${isJobSelected(selection)} and ${isAfter(key, id, direction, after)}

@@ -49,10 +49,10 @@ export async function listMachineDays(
 ): Promise<MachineDayFigures[]> {
   return trx
     .selectFrom('machineDay')
-    .select(['workedOn', 'hours', 'billableHours', 'earned', 'operatorLabour', 'running'])
+    .select(['postedOn', 'hours', 'billableHours', 'earned', 'operatorLabour', 'running'])
     .where('machineId', '=', machineId)
-    .where('workedOn', '>=', sql<string>`${inServiceOn}::date`)
-    .orderBy('workedOn')
+    .where('postedOn', '>=', sql<string>`${inServiceOn}::date`)
+    .orderBy('postedOn')
     .execute();
 }
 
@@ -75,7 +75,7 @@ export async function listMachineJobNets(
     from (
       select shop_id, job_id, sum(earned - operator_labour - running) as net
       from machine_job_day
-      where machine_id = ${machineId}::uuid and worked_on >= ${inServiceOn}::date
+      where machine_id = ${machineId}::uuid and posted_on >= ${inServiceOn}::date
       group by 1, 2
     ) n
     join job j on j.shop_id = n.shop_id and j.job_id = n.job_id

@@ -23,7 +23,7 @@ export async function finishRollupRun(
 /** A machine's day, or several days in one. */
 export interface MachineDayRow {
   machineId: string;
-  workedOn: string;
+  postedOn: string;
   earned: string;
   operatorLabour: string;
   running: string;
@@ -39,10 +39,10 @@ export async function listRecentMachineDays(
   through: string,
 ): Promise<MachineDayRow[]> {
   const { rows } = await sql<MachineDayRow>`
-    select machine_id, greatest(worked_on, ${from}::date - 1) as worked_on,
+    select machine_id, greatest(posted_on, ${from}::date - 1) as posted_on,
       sum(earned) as earned, sum(operator_labour) as operator_labour, sum(running) as running
     from machine_day
-    where worked_on <= ${through}::date
+    where posted_on <= ${through}::date
     group by 1, 2`.execute(trx);
   return rows;
 }
@@ -54,9 +54,9 @@ export async function findReachedOn(
   outlay: string,
 ): Promise<string | null> {
   const { rows } = await sql<{ reachedOn: string | null }>`
-    select min(worked_on) as reached_on
+    select min(posted_on) as reached_on
     from (
-      select worked_on, sum(earned - operator_labour - running) over (order by worked_on) as net
+      select posted_on, sum(earned - operator_labour - running) over (order by posted_on) as net
       from machine_day where machine_id = ${machineId}
     ) cumulative
     where net >= ${outlay}::numeric`.execute(trx);

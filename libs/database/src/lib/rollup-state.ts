@@ -15,7 +15,7 @@ export interface RollupState {
 export async function getRollupState(trx: ShopTransaction, shopId: string): Promise<RollupState> {
   const { rows } = await sql<RollupState>`
     select
-      (select max(worked_on) from job_day) as through,
+      (select max(posted_on) from job_day) as through,
       coalesce(waiting.entries, 0) as entries_waiting,
       waiting.days as days_waiting,
       (select max(finished_at) from rollup_run) as last_run_at,

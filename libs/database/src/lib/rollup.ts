@@ -61,12 +61,12 @@ export async function rewriteCosts(
 
 /** The latest day in the costs, not after `limit` if one is given; null if there is none. */
 export async function findThrough(trx: ShopTransaction, limit?: string): Promise<string | null> {
-  let query = trx.selectFrom('jobDay').select((eb) => eb.fn.max('workedOn').as('through'));
-  if (limit !== undefined) query = query.where('workedOn', '<=', limit);
+  let query = trx.selectFrom('jobDay').select((eb) => eb.fn.max('postedOn').as('through'));
+  if (limit !== undefined) query = query.where('postedOn', '<=', limit);
   return (await query.executeTakeFirstOrThrow()).through;
 }
 
-function inScope({ days, through }: RollupScope, column = 'worked_on'): RawBuilder<boolean> {
+function inScope({ days, through }: RollupScope, column = 'posted_on'): RawBuilder<boolean> {
   if (days === 'all') return sql`${sql.ref(column)} <= ${through}::date`;
   return sql`${sql.ref(column)} = any (${days}::date[])`;
 }
@@ -123,15 +123,15 @@ async function insertLinesAndGaps(trx: ShopTransaction, runId: string, scope: Ro
   const inserted = await sql`
     with ${pricedEntries(scope)},
     gap as (
-      insert into rate_gap (shop_id, worked_on, category, entry_id, job_id, operation_id, employee_id, machine_id, hours)
-      select e.shop_id, e.worked_on, due.category, e.entry_id, e.job_id, e.operation_id, e.employee_id, e.machine_id,
+      insert into rate_gap (shop_id, posted_on, worked_on, category, entry_id, job_id, operation_id, employee_id, machine_id, hours)
+      select e.shop_id, e.worked_on, e.worked_on, due.category, e.entry_id, e.job_id, e.operation_id, e.employee_id, e.machine_id,
         e.hours
       from priced e cross join lateral ${DUE}
       where due.is_due and due.rate_id is null
     )
-    insert into cost_line (shop_id, worked_on, source_id, category, source_kind, job_id, operation_id, employee_id,
+    insert into cost_line (shop_id, posted_on, worked_on, source_id, category, source_kind, job_id, operation_id, employee_id,
       machine_id, quantity, rate, rate_factor, rate_id, amount, run_id)
-    select e.shop_id, e.worked_on, e.entry_id, due.category, 'time_entry', e.job_id, e.operation_id, e.employee_id,
+    select e.shop_id, e.worked_on, e.worked_on, e.entry_id, due.category, 'time_entry', e.job_id, e.operation_id, e.employee_id,
       e.machine_id, e.hours, due.rate, due.rate_factor, due.rate_id,
       round(e.hours * due.rate * due.rate_factor, 2), ${runId}::uuid
     from priced e cross join lateral ${DUE}
@@ -141,17 +141,17 @@ async function insertLinesAndGaps(trx: ShopTransaction, runId: string, scope: Ro
 
 /** Lines and gaps alike: a gap has hours but no amount. */
 const written = (scope: RollupScope): RawBuilder<unknown> => sql`(
-    select shop_id, worked_on, job_id, machine_id, category, quantity as hours, amount, 1 as lines
+    select shop_id, posted_on, job_id, machine_id, category, quantity as hours, amount, 1 as lines
     from cost_line where ${inScope(scope)}
     union all
-    select shop_id, worked_on, job_id, machine_id, category, hours, 0, 0
+    select shop_id, posted_on, job_id, machine_id, category, hours, 0, 0
     from rate_gap where ${inScope(scope)}
   )`;
 
 async function insertJobDays(trx: ShopTransaction, scope: RollupScope): Promise<void> {
   await sql`
-    insert into job_day (shop_id, job_id, worked_on, category, hours, amount, lines)
-    select w.shop_id, w.job_id, w.worked_on, w.category, sum(w.hours), sum(w.amount), sum(w.lines)
+    insert into job_day (shop_id, job_id, posted_on, category, hours, amount, lines)
+    select w.shop_id, w.job_id, w.posted_on, w.category, sum(w.hours), sum(w.amount), sum(w.lines)
     from ${written(scope)} w
     group by 1, 2, 3, 4
     order by 1, 2, 3, 4`.execute(trx);
@@ -160,21 +160,21 @@ async function insertJobDays(trx: ShopTransaction, scope: RollupScope): Promise<
 /** Days in service: every entry of such a day owes a running line, so that these hold its hours. */
 async function insertMachineDays(trx: ShopTransaction, scope: RollupScope): Promise<void> {
   await sql`
-    insert into machine_job_day (shop_id, worked_on, machine_id, job_id, hours, billable_hours, earned,
+    insert into machine_job_day (shop_id, posted_on, machine_id, job_id, hours, billable_hours, earned,
       operator_labour, running)
-    select w.shop_id, w.worked_on, w.machine_id, w.job_id,
+    select w.shop_id, w.posted_on, w.machine_id, w.job_id,
       coalesce(sum(w.hours) filter (where w.category = 'running'), 0),
       coalesce(sum(w.hours) filter (where w.category = 'earned'), 0),
       coalesce(sum(w.amount) filter (where w.category = 'earned'), 0),
       coalesce(sum(w.amount) filter (where w.category = 'labour'), 0),
       coalesce(sum(w.amount) filter (where w.category = 'running'), 0)
     from ${written(scope)} w
-    join machine m on m.shop_id = w.shop_id and m.machine_id = w.machine_id and m.in_service_on <= w.worked_on
+    join machine m on m.shop_id = w.shop_id and m.machine_id = w.machine_id and m.in_service_on <= w.posted_on
     group by 1, 2, 3, 4
     order by 1, 2, 3, 4`.execute(trx);
   await sql`
-    insert into machine_day (shop_id, machine_id, worked_on, hours, billable_hours, earned, operator_labour, running)
-    select shop_id, machine_id, worked_on, sum(hours), sum(billable_hours), sum(earned), sum(operator_labour),
+    insert into machine_day (shop_id, machine_id, posted_on, hours, billable_hours, earned, operator_labour, running)
+    select shop_id, machine_id, posted_on, sum(hours), sum(billable_hours), sum(earned), sum(operator_labour),
       sum(running)
     from machine_job_day
     where ${inScope(scope)}
@@ -184,6 +184,6 @@ async function insertMachineDays(trx: ShopTransaction, scope: RollupScope): Prom
 
 async function countDays(trx: ShopTransaction, scope: RollupScope): Promise<number> {
   const { rows } = await sql<{ days: number }>`
-    select count(distinct worked_on) as days from job_day where ${inScope(scope)}`.execute(trx);
+    select count(distinct posted_on) as days from job_day where ${inScope(scope)}`.execute(trx);
   return rows[0]?.days ?? 0;
 }

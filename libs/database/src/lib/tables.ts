@@ -13,7 +13,11 @@ export interface ShopTable {
   timeZone: string;
   currency: string;
   units: 'us' | 'metric';
+  /** 0 Sunday … 6 Saturday. */
   weekStart: Generated<number>;
+  /** Null: overtime is not computed. */
+  overtimeThresholdHours: ColumnType<Numeric | null, Numeric | null | undefined, Numeric | null>;
+  overtimeTo: Generated<'overhead' | 'jobs'>;
   createdAt: Instant;
 }
 export interface UserAccountTable {
@@ -137,6 +141,8 @@ export interface TimesheetImportTable {
   firstDay: string | null;
   lastDay: string | null;
   problems: Json<unknown[]>;
+  refusalsReviewedAt: InstantOrNull;
+  refusalsReviewedBy: string | null;
 }
 export interface TimesheetFileTable {
   shopId: string;
@@ -197,27 +203,41 @@ export interface RollupRunTable {
   lines: Generated<number>;
   through: string | null;
 }
+/** What the rollup wrote from one source row in one category. */
 export interface CostLineTable {
   shopId: string;
+  /** The day in the books; later than `workedOn` if that lies in a closed month. */
+  postedOn: string;
   workedOn: string;
   sourceId: string;
-  category: 'labour' | 'machine' | 'overhead' | 'earned' | 'running';
-  sourceKind: 'time_entry';
-  jobId: string;
+  category:
+    | 'labour'
+    | 'overtime'
+    | 'machine'
+    | 'overhead'
+    | 'material'
+    | 'outside'
+    | 'invoiced'
+    | 'earned'
+    | 'running';
+  sourceKind: 'time_entry' | 'material_issue' | 'outside_service' | 'invoice';
+  /** Null for what went to overhead. */
+  jobId: string | null;
   operationId: string | null;
   employeeId: string | null;
   machineId: string | null;
+  /** Hours, kg, or ±1 for an amount as such; negative in a line that takes back one of a closed month. */
   quantity: Numeric;
   rate: Numeric;
   rateFactor: Numeric;
-  rateId: string;
+  rateId: string | null;
   amount: Numeric;
   runId: string;
 }
 export interface JobDayTable {
   shopId: string;
   jobId: string;
-  workedOn: string;
+  postedOn: string;
   category: CostLineTable['category'];
   /** Of all entries that owe the category, with or without a rate. */
   hours: Numeric;
@@ -228,7 +248,7 @@ export interface JobDayTable {
 export interface MachineDayTable {
   shopId: string;
   machineId: string;
-  workedOn: string;
+  postedOn: string;
   hours: Numeric;
   billableHours: Numeric;
   earned: Numeric;
@@ -241,6 +261,7 @@ export interface MachineJobDayTable extends MachineDayTable {
 }
 export interface RateGapTable {
   shopId: string;
+  postedOn: string;
   workedOn: string;
   category: CostLineTable['category'];
   entryId: string;
@@ -249,6 +270,166 @@ export interface RateGapTable {
   employeeId: string;
   machineId: string | null;
   hours: Numeric;
+}
+export interface MaterialTable {
+  shopId: string;
+  materialId: Generated<string>;
+  name: string;
+  grade: Generated<string>;
+  form: 'sheet' | 'plate' | 'bar' | 'tube' | 'other';
+  /** As typed, such as `11 ga`. */
+  gauge: string | null;
+  thicknessMm: Numeric | null;
+  densityKgM3: Numeric | null;
+  tensileStrengthMpa: Numeric | null;
+  recoveryPricePerKg: Generated<Numeric>;
+}
+export interface SheetLotTable {
+  shopId: string;
+  lotId: Generated<string>;
+  number: string;
+  materialId: string;
+  receivedOn: string;
+  vendor: Generated<string>;
+  sheets: number | null;
+  sheetLengthMm: Numeric | null;
+  sheetWidthMm: Numeric | null;
+  weightKg: Numeric;
+  cost: Numeric;
+  freight: Generated<Numeric>;
+  createdAt: Instant;
+  voidedAt: InstantOrNull;
+  voidedBy: string | null;
+}
+export interface MaterialIssueTable {
+  shopId: string;
+  issueId: Generated<string>;
+  jobId: string;
+  materialId: string;
+  issuedOn: string;
+  kind: 'issue' | 'return';
+  sheets: number | null;
+  pieces: number | null;
+  blankLengthMm: Numeric | null;
+  blankWidthMm: Numeric | null;
+  weightKg: Numeric;
+  note: string | null;
+  createdAt: Instant;
+  voidedAt: InstantOrNull;
+  voidedBy: string | null;
+}
+/** The stock ledger, written by the database itself whenever lots or issues change. Signed as stock moves. */
+export interface StockMoveTable {
+  shopId: string;
+  materialId: string;
+  movedOn: string;
+  /** 0 lots, which come first on their day; 1 issues and returns. */
+  rank: number;
+  sourceId: string;
+  weightKg: Numeric;
+  amount: Numeric;
+  /** At which an issue or return was valued; after it for a lot. */
+  averagePerKg: Numeric;
+  balanceKg: Numeric;
+  balanceAmount: Numeric;
+}
+export interface OutsideServiceTable {
+  shopId: string;
+  outsideServiceId: Generated<string>;
+  jobId: string;
+  incurredOn: string;
+  vendor: Generated<string>;
+  description: Generated<string>;
+  amount: Numeric;
+  createdAt: Instant;
+  voidedAt: InstantOrNull;
+  voidedBy: string | null;
+}
+export interface InvoiceTable {
+  shopId: string;
+  invoiceId: Generated<string>;
+  jobId: string;
+  kind: 'invoice' | 'credit-note';
+  number: string;
+  invoicedOn: string;
+  description: Generated<string>;
+  /** Positive, for a credit note too. */
+  amount: Numeric;
+  createdAt: Instant;
+  voidedAt: InstantOrNull;
+  voidedBy: string | null;
+}
+export interface EstimateTable {
+  shopId: string;
+  jobId: string;
+  estimatedOn: string;
+  scrapAllowancePercent: Generated<Numeric>;
+  marginPercent: Generated<Numeric>;
+}
+export interface EstimateLineTable {
+  shopId: string;
+  estimateLineId: Generated<string>;
+  jobId: string;
+  position: number;
+  kind: 'operation' | 'material' | 'outside';
+  operationId: string | null;
+  machineId: string | null;
+  setupHours: Numeric | null;
+  minutesPerPiece: Numeric | null;
+  pieces: number | null;
+  labourRate: Numeric | null;
+  machineHourRate: Numeric | null;
+  overheadRate: Numeric | null;
+  materialId: string | null;
+  weightKg: Numeric | null;
+  pricePerKg: Numeric | null;
+  description: Generated<string>;
+  amount: Numeric | null;
+}
+/** What a machine-hour rate was built from. */
+export interface MachineRateBasisTable {
+  shopId: string;
+  machineRateId: string;
+  price: Numeric;
+  salvage: Numeric;
+  lifeYears: Numeric;
+  interestPercent: Numeric;
+  floorAreaM2: Numeric;
+  spaceCostPerM2Year: Numeric;
+  insurancePerYear: Numeric;
+  upkeepPerYear: Numeric;
+  productiveHoursPerYear: Numeric;
+  powerKw: Numeric;
+  loadPercent: Numeric;
+  tariffPerKwh: Numeric;
+  consumablesPerHour: Numeric;
+}
+export interface MonthCloseTable {
+  shopId: string;
+  monthCloseId: Generated<string>;
+  /** Its first day. */
+  month: string;
+  closedAt: Instant;
+  closedBy: string;
+  reopenedAt: InstantOrNull;
+  reopenedBy: string | null;
+  reopenReason: string | null;
+}
+/** Hours of an employee's month as payroll has them. */
+export interface PayrollHoursTable {
+  shopId: string;
+  employeeId: string;
+  month: string;
+  hours: Numeric;
+}
+export interface SavedViewTable {
+  shopId: string;
+  savedViewId: Generated<string>;
+  userId: string;
+  page: string;
+  name: string;
+  state: Json<unknown>;
+  savedAt: Instant;
 }
 export interface PaybackSnapshotTable {
   shopId: string;
@@ -290,4 +471,16 @@ export interface Tables {
   machineJobDay: MachineJobDayTable;
   rateGap: RateGapTable;
   paybackSnapshot: PaybackSnapshotTable;
+  material: MaterialTable;
+  sheetLot: SheetLotTable;
+  materialIssue: MaterialIssueTable;
+  stockMove: StockMoveTable;
+  outsideService: OutsideServiceTable;
+  invoice: InvoiceTable;
+  estimate: EstimateTable;
+  estimateLine: EstimateLineTable;
+  machineRateBasis: MachineRateBasisTable;
+  monthClose: MonthCloseTable;
+  payrollHours: PayrollHoursTable;
+  savedView: SavedViewTable;
 }

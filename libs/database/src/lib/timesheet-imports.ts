@@ -6,7 +6,7 @@ export type TimesheetImportRow = Selectable<TimesheetImportTable>;
 /** An import without what only its own page shows. */
 export type TimesheetImportSummaryRow = Omit<
   TimesheetImportRow,
-  'problems' | 'mapping' | 'shopId' | 'fileSha256'
+  'problems' | 'mapping' | 'shopId' | 'fileSha256' | 'refusalsReviewedAt' | 'refusalsReviewedBy'
 >;
 /** The kept file with how it was read. */
 export interface KeptFile {

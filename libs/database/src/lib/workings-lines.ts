@@ -64,6 +64,7 @@ export async function listLineGroups(trx: ShopTransaction, selection: LineSelect
 
 /** A line as workings show it. */
 export interface WorkingsLineRow extends SourceColumns, LinePosition {
+  workedOn: string;
   employee: string;
   job: string;
   operation: string;
@@ -84,12 +85,12 @@ export async function listWorkingsLineRows(
   limit: number,
 ): Promise<WorkingsLineRow[]> {
   const { rows } = await sql<WorkingsLineRow>`
-    select l.worked_on, l.source_id, l.category, e.name as employee, j.number as job, o.name as operation,
+    select l.posted_on, l.worked_on, l.source_id, l.category, e.name as employee, j.number as job, o.name as operation,
       m.name as machine, l.quantity as hours, l.rate, l.rate_factor, ${RATE_VALID_FROM} as rate_valid_from,
       ${signedAmount(selection)} as amount, t.import_id, i.file_name, i.sheet, t.source_row, t.source_cell
     from (
       select * from ${selectedLines(selection, { after, limit })} l
-      order by l.worked_on desc, l.source_id desc, l.category desc
+      order by l.posted_on desc, l.source_id desc, l.category desc
       limit ${limit}
     ) l
     join employee e on e.shop_id = l.shop_id and e.employee_id = l.employee_id
@@ -99,7 +100,7 @@ export async function listWorkingsLineRows(
     left join machine m on m.shop_id = l.shop_id and m.machine_id = l.machine_id
     left join timesheet_import i on i.shop_id = t.shop_id and i.import_id = t.import_id
     ${rateJoins('l')}
-    order by l.worked_on desc, l.source_id desc, l.category desc`.execute(trx);
+    order by l.posted_on desc, l.source_id desc, l.category desc`.execute(trx);
   return rows;
 }
 
@@ -114,12 +115,12 @@ interface LineCut {
  */
 function selectedLines(selection: LineSelection, cut?: LineCut): RawBuilder<unknown> {
   const lines = sql`
-    (select shop_id, worked_on, source_id, category, job_id, operation_id, employee_id, machine_id, quantity,
+    (select shop_id, posted_on, worked_on, source_id, category, job_id, operation_id, employee_id, machine_id, quantity,
       rate, rate_factor, rate_id, amount
     from cost_line where ${isSelected(selection)} ${cutBy('source_id', cut)})`;
   if (selection.unit === 'money') return lines;
   return sql`(${lines} union all
-    (select shop_id, worked_on, entry_id, category, job_id, operation_id, employee_id, machine_id, hours,
+    (select shop_id, posted_on, worked_on, entry_id, category, job_id, operation_id, employee_id, machine_id, hours,
       null, null, null, null
     from rate_gap where ${isSelected(selection)} ${cutBy('entry_id', cut)}))`;
 }
@@ -129,9 +130,9 @@ function cutBy(idColumn: 'source_id' | 'entry_id', cut: LineCut | undefined): Ra
   const { after, limit } = cut;
   const id = sql.ref(idColumn);
   const isAfter = after
-    ? sql`and (worked_on, ${id}, category) < (${after.workedOn}::date, ${after.sourceId}::uuid, ${after.category})`
+    ? sql`and (posted_on, ${id}, category) < (${after.postedOn}::date, ${after.sourceId}::uuid, ${after.category})`
     : sql``;
-  return sql`${isAfter} order by worked_on desc, ${id} desc, category desc limit ${limit}`;
+  return sql`${isAfter} order by posted_on desc, ${id} desc, category desc limit ${limit}`;
 }
 
 function isSelected(selection: LineSelection): RawBuilder<boolean> {
@@ -144,10 +145,10 @@ function isSelected(selection: LineSelection): RawBuilder<boolean> {
   if (operationId !== undefined) conditions.push(sql`operation_id = ${operationId}::uuid`);
   if (machine !== undefined) {
     conditions.push(sql`machine_id = ${machine.machineId}::uuid`);
-    conditions.push(sql`worked_on >= ${machine.inServiceOn}::date`);
+    conditions.push(sql`posted_on >= ${machine.inServiceOn}::date`);
   }
-  if (from !== undefined) conditions.push(sql`worked_on >= ${from}::date`);
-  if (to !== undefined) conditions.push(sql`worked_on <= ${to}::date`);
+  if (from !== undefined) conditions.push(sql`posted_on >= ${from}::date`);
+  if (to !== undefined) conditions.push(sql`posted_on <= ${to}::date`);
   return allOf(conditions);
 }
 

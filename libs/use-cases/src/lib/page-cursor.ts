@@ -17,7 +17,7 @@ export function positionSchema(type: SortType) {
 
 /** Schema of the place where a list of cost lines goes on. */
 export const linePositionSchema = z.object({
-  workedOn: dateText,
+  postedOn: dateText,
   sourceId: z.uuid(),
   category: z.string().regex(/^[a-z]{1,20}$/),
 });

@@ -6,6 +6,10 @@ const CATEGORY_WORDS: Readonly<Record<CostCategory, string>> = {
   labour: 'Labour',
   machine: 'Machine',
   overhead: 'Overhead',
+  overtime: 'Overtime',
+  material: 'Material',
+  outside: 'Outside service',
+  invoiced: 'Invoiced',
   earned: 'Earned',
   running: 'Running',
 };

@@ -9,10 +9,14 @@ export interface GapAdvice {
 
 const MISSING: Readonly<Record<RateGap['category'], string>> = {
   labour: 'wage',
+  overtime: 'wage in a week of overtime',
   machine: 'machine-hour rate',
   overhead: 'overhead rate',
   earned: 'charge-out rate',
   running: 'running cost',
+  material: 'average cost',
+  outside: 'amount',
+  invoiced: 'amount',
 };
 
 /** Entries without a rate: what is missing, and where to put it. */
@@ -22,7 +26,7 @@ export function toGapAdvice({ category, subject, entries, firstDay, lastDay }: R
   const days = firstDay === lastDay ? `on ${from}` : `from ${from} to ${to}`;
   const count = `${entries.toLocaleString('en-US')} ${entries === 1 ? 'entry' : 'entries'}`;
   const who = subject ?? 'The shop';
-  const isPeople = category === 'labour' || category === 'overhead';
+  const isPeople = ['labour', 'overtime', 'overhead'].includes(category);
   return {
     text: `${who} has no ${MISSING[category]} for ${count} ${days}. It is left out of the figures, not counted as 0.`,
     advice: `Add one valid from ${from}`,

@@ -15,8 +15,8 @@ describe('undoImport', () => {
 
   const TOTALS = {
     cost_line: ['worked_on', 'source_id', 'category', 'quantity', 'rate', 'amount'],
-    job_day: ['job_id', 'worked_on', 'category', 'hours', 'amount', 'lines'],
-    machine_day: ['machine_id', 'worked_on', 'hours', 'earned', 'operator_labour', 'running'],
+    job_day: ['job_id', 'posted_on', 'category', 'hours', 'amount', 'lines'],
+    machine_day: ['machine_id', 'posted_on', 'hours', 'earned', 'operator_labour', 'running'],
   };
   const listTotals = () =>
     shop.inShop(async (trx) => {

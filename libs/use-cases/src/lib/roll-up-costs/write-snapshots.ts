@@ -54,7 +54,7 @@ export async function writeSnapshots(trx: ShopTransaction, run: SnapshotRun): Pr
 /** A row of sums as costing takes it. */
 export function toPaybackDay(row: Omit<MachineDayRow, 'machineId'>): PaybackDay {
   return {
-    workedOn: toLocalDate(row.workedOn),
+    workedOn: toLocalDate(row.postedOn),
     earned: toMoney(row.earned),
     operatorLabour: toMoney(row.operatorLabour),
     running: toMoney(row.running),

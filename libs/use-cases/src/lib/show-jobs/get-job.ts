@@ -59,8 +59,8 @@ export async function listJobLines(
   return inShopOf(context, async (trx) => {
     await getJobRow(trx, { jobId });
     const found = await listJobLineRows(trx, jobId, categories, after, limit + 1);
-    const { rows, nextCursor } = cutPage(found, limit, ({ workedOn, sourceId, category: last }) =>
-      writeCursor(list, { workedOn, sourceId, category: last }),
+    const { rows, nextCursor } = cutPage(found, limit, ({ postedOn, sourceId, category: last }) =>
+      writeCursor(list, { postedOn, sourceId, category: last }),
     );
     return { items: rows.map((row) => toJobLine(context, row)), nextCursor };
   });

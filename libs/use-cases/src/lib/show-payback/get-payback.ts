@@ -85,7 +85,7 @@ async function readMonth(trx: ShopTransaction, found: MachinePayback): Promise<P
   const { machine, asOf, inServiceOn, days } = found;
   if (asOf === null || inServiceOn === null || inServiceOn > asOf) return null;
   const from = laterOf(startOfMonth(asOf), inServiceOn);
-  const ofMonth = days.filter((day) => day.workedOn >= from);
+  const ofMonth = days.filter((day) => day.postedOn >= from);
   const sumOf = (key: 'earned' | 'operatorLabour' | 'running') =>
     sum(ofMonth.map((day) => toMoney(day[key])));
   const [earned, operatorLabour, running] = [sumOf('earned'), sumOf('operatorLabour'), sumOf('running')];

@@ -30,8 +30,8 @@ export async function readLineWorkings(
   const after = readCursor(cursor, list, linePositionSchema);
   const groups = await listLineGroups(trx, wanted);
   const found = await listWorkingsLineRows(trx, wanted, after, limit + 1);
-  const { rows, nextCursor } = cutPage(found, limit, ({ workedOn, sourceId, category }) =>
-    writeCursor(list, { workedOn, sourceId, category }),
+  const { rows, nextCursor } = cutPage(found, limit, ({ postedOn, sourceId, category }) =>
+    writeCursor(list, { postedOn, sourceId, category }),
   );
   return {
     ...head,
@@ -66,8 +66,12 @@ function sumGroups(
 
 const RATE_WORDS: Readonly<Record<CostCategory, (subject: string) => string>> = {
   labour: (subject) => `Wage of ${subject}`,
+  overtime: (subject) => `Overtime premium of ${subject}, over all hours of the week`,
   machine: (subject) => `Machine-hour rate of ${subject}`,
   overhead: () => 'Overhead rate per hour of labour',
+  material: (subject) => `Average cost of ${subject}`,
+  outside: () => 'Outside service',
+  invoiced: () => 'Invoice',
   earned: (subject) => `Charge-out rate of ${subject}`,
   running: (subject) => `Running cost per hour of ${subject}`,
 };

@@ -149,7 +149,7 @@ async function readMachineDays(trx: ShopTransaction): Promise<string[]> {
   const rows = await trx.selectFrom('machineDay').selectAll().execute();
   return sorted(
     rows.map((r) =>
-      text(r.machineId, r.workedOn, r.hours, r.billableHours, r.earned, r.operatorLabour, r.running),
+      text(r.machineId, r.postedOn, r.hours, r.billableHours, r.earned, r.operatorLabour, r.running),
     ),
   );
 }
@@ -157,7 +157,7 @@ async function readMachineDays(trx: ShopTransaction): Promise<string[]> {
 async function readMachineJobDays(trx: ShopTransaction): Promise<string[]> {
   const rows = await trx.selectFrom('machineJobDay').selectAll().execute();
   return sorted(
-    rows.map((r) => text(r.machineId, r.workedOn, r.jobId, r.hours, r.earned, r.operatorLabour, r.running)),
+    rows.map((r) => text(r.machineId, r.postedOn, r.jobId, r.hours, r.earned, r.operatorLabour, r.running)),
   );
 }
 
