@@ -28,8 +28,8 @@ export interface JobMove {
   movedOn: LocalDate;
   jobId: string;
   weight: Mass;
-  /** What the job bears for it in a closed month, below 0 for a return; it stays as it is. Null if it is not there. */
-  postedAmount: Money | null;
+  /** What the job bears for it in a closed month, below 0 for a return; it stays as it is. */
+  postedAmount?: Money;
 }
 
 /** A move of one material's stock; `weight` is above 0 whatever its kind. */

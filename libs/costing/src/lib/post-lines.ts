@@ -15,7 +15,6 @@ export interface PostedGap extends RateGap {
 /** A row, and the lines that it owes as rates and settings are now. */
 export interface CostSource {
   sourceId: string;
-  workedOn: LocalDate;
   /** False once the row is voided. */
   isLive: boolean;
   /** What it owes if it is live and not posted in a closed month yet; else they are not looked at. */

@@ -17,3 +17,14 @@ export function roundFraction(numerator: Decimal, denominator: Decimal, places: 
   const isNegative = numerator.isNegative() !== denominator.isNegative();
   return (isNegative ? units.negated() : units).div(unitsPerOne);
 }
+
+/**
+ * Rounds numerator ÷ denominator up to `places` decimals, towards the larger number, in one step.
+ * @throws RangeError if the denominator is 0.
+ */
+export function ceilFraction(numerator: Decimal, denominator: Decimal, places: number): Decimal {
+  const nearest = roundFraction(numerator, denominator, places);
+  const short = numerator.minus(nearest.times(denominator));
+  const isBelow = short.times(denominator).gt(0);
+  return isBelow ? nearest.plus(D(`1e-${places}`)) : nearest;
+}

@@ -29,6 +29,40 @@ export const RULES = {
   landedLotCost: 'Price of the lot + freight.',
   materialWeight:
     'Pieces × length × width × thickness × density, or the weight as given; kilograms, ten decimals.',
+  machineHourRate:
+    'Depreciation + interest + space + insurance + upkeep of a year ÷ planned productive hours, + power + consumables of an hour; parts to six decimals, their sum half-up to the cent.',
+  rateDepreciation: '(Price − salvage) ÷ life in years ÷ planned productive hours a year.',
+  rateInterest:
+    'Average capital, (price + salvage) ÷ 2, × interest a year ÷ planned productive hours a year.',
+  rateSpace: 'Floor area × cost of space a year ÷ planned productive hours a year.',
+  rateInsurance: 'Insurance a year ÷ planned productive hours a year.',
+  rateUpkeep: 'Planned upkeep a year ÷ planned productive hours a year.',
+  ratePower: 'Power × average load × tariff.',
+  rateConsumables: 'Consumables per hour, as entered.',
+  fixedCostOfPeriod: 'Fixed parts of a year × the days of the period ÷ the days of their calendar year.',
+  recovery:
+    'Hours really run × the fixed share of the rate − the fixed cost of the period: above 0 over-recovered, below 0 under-recovered.',
+  estimateHours:
+    'Set-up hours + pieces × minutes per piece ÷ 60 × (1 + scrap allowance), rounded half-up to four decimals.',
+  estimateLabour:
+    'Estimated hours × labour rate as used in the estimate, rounded half-up to the cent on each line.',
+  estimateMachine:
+    'Estimated hours × machine-hour rate as used in the estimate, for operations with a machine, rounded half-up to the cent on each line.',
+  estimateOverhead:
+    'Estimated hours × overhead rate as used in the estimate, rounded half-up to the cent on each line.',
+  estimateOvertime: 'Nothing: an estimate expects no overtime.',
+  estimateMaterial:
+    'Weight × (1 + scrap allowance) × price as used in the estimate, rounded half-up to the cent on each line.',
+  estimateOutside: 'The amounts of outside work in the estimate, as entered.',
+  estimateTotal:
+    'Labour + overtime + machine + overhead + material + outside of the estimate; each is the sum of its lines.',
+  priceForMargin:
+    'Estimated cost ÷ (1 − wanted margin), rounded up to the cent; the margin is a share of the price.',
+  variance: 'Actual − estimate: above 0 it cost more than estimated. Rate part + quantity part, exactly.',
+  variancePartRate:
+    '(Actual rate − estimated rate) × actual quantity, a rate being amount ÷ quantity; all of it for outside work, which has no quantity.',
+  variancePartQuantity:
+    'Variance − rate part, which is (actual quantity − estimated quantity) × estimated rate; all of it where either quantity is missing.',
   operatorLabour:
     "The labour lines of all hours on the machine, billable or not, from the machine's in-service date.",
   runningCost: "Operator's labour + running lines of the machine, through the date given.",
