@@ -101,51 +101,25 @@ async function postCosts(db: Kysely<unknown>): Promise<void> {
 
 const POSTED = ['cost_line', 'rate_gap', 'job_day', 'machine_day', 'machine_job_day'];
 
-/** BK004: whatever is posted in a closed month stays as it is, whoever asks. */
+/**
+ * Whatever is posted in a closed month stays as it is, whoever asks: nothing can be added to it, and no change or
+ * deletion finds its rows. Restrictive policies, since a comparison with one date costs a rollup next to nothing.
+ */
 async function refuseClosed(db: Kysely<unknown>): Promise<void> {
-  await sql`
-    create function refuse_closed_month() returns trigger language plpgsql as $$
-    declare
-      closed_through date := books_closed_through();
-      touched boolean;
-    begin
-      if closed_through = '-infinity' then
-        return null;
-      end if;
-      execute format('select exists (select from %I where posted_on <= $1)', tg_argv[0]) into touched using closed_through;
-      if touched then
-        raise exception 'The month is closed.' using errcode = 'BK004', detail = closed_through::text;
-      end if;
-      return null;
-    end $$`.execute(db);
-  for (const table of POSTED) {
-    await sql
-      .raw(
-        `create trigger refuse_closed_insert after insert on ${table} referencing new table as new_rows
-         for each statement execute function refuse_closed_month('new_rows')`,
-      )
-      .execute(db);
-    for (const rows of ['old', 'new'])
-      await sql
-        .raw(
-          `create trigger refuse_closed_update_${rows} after update on ${table} referencing ${rows} table as ${rows}_rows
-           for each statement execute function refuse_closed_month('${rows}_rows')`,
-        )
-        .execute(db);
-    await sql
-      .raw(
-        `create trigger refuse_closed_delete after delete on ${table} referencing old table as old_rows
-         for each statement execute function refuse_closed_month('old_rows')`,
-      )
-      .execute(db);
-  }
+  const isOpen = '(posted_on > (select books_closed_through()))';
+  for (const table of POSTED)
+    for (const [name, rule] of [
+      ['insert', `for insert with check ${isOpen}`],
+      ['update', `for update using ${isOpen} with check ${isOpen}`],
+      ['delete', `for delete using ${isOpen}`],
+    ])
+      await sql.raw(`create policy open_months_${name} on ${table} as restrictive ${rule}`).execute(db);
 }
 
 export async function down(db: Kysely<unknown>): Promise<void> {
   for (const table of POSTED)
-    for (const operation of ['insert', 'update_old', 'update_new', 'delete'])
-      await sql.raw(`drop trigger refuse_closed_${operation} on ${table}`).execute(db);
-  await sql`drop function refuse_closed_month()`.execute(db);
+    for (const operation of ['insert', 'update', 'delete'])
+      await sql.raw(`drop policy open_months_${operation} on ${table}`).execute(db);
   for (const table of ['job_day', 'machine_day', 'machine_job_day'])
     await sql.raw(`alter table ${table} rename column posted_on to worked_on`).execute(db);
   await sql`drop index cost_line_job, cost_line_late, cost_line_overhead`.execute(db);

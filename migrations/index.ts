@@ -9,6 +9,7 @@ import * as createStock from './202612011000-create-stock';
 import * as createJobMoney from './202612011010-create-job-money';
 import * as closeMonths from './202612011020-close-months';
 import * as markMoneyDays from './202612011030-mark-money-days';
+import * as showOvertimeSettings from './202612011040-show-overtime-settings';
 
 /** All migrations by name, in order; listed here so that they can be bundled with the command line. */
 export const migrations: Record<string, Migration> = {
@@ -22,4 +23,5 @@ export const migrations: Record<string, Migration> = {
   '202612011010-create-job-money': createJobMoney,
   '202612011020-close-months': closeMonths,
   '202612011030-mark-money-days': markMoneyDays,
+  '202612011040-show-overtime-settings': showOvertimeSettings,
 };

@@ -47,6 +47,8 @@ export async function createTestShop(settings: Partial<Omit<Shop, 'shopId'>> = {
     currency: 'USD',
     units: 'us',
     weekStart: 1,
+    overtimeThresholdHours: '40.00',
+    overtimeTo: 'overhead',
     ...settings,
   };
   await inShop(ownerDb, shop.shopId, { userId: null, name: 'Test' }, (trx) =>

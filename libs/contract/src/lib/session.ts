@@ -2,9 +2,12 @@ import { z } from 'zod';
 import { endpoint } from './endpoint';
 import { LIMITS } from './limits';
 import { ROLES } from './roles';
-import { emailInputSchema, idSchema, instantSchema, nameInputSchema } from './schema-values';
+import { emailInputSchema, hoursSchema, idSchema, instantSchema, nameInputSchema } from './schema-values';
 
 export const UNIT_SYSTEMS = ['us', 'metric'] as const;
+/** Where an overtime premium goes: to overhead, or spread over the jobs of the week. */
+export const OVERTIME_TO = ['overhead', 'jobs'] as const;
+export type OvertimeTo = (typeof OVERTIME_TO)[number];
 export const unitsSchema = z.enum(UNIT_SYSTEMS);
 export const roleSchema = z.enum(ROLES);
 
@@ -16,9 +19,18 @@ export const shopSchema = z.object({
   units: unitsSchema,
   /** First day of the workweek, 0 = Sunday … 6 = Saturday. */
   weekStart: z.number().int().min(0).max(6),
+  /** Hours of a week above which overtime earns a premium; null: none is computed. */
+  overtimeThresholdHours: hoursSchema.nullable(),
+  /** Where the premium goes. */
+  overtimeTo: z.enum(OVERTIME_TO),
 });
 export type Shop = z.infer<typeof shopSchema>;
 
+const thresholdInputSchema = z
+  .string()
+  .trim()
+  .regex(/^\d{1,3}(\.\d{1,2})?$/, 'Write hours with at most 2 decimals, for example 40.')
+  .refine((text) => Number(text) > 0 && Number(text) <= 168, 'Must be above 0 and at most 168, the hours of a week.');
 export const shopPatchSchema = z
   .object({
     name: nameInputSchema,
@@ -30,6 +42,8 @@ export const shopPatchSchema = z
       .regex(/^[A-Z]{3}$/, 'Write a currency code of three letters, for example USD.'),
     units: unitsSchema,
     weekStart: z.number().int().min(0).max(6),
+    overtimeThresholdHours: thresholdInputSchema.nullable(),
+    overtimeTo: z.enum(OVERTIME_TO),
   })
   .partial();
 export type ShopPatch = z.infer<typeof shopPatchSchema>;

@@ -31,7 +31,7 @@ export const RULES = {
     'Pieces × length × width × thickness × density, or the weight as given; kilograms, ten decimals.',
   machineHourRate:
     'Depreciation + interest + space + insurance + upkeep of a year ÷ planned productive hours, + power + consumables of an hour; parts to six decimals, their sum half-up to the cent.',
-  rateDepreciation: '(Price − salvage) ÷ life in years ÷ planned productive hours a year.',
+  rateDepreciation: 'Price less salvage ÷ life in years ÷ planned productive hours a year.',
   rateInterest:
     'Average capital, (price + salvage) ÷ 2, × interest a year ÷ planned productive hours a year.',
   rateSpace: 'Floor area × cost of space a year ÷ planned productive hours a year.',
@@ -60,7 +60,7 @@ export const RULES = {
     'Estimated cost ÷ (1 − wanted margin), rounded up to the cent; the margin is a share of the price.',
   variance: 'Actual − estimate: above 0 it cost more than estimated. Rate part + quantity part, exactly.',
   variancePartRate:
-    '(Actual rate − estimated rate) × actual quantity, a rate being amount ÷ quantity; all of it for outside work, which has no quantity.',
+    'Difference of the rates (actual − estimated) × actual quantity, a rate being amount ÷ quantity; all of it for outside work, which has no quantity.',
   variancePartQuantity:
     'Variance − rate part, which is (actual quantity − estimated quantity) × estimated rate; all of it where either quantity is missing.',
   operatorLabour:

@@ -50,6 +50,8 @@ export interface SessionUserRow {
   currency: string;
   units: 'us' | 'metric';
   weekStart: number;
+  overtimeThresholdHours: string | null;
+  overtimeTo: 'overhead' | 'jobs';
 }
 
 /** The active account of a session with its shop, in one round trip; null once it is inactive. */

@@ -3,7 +3,16 @@ import { type Database } from './connect';
 import { type ShopTable } from './tables';
 import { type ShopTransaction } from './tenancy';
 
-const SHOP_COLUMNS = ['shopId', 'name', 'timeZone', 'currency', 'units', 'weekStart'] as const;
+const SHOP_COLUMNS = [
+  'shopId',
+  'name',
+  'timeZone',
+  'currency',
+  'units',
+  'weekStart',
+  'overtimeThresholdHours',
+  'overtimeTo',
+] as const;
 
 /** The shop that the transaction is in. */
 export function getShopRow(trx: ShopTransaction) {

@@ -20,6 +20,8 @@ const sessionOf = (role: Role, mustChangePassword = false): Session => ({
     currency: 'CAD',
     units: 'metric',
     weekStart: 0,
+    overtimeThresholdHours: '40.00',
+    overtimeTo: 'overhead',
   },
 });
 

@@ -9,6 +9,8 @@ const SHOP: Session['shop'] = {
   currency: 'USD',
   units: 'us',
   weekStart: 1,
+  overtimeThresholdHours: '40.00',
+  overtimeTo: 'overhead',
 };
 
 /** Somebody signed in with a role, and no server behind it. */

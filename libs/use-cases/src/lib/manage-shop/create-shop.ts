@@ -21,6 +21,9 @@ export interface CreatedShop {
   temporaryPassword: string;
 }
 
+/** A week of 40 hours, and the premium in overhead: what most shops in the United States begin with. */
+const OVERTIME_AT_FIRST = { overtimeThresholdHours: '40.00', overtimeTo: 'overhead' } as const;
+
 /**
  * Makes a shop and its first owner's account.
  *
@@ -31,7 +34,7 @@ export interface CreatedShop {
 export async function createShop(ownerDb: Database, input: NewShop, actorName: string): Promise<CreatedShop> {
   checkPlace(input);
   const { owner, ...settings } = input;
-  const shop: Shop = { shopId: newId(), weekStart: 1, ...settings };
+  const shop: Shop = { shopId: newId(), weekStart: 1, ...OVERTIME_AT_FIRST, ...settings };
   const ownerUserId = newId();
   const temporaryPassword = newTemporaryPassword();
   const passwordHash = await hashPassword(temporaryPassword);

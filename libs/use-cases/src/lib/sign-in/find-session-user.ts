@@ -15,11 +15,21 @@ export async function findSessionUser(
   const row = await findSessionUserRow(db, shopId, userId);
   if (!row) return null;
   const { email, role, mustChangePassword, timeZone, currency, units, weekStart } = row;
+  const { overtimeThresholdHours, overtimeTo } = row;
   return {
     employeeId: row.employeeId,
     session: {
       user: { userId: row.userId, name: row.userName, email, role, mustChangePassword },
-      shop: { shopId: row.shopId, name: row.shopName, timeZone, currency, units, weekStart },
+      shop: {
+        shopId: row.shopId,
+        name: row.shopName,
+        timeZone,
+        currency,
+        units,
+        weekStart,
+        overtimeThresholdHours,
+        overtimeTo,
+      },
     },
   };
 }
