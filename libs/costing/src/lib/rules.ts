@@ -31,7 +31,7 @@ export const RULES = {
     'Pieces × length × width × thickness × density, or the weight as given; kilograms, ten decimals.',
   machineHourRate:
     'Depreciation + interest + space + insurance + upkeep of a year ÷ planned productive hours, + power + consumables of an hour; parts to six decimals, their sum half-up to the cent.',
-  rateDepreciation: 'Price less salvage ÷ life in years ÷ planned productive hours a year.',
+  rateDepreciation: 'Straight line: (price − salvage) ÷ life in years ÷ planned productive hours a year.',
   rateInterest:
     'Average capital, (price + salvage) ÷ 2, × interest a year ÷ planned productive hours a year.',
   rateSpace: 'Floor area × cost of space a year ÷ planned productive hours a year.',
