@@ -132,10 +132,12 @@ export async function down(db: Kysely<unknown>): Promise<void> {
   await sql`drop index cost_line_job, cost_line_late, cost_line_overhead`.execute(db);
   await sql`alter table cost_line drop constraint cost_line_pkey`.execute(db);
   // What only this shape can hold goes; a full rollup writes the rest again.
-  await sql`delete from cost_line where job_id is null or rate_id is null or posted_on <> worked_on`.execute(
+  await ofAllShops(
     db,
+    'cost_line',
+    'delete from cost_line where job_id is null or rate_id is null or posted_on <> worked_on',
   );
-  await sql`delete from rate_gap where posted_on <> worked_on`.execute(db);
+  await ofAllShops(db, 'rate_gap', 'delete from rate_gap where posted_on <> worked_on');
   await sql`alter table cost_line drop column posted_on, alter column job_id set not null,
     alter column rate_id set not null, add primary key (shop_id, worked_on, source_id, category)`.execute(db);
   await sql`alter table rate_gap drop constraint rate_gap_pkey, drop column posted_on,
