@@ -1,15 +1,17 @@
 import { ChangeDetectionStrategy, Component, inject } from '@angular/core';
 import { FormGroup, Validators } from '@angular/forms';
 import { MAT_DIALOG_DATA } from '@angular/material/dialog';
-import { type Shop } from '@brakeven/contract';
+import { type OvertimeTo, type Shop } from '@brakeven/contract';
 import { type UnitSystem } from '@brakeven/values';
 import { ShopApi } from '../api/shop-api';
 import { FormDialog } from '../forms/form-dialog';
 import { FormField } from '../forms/form-field';
+import { parsedBy } from '../forms/parsed-by';
 import { textControl } from '../forms/text-control';
+import { OVERTIME_CAUTION, OVERTIME_OPTIONS, parseThreshold, toThresholdText } from './overtime-words';
 import { listTimeZones, UNIT_OPTIONS, WEEKDAYS } from './shop-words';
 
-/** Changes the shop's settings. */
+/** Changes the shop's settings; week and threshold decide what counts as overtime. */
 @Component({
   selector: 'app-shop-dialog',
   imports: [FormDialog, FormField],
@@ -29,7 +31,21 @@ import { listTimeZones, UNIT_OPTIONS, WEEKDAYS } from './shop-words';
         [control]="form.controls.currency"
       />
       <app-form-field label="Week begins on" [options]="weekdays" [control]="form.controls.weekStart" />
-      <app-form-field class="wide" label="Units" [options]="units" [control]="form.controls.units" />
+      <app-form-field label="Units" [options]="units" [control]="form.controls.units" />
+      <app-form-field
+        label="Overtime above"
+        suffix="h a week"
+        hint="Empty: no overtime is computed"
+        [isNumber]="true"
+        [control]="form.controls.overtimeThresholdHours"
+      />
+      <app-form-field
+        label="Overtime premium goes to"
+        hint="Overhead of the shop, or the week’s jobs by hours"
+        [options]="overtimeTargets"
+        [control]="form.controls.overtimeTo"
+      />
+      <p class="muted">{{ caution }} Weeks in closed months keep the overtime that was posted.</p>
     </app-form-dialog>
   `,
   changeDetection: ChangeDetectionStrategy.OnPush,
@@ -43,6 +59,8 @@ export class ShopDialog {
   }));
   protected readonly weekdays = WEEKDAYS.map((label, day) => ({ value: String(day), label }));
   protected readonly units = UNIT_OPTIONS;
+  protected readonly overtimeTargets = OVERTIME_OPTIONS;
+  protected readonly caution = OVERTIME_CAUTION;
 
   protected readonly form = new FormGroup({
     name: textControl(this.shop.name, Validators.required, Validators.maxLength(200)),
@@ -55,10 +73,22 @@ export class ShopDialog {
     ),
     weekStart: textControl(String(this.shop.weekStart)),
     units: textControl(this.shop.units),
+    overtimeThresholdHours: textControl(
+      toThresholdText(this.shop.overtimeThresholdHours),
+      parsedBy(parseThreshold),
+    ),
+    overtimeTo: textControl(this.shop.overtimeTo),
   });
 
   protected readonly save = () => {
-    const { units, weekStart, ...value } = this.form.getRawValue();
-    return this.api.updateShop({ ...value, units: units as UnitSystem, weekStart: Number(weekStart) });
+    const { units, weekStart, overtimeThresholdHours, overtimeTo, ...value } = this.form.getRawValue();
+    const threshold = parseThreshold(overtimeThresholdHours);
+    return this.api.updateShop({
+      ...value,
+      units: units as UnitSystem,
+      weekStart: Number(weekStart),
+      overtimeThresholdHours: threshold.ok ? threshold.value : null,
+      overtimeTo: overtimeTo as OvertimeTo,
+    });
   };
 }

@@ -7,6 +7,7 @@ import { SessionStore } from '../session/session-store';
 import { RollupStore } from '../shell/rollup-store';
 import { AuditCard } from './audit-card';
 import { OperationsCard } from './operations-card';
+import { OVERTIME_CAUTION, toOvertimeSentence } from './overtime-words';
 import { SetupCard } from './setup-card';
 import { ShopDialog } from './shop-dialog';
 import { UNIT_WORDS, WEEKDAYS } from './shop-words';
@@ -37,6 +38,8 @@ export class ShopPage {
   protected readonly sections = SECTIONS;
   protected readonly weekdays = WEEKDAYS;
   protected readonly units = UNIT_WORDS;
+  protected readonly caution = OVERTIME_CAUTION;
+  protected readonly overtimeSentence = toOvertimeSentence;
   /** A new number after the register has changed under the cards: they are drawn anew. */
   protected readonly round = signal(0);
 
@@ -45,7 +48,9 @@ export class ShopPage {
       .open<ShopDialog, Shop, Shop>(ShopDialog, { data: shop, width: '520px' })
       .afterClosed()
       .subscribe((saved) => {
-        if (saved) void this.session.reload();
+        if (!saved) return;
+        void this.session.reload();
+        void this.rollup.refresh();
       });
   }
 

@@ -67,6 +67,38 @@ describe('the settings of a shop', () => {
     expect(await updateShop(shop.context(), {})).toEqual(changed);
   });
 
+  it('say from which hours on overtime counts, and where it goes', async () => {
+    expect(await getShop(shop.context())).toMatchObject({
+      overtimeThresholdHours: '40.00',
+      overtimeTo: 'overhead',
+    });
+    const spread = { overtimeThresholdHours: '37.50', overtimeTo: 'jobs' as const };
+    expect(await updateShop(shop.context(), spread)).toMatchObject(spread);
+    expect(await updateShop(shop.context(), { overtimeThresholdHours: null })).toMatchObject({
+      overtimeThresholdHours: null,
+      overtimeTo: 'jobs',
+    });
+  });
+
+  it('have the days costed anew whose overtime they may change', async () => {
+    const own = await createTestShop();
+    try {
+      const employeeId = await own.addEmployee();
+      const [jobId, operationId] = [await own.addJob(), await own.addOperation()];
+      const entry = { employeeId, jobId, operationId, workedOn: '2026-03-02', hours: '8' };
+      await own.addEntries([entry]);
+      const listDirty = () =>
+        own.inShop((trx) => trx.selectFrom('dirtyDay').select('workedOn').orderBy('workedOn').execute());
+      await own.inShop((trx) => trx.deleteFrom('dirtyDay').execute());
+      await updateShop(own.context(), { currency: 'CAD' });
+      expect(await listDirty()).toEqual([]);
+      await updateShop(own.context(), { overtimeThresholdHours: '35' });
+      expect(await listDirty()).toEqual([{ workedOn: '2026-03-02' }]);
+    } finally {
+      await own.close();
+    }
+  });
+
   it('refuse the name of another shop', async () => {
     const other = await createTestShop();
     await other.close();
