@@ -30,7 +30,10 @@ const thresholdInputSchema = z
   .string()
   .trim()
   .regex(/^\d{1,3}(\.\d{1,2})?$/, 'Write hours with at most 2 decimals, for example 40.')
-  .refine((text) => Number(text) > 0 && Number(text) <= 168, 'Must be above 0 and at most 168, the hours of a week.');
+  .refine(
+    (text) => Number(text) > 0 && Number(text) <= 168,
+    'Must be above 0 and at most 168, the hours of a week.',
+  );
 export const shopPatchSchema = z
   .object({
     name: nameInputSchema,
