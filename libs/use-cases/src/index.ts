@@ -20,6 +20,7 @@ export * from './lib/manage-shop/open-shop';
 export * from './lib/manage-shop/shop-settings';
 export * from './lib/manage-users/users';
 export * from './lib/open-database';
+export { type RefusedFields, refusingRows, toRefusalWords } from './lib/refuse-rows';
 export * from './lib/roll-up-costs/get-rollup-status';
 export * from './lib/roll-up-costs/run-rollup';
 export * from './lib/set-up-shop/get-setup-template';

@@ -1,0 +1,39 @@
+/** A row that the triggers refuse, with what they tell of it. Weights are kilograms as text. */
+export type RowRefusal =
+  | { kind: 'stock'; material: string; on: string; job: string | null; missingKg: string }
+  | { kind: 'return'; material: string; on: string; job: string; excessKg: string }
+  | { kind: 'before-job'; job: string; openedOn: string; on: string; table: DatedTable }
+  | { kind: 'closed-month'; closedThrough: string };
+
+/** Tables whose rows are not dated before their job; `job` where its opening was moved past its rows. */
+export type DatedTable = 'material_issue' | 'outside_service' | 'invoice' | 'job';
+
+/** Which rule of the books an error is about; null if it is another error. */
+export function findRowRefusal(error: unknown): RowRefusal | null {
+  if (typeof error !== 'object' || error === null) return null;
+  const { code, detail } = error as { code?: string; detail?: string };
+  const read = READERS[code ?? ''];
+  return read && detail !== undefined ? read(detail) : null;
+}
+
+const READERS: Readonly<Record<string, (detail: string) => RowRefusal>> = {
+  BK001: (detail) => {
+    const { material, on, job, missingKg } = JSON.parse(detail) as StockDetail & { missingKg: number };
+    return { kind: 'stock', material, on, job, missingKg: String(missingKg) };
+  },
+  BK002: (detail) => {
+    const { material, on, job, excessKg } = JSON.parse(detail) as StockDetail & { excessKg: number };
+    return { kind: 'return', material, on, job: job ?? '', excessKg: String(excessKg) };
+  },
+  BK003: (detail) => ({
+    kind: 'before-job',
+    ...(JSON.parse(detail) as Omit<Extract<RowRefusal, { kind: 'before-job' }>, 'kind'>),
+  }),
+  BK004: (detail) => ({ kind: 'closed-month', closedThrough: detail }),
+};
+
+interface StockDetail {
+  material: string;
+  on: string;
+  job: string | null;
+}
