@@ -6,6 +6,7 @@ export * from './lib/blank';
 export * from './lib/die-choice';
 export * from './lib/fit-row';
 export * from './lib/forming-issue';
+export * from './lib/gauge-system';
 export * from './lib/gauges';
 export * from './lib/k-factor';
 export * from './lib/least-squares';

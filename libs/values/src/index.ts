@@ -1,5 +1,6 @@
 export * from './lib/date-text';
 export * from './lib/decimal';
+export * from './lib/density';
 export * from './lib/force';
 export * from './lib/hours';
 export * from './lib/length';
