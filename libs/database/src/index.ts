@@ -13,6 +13,7 @@ export * from './lib/job-figures';
 export * from './lib/job-pages';
 export { type JobSelection } from './lib/job-selection';
 export { type KeysetPosition } from './lib/keyset';
+export { type LineFactRow, type LinePosition } from './lib/line-facts';
 export * from './lib/machine-queries';
 export * from './lib/migrate';
 export * from './lib/payback-figures';

@@ -28,7 +28,13 @@ export * from './lib/set-up-shop/import-setup';
 export * from './lib/show-hours/entries';
 export * from './lib/show-hours/void-entry';
 export * from './lib/show-jobs/change-job';
-export { getJob, getJobCost, type JobCostSummary, listJobLines } from './lib/show-jobs/get-job';
+export {
+  type EstimateSummary,
+  getJob,
+  getJobCost,
+  type JobCostSummary,
+  listJobLines,
+} from './lib/show-jobs/get-job';
 export * from './lib/show-jobs/list-jobs';
 export * from './lib/show-payback/get-payback';
 export * from './lib/show-workings/get-job-workings';

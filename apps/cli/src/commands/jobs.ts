@@ -1,5 +1,5 @@
 import { type Job, JOB_STATUSES, type JobStatus } from '@brakeven/contract';
-import { type ShopContext } from '@brakeven/use-cases';
+import { type JobCostSummary, type ShopContext } from '@brakeven/use-cases';
 import { type Command, Option } from 'commander';
 import { type Cli } from '../cli';
 import { withShop } from '../databases';
@@ -28,19 +28,34 @@ export function addJobs(program: Command, cli: Cli): void {
 async function cost(cli: Cli, number: string, shop: string): Promise<void> {
   const { getJobCost } = await import('@brakeven/use-cases');
   const result = await withShop(cli, shop, (context) => getJobCost(context, number));
-  cli.answer({
-    json: result,
-    text: () =>
-      printPairs([
-        ['Job', result.job],
-        ['Through', result.through ?? 'nothing rolled up yet'],
-        ['Hours', result.hours],
-        ['Labour', result.labour],
-        ['Machine', result.machine],
-        ['Overhead', result.overhead],
-        ['Total', result.total],
-      ]),
-  });
+  cli.answer({ json: result, text: () => toCostText(result) });
+}
+
+function toCostText(cost: JobCostSummary): string {
+  const { estimate } = cost;
+  const figures = [
+    { title: 'Hours', key: 'hours' },
+    { title: 'Labour', key: 'labour' },
+    { title: 'Overtime', key: 'overtime' },
+    { title: 'Machine', key: 'machine' },
+    { title: 'Overhead', key: 'overhead' },
+    { title: 'Material', key: 'material' },
+    { title: 'Outside', key: 'outside' },
+    { title: 'Total', key: 'total' },
+    { title: 'Invoiced', key: 'invoiced' },
+    { title: cost.marginIsProvisional ? 'Margin (provisional)' : 'Margin', key: 'margin' },
+  ] as const;
+  const head = printPairs([
+    ['Job', cost.job],
+    ['Through', cost.through ?? 'nothing rolled up yet'],
+    ['Work in progress', cost.workInProgress],
+  ]);
+  const table = printTable(figures, [
+    { title: '', of: ({ title }) => title },
+    { title: 'Actual', of: ({ key }) => cost[key], isFigure: true },
+    { title: 'Estimate', of: ({ key }) => estimate?.[key] ?? '', isFigure: true },
+  ]);
+  return `${head}\n\n${table}`;
 }
 
 async function list(
@@ -57,8 +72,11 @@ async function list(
         { title: 'Title', of: ({ title }) => title },
         { title: 'Status', of: ({ status }) => status },
         { title: 'Hours', of: ({ hours }) => hours, isFigure: true },
+        { title: 'Estimate', of: ({ estimate }) => estimate ?? '', isFigure: true },
         { title: 'Cost', of: ({ total }) => total ?? '', isFigure: true },
         { title: 'Quoted', of: ({ quotedPrice }) => quotedPrice ?? '', isFigure: true },
+        { title: 'Invoiced', of: ({ invoiced }) => invoiced ?? '', isFigure: true },
+        { title: 'Margin', of: ({ margin }) => margin ?? '', isFigure: true },
       ]),
   });
 }

@@ -12,7 +12,10 @@ import {
   pageQuerySchema,
   rateSchema,
 } from './schema-values';
-import { COST_CATEGORIES, sourceCellSchema } from './workings';
+import { COST_CATEGORIES, JOB_COST_CATEGORIES, lineFactsSchema, sourceCellSchema } from './workings';
+
+/** Hours or kg as text, as many decimals as it takes. */
+const quantityTextSchema = z.string().regex(/^-?\d+(\.\d+)?$/);
 
 export const JOB_STATUSES = ['quoted', 'open', 'finished', 'invoiced', 'lost', 'cancelled'] as const;
 export type JobStatus = (typeof JOB_STATUSES)[number];
@@ -21,31 +24,65 @@ export const JOB_SORTS = [
   'customer',
   'title',
   'status',
+  'openedOn',
   'dueOn',
   'hours',
   'machineHours',
   'labour',
+  'overtime',
   'machine',
   'overhead',
+  'material',
+  'outside',
   'total',
   'quotedPrice',
+  'estimatedHours',
+  'estimate',
+  'variance',
+  'invoiced',
+  'margin',
+  'workInProgress',
   'lastWorkedOn',
 ] as const;
+export type JobSort = (typeof JOB_SORTS)[number];
 
-/** Sums over a job's cost lines. Money is absent for those without `jobs.money`. */
-export const jobFiguresSchema = z.object({
+/** What work has cost, from its cost lines. Money is absent for those without `jobs.money`. */
+export const jobCostSchema = z.object({
   hours: hoursSchema,
   machineHours: hoursSchema,
   labour: moneySchema.optional(),
+  overtime: moneySchema.optional(),
   machine: moneySchema.optional(),
   overhead: moneySchema.optional(),
+  material: moneySchema.optional(),
+  outside: moneySchema.optional(),
+  /** The sum of the categories. */
   total: moneySchema.optional(),
+});
+export type JobCostFigures = z.infer<typeof jobCostSchema>;
+
+/** A job's cost beside its income and its estimate; over several jobs, sums of theirs. */
+export const jobFiguresSchema = jobCostSchema.extend({
+  /** Invoices less credit notes. */
+  invoiced: moneySchema.optional(),
+  /** invoiced − total */
+  margin: moneySchema.optional(),
+  /** True until the job is finished or invoiced, and over several jobs while it is true of one. */
+  marginIsProvisional: z.boolean().optional(),
+  /** Cost not yet invoiced of jobs open or finished, not below 0. */
+  workInProgress: moneySchema.optional(),
+  /** Estimated cost and hours; null without an estimate. */
+  estimate: moneySchema.nullable().optional(),
+  estimatedHours: hoursSchema.nullable().optional(),
+  /** total − estimate of jobs that have one: above 0 it cost more. */
+  variance: moneySchema.nullable().optional(),
 });
 export type JobFigures = z.infer<typeof jobFiguresSchema>;
 
 export const jobSchema = jobFiguresSchema.extend({
   jobId: idSchema,
   number: z.string(),
+  customerId: idSchema.nullable(),
   customer: z.string().nullable(),
   title: z.string(),
   quantity: z.number().int().nullable(),
@@ -63,7 +100,9 @@ export type Job = z.infer<typeof jobSchema>;
 export const jobFilterSchema = z.object({
   search: z.string().trim().max(100).optional(),
   status: z.enum(JOB_STATUSES).optional(),
+  customerId: idSchema.optional(),
 });
+export type JobFilter = z.infer<typeof jobFilterSchema>;
 export const jobListQuerySchema = pageQuerySchema.extend({
   ...jobFilterSchema.shape,
   sort: z.enum(JOB_SORTS).default('number'),
@@ -78,21 +117,54 @@ export const jobPageSchema = z.object({
 });
 export type JobPage = z.infer<typeof jobPageSchema>;
 
+/** How far a category's cost is from its estimate, and why: the two parts add up to the variance. */
+export const varianceSchema = z.object({
+  estimate: moneySchema,
+  actual: moneySchema,
+  variance: moneySchema,
+  /** (actual rate − estimated rate) × actual quantity */
+  ratePart: moneySchema,
+  /** (actual quantity − estimated quantity) × estimated rate */
+  quantityPart: moneySchema,
+});
+export const categoryVarianceSchema = varianceSchema.extend({
+  category: z.enum(JOB_COST_CATEGORIES),
+  /** Hours or kg; null where there is no measure. */
+  estimatedQuantity: quantityTextSchema.nullable(),
+  actualQuantity: quantityTextSchema.nullable(),
+});
+export type CategoryVariance = z.infer<typeof categoryVarianceSchema>;
+
 export const jobDetailSchema = jobSchema.extend({
-  byOperation: z.array(jobFiguresSchema.extend({ operationId: idSchema, operation: z.string() })),
+  byOperation: z.array(
+    jobCostSchema.extend({
+      operationId: idSchema,
+      operation: z.string(),
+      /** 0 for work that the estimate does not have; absent without an estimate. */
+      estimatedHours: hoursSchema.optional(),
+    }),
+  ),
   byWeek: z.array(z.object({ weekFrom: localDateSchema, hours: hoursSchema, total: moneySchema.optional() })),
+  /** Absent without `jobs.money`, null without an estimate. */
+  comparison: z
+    .object({
+      estimatedOn: localDateSchema,
+      categories: z.array(categoryVarianceSchema),
+      total: varianceSchema,
+    })
+    .nullable()
+    .optional(),
 });
 export type JobDetail = z.infer<typeof jobDetailSchema>;
 
 /** A cost line of a job as its page lists it; money is absent without `jobs.money`. */
-export const jobLineSchema = z.object({
+export const jobLineSchema = lineFactsSchema.extend({
   lineId: z.string(),
+  /** The day of the row itself. */
   workedOn: localDateSchema,
   category: z.enum(COST_CATEGORIES),
-  employee: z.string(),
-  operation: z.string(),
+  operation: z.string().nullable(),
   machine: z.string().nullable(),
-  hours: hoursSchema,
   rate: rateSchema.optional(),
   rateFactor: rateSchema.nullable().optional(),
   amount: moneySchema.optional(),

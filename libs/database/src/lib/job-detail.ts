@@ -1,8 +1,8 @@
 import { type Insertable, sql, type Updateable } from 'kysely';
-import { JOB_SUMS, type JobSums } from './job-pages';
+import { JOB_SUMS, type JobSums } from './job-figures';
 import { inReadingOrder } from './keyset';
-import { type SourceColumns } from './entry-pages';
-import { type CostLineTable, type JobTable } from './tables';
+import { LINE_FACT_JOINS, type LineFactRow, LINE_FACTS, type LinePosition } from './line-facts';
+import { type JobTable } from './tables';
 import { type ShopTransaction } from './tenancy';
 
 /** A job's figures by operation; gaps count with their hours, as in the job's own figures. */
@@ -38,20 +38,8 @@ export async function listJobWeekSums(
   return rows.map(({ weekFrom, hours, total }) => ({ weekFrom, hours, total }));
 }
 
-/** Where a page of cost lines goes on: the key of the last line before it. */
-export interface LinePosition {
-  postedOn: string;
-  sourceId: string;
-  category: string;
-}
-
-export interface JobLineRow extends SourceColumns, LinePosition {
-  category: CostLineTable['category'];
-  workedOn: string;
-  employee: string;
-  operation: string;
-  machine: string | null;
-  hours: string;
+/** A cost line of a job, with what its row says. */
+export interface JobLineRow extends LineFactRow {
   rate: string;
   rateFactor: string;
   amount: string;
@@ -66,21 +54,18 @@ export async function listJobLineRows(
   limit: number,
 ): Promise<JobLineRow[]> {
   const isAfter = after
-    ? sql`(l.posted_on, l.source_id, l.category) < (${after.postedOn}::date, ${after.sourceId}::uuid, ${after.category})`
+    ? sql`(posted_on, source_id, category) < (${after.postedOn}::date, ${after.sourceId}::uuid, ${after.category})`
     : sql`true`;
   const { rows } = await sql<JobLineRow>`
-    select l.posted_on, l.worked_on, l.source_id, l.category, e.name as employee, o.name as operation, m.name as machine,
-      l.quantity as hours, l.rate, l.rate_factor, l.amount,
-      t.import_id, i.file_name, i.sheet, t.source_row, t.source_cell
-    from cost_line l
-    join employee e on e.shop_id = l.shop_id and e.employee_id = l.employee_id
-    join operation o on o.shop_id = l.shop_id and o.operation_id = l.operation_id
-    join time_entry t on t.shop_id = l.shop_id and t.entry_id = l.source_id
-    left join machine m on m.shop_id = l.shop_id and m.machine_id = l.machine_id
-    left join timesheet_import i on i.shop_id = t.shop_id and i.import_id = t.import_id
-    where l.job_id = ${jobId}::uuid and l.category = any (${categories}::text[]) and ${isAfter}
-    order by l.posted_on desc, l.source_id desc, l.category desc
-    limit ${limit}`.execute(trx);
+    select ${LINE_FACTS}, l.rate, l.rate_factor, l.amount
+    from (
+      select * from cost_line
+      where job_id = ${jobId}::uuid and category = any (${categories}::text[]) and ${isAfter}
+      order by posted_on desc, source_id desc, category desc
+      limit ${limit}
+    ) l
+    ${LINE_FACT_JOINS}
+    order by l.posted_on desc, l.source_id desc, l.category desc`.execute(trx);
   return rows;
 }
 

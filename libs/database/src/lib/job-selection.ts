@@ -8,14 +8,22 @@ export interface JobSelection {
   number?: string;
   search?: string;
   status?: JobTable['status'];
+  customerId?: string;
 }
 
 /** The condition on `job j left join customer c`. */
-export function isJobSelected({ jobId, number, search, status }: JobSelection): RawBuilder<boolean> {
+export function isJobSelected({
+  jobId,
+  number,
+  search,
+  status,
+  customerId,
+}: JobSelection): RawBuilder<boolean> {
   const conditions: RawBuilder<unknown>[] = [];
   if (jobId !== undefined) conditions.push(sql`j.job_id = ${jobId}::uuid`);
   if (number !== undefined) conditions.push(sql`lower(j.number) = lower(${number})`);
   if (status !== undefined) conditions.push(sql`j.status = ${status}`);
+  if (customerId !== undefined) conditions.push(sql`j.customer_id = ${customerId}::uuid`);
   if (search !== undefined && search !== '') {
     const pattern = containing(search);
     conditions.push(sql`(j.number ilike ${pattern} or j.title ilike ${pattern} or c.name ilike ${pattern})`);

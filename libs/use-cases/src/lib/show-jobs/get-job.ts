@@ -6,43 +6,80 @@ import {
   type JobLinePage,
   type JobLineQuery,
 } from '@brakeven/contract';
+import { computeMargin } from '@brakeven/costing';
 import {
   findThrough,
   type JobLineRow,
   type JobRow,
   type JobSelection,
+  listEstimatedOperationHours,
   listJobLineRows,
   listJobOperationSums,
   listJobRows,
   listJobWeekSums,
   type ShopTransaction,
 } from '@brakeven/database';
-import { rateText, toRate } from '@brakeven/values';
+import { hoursText, moneyText, rateText, toMoney, toRate } from '@brakeven/values';
 import { inShopOf, type ShopContext } from '../context';
+import { readEstimate, type StoredEstimate } from '../estimate-jobs/estimate-cost';
 import { cutPage, linePositionSchema, readCursor, writeCursor } from '../page-cursor';
 import { toSourceCell } from '../source-cell';
-import { seesMoney, toJob, toJobFigures } from './job-dto';
+import { compareJob } from './compare-job';
+import { seesMoney, toJob, toJobCost } from './job-dto';
 
 /**
- * A job with its figures, by operation and by week of the shop.
+ * A job with its figures, by operation and by week of the shop, and held against its estimate.
  * @throws AppError `not_found`
  */
 export function getJob(context: ShopContext, { jobId }: { jobId: string }): Promise<JobDetail> {
   return inShopOf(context, async (trx) => {
     const job = await getJobRow(trx, { jobId });
-    const operations = await listJobOperationSums(trx, jobId);
     const weeks = await listJobWeekSums(trx, jobId, context.shop.weekStart);
+    const estimate = seesMoney(context) ? await readEstimate(trx, jobId) : null;
     return {
       ...toJob(context, job),
-      byOperation: operations.map(({ operationId, operation, ...sums }) => ({
-        operationId,
-        operation,
-        ...toJobFigures(context, sums),
-      })),
+      byOperation: await listOperations(context, trx, jobId, estimate !== null),
       byWeek: weeks.map(({ total, ...week }) => (seesMoney(context) ? { ...week, total } : week)),
+      ...(seesMoney(context) ? { comparison: estimate && (await compareJob(trx, jobId, estimate)) } : {}),
     };
   });
 }
+
+/** Operations that were worked, and those that the estimate has besides. */
+async function listOperations(
+  context: ShopContext,
+  trx: ShopTransaction,
+  jobId: string,
+  isEstimated: boolean,
+): Promise<JobDetail['byOperation']> {
+  const worked = (await listJobOperationSums(trx, jobId)).map(({ operationId, operation, ...sums }) => ({
+    operationId,
+    operation,
+    ...toJobCost(context, sums),
+  }));
+  if (!isEstimated) return worked;
+  const estimated = await listEstimatedOperationHours(trx, jobId);
+  const hoursOf = new Map(estimated.map(({ operationId, hours }) => [operationId, hours]));
+  const isWorked = new Set(worked.map(({ operationId }) => operationId));
+  const idle = estimated.filter(({ operationId }) => !isWorked.has(operationId));
+  return [...worked, ...idle.map(({ hours: _hours, ...names }) => ({ ...names, ...NOTHING }))].map((row) => ({
+    ...row,
+    estimatedHours: hoursOf.get(row.operationId) ?? NOTHING.hours,
+  }));
+}
+
+/** What an operation has taken that nobody has worked yet. */
+const NOTHING = {
+  hours: '0.0000',
+  machineHours: '0.0000',
+  labour: '0.00',
+  overtime: '0.00',
+  machine: '0.00',
+  overhead: '0.00',
+  material: '0.00',
+  outside: '0.00',
+  total: '0.00',
+};
 
 /**
  * A page of the lines that a job's cost is the sum of, latest first; of one category if asked for.
@@ -66,28 +103,69 @@ export async function listJobLines(
   });
 }
 
+type Category = (typeof JOB_COST_CATEGORIES)[number];
+
 /** What a job cost, for the command line. */
-export interface JobCostSummary {
+export interface JobCostSummary extends Record<Category, string> {
   job: string;
   /** The last day in the costs; null before the first rollup. */
   through: string | null;
   hours: string;
-  labour: string;
-  machine: string;
-  overhead: string;
   total: string;
+  invoiced: string;
+  margin: string;
+  marginIsProvisional: boolean;
+  workInProgress: string;
+  /** The same as estimated: `invoiced` is the quoted price; null without an estimate. */
+  estimate: EstimateSummary | null;
+}
+
+/** What a job was estimated to cost; income and margin are null without a quoted price. */
+export interface EstimateSummary extends Record<Category, string> {
+  hours: string;
+  total: string;
+  invoiced: string | null;
+  margin: string | null;
 }
 
 /**
- * What a job has cost through the last day rolled up, by its number.
- * @throws AppError `not_found`
+ * What a job has cost through the last day rolled up, by its number, beside its estimate.
+ * @throws AppError `not_found`, `forbidden` without `jobs.money`
  */
-export function getJobCost(context: ShopContext, number: string): Promise<JobCostSummary> {
+export async function getJobCost(context: ShopContext, number: string): Promise<JobCostSummary> {
+  if (!seesMoney(context)) throw new AppError('forbidden', 'You may not see money on jobs.');
   return inShopOf(context, async (trx) => {
     const job = await getJobRow(trx, { number: number.trim() });
-    const { hours, labour, machine, overhead, total } = job;
-    return { job: job.number, through: await findThrough(trx), hours, labour, machine, overhead, total };
+    const estimate = await readEstimate(trx, job.jobId);
+    return {
+      job: job.number,
+      through: await findThrough(trx),
+      hours: job.hours,
+      labour: job.labour,
+      overtime: job.overtime,
+      machine: job.machine,
+      overhead: job.overhead,
+      material: job.material,
+      outside: job.outside,
+      total: job.total,
+      invoiced: job.invoiced,
+      margin: job.margin,
+      marginIsProvisional: job.marginIsProvisional,
+      workInProgress: job.workInProgress,
+      estimate: estimate && toEstimateSummary(estimate, job.quotedPrice),
+    };
   });
+}
+
+function toEstimateSummary({ cost }: StoredEstimate, quotedPrice: string | null): EstimateSummary {
+  const amounts = JOB_COST_CATEGORIES.map((category) => [category, moneyText(cost.figures[category].amount)]);
+  return {
+    hours: hoursText(cost.hours),
+    ...(Object.fromEntries(amounts) as Record<Category, string>),
+    total: moneyText(cost.total),
+    invoiced: quotedPrice,
+    margin: quotedPrice === null ? null : moneyText(computeMargin(toMoney(quotedPrice), cost.total)),
+  };
 }
 
 /** Reads the one job that is meant. */

@@ -19,7 +19,8 @@ import { listJobs } from './list-jobs';
 
 jest.setTimeout(30_000);
 
-const MONEY_KEYS = /"(labour|machine|overhead|total|quotedPrice|rate|rateFactor|amount)":/;
+const MONEY_KEYS =
+  /"(labour|overtime|machine|overhead|material|outside|total|quotedPrice|invoiced|margin|workInProgress|estimate|variance|rate|rateFactor|amount)":/;
 
 describe('jobs', () => {
   let shop: WorkedShop;
@@ -145,15 +146,10 @@ describe('jobs', () => {
     const job = await getJob(owner, { jobId: shop.jobs.guards });
     const { hours, labour, machine, overhead, total } = job;
     const { through } = await getRollupStatus(owner);
-    expect(await getJobCost(owner, ' 1042 ')).toEqual({
-      job: '1042',
-      through,
-      hours,
-      labour,
-      machine,
-      overhead,
-      total,
-    });
+    const cost = await getJobCost(owner, ' 1042 ');
+    expect(cost).toMatchObject({ job: '1042', through, hours, labour, machine, overhead, total });
+    expect(cost).toMatchObject({ invoiced: '0.00', margin: `-${total}`, marginIsProvisional: true });
+    expect(cost).toMatchObject({ workInProgress: total, estimate: null });
     await expect(getJobCost(owner, '77')).rejects.toMatchObject({ code: 'not_found' });
   });
 

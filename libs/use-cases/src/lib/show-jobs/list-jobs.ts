@@ -1,10 +1,21 @@
-import { AppError, type JobListQuery, type JobPage } from '@brakeven/contract';
-import { type JobSort, jobSortType, listJobRows, sumJobs } from '@brakeven/database';
+import { AppError, type JobFilter, type JobListQuery, type JobPage, type JobSort } from '@brakeven/contract';
+import { type JobSelection, jobSortType, listJobRows, sumJobs } from '@brakeven/database';
 import { inShopOf, type ShopContext } from '../context';
 import { cutPage, positionSchema, readCursor, writeCursor } from '../page-cursor';
 import { seesMoney, toJob, toJobFigures } from './job-dto';
 
-const MONEY_SORTS: readonly JobSort[] = ['labour', 'machine', 'overhead', 'total', 'quotedPrice'];
+/** What may be sorted by without seeing money; an order by money, or by an estimate, would tell it. */
+const PLAIN_SORTS: readonly JobSort[] = [
+  'number',
+  'customer',
+  'title',
+  'status',
+  'openedOn',
+  'dueOn',
+  'hours',
+  'machineHours',
+  'lastWorkedOn',
+];
 
 /**
  * A page of jobs with their figures, and the totals over all jobs of the filter.
@@ -12,13 +23,11 @@ const MONEY_SORTS: readonly JobSort[] = ['labour', 'machine', 'overhead', 'total
  *   see it, since the order alone would tell
  */
 export async function listJobs(context: ShopContext, query: JobListQuery): Promise<JobPage> {
-  const { cursor, limit, sort, direction, status } = query;
-  if (MONEY_SORTS.includes(sort) && !seesMoney(context)) {
-    throw new AppError('forbidden', 'You may not see money on jobs, so they cannot be sorted by it.');
-  }
+  const { cursor, limit, sort, direction } = query;
+  checkJobSort(context, sort);
   const list = `jobs.${sort}.${direction}`;
   const after = readCursor(cursor, list, positionSchema(jobSortType(sort)));
-  const selection = { status, search: query.search?.replaceAll('\0', '') };
+  const selection = toJobSelection(query);
   return inShopOf(context, async (trx) => {
     const found = await listJobRows(trx, selection, { sort, direction, after, limit: limit + 1 });
     const { jobs, quotedPrice, ...sums } = await sumJobs(trx, selection);
@@ -31,4 +40,18 @@ export async function listJobs(context: ShopContext, query: JobListQuery): Promi
       totals: { jobs, ...toJobFigures(context, sums), ...(seesMoney(context) ? { quotedPrice } : {}) },
     };
   });
+}
+
+/**
+ * Refuses an order by what the actor may not see.
+ * @throws AppError `forbidden`
+ */
+export function checkJobSort(context: ShopContext, sort: JobSort): void {
+  if (PLAIN_SORTS.includes(sort) || seesMoney(context)) return;
+  throw new AppError('forbidden', 'You may not see money on jobs, so they cannot be sorted by it.');
+}
+
+/** A filter as the database takes it. */
+export function toJobSelection({ search, status, customerId }: JobFilter): JobSelection {
+  return { status, customerId, search: search?.replaceAll('\0', '') };
 }

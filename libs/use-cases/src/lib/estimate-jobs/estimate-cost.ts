@@ -1,0 +1,73 @@
+import { computeEstimate, type EstimateCost, type EstimateLine as CostingLine } from '@brakeven/costing';
+import {
+  type EstimateHeadRow,
+  type EstimateLineRow,
+  findEstimate,
+  listEstimateLines,
+  type ShopTransaction,
+} from '@brakeven/database';
+import { D, toHours, toMass, toMoney, toPercent, toRate } from '@brakeven/values';
+
+/** A line as it is costed, however it is kept. */
+export type CostedLine = Pick<
+  EstimateLineRow,
+  | 'kind'
+  | 'setupHours'
+  | 'minutesPerPiece'
+  | 'pieces'
+  | 'labourRate'
+  | 'machineHourRate'
+  | 'overheadRate'
+  | 'weightKg'
+  | 'pricePerKg'
+  | 'amount'
+>;
+
+/** An estimate with what it comes to. */
+export interface StoredEstimate {
+  head: EstimateHeadRow;
+  lines: EstimateLineRow[];
+  cost: EstimateCost;
+}
+
+/** Reads and costs the estimate of a job; null if it has none. */
+export async function readEstimate(trx: ShopTransaction, jobId: string): Promise<StoredEstimate | null> {
+  const head = await findEstimate(trx, jobId);
+  if (!head) return null;
+  const lines = await listEstimateLines(trx, jobId);
+  return { head, lines, cost: costLines(lines, head.scrapAllowancePercent) };
+}
+
+/** What lines come to with a scrap allowance. */
+export function costLines(lines: readonly CostedLine[], scrapAllowancePercent: string): EstimateCost {
+  return computeEstimate(lines.map(toCostingLine), toPercent(scrapAllowancePercent));
+}
+
+function toCostingLine(line: CostedLine): CostingLine {
+  switch (line.kind) {
+    case 'operation':
+      return {
+        kind: 'operation',
+        setupHours: toHours(present(line.setupHours)),
+        minutesPerPiece: D(present(line.minutesPerPiece)),
+        pieces: D(present(line.pieces)),
+        labourRate: toRate(present(line.labourRate)),
+        machineHourRate: line.machineHourRate === null ? null : toRate(line.machineHourRate),
+        overheadRate: toRate(present(line.overheadRate)),
+      };
+    case 'material':
+      return {
+        kind: 'material',
+        weight: toMass(present(line.weightKg), 'kg'),
+        pricePerKg: toRate(present(line.pricePerKg)),
+      };
+    case 'outside':
+      return { kind: 'outside', amount: toMoney(present(line.amount)) };
+  }
+}
+
+/** The table's own check and the contract let no line of a kind be without what the kind needs. */
+function present<T>(value: T | null): T {
+  if (value === null) throw new Error('A line of an estimate lacks a number of its kind.');
+  return value;
+}
