@@ -1,7 +1,7 @@
-import { hoursText, moneyText } from '@brakeven/values';
+import { D, hoursText, moneyText, toMoney } from '@brakeven/values';
 import { bookOf, entryOf } from '../../testing/example-shop';
 import { computeLines, type CostedEntry } from './entry-lines';
-import { computeJobCost } from './job-cost';
+import { computeJobCost, JOB_STATUSES, type JobCostLine, type JobStatus } from './job-cost';
 
 function costOf(entries: CostedEntry[], book = bookOf()) {
   const { lines, gaps } = computeLines(entries, book);
@@ -55,5 +55,74 @@ describe('the cost of a job', () => {
 
   it('of no entries is nought', () => {
     expect(costOf([])).toMatchObject({ hours: '0.0000', total: '0.00', gapCount: 0 });
+  });
+});
+
+describe('the cost of a job in every category', () => {
+  const line = (category: JobCostLine['category'], amount: string, quantity = '1'): JobCostLine => ({
+    category,
+    amount: toMoney(amount),
+    quantity: D(quantity),
+  });
+  const lines = [
+    line('labour', '200.00', '8'),
+    line('overtime', '12.50', '8'),
+    line('machine', '90.00', '5'),
+    line('overhead', '60.00', '8'),
+    line('material', '310.20', '120.5'),
+    line('material', '-18.10', '-7'),
+    line('outside', '75.00'),
+    line('invoiced', '900.00'),
+    line('invoiced', '-100.00', '-1'),
+    line('earned', '475.00', '5'),
+    line('running', '30.00', '5'),
+  ];
+  const costIn = (status: JobStatus, of = lines) => computeJobCost(of, [], status);
+
+  it('adds up what it is made of, and leaves income and payback out of it', () => {
+    // 200 + 12.50 + 90 + 60 + 292.10 + 75 = 729.60; 800 − 729.60 = 70.40
+    const cost = costIn('finished');
+    const texts = Object.entries(cost).flatMap(([key, value]) =>
+      typeof value === 'object' ? [[key, moneyText(toMoney(value))]] : [],
+    );
+    expect(Object.fromEntries(texts)).toEqual({
+      hours: '8.00',
+      machineHours: '5.00',
+      labour: '200.00',
+      overtime: '12.50',
+      machine: '90.00',
+      overhead: '60.00',
+      material: '292.10',
+      outside: '75.00',
+      total: '729.60',
+      invoiced: '800.00',
+      margin: '70.40',
+      workInProgress: '0.00',
+      earned: '475.00',
+    });
+  });
+
+  it('has a margin that is provisional until the job is finished or invoiced', () => {
+    const provisional = JOB_STATUSES.filter((status) => costIn(status).marginIsProvisional);
+    expect(provisional).toEqual(['quoted', 'open', 'lost', 'cancelled']);
+  });
+
+  it('is work in progress as far as it is not invoiced, while the job is open or finished', () => {
+    const uninvoiced = lines.filter((of) => of.category !== 'invoiced' || of.quantity.lt(0));
+    const inProgress = JOB_STATUSES.map((status) => moneyText(costIn(status, uninvoiced).workInProgress));
+    expect(inProgress).toEqual(['0.00', '829.60', '829.60', '0.00', '0.00', '0.00']);
+  });
+
+  it('counts what is taken back against cost and hours', () => {
+    const back = lines.map(({ category, amount, quantity }) =>
+      line(category, `${amount.negated()}`, `${quantity.negated()}`),
+    );
+    const cost = costIn('open', [...lines, ...back]);
+    expect([hoursText(cost.hours), hoursText(cost.machineHours)]).toEqual(['0.0000', '0.0000']);
+    expect([moneyText(cost.total), moneyText(cost.invoiced), moneyText(cost.margin)]).toEqual([
+      '0.00',
+      '0.00',
+      '0.00',
+    ]);
   });
 });

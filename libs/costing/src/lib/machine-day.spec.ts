@@ -1,4 +1,4 @@
-import { hoursText, moneyText } from '@brakeven/values';
+import { hoursText, moneyText, toLocalDate } from '@brakeven/values';
 import { bookOf, entryOf } from '../../testing/example-shop';
 import { computeLines, type CostedEntry } from './entry-lines';
 import { computeMachineDays } from './machine-day';
@@ -63,4 +63,21 @@ describe('the days of a machine', () => {
       { hours: '7.5000', billableHours: '7.5000', earned: '0.00', operatorLabour: '234.00', running: '0.00' },
     ]);
   });
+});
+
+it('what came late counts on its day in the books, if it was done in service', () => {
+  const postedOn = toLocalDate('2026-04-01');
+  const entries = [
+    entryOf({ entryId: 'a' }),
+    entryOf({ entryId: 'b', hours: '1' }),
+    entryOf({ entryId: 'c', workedOn: '2026-02-15' }),
+  ];
+  const lines = computeLines(entries, bookOf()).lines.map((line) =>
+    line.entryId === 'a' ? line : { ...line, postedOn },
+  );
+  const days = computeMachineDays(lines, bookOf().inServiceOn);
+  expect(days.map((day) => [day.workedOn, hoursText(day.hours), moneyText(day.earned)])).toEqual([
+    ['2026-03-02', '7.5000', '712.50'],
+    ['2026-04-01', '1.0000', '95.00'],
+  ]);
 });
