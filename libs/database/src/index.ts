@@ -20,6 +20,7 @@ export * from './lib/payback-figures';
 export * from './lib/people-queries';
 export * from './lib/register-rows';
 export * from './lib/rollup';
+export * from './lib/rollup-months';
 export * from './lib/rollup-run';
 export * from './lib/rollup-state';
 export * from './lib/row-refusal';
