@@ -1,6 +1,9 @@
+import { customerEndpoints } from './customers';
 import { hoursEndpoints } from './hours';
+import { jobMoneyEndpoints } from './job-money';
 import { jobEndpoints } from './jobs';
 import { machineEndpoints } from './machines';
+import { materialEndpoints } from './materials';
 import { paybackEndpoints } from './payback';
 import { peopleEndpoints } from './people';
 import { rollupEndpoints } from './rollup';
@@ -15,6 +18,9 @@ export const ENDPOINTS = {
   ...peopleEndpoints,
   ...machineEndpoints,
   ...jobEndpoints,
+  ...jobMoneyEndpoints,
+  ...materialEndpoints,
+  ...customerEndpoints,
   ...hoursEndpoints,
   ...timesheetEndpoints,
   ...setupEndpoints,

@@ -27,6 +27,8 @@ export const hoursSchema = decimal(4, '7.5').meta({ id: 'Hours' });
 export const rateSchema = decimal(6, '85.00').meta({ id: 'Rate' });
 /** Lengths, forces as text. */
 export const quantitySchema = decimal(5, '1828.8').meta({ id: 'Quantity' });
+/** A weight as text, kilograms; ten decimals hold hundredths of a pound exactly. */
+export const weightSchema = decimal(10, '453.59237').meta({ id: 'Weight' });
 
 const notNegative = (schema: z.ZodString) =>
   schema.refine((text) => !text.startsWith('-'), 'Must not be negative.');
@@ -37,6 +39,12 @@ export const percentInputSchema = notNegative(decimal(4, '28')).refine(
   'At most 1000 percent.',
 );
 export const quantityInputSchema = notNegative(decimal(5, '1828.8'));
+
+const positive = (schema: z.ZodString) => schema.refine((text) => Number(text) > 0, 'Must be more than 0.');
+export const positiveAmountInputSchema = positive(decimal(2, '1234.50'));
+export const positiveQuantityInputSchema = positive(decimal(5, '1828.8'));
+export const positiveWeightInputSchema = positive(decimal(10, '453.59237'));
+export const countInputSchema = z.number().int().min(1, 'At least 1.').max(1_000_000, 'At most a million.');
 
 export const nameInputSchema = z
   .string()
