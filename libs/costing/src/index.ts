@@ -1,3 +1,4 @@
+export * from './lib/average-loaded-rate';
 export * from './lib/check-timesheet';
 export * from './lib/compare-with-estimate';
 export * from './lib/cost-categories';
@@ -20,4 +21,5 @@ export * from './lib/ratios';
 export * from './lib/round-fraction';
 export * from './lib/rules';
 export * from './lib/shop-postings';
+export * from './lib/scale-estimate';
 export * from './lib/source-line';
