@@ -32,6 +32,13 @@ export interface TestShop {
   addJob(row?: Partial<Row<'job'>>): Promise<string>;
   addImport(row?: Partial<Row<'timesheetImport'>>): Promise<string>;
   addEntries(rows: readonly Row<'timeEntry'>[]): Promise<string[]>;
+  addMaterial(row?: Partial<Row<'material'>>): Promise<string>;
+  addLot(row: Row<'sheetLot', 'number'>): Promise<string>;
+  addIssue(row: Row<'materialIssue', 'kind'>): Promise<string>;
+  addOutsideService(row: Row<'outsideService'>): Promise<string>;
+  addInvoice(row: Row<'invoice', 'kind' | 'number'>): Promise<string>;
+  /** @param month its first day; roll up before */
+  addMonthClose(month: string): Promise<string>;
   /** Ends both connections; the rows stay, other tests do not see them. */
   close(): Promise<void>;
 }
@@ -98,6 +105,12 @@ function createBuilders(shopId: string, run: TestShop['inShop']): Builders {
     addCustomer: (name) => add('customer', 'customerId', { name }),
     addJob: (row) => add('job', 'jobId', { number: nth('J'), title: nth('Job '), status: 'open', ...row }),
     addImport: (row) => add('timesheetImport', 'importId', { ...emptyImport(), ...row }),
+    addMaterial: (row) => add('material', 'materialId', { name: nth('Sheet '), form: 'sheet', ...row }),
+    addLot: (row) => add('sheetLot', 'lotId', { number: nth('L'), ...row }),
+    addIssue: (row) => add('materialIssue', 'issueId', { kind: 'issue', ...row }),
+    addOutsideService: (row) => add('outsideService', 'outsideServiceId', row),
+    addInvoice: (row) => add('invoice', 'invoiceId', { kind: 'invoice', number: nth('I'), ...row }),
+    addMonthClose: (month) => add('monthClose', 'monthCloseId', { month, closedBy: 'Test' }),
     addEntries: (rows) => run((trx) => insertEntries(trx, shopId, rows)),
   };
 }
