@@ -1,5 +1,9 @@
 export * from './lib/audit/list-audit-events';
 export * from './lib/context';
+export * from './lib/estimate-jobs/copy-estimate';
+export { getEstimateChoices } from './lib/estimate-jobs/estimate-choices';
+export * from './lib/estimate-jobs/estimates';
+export * from './lib/estimate-jobs/get-estimate-workings';
 export * from './lib/examine/examine-database';
 export * from './lib/forming/estimate-blank';
 export * from './lib/forming/estimate-depth';
@@ -9,7 +13,22 @@ export * from './lib/import-timesheet/check-timesheet';
 export * from './lib/import-timesheet/import-timesheet';
 export * from './lib/import-timesheet/undo-import';
 export { type FileDownload, type UploadedFile, type UploadTools } from './lib/import-timesheet/upload';
+export {
+  createMachineBuiltRate,
+  getMachineRate,
+  type MachineRateSummary,
+  updateMachineBuiltRate,
+} from './lib/manage-machines/built-rates';
+export {
+  createInvoice,
+  listInvoices,
+  restoreInvoice,
+  updateInvoice,
+  voidInvoice,
+} from './lib/manage-job-money/invoices';
+export * from './lib/manage-job-money/outside-services';
 export * from './lib/manage-machines/machine-costs';
+export { getMachineRecovery } from './lib/manage-machines/machine-recovery';
 export * from './lib/manage-machines/machines';
 export * from './lib/manage-people/employees';
 export * from './lib/manage-people/operations';
@@ -18,6 +37,15 @@ export * from './lib/manage-people/pay-rates';
 export * from './lib/manage-shop/create-shop';
 export * from './lib/manage-shop/open-shop';
 export * from './lib/manage-shop/shop-settings';
+export * from './lib/manage-stock/material-issues';
+export {
+  createMaterial,
+  getMaterial,
+  listMaterials,
+  updateMaterial,
+} from './lib/manage-stock/materials';
+export * from './lib/manage-stock/sheet-lots';
+export * from './lib/manage-stock/stock-moves';
 export * from './lib/manage-users/users';
 export * from './lib/open-database';
 export { type RefusedFields, refusingRows, toRefusalWords } from './lib/refuse-rows';
@@ -25,6 +53,7 @@ export * from './lib/roll-up-costs/get-rollup-status';
 export * from './lib/roll-up-costs/run-rollup';
 export * from './lib/set-up-shop/get-setup-template';
 export * from './lib/set-up-shop/import-setup';
+export * from './lib/show-customers/customers';
 export * from './lib/show-hours/entries';
 export * from './lib/show-hours/void-entry';
 export * from './lib/show-jobs/change-job';
@@ -38,7 +67,9 @@ export {
 export * from './lib/show-jobs/list-jobs';
 export * from './lib/show-payback/get-payback';
 export * from './lib/show-workings/get-job-workings';
+export * from './lib/show-workings/get-overtime-workings';
 export * from './lib/show-workings/get-payback-workings';
+export * from './lib/show-workings/get-stock-workings';
 export * from './lib/sign-in/change-password';
 export * from './lib/sign-in/find-session-user';
 export * from './lib/sign-in/sign-in';

@@ -1,3 +1,4 @@
+export * from './lib/area';
 export * from './lib/date-text';
 export * from './lib/decimal';
 export * from './lib/density';

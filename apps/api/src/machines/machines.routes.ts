@@ -1,14 +1,17 @@
 import { ENDPOINTS } from '@brakeven/contract';
 import {
   createMachine,
+  createMachineBuiltRate,
   createMachineCostItem,
   createMachineRate,
   deleteMachineCostItem,
   deleteMachineRate,
   getMachine,
+  getMachineRecovery,
   getPayback,
   listMachines,
   updateMachine,
+  updateMachineBuiltRate,
   updateMachineCostItem,
   updateMachineRate,
 } from '@brakeven/use-cases';
@@ -30,5 +33,14 @@ export function mountMachines({ mount }: Api): void {
   mount(ENDPOINTS.createMachineRate, ({ context, params, body }) => createMachineRate(context, params, body));
   mount(ENDPOINTS.updateMachineRate, ({ context, params, body }) => updateMachineRate(context, params, body));
   mount(ENDPOINTS.deleteMachineRate, ({ context, params }) => deleteMachineRate(context, params));
+  mount(ENDPOINTS.createMachineBuiltRate, ({ context, params, body }) =>
+    createMachineBuiltRate(context, params, body),
+  );
+  mount(ENDPOINTS.updateMachineBuiltRate, ({ context, params, body }) =>
+    updateMachineBuiltRate(context, params, body),
+  );
+  mount(ENDPOINTS.getMachineRecovery, ({ context, params, query }) =>
+    getMachineRecovery(context, { ...params, ...query }),
+  );
   mount(ENDPOINTS.getPayback, ({ context, params }) => getPayback(context, params));
 }

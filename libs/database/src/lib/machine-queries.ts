@@ -1,5 +1,10 @@
-import { type Insertable, type Updateable } from 'kysely';
-import { type MachineCostItemTable, type MachineRateTable, type MachineTable } from './tables';
+import { type Insertable, type Selectable, sql, type Updateable } from 'kysely';
+import {
+  type MachineCostItemTable,
+  type MachineRateBasisTable,
+  type MachineRateTable,
+  type MachineTable,
+} from './tables';
 import { type ShopTransaction } from './tenancy';
 
 /** All machines by code, or the one asked for. */
@@ -128,4 +133,93 @@ export async function deleteMachineRateRow(
     .where('machineRateId', '=', machineRateId)
     .executeTakeFirst();
   return result.numDeletedRows > 0n;
+}
+
+/** A rate's basis, without the shop that the transaction is in anyway. */
+export type MachineRateBasisRow = Omit<Selectable<MachineRateBasisTable>, 'shopId'>;
+
+const BASIS_COLUMNS = [
+  'price',
+  'salvage',
+  'lifeYears',
+  'interestPercent',
+  'floorAreaM2',
+  'spaceCostPerM2Year',
+  'insurancePerYear',
+  'upkeepPerYear',
+  'productiveHoursPerYear',
+  'powerKw',
+  'loadPercent',
+  'tariffPerKwh',
+  'consumablesPerHour',
+] as const satisfies readonly (keyof MachineRateBasisTable)[];
+
+/** What rates were built from, of one machine or of all; rates that were typed in have none. */
+export function listMachineRateBasisRows(
+  trx: ShopTransaction,
+  machineId?: string,
+): Promise<MachineRateBasisRow[]> {
+  return trx
+    .selectFrom('machineRateBasis')
+    .select(['machineRateId', ...BASIS_COLUMNS])
+    .$if(machineId !== undefined, (query) =>
+      query.where('machineRateId', 'in', (eb) =>
+        eb
+          .selectFrom('machineRate')
+          .select('machineRateId')
+          .where('machineId', '=', machineId ?? ''),
+      ),
+    )
+    .execute();
+}
+
+/** Keeps what a rate was built from, in place of what it was built from before. */
+export async function saveMachineRateBasis(
+  trx: ShopTransaction,
+  row: Insertable<MachineRateBasisTable>,
+): Promise<void> {
+  await trx
+    .insertInto('machineRateBasis')
+    .values(row)
+    .onConflict((conflict) =>
+      conflict
+        .columns(['shopId', 'machineRateId'])
+        .doUpdateSet((eb) =>
+          Object.fromEntries(BASIS_COLUMNS.map((column) => [column, eb.ref(`excluded.${column}`)])),
+        ),
+    )
+    .execute();
+}
+
+/** Forgets what a rate was built from: it is typed in from now on. */
+export async function deleteMachineRateBasis(trx: ShopTransaction, machineRateId: string): Promise<void> {
+  await trx.deleteFrom('machineRateBasis').where('machineRateId', '=', machineRateId).execute();
+}
+
+/**
+ * Hours that a machine ran on each day of a period, the day of the work and not that in the books, net of what late
+ * lines take back, and with those that lack a rate; days without hours are left out.
+ */
+export async function listMachineHours(
+  trx: ShopTransaction,
+  machineId: string,
+  from: string,
+  to: string,
+): Promise<{ workedOn: string; hours: string }[]> {
+  // Lines that came late are found by the day of their work; all others by their day in the books.
+  const { rows } = await sql<{ workedOn: string; hours: string }>`
+    select worked_on, sum(quantity) as hours
+    from (
+      select worked_on, quantity, category, machine_id from cost_line
+      where posted_on between ${from}::date and ${to}::date and posted_on = worked_on
+      union all
+      select worked_on, quantity, category, machine_id from cost_line
+      where worked_on between ${from}::date and ${to}::date and posted_on <> worked_on
+      union all
+      select worked_on, hours, category, machine_id from rate_gap
+      where worked_on between ${from}::date and ${to}::date
+    ) line
+    where category = 'machine' and machine_id = ${machineId}
+    group by worked_on`.execute(trx);
+  return rows;
 }

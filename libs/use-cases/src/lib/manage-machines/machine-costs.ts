@@ -1,28 +1,18 @@
-import { AppError, type Machine, type MachineCostItemInput, type MachineRateInput } from '@brakeven/contract';
+import { type Machine, type MachineCostItemInput, type MachineRateInput } from '@brakeven/contract';
 import {
   deleteMachineCostItemRow,
+  deleteMachineRateBasis,
   deleteMachineRateRow,
   insertMachineCostItem,
   insertMachineRate,
-  type ShopTransaction,
+  listMachineRateRows,
   updateMachineCostItemRow,
   updateMachineRateRow,
 } from '@brakeven/database';
+import { D } from '@brakeven/values';
 import { v7 as newId } from 'uuid';
-import { inShopOf, type ShopContext } from '../context';
-import { refusingConflicts } from '../refuse-conflict';
-import { readMachine } from './machines';
-
-const CONFLICTS = {
-  machine_rate_shop_id_machine_id_valid_from_key: {
-    field: 'validFrom',
-    message: 'There are already rates from this day on. Correct those.',
-  },
-};
-
-interface MachineRef {
-  machineId: string;
-}
+import { type ShopContext } from '../context';
+import { changeMachine, type MachineRef } from './change-machine';
 
 /**
  * Adds to a machine's landed cost.
@@ -33,7 +23,7 @@ export function createMachineCostItem(
   { machineId }: MachineRef,
   body: MachineCostItemInput,
 ): Promise<Machine> {
-  return change(context, machineId, async (trx) => {
+  return changeMachine(context, machineId, async (trx) => {
     const { shopId } = context.shop;
     await insertMachineCostItem(trx, { shopId, machineCostItemId: newId(), machineId, ...body });
     return true;
@@ -49,7 +39,7 @@ export function updateMachineCostItem(
   { machineId, machineCostItemId }: MachineRef & { machineCostItemId: string },
   body: MachineCostItemInput,
 ): Promise<Machine> {
-  return change(context, machineId, (trx) =>
+  return changeMachine(context, machineId, (trx) =>
     updateMachineCostItemRow(trx, machineId, machineCostItemId, body),
   );
 }
@@ -62,7 +52,9 @@ export function deleteMachineCostItem(
   context: ShopContext,
   { machineId, machineCostItemId }: MachineRef & { machineCostItemId: string },
 ): Promise<Machine> {
-  return change(context, machineId, (trx) => deleteMachineCostItemRow(trx, machineId, machineCostItemId));
+  return changeMachine(context, machineId, (trx) =>
+    deleteMachineCostItemRow(trx, machineId, machineCostItemId),
+  );
 }
 
 /**
@@ -74,7 +66,7 @@ export function createMachineRate(
   { machineId }: MachineRef,
   body: MachineRateInput,
 ): Promise<Machine> {
-  return change(context, machineId, async (trx) => {
+  return changeMachine(context, machineId, async (trx) => {
     await insertMachineRate(trx, {
       shopId: context.shop.shopId,
       machineRateId: newId(),
@@ -86,7 +78,8 @@ export function createMachineRate(
 }
 
 /**
- * Corrects a machine's rates; the days that they price are costed anew by the next rollup.
+ * Corrects a machine's rates; the days that they price are costed anew by the next rollup. A machine-hour rate that
+ * was built and is now another one counts as typed in.
  * @throws AppError `not_found`, `conflict`
  */
 export function updateMachineRate(
@@ -94,7 +87,14 @@ export function updateMachineRate(
   { machineId, machineRateId }: MachineRef & { machineRateId: string },
   body: MachineRateInput,
 ): Promise<Machine> {
-  return change(context, machineId, (trx) => updateMachineRateRow(trx, machineId, machineRateId, body));
+  return changeMachine(context, machineId, async (trx) => {
+    const before = (await listMachineRateRows(trx, machineId)).find(
+      (rate) => rate.machineRateId === machineRateId,
+    );
+    if (before && !D(before.machineHourRate).eq(D(body.machineHourRate)))
+      await deleteMachineRateBasis(trx, machineRateId);
+    return updateMachineRateRow(trx, machineId, machineRateId, body);
+  });
 }
 
 /**
@@ -105,19 +105,5 @@ export function deleteMachineRate(
   context: ShopContext,
   { machineId, machineRateId }: MachineRef & { machineRateId: string },
 ): Promise<Machine> {
-  return change(context, machineId, (trx) => deleteMachineRateRow(trx, machineId, machineRateId));
-}
-
-function change(
-  context: ShopContext,
-  machineId: string,
-  work: (trx: ShopTransaction) => Promise<boolean>,
-): Promise<Machine> {
-  return refusingConflicts(CONFLICTS, () =>
-    inShopOf(context, async (trx) => {
-      await readMachine(context, trx, machineId);
-      if (!(await work(trx))) throw new AppError('not_found', 'This is not on the machine, or no longer.');
-      return readMachine(context, trx, machineId);
-    }),
-  );
+  return changeMachine(context, machineId, (trx) => deleteMachineRateRow(trx, machineId, machineRateId));
 }

@@ -2,6 +2,7 @@ import { AppError, hasPermission, type Machine, type MachineInput } from '@brake
 import {
   insertMachine,
   listMachineCostItemRows,
+  listMachineRateBasisRows,
   listMachineRateRows,
   listMachineRows,
   type ShopTransaction,
@@ -11,6 +12,7 @@ import { D, moneyText, rateText, toMoney, toRate } from '@brakeven/values';
 import { v7 as newId } from 'uuid';
 import { inShopOf, type ShopContext } from '../context';
 import { refusingConflicts } from '../refuse-conflict';
+import { toMachineRateBasis } from './rate-basis';
 
 const CONFLICTS = {
   machine_shop_id_code_key: { field: 'code', message: 'Another machine has this code.' },
@@ -89,10 +91,18 @@ async function readMachines(
   if (!hasPermission(context.actor.role, 'machines.money')) return machines;
   const items = await listMachineCostItemRows(trx, machineId);
   const rates = await listMachineRateRows(trx, machineId);
+  const bases = new Map(
+    (await listMachineRateBasisRows(trx, machineId)).map(({ machineRateId, ...basis }) => [
+      machineRateId,
+      toMachineRateBasis(basis),
+    ]),
+  );
   return machines.map((machine) => ({
     ...machine,
     ...toCosts(items.filter((item) => item.machineId === machine.machineId)),
-    rates: rates.filter((rate) => rate.machineId === machine.machineId).map(toMachineRate),
+    rates: rates
+      .filter((rate) => rate.machineId === machine.machineId)
+      .map((rate) => ({ ...toMachineRate(rate), basis: bases.get(rate.machineRateId) ?? null })),
   }));
 }
 
