@@ -1,5 +1,11 @@
 import { ENDPOINTS } from '@brakeven/contract';
-import { getJobHoursWorkings, getJobWorkings, getPaybackWorkings } from '@brakeven/use-cases';
+import {
+  getJobHoursWorkings,
+  getJobWorkings,
+  getOvertimeWorkings,
+  getPaybackWorkings,
+  getStockWorkings,
+} from '@brakeven/use-cases';
 import { type Api } from '../api';
 
 /** How each figure was made. */
@@ -7,4 +13,6 @@ export function mountWorkings({ mount }: Api): void {
   mount(ENDPOINTS.getJobWorkings, ({ context, query }) => getJobWorkings(context, query));
   mount(ENDPOINTS.getJobHoursWorkings, ({ context, query }) => getJobHoursWorkings(context, query));
   mount(ENDPOINTS.getPaybackWorkings, ({ context, query }) => getPaybackWorkings(context, query));
+  mount(ENDPOINTS.getOvertimeWorkings, ({ context, query }) => getOvertimeWorkings(context, query));
+  mount(ENDPOINTS.getStockWorkings, ({ context, query }) => getStockWorkings(context, query));
 }

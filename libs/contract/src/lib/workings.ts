@@ -81,18 +81,15 @@ export const ESTIMATE_FIGURES = [
   'estimate.material',
   'estimate.outside',
   'estimate.total',
+  'estimate.price',
+  'estimate.variance',
 ] as const;
 
-export const FIGURES = [
-  ...JOB_FIGURES,
-  ...PAYBACK_FIGURES,
-  ...SOURCE_FIGURES,
-  ...ESTIMATE_FIGURES,
-] as const;
+export const FIGURES = [...JOB_FIGURES, ...PAYBACK_FIGURES, ...SOURCE_FIGURES, ...ESTIMATE_FIGURES] as const;
 export type Figure = (typeof FIGURES)[number];
 
 /**
- * Which figure is meant. `job.*` without `jobId`: over all jobs that `search` and `status` leave.
+ * Which figure is meant. `job.*` without `jobId`: over all jobs that `customerId`, `search` and `status` leave.
  * `payback.*` needs `machineId`; with `jobId` only that job's share, with `from`/`to` only those days;
  * `payback.costItem` needs `costItemId` too. `overtime.week` needs `employeeId` and, as `from`, a day of the week;
  * `stock.issue` needs `issueId`; `stock.value` needs `materialId`, and is before the issue if there is an `issueId`.
@@ -103,6 +100,7 @@ export const figureRefSchema = z.object({
   machineId: idSchema.optional(),
   operationId: idSchema.optional(),
   employeeId: idSchema.optional(),
+  customerId: idSchema.optional(),
   costItemId: idSchema.optional(),
   materialId: idSchema.optional(),
   issueId: idSchema.optional(),

@@ -3,13 +3,16 @@ import { isJobSelected, JOB_WITH_CUSTOMER, type JobSelection } from './job-selec
 import { allOf, isAfter, type KeysetPosition, orderByKey, type SortKey } from './keyset';
 import { type ShopTransaction } from './tenancy';
 
-/** Something that was written down with its amount and is no cost line: a cost item, a quoted price. */
+/** What is no cost line but has an amount: a cost item, a quoted price, a move of stock, a job's part of a figure. */
 export interface ItemRow {
   id: string;
   on: string | null;
   category: string;
   label: string;
+  detail?: string | null;
   job: string | null;
+  /** Kilograms, signed; only of a move of stock. */
+  quantity?: string;
   amount: string;
 }
 
@@ -40,6 +43,38 @@ export async function listOutlayItemRows(
     order by ${orderByKey(BY_DATE, id, 'desc')}
     limit ${limit}`.execute(trx);
   return rows;
+}
+
+/** A cost item, and who wrote it down as it is. */
+export interface CostItemRow {
+  machineCostItemId: string;
+  incurredOn: string;
+  kind: string;
+  description: string;
+  amount: string;
+  /** Null where the audit trail does not reach back to it. */
+  enteredAt: Date | null;
+  enteredBy: string | null;
+}
+
+/** Finds one of a machine's cost items, with the last that the audit trail tells of it. */
+export async function findCostItem(
+  trx: ShopTransaction,
+  machineId: string,
+  costItemId: string,
+): Promise<CostItemRow | null> {
+  const { rows } = await sql<CostItemRow>`
+    select i.machine_cost_item_id, i.incurred_on, i.kind, i.description, i.amount, a.at as entered_at,
+      a.actor as entered_by
+    from machine_cost_item i
+    left join lateral (
+      select at, actor from audit_event
+      where subject_kind = 'machine_cost_item' and subject_id = i.machine_cost_item_id::text
+      order by event_id desc
+      limit 1
+    ) a on true
+    where i.machine_id = ${machineId}::uuid and i.machine_cost_item_id = ${costItemId}::uuid`.execute(trx);
+  return rows[0] ?? null;
 }
 
 /** Counts and adds up a machine's cost items. */

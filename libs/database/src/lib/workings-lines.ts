@@ -1,8 +1,7 @@
 import { type RawBuilder, sql } from 'kysely';
-import { type SourceColumns } from './entry-pages';
-import { type LinePosition } from './job-detail';
 import { isJobSelected, JOB_WITH_CUSTOMER, type JobSelection } from './job-selection';
 import { allOf } from './keyset';
+import { LINE_FACT_JOINS, type LineFactRow, LINE_FACTS, type LinePosition } from './line-facts';
 import { type CostLineTable } from './tables';
 import { type ShopTransaction } from './tenancy';
 
@@ -15,13 +14,19 @@ export interface LineSelection {
   /** Each category with the sign it counts with. */
   signs: Partial<Record<Category, 1 | -1>>;
   jobId?: string;
-  /** Jobs of a filter. */
+  /** Jobs of a filter; one that leaves all of them still leaves out what went to overhead. */
   jobs?: JobSelection;
   operationId?: string;
   /** Only a machine in service: its lines from that day on; null takes none. */
   machine?: { machineId: string; inServiceOn: string | null };
+  employeeId?: string;
+  /** Of one row. */
+  sourceId?: string;
+  /** Days in the books. */
   from?: string;
   to?: string;
+  /** Days of the rows themselves, both ends included, whenever their lines were posted. */
+  worked?: { from: string; to: string };
 }
 
 /** Of the three tables of rates that `rateJoins` joins. */
@@ -35,17 +40,22 @@ export interface LineGroup {
   amount: string;
   rate: string | null;
   rateFactor: string | null;
-  /** The employee or the machine whose rate it is; null for overhead, and for hours. */
+  /** The employee or the machine whose rate it is; null for overhead, for hours, and for lines without a rate. */
   subject: string | null;
   rateValidFrom: string | null;
 }
 
-/** Adds up the lines by category and rate: what a figure is made of, and the rates it was made with. */
+/**
+ * Adds up the lines by category and rate of the register: what a figure is made of, and the rates it was made with.
+ * Lines that used no such rate (premiums, material, amounts as entered) make one group a category.
+ */
 export async function listLineGroups(trx: ShopTransaction, selection: LineSelection): Promise<LineGroup[]> {
   const byRate =
     selection.unit === 'money'
-      ? sql`l.rate_id, l.rate, l.rate_factor,
-          case l.category when 'labour' then l.employee_id when 'overhead' then null else l.machine_id end as subject_id`
+      ? sql`l.rate_id, case when l.rate_id is not null then l.rate end as rate,
+          case when l.rate_id is not null then l.rate_factor end as rate_factor,
+          case when l.rate_id is null or l.category = 'overhead' then null
+            when l.category = 'labour' then l.employee_id else l.machine_id end as subject_id`
       : sql`null::uuid as rate_id, null::numeric as rate, null::numeric as rate_factor, null::uuid as subject_id`;
   const { rows } = await sql<LineGroup>`
     select g.category, g.lines, g.amount, g.rate, g.rate_factor, coalesce(e.name, m.name) as subject,
@@ -63,13 +73,9 @@ export async function listLineGroups(trx: ShopTransaction, selection: LineSelect
 }
 
 /** A line as workings show it. */
-export interface WorkingsLineRow extends SourceColumns, LinePosition {
-  workedOn: string;
-  employee: string;
-  job: string;
-  operation: string;
-  machine: string | null;
-  hours: string;
+export interface WorkingsLineRow extends LineFactRow {
+  job: string | null;
+  /** Null for a gap. */
   rate: string | null;
   rateFactor: string | null;
   rateValidFrom: string | null;
@@ -85,20 +91,15 @@ export async function listWorkingsLineRows(
   limit: number,
 ): Promise<WorkingsLineRow[]> {
   const { rows } = await sql<WorkingsLineRow>`
-    select l.posted_on, l.worked_on, l.source_id, l.category, e.name as employee, j.number as job, o.name as operation,
-      m.name as machine, l.quantity as hours, l.rate, l.rate_factor, ${RATE_VALID_FROM} as rate_valid_from,
-      ${signedAmount(selection)} as amount, t.import_id, i.file_name, i.sheet, t.source_row, t.source_cell
+    select ${LINE_FACTS}, j.number as job, l.rate, l.rate_factor, ${RATE_VALID_FROM} as rate_valid_from,
+      ${signedAmount(selection)} as amount
     from (
       select * from ${selectedLines(selection, { after, limit })} l
       order by l.posted_on desc, l.source_id desc, l.category desc
       limit ${limit}
     ) l
-    join employee e on e.shop_id = l.shop_id and e.employee_id = l.employee_id
-    join job j on j.shop_id = l.shop_id and j.job_id = l.job_id
-    join operation o on o.shop_id = l.shop_id and o.operation_id = l.operation_id
-    join time_entry t on t.shop_id = l.shop_id and t.entry_id = l.source_id
-    left join machine m on m.shop_id = l.shop_id and m.machine_id = l.machine_id
-    left join timesheet_import i on i.shop_id = t.shop_id and i.import_id = t.import_id
+    left join job j on j.shop_id = l.shop_id and j.job_id = l.job_id
+    ${LINE_FACT_JOINS}
     ${rateJoins('l')}
     order by l.posted_on desc, l.source_id desc, l.category desc`.execute(trx);
   return rows;
@@ -115,13 +116,13 @@ interface LineCut {
  */
 function selectedLines(selection: LineSelection, cut?: LineCut): RawBuilder<unknown> {
   const lines = sql`
-    (select shop_id, posted_on, worked_on, source_id, category, job_id, operation_id, employee_id, machine_id, quantity,
-      rate, rate_factor, rate_id, amount
+    (select shop_id, posted_on, worked_on, source_id, source_kind, category, job_id, operation_id, employee_id,
+      machine_id, quantity, rate, rate_factor, rate_id, amount
     from cost_line where ${isSelected(selection)} ${cutBy('source_id', cut)})`;
   if (selection.unit === 'money') return lines;
   return sql`(${lines} union all
-    (select shop_id, posted_on, worked_on, entry_id, category, job_id, operation_id, employee_id, machine_id, hours,
-      null, null, null, null
+    (select shop_id, posted_on, worked_on, entry_id, 'time_entry', category, job_id, operation_id, employee_id,
+      machine_id, hours, null, null, null, null
     from rate_gap where ${isSelected(selection)} ${cutBy('entry_id', cut)}))`;
 }
 
@@ -136,13 +137,21 @@ function cutBy(idColumn: 'source_id' | 'entry_id', cut: LineCut | undefined): Ra
 }
 
 function isSelected(selection: LineSelection): RawBuilder<boolean> {
-  const { signs, jobId, jobs, operationId, machine, from, to } = selection;
+  const { signs, jobId, jobs, operationId, employeeId, sourceId, machine, from, to, worked } = selection;
   const conditions: RawBuilder<unknown>[] = [sql`category = any (${Object.keys(signs)}::text[])`];
   if (jobId !== undefined) conditions.push(sql`job_id = ${jobId}::uuid`);
-  if (jobs !== undefined && Object.values(jobs).some((value) => value !== undefined && value !== '')) {
-    conditions.push(sql`job_id in (select j.job_id from ${JOB_WITH_CUSTOMER} where ${isJobSelected(jobs)})`);
+  if (jobs !== undefined) {
+    const isFiltered = Object.values(jobs).some((value) => value !== undefined && value !== '');
+    conditions.push(
+      isFiltered
+        ? sql`job_id in (select j.job_id from ${JOB_WITH_CUSTOMER} where ${isJobSelected(jobs)})`
+        : sql`job_id is not null`,
+    );
   }
   if (operationId !== undefined) conditions.push(sql`operation_id = ${operationId}::uuid`);
+  if (employeeId !== undefined) conditions.push(sql`employee_id = ${employeeId}::uuid`);
+  if (sourceId !== undefined) conditions.push(sql`source_id = ${sourceId}::uuid`);
+  if (worked !== undefined) conditions.push(isWorkedIn(worked));
   if (machine !== undefined) {
     conditions.push(sql`machine_id = ${machine.machineId}::uuid`);
     conditions.push(sql`posted_on >= ${machine.inServiceOn}::date`);
@@ -150,6 +159,12 @@ function isSelected(selection: LineSelection): RawBuilder<boolean> {
   if (from !== undefined) conditions.push(sql`posted_on >= ${from}::date`);
   if (to !== undefined) conditions.push(sql`posted_on <= ${to}::date`);
   return allOf(conditions);
+}
+
+/** Lines of their own day by the key, late ones by the index of those. */
+function isWorkedIn({ from, to }: { from: string; to: string }): RawBuilder<boolean> {
+  const worked = sql`worked_on between ${from}::date and ${to}::date`;
+  return sql`((${worked} and posted_on between ${from}::date and ${to}::date) or (${worked} and posted_on <> worked_on))`;
 }
 
 function signedAmount({ unit, signs }: LineSelection): RawBuilder<string> {

@@ -1,5 +1,6 @@
 import {
   AppError,
+  type CostCategory,
   JOB_COST_CATEGORIES,
   type JobDetail,
   type JobLine,
@@ -23,6 +24,7 @@ import { hoursText, moneyText, rateText, toMoney, toRate } from '@brakeven/value
 import { inShopOf, type ShopContext } from '../context';
 import { readEstimate, type StoredEstimate } from '../estimate-jobs/estimate-cost';
 import { cutPage, linePositionSchema, readCursor, writeCursor } from '../page-cursor';
+import { toLineFacts, toLineId } from '../show-workings/line-facts';
 import { toSourceCell } from '../source-cell';
 import { compareJob } from './compare-job';
 import { seesMoney, toJob, toJobCost } from './job-dto';
@@ -92,7 +94,8 @@ export async function listJobLines(
   const { jobId, category, cursor, limit } = query;
   const list = `job-lines.${category ?? 'cost'}`;
   const after = readCursor(cursor, list, linePositionSchema);
-  const categories = category ? [category] : JOB_COST_CATEGORIES;
+  const shown = category ? [category] : JOB_COST_CATEGORIES;
+  const categories = seesMoney(context) ? shown : shown.filter(hasMeasure);
   return inShopOf(context, async (trx) => {
     await getJobRow(trx, { jobId });
     const found = await listJobLineRows(trx, jobId, categories, after, limit + 1);
@@ -101,6 +104,11 @@ export async function listJobLines(
     );
     return { items: rows.map((row) => toJobLine(context, row)), nextCursor };
   });
+}
+
+/** Lines that say something without their money: hours worked and material drawn. */
+function hasMeasure(category: CostCategory): boolean {
+  return ['labour', 'machine', 'overhead', 'material'].includes(category);
 }
 
 type Category = (typeof JOB_COST_CATEGORIES)[number];
@@ -178,20 +186,19 @@ export async function getJobRow(trx: ShopTransaction, selection: JobSelection): 
 }
 
 function toJobLine(context: ShopContext, row: JobLineRow): JobLine {
-  const { sourceId, category, workedOn, employee, operation, machine, hours, amount } = row;
+  const { category, workedOn, operation, machine, amount } = row;
   const money = {
     rate: rateText(toRate(row.rate)),
     rateFactor: category === 'labour' ? rateText(toRate(row.rateFactor)) : null,
     amount,
   };
   return {
-    lineId: `${sourceId}.${category}`,
+    ...toLineFacts(row),
+    lineId: toLineId(row),
     workedOn,
     category,
-    employee,
     operation,
     machine,
-    hours,
     ...(seesMoney(context) ? money : {}),
     source: toSourceCell(row),
   };

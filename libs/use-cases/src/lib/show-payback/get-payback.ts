@@ -25,9 +25,7 @@ import {
   toRate,
 } from '@brakeven/values';
 import { inShopOf, type ShopContext } from '../context';
-import { type MachinePayback, readMachinePayback, toPaybackFigures } from './machine-payback';
-
-const TOP_JOBS = 5;
+import { type MachinePayback, readMachinePayback, TOP_JOBS, toPaybackFigures } from './machine-payback';
 
 /**
  * Whether a machine has paid for itself, and when it will: its figures, its curve, the month of the last day rolled

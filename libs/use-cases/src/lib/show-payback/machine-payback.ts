@@ -11,6 +11,9 @@ import {
 import { type LocalDate, moneyText, toLocalDate, toMoney } from '@brakeven/values';
 import { toPaybackDay } from '../roll-up-costs/write-snapshots';
 
+/** How many jobs a payback lists by name. */
+export const TOP_JOBS = 5;
+
 /** A machine's payback as computed, and what it was computed from. */
 export interface MachinePayback {
   machine: PaybackMachine;

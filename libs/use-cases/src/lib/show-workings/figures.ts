@@ -20,7 +20,17 @@ export interface LineFigure {
 }
 
 /** Figures that are no sums of cost lines are made by rules of their own. */
-export type SummedFigure = Exclude<Figure, 'job.quotedPrice' | 'payback.outlay' | 'payback.remaining'>;
+type OwnRule =
+  | 'job.quotedPrice'
+  | 'job.workInProgress'
+  | 'payback.outlay'
+  | 'payback.costItem'
+  | 'payback.remaining'
+  | 'payback.netCash'
+  | 'payback.pacePerWeek'
+  | 'payback.otherJobs';
+
+export type SummedFigure = Exclude<Extract<Figure, `job.${string}` | `payback.${string}`>, OwnRule>;
 
 const money = (title: string, rule: string, category: CostCategory): LineFigure => ({
   title,
@@ -45,29 +55,53 @@ const RUNNING: FigurePart = {
   category: 'running',
 };
 
+const JOB_COST: readonly FigurePart[] = [
+  { label: 'Labour', figure: 'job.labour', category: 'labour' },
+  { label: 'Overtime', figure: 'job.overtime', category: 'overtime' },
+  { label: 'Machine', figure: 'job.machine', category: 'machine' },
+  { label: 'Overhead', figure: 'job.overhead', category: 'overhead' },
+  { label: 'Material', figure: 'job.material', category: 'material' },
+  { label: 'Outside services', figure: 'job.outside', category: 'outside' },
+];
+
+const costSigns = (sign: 1 | -1): LineFigure['signs'] =>
+  Object.fromEntries(JOB_COST.map(({ category }) => [category, sign]));
+
 /** Every entry owes labour and, on a machine in service, running: their hours are the entries' hours. */
 export const LINE_FIGURES: Readonly<Record<SummedFigure, LineFigure>> = {
   'job.hours': hours('Hours', RULES.hours, 'labour'),
   'job.machineHours': hours('Machine hours', RULES.machineHours, 'machine'),
   'job.labour': money('Labour', RULES.labour, 'labour'),
+  'job.overtime': money('Overtime premium', RULES.overtime, 'overtime'),
   'job.machine': money('Machine cost', RULES.machine, 'machine'),
   'job.overhead': money('Overhead', RULES.overhead, 'overhead'),
+  'job.material': money('Material', RULES.material, 'material'),
+  'job.outside': money('Outside services', RULES.outside, 'outside'),
+  'job.invoiced': money('Invoiced', RULES.invoiced, 'invoiced'),
   'job.earned': money('Earned by machines', RULES.earned, 'earned'),
   'job.total': {
     title: 'Cost',
     rule: RULES.jobTotal,
     unit: 'money',
-    signs: { labour: 1, machine: 1, overhead: 1 },
-    parts: [
-      { label: 'Labour', figure: 'job.labour', category: 'labour' },
-      { label: 'Machine', figure: 'job.machine', category: 'machine' },
-      { label: 'Overhead', figure: 'job.overhead', category: 'overhead' },
-    ],
+    signs: costSigns(1),
+    parts: JOB_COST,
+  },
+  'job.margin': {
+    title: 'Margin',
+    rule: RULES.margin,
+    unit: 'money',
+    signs: { invoiced: 1, ...costSigns(-1) },
+    parts: [{ label: 'Invoiced', figure: 'job.invoiced', category: 'invoiced' }, ...JOB_COST],
   },
   'payback.hours': hours(
     'Hours',
     'The hours of all entries on the machine, billable or not, from its in-service date, each counted once.',
     'running',
+  ),
+  'payback.billableHours': hours(
+    'Billable hours',
+    'The hours of entries on the machine for billable jobs, from its in-service date, each counted once.',
+    'earned',
   ),
   'payback.earned': money('Earned', RULES.earned, 'earned'),
   'payback.operatorLabour': money('Operator’s labour', RULES.operatorLabour, 'labour'),
@@ -87,3 +121,9 @@ export const LINE_FIGURES: Readonly<Record<SummedFigure, LineFigure>> = {
     parts: [{ label: 'Earned', figure: 'payback.earned', category: 'earned' }, OPERATOR_LABOUR, RUNNING],
   },
 };
+
+/** The premiums of one employee's week. */
+export const OVERTIME_WEEK = money('Overtime premium', RULES.overtime, 'overtime');
+
+/** What one issue or return of material came to. */
+export const STOCK_ISSUE = money('Material', RULES.material, 'material');

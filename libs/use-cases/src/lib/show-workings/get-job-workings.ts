@@ -1,5 +1,15 @@
 import { type FigureRef, type Workings, type WorkingsQuery } from '@brakeven/contract';
-import { type JobSelection, listQuoteRows, type ShopTransaction, sumQuotes } from '@brakeven/database';
+import { RULES } from '@brakeven/costing';
+import {
+  type JobRow,
+  type JobSelection,
+  listQuoteRows,
+  listWorkInProgressRows,
+  type ShopTransaction,
+  sumQuotes,
+  sumWorkInProgress,
+} from '@brakeven/database';
+import { D, type Money, moneyText, toMoney } from '@brakeven/values';
 import { inShopOf, type ShopContext } from '../context';
 import { getJobRow } from '../show-jobs/get-job';
 import { LINE_FIGURES } from './figures';
@@ -49,12 +59,13 @@ function readWorkings(
   ref: FigureRef & { figure: JobFigure },
   paging: LinePaging,
 ): Promise<Workings> {
-  const { figure, jobId, operationId, from, to, search } = ref;
+  const { figure, jobId, operationId, from, to, search, customerId } = ref;
   const status = readStatus(ref);
   // One job is meant whatever filter it was found by.
-  const jobs: JobSelection = jobId === undefined ? { search, status } : { jobId };
+  const jobs: JobSelection = jobId === undefined ? { search, status, customerId } : { jobId };
   return inShopOf(context, async (trx) => {
     if (figure === 'job.quotedPrice') return readQuotes(trx, ref, jobs, paging);
+    if (figure === 'job.workInProgress') return readWorkInProgress(trx, ref, jobs, paging);
     const lineFigure = LINE_FIGURES[figure];
     const head = await readHead(trx, ref, lineFigure.title, jobs);
     const selection = { jobId, operationId, from, to, jobs: jobId === undefined ? jobs : undefined };
@@ -66,14 +77,14 @@ async function readHead(
   trx: ShopTransaction,
   ref: FigureRef,
   title: string,
-  { jobId, search, status }: JobSelection,
+  { jobId, search, status, customerId }: JobSelection,
 ): Promise<WorkingsHead> {
   const narrowing = await describeNarrowing(trx, ref);
   if (jobId !== undefined) {
     const job = await getJobRow(trx, { jobId });
     return { figure: ref, title: `${title} of job ${job.number}, ${job.title}${narrowing}` };
   }
-  const isFiltered = search !== undefined || status !== undefined;
+  const isFiltered = [search, status, customerId].some((one) => one !== undefined);
   return { figure: ref, title: `${title} of ${isFiltered ? 'the jobs found' : 'all jobs'}${narrowing}` };
 }
 
@@ -83,8 +94,7 @@ async function readQuotes(
   jobs: JobSelection,
   paging: LinePaging,
 ): Promise<Workings> {
-  const { operationId: _operationId, from: _from, to: _to, ...whole } = ref;
-  const head = await readHead(trx, whole, 'Quoted price', jobs);
+  const head = await readHead(trx, toWhole(ref), 'Quoted price', jobs);
   const rule = 'The price quoted to the customer, as written on the job. Jobs without one are left out.';
   return readItemWorkings(
     { ...head, rule },
@@ -95,3 +105,58 @@ async function readQuotes(
     paging,
   );
 }
+
+/** Of a job as a whole, whatever operation or days are named. */
+function toWhole({ operationId: _operationId, from: _from, to: _to, ...whole }: FigureRef): FigureRef {
+  return whole;
+}
+
+async function readWorkInProgress(
+  trx: ShopTransaction,
+  ref: FigureRef,
+  jobs: JobSelection,
+  paging: LinePaging,
+): Promise<Workings> {
+  const head = {
+    ...(await readHead(trx, toWhole(ref), 'Work in progress', jobs)),
+    rule: RULES.workInProgress,
+  };
+  if (jobs.jobId !== undefined) return toJobInProgress(head, await getJobRow(trx, jobs));
+  return readItemWorkings(
+    head,
+    {
+      sum: () => sumWorkInProgress(trx, jobs),
+      list: (after, limit) => listWorkInProgressRows(trx, jobs, after, limit),
+      toFigure: ({ id }) => ({ figure: 'job.workInProgress', jobId: id }),
+    },
+    paging,
+  );
+}
+
+/** Made of two figures that open themselves, and of what does not count for where the job stands. */
+function toJobInProgress(head: WorkingsHead & { rule: string }, job: JobRow): Workings {
+  const [total, invoiced] = [toMoney(job.total), toMoney(job.invoiced)];
+  const rest = toMoney(D(job.workInProgress).minus(total).plus(invoiced));
+  const isCounted = job.status === 'open' || job.status === 'finished';
+  const part = (label: string, money: Money, figure: FigureRef['figure'] | null) => ({
+    label,
+    amount: moneyText(money),
+    figure: figure && { figure, jobId: job.jobId },
+  });
+  return {
+    ...head,
+    unit: 'money',
+    amount: job.workInProgress,
+    inputs: [{ label: 'Status of the job', value: job.status, validFrom: null, figure: null }],
+    parts: [
+      part('Cost', total, 'job.total'),
+      part('Invoiced', toMoney(invoiced.negated()), 'job.invoiced'),
+      ...(rest.isZero() ? [] : [part(isCounted ? 'Invoiced beyond the cost' : NOT_IN_PROGRESS, rest, null)]),
+    ],
+    lineCount: 0,
+    lines: [],
+    nextCursor: null,
+  };
+}
+
+const NOT_IN_PROGRESS = 'Not in progress: neither open nor finished';

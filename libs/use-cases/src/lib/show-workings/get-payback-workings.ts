@@ -1,18 +1,12 @@
 import { type FigureRef, type Workings, type WorkingsQuery } from '@brakeven/contract';
-import { RULES } from '@brakeven/costing';
-import {
-  listOutlayItemRows,
-  type PaybackMachine,
-  type ShopTransaction,
-  sumOutlayItems,
-} from '@brakeven/database';
-import { formatLocalDate, type Money, moneyText, toLocalDate, toMoney } from '@brakeven/values';
+import { type PaybackMachine, type ShopTransaction } from '@brakeven/database';
 import { inShopOf, type ShopContext } from '../context';
 import { getJobRow } from '../show-jobs/get-job';
-import { getPaybackMachine, readMachinePayback } from '../show-payback/machine-payback';
+import { getPaybackMachine } from '../show-payback/machine-payback';
 import { LINE_FIGURES, type SummedFigure } from './figures';
-import { readItemWorkings } from './item-workings';
 import { readLineWorkings } from './line-workings';
+import { readNetCash, readOtherJobs, readPace, readRemaining, toInServiceInput } from './machine-workings';
+import { readCostItem, readOutlay } from './outlay-workings';
 import { describeNarrowing, type LinePaging, refused, splitRequest } from './workings-request';
 
 type PaybackFigure = Extract<FigureRef['figure'], `payback.${string}`>;
@@ -31,9 +25,23 @@ export async function getPaybackWorkings(context: ShopContext, query: WorkingsQu
   if (machineId === undefined) throw refused('machineId', 'Say which machine is meant.');
   return inShopOf(context, async (trx) => {
     const machine = await getPaybackMachine(trx, { machineId });
-    if (figure === 'payback.outlay') return readOutlay(trx, machine, paging);
-    if (figure === 'payback.remaining') return readRemaining(trx, machine);
-    return readLines(context, trx, { ...ref, figure, machineId }, machine, paging);
+    const wanted = { ...ref, machineId };
+    switch (figure) {
+      case 'payback.outlay':
+        return readOutlay(trx, machine, paging);
+      case 'payback.costItem':
+        return readCostItem(context, trx, machine, wanted);
+      case 'payback.remaining':
+        return readRemaining(trx, machine);
+      case 'payback.netCash':
+        return readNetCash(trx, machine, wanted);
+      case 'payback.pacePerWeek':
+        return readPace(context, trx, machine);
+      case 'payback.otherJobs':
+        return readOtherJobs(trx, machine, paging);
+      default:
+        return readLines(context, trx, { ...wanted, figure }, machine, paging);
+    }
   });
 }
 
@@ -71,51 +79,5 @@ async function readLines(
     paging,
     context.shop.currency,
   );
-  return { ...workings, inputs: [inServiceInput(machine), ...workings.inputs] };
-}
-
-function inServiceInput({ inServiceOn }: PaybackMachine): Workings['inputs'][number] {
-  const value = inServiceOn === null ? 'not yet' : formatLocalDate(toLocalDate(inServiceOn));
-  return { label: 'In service from', value, validFrom: null };
-}
-
-function readOutlay(trx: ShopTransaction, machine: PaybackMachine, paging: LinePaging): Promise<Workings> {
-  const { machineId, name } = machine;
-  return readItemWorkings(
-    { figure: { figure: 'payback.outlay', machineId }, title: `Outlay for ${name}`, rule: RULES.outlay },
-    {
-      sum: () => sumOutlayItems(trx, machineId),
-      list: (after, limit) => listOutlayItemRows(trx, machineId, after, limit),
-    },
-    paging,
-  );
-}
-
-/** Made of two figures that open themselves; once more is earned back than was laid out, of the surplus too. */
-async function readRemaining(trx: ShopTransaction, machine: PaybackMachine): Promise<Workings> {
-  const { machineId } = machine;
-  const { payback } = await readMachinePayback(trx, { machineId });
-  const { outlay, earnedBack, remaining } = payback;
-  const surplus = remaining.minus(outlay).plus(earnedBack) as Money;
-  const part = (label: string, amount: Money, figure: PaybackFigure | null) => ({
-    label,
-    amount: moneyText(amount),
-    figure: figure && { figure, machineId },
-  });
-  return {
-    figure: { figure: 'payback.remaining', machineId },
-    title: `Still to be earned by ${machine.name}`,
-    unit: 'money',
-    amount: moneyText(remaining),
-    rule: RULES.remaining,
-    inputs: [inServiceInput(machine)],
-    parts: [
-      part('Outlay', outlay, 'payback.outlay'),
-      part('Earned back', toMoney(earnedBack.negated()), 'payback.earnedBack'),
-      ...(surplus.gt(0) ? [part('Earned beyond the outlay', surplus, null)] : []),
-    ],
-    lineCount: 0,
-    lines: [],
-    nextCursor: null,
-  };
+  return { ...workings, inputs: [toInServiceInput(machine), ...workings.inputs] };
 }

@@ -1,4 +1,4 @@
-import { type Workings, type WorkingsLine } from '@brakeven/contract';
+import { type FigureRef, type Workings, type WorkingsLine } from '@brakeven/contract';
 import { type ItemRow, type ItemSums, type KeysetPosition } from '@brakeven/database';
 import { cutPage, positionSchema, readCursor, writeCursor } from '../page-cursor';
 import { type LinePaging, type WorkingsHead } from './workings-request';
@@ -7,6 +7,8 @@ import { type LinePaging, type WorkingsHead } from './workings-request';
 export interface ItemSource {
   sum(): Promise<ItemSums>;
   list(after: KeysetPosition | null, limit: number): Promise<ItemRow[]>;
+  /** The figure that an item is, if it is one. */
+  toFigure?(row: ItemRow): FigureRef | null;
 }
 
 /** The workings of a figure whose lines were written down with their amounts: cost items, quoted prices. */
@@ -28,25 +30,32 @@ export async function readItemWorkings(
     inputs: [],
     parts: [],
     lineCount: sums.lines,
-    lines: rows.map(toWorkingsLine),
+    lines: rows.map((row) => toWorkingsLine(row, source.toFigure)),
     nextCursor,
   };
 }
 
-function toWorkingsLine({ id, on, category, label, job, amount }: ItemRow): WorkingsLine {
+function toWorkingsLine(row: ItemRow, toFigure: ItemSource['toFigure']): WorkingsLine {
+  const { id, on, category, label, detail, job, quantity, amount } = row;
   return {
     lineId: id,
     on,
+    postedOn: null,
+    isLate: false,
+    takesBackOn: null,
     category,
     label,
+    detail: detail ?? null,
     job,
     operation: null,
     machine: null,
-    hours: null,
+    quantity: quantity ?? null,
+    unit: quantity === undefined ? null : 'kg',
     rate: null,
     rateFactor: null,
     rateValidFrom: null,
     amount,
+    figure: toFigure?.(row) ?? null,
     source: null,
   };
 }

@@ -10,7 +10,8 @@ import {
 import { D, formatPercent, formatRate, rateText, sum, toPercent, toRate } from '@brakeven/values';
 import { cutPage, linePositionSchema, readCursor, writeCursor } from '../page-cursor';
 import { toSourceCell } from '../source-cell';
-import { type LineFigure } from './figures';
+import { type LineFigure, OVERTIME_WEEK, STOCK_ISSUE } from './figures';
+import { toLineFacts, toLineFigure, toLineId } from './line-facts';
 import { type LinePaging, type WorkingsHead } from './workings-request';
 
 const DECIMALS = { money: 2, hours: 4 } as const;
@@ -38,14 +39,14 @@ export async function readLineWorkings(
     rule,
     unit,
     amount: sumGroups(groups, unit),
-    inputs: unit === 'money' ? groups.map((group) => toInput(group, currency)) : [],
+    inputs: unit === 'money' ? groups.flatMap((group) => toRateInput(group, currency) ?? []) : [],
     parts: figure.parts.map((part) => ({
       label: part.label,
       amount: sumGroups(groups, unit, part.category),
       figure: partRef(head.figure, part.figure),
     })),
     lineCount: groups.reduce((count, group) => count + group.lines, 0),
-    lines: rows.map((row) => toWorkingsLine(row, unit)),
+    lines: rows.map((row) => toWorkingsLine(row, figure)),
     nextCursor,
   };
 }
@@ -64,48 +65,51 @@ function sumGroups(
   return sum(counted.map((group) => D(group.amount))).toFixed(DECIMALS[unit]);
 }
 
-const RATE_WORDS: Readonly<Record<CostCategory, (subject: string) => string>> = {
+const RATE_WORDS: Readonly<Partial<Record<CostCategory, (subject: string) => string>>> = {
   labour: (subject) => `Wage of ${subject}`,
-  overtime: (subject) => `Overtime premium of ${subject}, over all hours of the week`,
   machine: (subject) => `Machine-hour rate of ${subject}`,
   overhead: () => 'Overhead rate per hour of labour',
-  material: (subject) => `Average cost of ${subject}`,
-  outside: () => 'Outside service',
-  invoiced: () => 'Invoice',
   earned: (subject) => `Charge-out rate of ${subject}`,
   running: (subject) => `Running cost per hour of ${subject}`,
 };
 
-function toInput({ category, subject, rate, rateFactor, rateValidFrom }: LineGroup, currency: string) {
-  const perHour = `${formatRate(rate ?? '0', currency)} per hour`;
+/** Premiums, material and amounts as entered have no rate of the register: each of their lines says more. */
+function toRateInput(
+  { category, subject, rate, rateFactor, rateValidFrom }: LineGroup,
+  currency: string,
+): Workings['inputs'][number] | undefined {
+  const words = RATE_WORDS[category];
+  if (words === undefined || rate === null) return undefined;
+  const perHour = `${formatRate(rate, currency)} per hour`;
   const burden = toPercent(
     D(rateFactor ?? '1')
       .minus(1)
       .times(100),
   );
   return {
-    label: RATE_WORDS[category](subject ?? 'somebody no longer listed'),
+    label: words(subject ?? 'somebody no longer listed'),
     value: category === 'labour' ? `${perHour} + ${formatPercent(burden)} burden` : perHour,
     validFrom: rateValidFrom,
+    figure: null,
   };
 }
 
-function toWorkingsLine(row: WorkingsLineRow, unit: LineSelection['unit']): WorkingsLine {
-  const { sourceId, category, workedOn, employee, job, operation, machine, hours, amount } = row;
-  const isPriced = unit === 'money' && row.rate !== null;
+function toWorkingsLine(row: WorkingsLineRow, figure: LineFigure): WorkingsLine {
+  const { category, workedOn, job, operation, machine, amount } = row;
+  const isPriced = figure.unit === 'money' && row.rate !== null;
   return {
-    lineId: `${sourceId}.${category}`,
+    ...toLineFacts(row),
+    lineId: toLineId(row),
     on: workedOn,
     category,
-    label: employee,
     job,
     operation,
     machine,
-    hours,
     rate: isPriced ? rateText(toRate(row.rate ?? '0')) : null,
     rateFactor: isPriced && category === 'labour' ? rateText(toRate(row.rateFactor ?? '1')) : null,
     rateValidFrom: isPriced ? row.rateValidFrom : null,
     amount,
+    figure: figure === OVERTIME_WEEK || figure === STOCK_ISSUE ? null : toLineFigure(row),
     source: toSourceCell(row),
   };
 }

@@ -40,6 +40,11 @@ export function readStatus({ status }: FigureRef): JobStatus | undefined {
   throw refused('status', `There are jobs that are ${JOB_STATUSES.join(', ')}, but none that are ${status}.`);
 }
 
+/** An input in words. */
+export function toInput(label: string, value: string): Workings['inputs'][number] {
+  return { label, value, validFrom: null, figure: null };
+}
+
 /** A refusal of one part of the request. */
 export function refused(field: string, message: string): AppError {
   return new AppError('invalid_input', message, { issues: [{ field, code: 'invalid', message }] });
