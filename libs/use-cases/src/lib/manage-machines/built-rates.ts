@@ -14,7 +14,7 @@ import {
 } from '@brakeven/database';
 import { D, rateText, toLocalDate, toRate } from '@brakeven/values';
 import { v7 as newId } from 'uuid';
-import { inShopOf, type ShopContext, todayOf } from '../context';
+import { type ShopContext, todayOf } from '../context';
 import { changeMachine, type MachineRef } from './change-machine';
 import { listMachines } from './machines';
 import { toCostedBasis } from './rate-basis';
