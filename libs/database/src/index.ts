@@ -20,6 +20,8 @@ export { type KeysetPosition } from './lib/keyset';
 export { type LineFactRow, type LinePosition } from './lib/line-facts';
 export * from './lib/machine-queries';
 export * from './lib/migrate';
+export * from './lib/month-checks';
+export * from './lib/month-queries';
 export * from './lib/payback-figures';
 export * from './lib/people-queries';
 export * from './lib/register-rows';

@@ -1,4 +1,5 @@
 export * from './lib/audit/list-audit-events';
+export { type ChangeTools } from './lib/change-dated-rows';
 export * from './lib/context';
 export * from './lib/estimate-jobs/copy-estimate';
 export { getEstimateChoices } from './lib/estimate-jobs/estimate-choices';
@@ -38,12 +39,7 @@ export * from './lib/manage-shop/create-shop';
 export * from './lib/manage-shop/open-shop';
 export * from './lib/manage-shop/shop-settings';
 export * from './lib/manage-stock/material-issues';
-export {
-  createMaterial,
-  getMaterial,
-  listMaterials,
-  updateMaterial,
-} from './lib/manage-stock/materials';
+export { createMaterial, getMaterial, listMaterials, updateMaterial } from './lib/manage-stock/materials';
 export * from './lib/manage-stock/sheet-lots';
 export * from './lib/manage-stock/stock-moves';
 export * from './lib/manage-users/users';

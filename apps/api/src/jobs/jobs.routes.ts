@@ -1,5 +1,20 @@
 import { ENDPOINTS } from '@brakeven/contract';
-import { createJob, getJob, listCustomers, listJobLines, listJobs, updateJob } from '@brakeven/use-cases';
+import {
+  createJob,
+  deleteEstimate,
+  draftEstimate,
+  getEstimate,
+  getEstimateChoices,
+  getEstimateWorkings,
+  getJob,
+  listCustomers,
+  listJobLines,
+  listJobs,
+  listLikeJobs,
+  quotePrice,
+  saveEstimate,
+  updateJob,
+} from '@brakeven/use-cases';
 import { type Api } from '../api';
 
 /** Jobs with their figures and cost lines, and customers. */
@@ -11,5 +26,17 @@ export function mountJobs({ mount }: Api): void {
   );
   mount(ENDPOINTS.createJob, ({ context, body }) => createJob(context, body));
   mount(ENDPOINTS.updateJob, ({ context, params, body }) => updateJob(context, params, body));
+  mount(ENDPOINTS.getEstimate, ({ context, params }) => getEstimate(context, params));
+  mount(ENDPOINTS.saveEstimate, ({ context, params, body }) => saveEstimate(context, params, body));
+  mount(ENDPOINTS.deleteEstimate, ({ context, params }) => deleteEstimate(context, params));
+  mount(ENDPOINTS.quotePrice, ({ context, params, body }) => quotePrice(context, params, body));
+  mount(ENDPOINTS.getEstimateChoices, ({ context, query }) => getEstimateChoices(context, query));
+  mount(ENDPOINTS.listLikeJobs, ({ context, params, query }) =>
+    listLikeJobs(context, { ...params, ...query }),
+  );
+  mount(ENDPOINTS.draftEstimate, ({ context, params, query }) =>
+    draftEstimate(context, { ...params, ...query }),
+  );
+  mount(ENDPOINTS.getEstimateWorkings, ({ context, query }) => getEstimateWorkings(context, query));
   mount(ENDPOINTS.listCustomers, ({ context }) => listCustomers(context));
 }

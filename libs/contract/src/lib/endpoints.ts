@@ -1,9 +1,11 @@
 import { customerEndpoints } from './customers';
+import { estimateEndpoints } from './estimates';
 import { hoursEndpoints } from './hours';
 import { jobMoneyEndpoints } from './job-money';
 import { jobEndpoints } from './jobs';
 import { machineEndpoints } from './machines';
 import { materialEndpoints } from './materials';
+import { monthEndpoints } from './months';
 import { paybackEndpoints } from './payback';
 import { peopleEndpoints } from './people';
 import { rollupEndpoints } from './rollup';
@@ -18,11 +20,13 @@ export const ENDPOINTS = {
   ...peopleEndpoints,
   ...machineEndpoints,
   ...jobEndpoints,
+  ...estimateEndpoints,
   ...jobMoneyEndpoints,
   ...materialEndpoints,
   ...customerEndpoints,
   ...hoursEndpoints,
   ...timesheetEndpoints,
+  ...monthEndpoints,
   ...setupEndpoints,
   ...rollupEndpoints,
   ...paybackEndpoints,

@@ -43,7 +43,8 @@ export function costLines(lines: readonly CostedLine[], scrapAllowancePercent: s
   return computeEstimate(lines.map(toCostingLine), toPercent(scrapAllowancePercent));
 }
 
-function toCostingLine(line: CostedLine): CostingLine {
+/** A kept line as costing takes it. */
+export function toCostingLine(line: CostedLine): CostingLine {
   switch (line.kind) {
     case 'operation':
       return {
