@@ -154,7 +154,10 @@ function isSelected(selection: LineSelection): RawBuilder<boolean> {
   if (worked !== undefined) conditions.push(isWorkedIn(worked));
   if (machine !== undefined) {
     conditions.push(sql`machine_id = ${machine.machineId}::uuid`);
-    conditions.push(sql`posted_on >= ${machine.inServiceOn}::date`);
+    // A line may be posted after a machine went into service for work of before.
+    conditions.push(
+      sql`worked_on >= ${machine.inServiceOn}::date and posted_on >= ${machine.inServiceOn}::date`,
+    );
   }
   if (from !== undefined) conditions.push(sql`posted_on >= ${from}::date`);
   if (to !== undefined) conditions.push(sql`posted_on <= ${to}::date`);

@@ -1,5 +1,5 @@
-import { type Figure, type FigureRef, type Workings, workingsSchema } from '@brakeven/contract';
-import { D, sum } from '@brakeven/values';
+import { type Figure, type FigureRef } from '@brakeven/contract';
+import { D } from '@brakeven/values';
 import { type ShopContext } from '../context';
 import { getJob } from '../show-jobs/get-job';
 import { listJobs } from '../show-jobs/list-jobs';
@@ -7,35 +7,9 @@ import { getPayback } from '../show-payback/get-payback';
 import { createWorkedShop, WORKED_NOW, type WorkedShop } from '../testing/worked-shop';
 import { getJobHoursWorkings, getJobWorkings } from './get-job-workings';
 import { getPaybackWorkings } from './get-payback-workings';
-
-const PAGE = 17;
+import { expectToAddUp, readAll } from './testing/read-workings';
 
 jest.setTimeout(30_000);
-
-/** All pages of a figure's workings in one. */
-async function readAll(context: ShopContext, ref: FigureRef, limit = PAGE): Promise<Workings> {
-  const read = ref.figure.startsWith('payback.') ? getPaybackWorkings : getJobWorkings;
-  const pages: Workings[] = [await read(context, { ...ref, limit })];
-  for (let cursor = pages[0]?.nextCursor; cursor; cursor = pages.at(-1)?.nextCursor) {
-    pages.push(await read(context, { ...ref, limit, cursor }));
-  }
-  const [first] = pages;
-  if (!first) throw new Error('No page.');
-  return workingsSchema.parse({ ...first, lines: pages.flatMap((page) => page.lines), nextCursor: null });
-}
-
-function sumAmounts(items: readonly { amount: string }[], unit: Workings['unit']): string {
-  return sum(items.map((item) => D(item.amount))).toFixed(unit === 'money' ? 2 : 4);
-}
-
-/** Holds lines and parts against the figure. */
-function expectToAddUp(workings: Workings): void {
-  const { amount, unit, parts, lines, lineCount } = workings;
-  expect(lines).toHaveLength(lineCount);
-  expect(new Set(lines.map((line) => line.lineId)).size).toBe(lineCount);
-  if (parts.length > 0) expect(sumAmounts(parts, unit)).toBe(amount);
-  if (parts.length === 0 || lineCount > 0) expect(sumAmounts(lines, unit)).toBe(amount);
-}
 
 describe('workings', () => {
   let shop: WorkedShop;
