@@ -34,7 +34,7 @@ export function buildSetup(
   firstMonday: LocalDate,
   jobs: readonly PlannedJob[],
   options: { isHistory: boolean },
-): SetupData {
+): Partial<SetupData> {
   const inWeek = (week: number, day = 0): LocalDate => addDays(firstMonday, week * 7 + day);
   const pressOn = inWeek(PRESS_WEEK, 1);
   const ratesFrom = addDays(firstMonday, -60);

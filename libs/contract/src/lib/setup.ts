@@ -10,6 +10,12 @@ export const SETUP_SHEETS = [
   'machineRates',
   'overhead',
   'jobs',
+  'materials',
+  'sheetLots',
+  'issues',
+  'outsideServices',
+  'invoices',
+  'estimates',
 ] as const;
 export type SetupSheet = (typeof SETUP_SHEETS)[number];
 

@@ -5,7 +5,9 @@ describe('densities', () => {
   // Source: NIST SP 811, appendix B.9: 1 lb/in³ = 2.767990 E+04 kg/m³.
   it('are converted as published', () => {
     expect(toDensity(1, 'lb/in³').toFixed(1)).toBe('27679.9');
-    expect(densityIn(toDensity('0.2836', 'lb/in³'), 'lb/in³').minus(D('0.2836')).abs().lt('1e-25')).toBe(true);
+    expect(densityIn(toDensity('0.2836', 'lb/in³'), 'lb/in³').minus(D('0.2836')).abs().lt('1e-25')).toBe(
+      true,
+    );
   });
 
   it.each([

@@ -16,3 +16,15 @@ export function findHeaderUnit(text: string): string | null {
   const units = [...text.matchAll(/[([]([^)\]]*)[)\]]/g)].map(([, unit = '']) => unit.trim());
   return units.at(-1) || null;
 }
+
+const PER_UNIT = /\bper\s+([\p{L}]+)/iu;
+
+/** The unit behind `per`, such as `lb` of `Price per lb ($)`; else what the last brackets hold; null without either. */
+export function findPerUnit(text: string): string | null {
+  return PER_UNIT.exec(text)?.[1] ?? findHeaderUnit(text);
+}
+
+/** A header without `per` and the unit behind it: `Price per lb` → `Price `. */
+export function withoutPerUnit(text: string): string {
+  return text.replace(PER_UNIT, ' ');
+}

@@ -68,5 +68,12 @@ async function convertToCsv(name: string, bytes: Buffer, sheet: string): Promise
     ]);
     const people = parse(readFileSync(join(folder, 'setup-People.csv')));
     expect(people).toEqual([['Number', 'Name', 'Rate from', 'Wage per hour', 'Burden %']]);
+    const issues = parse(readFileSync(join(folder, 'setup-Issues.csv'))) as string[][];
+    expect(issues[0]?.slice(0, 4)).toEqual(['Date', 'Job', 'Material', 'Kind']);
+    expect(issues[0]?.slice(6)).toEqual(['Blank length (in)', 'Blank width (in)', 'Weight (lb)', 'Note']);
+    const materials = parse(readFileSync(join(folder, 'setup-Materials.csv'))) as string[][];
+    expect(materials[0]?.slice(3)).toEqual([
+      ...['Thickness or gauge (in)', 'Density (lb/in³)', 'Tensile strength (ksi)', 'Recovery price per lb'],
+    ]);
   }, 120_000);
 });

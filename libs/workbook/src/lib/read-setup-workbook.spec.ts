@@ -20,6 +20,15 @@ async function readBytes(bytes: Uint8Array, units: 'us' | 'metric' = 'us'): Prom
   return readSetupWorkbook(await readSheets({ name: 'setup.xlsx', bytes }), { units });
 }
 
+/** The sheets that read-setup-costs.spec.ts is about. */
+const NO_COSTS = {
+  materials: [],
+  sheetLots: [],
+  issues: [],
+  outsideServices: [],
+  invoices: [],
+  estimates: [],
+};
 const HARBOR = 'Harbor Lane Conveyors';
 const day = (text: string) => text as LocalDate;
 
@@ -29,6 +38,7 @@ describe('a filled set-up workbook', () => {
     async (path) => {
       const setup = readSetupWorkbook(await readFixture(path), { units: 'us' });
       expect(toData(setup)).toEqual({
+        ...NO_COSTS,
         people: [
           // 0.28 in a cell formatted as percent means 28 %.
           {
@@ -156,7 +166,7 @@ describe('a filled set-up workbook', () => {
 });
 
 describe('written set-up workbooks', () => {
-  const data: SetupData = {
+  const data: Partial<SetupData> = {
     people: [
       {
         number: '0101',
@@ -211,7 +221,7 @@ describe('written set-up workbooks', () => {
   it.each(['us', 'metric'] as const)('come back as they were written (%s units)', async (units) => {
     const setup = await readBytes(await writeSetupWorkbook(data, { units }), units);
     expect(setup.problems).toEqual([]);
-    expect(toData(setup)).toEqual(data);
+    expect(toData(setup)).toEqual({ ...NO_COSTS, ...data });
   });
 
   it('an untouched template states nothing and has nothing wrong with it', async () => {
@@ -233,11 +243,20 @@ describe('written set-up workbooks', () => {
       'Machine rates',
       'Overhead',
       'Jobs',
+      'Materials',
+      'Sheet lots',
+      'Issues',
+      'Outside services',
+      'Invoices',
+      'Estimates',
     ]);
     const explained = new Set(sheets[0]?.rows.flatMap(({ cells }) => cells.map(({ text }) => text)));
     const headers = sheets.slice(1).flatMap(({ rows }) => rows[0]?.cells.map(({ text }) => text) ?? []);
     expect(headers).toEqual(
-      expect.arrayContaining(['Burden %', 'Rated force (kN)', 'Bed length (mm)', 'Billable']),
+      expect.arrayContaining([
+        ...['Burden %', 'Rated force (kN)', 'Bed length (mm)', 'Billable', 'Density (kg/m³)'],
+        ...['Recovery price per kg', 'Price per kg', 'Weight (kg)', 'Thickness or gauge (mm)'],
+      ]),
     );
     for (const header of headers) {
       expect([...explained].some((text) => text === header || text === `${header} (optional)`)).toBe(true);

@@ -1,21 +1,10 @@
 import { type UnitSystem } from '@brakeven/values';
 import { columnOf } from './cell-address';
-import { findHeaderUnit } from './header-text';
-import {
-  findColumnUnit,
-  readSetupCell,
-  type SetupColumnContext,
-  type SetupTrouble,
-  type SetupValue,
-} from './setup-cells';
-import {
-  EXPLAINING_SHEET,
-  findSetupColumn,
-  findSetupPlan,
-  SETUP_PLANS,
-  type SetupSheetPlan,
-} from './setup-columns';
+import { readSetupCell, type SetupColumnContext, type SetupTrouble, type SetupValue } from './setup-cells';
+import { EXPLAINING_SHEET, findSetupColumn, findSetupPlan, SETUP_PLANS } from './setup-columns';
 import { type SetupData, type SetupFile, type SetupProblem, type SetupRowSource } from './setup-data';
+import { type SetupSheetPlan } from './setup-plan';
+import { findColumnUnit, listUnitsInWords } from './setup-quantities';
 import { type RawCell, type Sheet, type SheetFile, type SheetRow } from './sheet-file';
 
 type Values = Readonly<Record<string, SetupValue | null>>;
@@ -115,9 +104,9 @@ function readHeader(
       });
       continue;
     }
-    const unit = findColumnUnit(column.kind, findHeaderUnit(text), units);
+    const unit = findColumnUnit(column.kind, text, units);
     if (unit === undefined) {
-      const message = `The unit in '${text}' is not known. Use (tons), (tonnes) or (kN), and (in), (ft) or (mm).`;
+      const message = `The unit in '${text}' is not known. Use ${listUnitsInWords(column.kind)}.`;
       report('refused', { code: 'unit_unknown', message });
     }
     columns.set(columnOf(address), { column, date1904: sheet.date1904, unit: unit ?? '' });
@@ -188,11 +177,11 @@ function readRow(
   return { row: { row, cells, values }, problems, filledKeys };
 }
 
-/** What a row may leave out: a later rate the name, a job its status. */
+/** What a row may leave out: a later rate the name, and what its columns say of blank cells. */
 function completeRow(plan: SetupSheetPlan, row: ReadRow, above: readonly ReadRow[]): ReadRow {
-  const { values } = row;
-  if (plan.list === 'jobs') return { ...row, values: { ...values, status: values['status'] ?? 'open' } };
-  if (plan.list !== 'people' || values['name'] !== null) return row;
+  const values = { ...row.values };
+  for (const { key, ifBlank } of plan.columns) values[key] ??= ifBlank ?? null;
+  if (plan.list !== 'people' || values['name'] !== null) return { ...row, values };
   const earlier = above.find((one) => one.values['number'] === values['number']);
   return { ...row, values: { ...values, name: earlier?.values['name'] ?? null } };
 }

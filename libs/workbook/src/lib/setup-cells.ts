@@ -1,25 +1,28 @@
-import { JOB_STATUSES, type JobStatus, MACHINE_COST_KINDS } from '@brakeven/contract';
 import {
   D,
   dateFromSerial,
-  findForceUnit,
-  findLengthUnit,
-  type ForceUnit,
+  hoursFromDays,
+  hoursText,
   type LengthUnit,
+  massIn,
   moneyText,
   parseDateText,
-  parseForce,
+  parseHoursText,
   parseLength,
   percentText,
+  quoted,
   rateText,
-  toForce,
-  toLength,
+  roundHalfUp,
+  toHours,
+  toMass,
   toMoney,
   toPercent,
   toRate,
-  type UnitSystem,
 } from '@brakeven/values';
-import { type SetupCellKind, type SetupColumn } from './setup-columns';
+import { isGaugeText } from '@brakeven/forming';
+import { findSetupChoices } from './setup-choices';
+import { type SetupCellKind, type SetupColumn } from './setup-plan';
+import { findSetupQuantity } from './setup-quantities';
 import { type RawCell } from './sheet-file';
 import { toLabel } from './timesheet-cells';
 
@@ -45,15 +48,6 @@ export interface SetupColumnContext {
 
 type ReadCell = (cell: RawCell, context: SetupColumnContext) => SetupReading;
 
-const STATUS_WORDS: Readonly<Record<string, JobStatus>> = {
-  active: 'open',
-  'in progress': 'open',
-  closed: 'finished',
-  complete: 'finished',
-  completed: 'finished',
-  done: 'finished',
-  canceled: 'cancelled',
-};
 const YES_NO: Readonly<Record<string, boolean>> = {
   yes: true,
   y: true,
@@ -70,13 +64,24 @@ const READERS: Readonly<Record<SetupCellKind, ReadCell>> = {
   date: readDate,
   money: (cell, context) => readAmount(cell, context, (amount) => moneyText(toMoney(amount))),
   rate: (cell, context) => readAmount(cell, context, (amount) => rateText(toRate(amount))),
+  pricePerWeight: readPricePerWeight,
   percent: readPercent,
   count: readCount,
+  hours: readHours,
+  minutes: (cell, context) => readAmount(cell, context, (amount) => roundHalfUp(D(amount), 4).toFixed()),
   yesNo: readYesNo,
-  force: readForce,
-  length: readLength,
-  costKind: (cell, context) => readChoice(cell, context, MACHINE_COST_KINDS, {}),
-  jobStatus: (cell, context) => readChoice(cell, context, JOB_STATUSES, STATUS_WORDS),
+  force: readQuantity,
+  length: readQuantity,
+  mass: readQuantity,
+  density: readQuantity,
+  strength: readQuantity,
+  thickness: readThickness,
+  costKind: readChoice,
+  jobStatus: readChoice,
+  materialForm: readChoice,
+  issueKind: readChoice,
+  invoiceKind: readChoice,
+  estimateKind: readChoice,
 };
 
 /** Reads a cell as its column asks. Errors and formulas without a stored result are refused for every kind. */
@@ -90,17 +95,6 @@ export function readSetupCell(cell: RawCell, context: SetupColumnContext): Setup
     );
   }
   return READERS[context.column.kind](cell, context);
-}
-
-/** The unit that a header's brackets or the shop's units give a column; undefined when the brackets name none known. */
-export function findColumnUnit(
-  kind: SetupCellKind,
-  headerUnit: string | null,
-  units: UnitSystem,
-): string | undefined {
-  if (kind === 'force') return headerUnit ? findForceUnit(headerUnit) : { us: 'US ton', metric: 'kN' }[units];
-  if (kind === 'length') return headerUnit ? findLengthUnit(headerUnit) : { us: 'in', metric: 'mm' }[units];
-  return '';
 }
 
 function readLabel(cell: RawCell, { column }: SetupColumnContext): SetupReading {
@@ -137,13 +131,36 @@ function readAmount(
     return refuse(
       'amount_unreadable',
       cell,
-      `holds '${cell.text}'. ${column.header} must be a number, such as 28.50.`,
+      `holds '${cell.text}'. ${column.header} must be a number, such as ${column.example}.`,
     );
   }
   if (D(amount).lt(0)) {
-    return refuse('amount_negative', cell, `holds ${cell.text}, but ${column.header} cannot be below 0.`);
+    const instead = column.insteadOfMinus ? ` ${column.insteadOfMinus}` : '';
+    return refuse(
+      'amount_negative',
+      cell,
+      `holds ${cell.text}, but ${column.header} cannot be below 0.${instead}`,
+    );
   }
-  return accept(toText(amount));
+  const text = toText(amount);
+  if (column.isAboveZero && D(text).isZero()) {
+    return refuse('amount_zero', cell, `holds ${cell.text}, but ${column.header} must be above 0.`);
+  }
+  return accept(text);
+}
+
+/** A price per pound or kilogram, as price per kilogram. */
+function readPricePerWeight(cell: RawCell, context: SetupColumnContext): SetupReading {
+  const kilograms = massIn(toMass(1, context.unit as 'lb' | 'kg'), 'kg');
+  return readAmount(cell, context, (amount) => rateText(toRate(D(amount).div(kilograms))));
+}
+
+/** Hours as a number, or as a duration such as 1:30. */
+function readHours(cell: RawCell, context: SetupColumnContext): SetupReading {
+  if (cell.kind === 'duration' && cell.value >= 0) return accept(hoursText(hoursFromDays(cell.value)));
+  const duration = cell.kind === 'text' && cell.text.includes(':') ? parseHoursText(cell.text) : null;
+  if (duration?.ok) return accept(hoursText(duration.value));
+  return readAmount(cell, context, (amount) => hoursText(toHours(amount)));
 }
 
 function readPercent(cell: RawCell, { column }: SetupColumnContext): SetupReading {
@@ -166,11 +183,12 @@ function readPercent(cell: RawCell, { column }: SetupColumnContext): SetupReadin
 
 function readCount(cell: RawCell, { column }: SetupColumnContext): SetupReading {
   const number = findNumber(cell);
-  if (number !== null && D(number).isInteger() && D(number).gte(0)) return accept(Number(number));
+  const least = column.isAboveZero ? 1 : 0;
+  if (number !== null && D(number).isInteger() && D(number).gte(least)) return accept(Number(number));
   return refuse(
     'count_unreadable',
     cell,
-    `holds '${cell.text}'. ${column.header} must be a whole number, such as 24.`,
+    `holds '${cell.text}'. ${column.header} must be a whole number, such as ${column.example}.`,
   );
 }
 
@@ -181,39 +199,54 @@ function readYesNo(cell: RawCell, { column }: SetupColumnContext): SetupReading 
     : accept(value);
 }
 
-function readForce(cell: RawCell, { unit }: SetupColumnContext): SetupReading {
-  if (cell.kind === 'number' && cell.value > 0)
-    return accept(toForce(cell.value, unit as ForceUnit).toFixed());
-  const parsed = parseForce(cell.text, unit as ForceUnit);
+/** A number in the column's unit, or a text with a unit of its own; above 0. */
+function readQuantity(cell: RawCell, { column, unit }: SetupColumnContext): SetupReading {
+  const form = findSetupQuantity(column.kind);
+  if (!form) throw new Error(`${column.kind} is no quantity.`);
+  if (cell.kind === 'number' && !cell.isPercent && cell.value > 0) {
+    return accept(form.toBase(cell.value, unit).toFixed());
+  }
+  const parsed = form.parse(cell.text, unit);
   if (cell.kind === 'text' && parsed.ok && parsed.value.gt(0)) return accept(parsed.value.toFixed());
-  const why = parsed.ok ? 'The force must be above 0.' : parsed.message;
-  return refuse('force_unreadable', cell, `holds '${cell.text}'. ${why}`);
+  const why = parsed.ok ? `The ${form.noun} must be above 0.` : parsed.message;
+  return refuse(`${form.noun}_unreadable`, cell, `holds '${cell.text}'. ${why}`);
 }
 
-function readLength(cell: RawCell, { unit }: SetupColumnContext): SetupReading {
-  if (cell.kind === 'number' && cell.value > 0)
-    return accept(toLength(cell.value, unit as LengthUnit).toFixed());
-  const parsed = parseLength(cell.text, unit as LengthUnit);
-  if (cell.kind === 'text' && parsed.ok && parsed.value.gt(0)) return accept(parsed.value.toFixed());
-  const why = parsed.ok ? 'The length must be above 0.' : parsed.message;
-  return refuse('length_unreadable', cell, `holds '${cell.text}'. ${why}`);
+/** Whole numbers from here on are gauges as likely as inches. */
+const GAUGE_LEAST = D(3);
+const BARE_NUMBER = /^\d+(\.\d+)?$/;
+
+/** A thickness in the words of the workbook, with its unit; which gauge table applies depends on the material. */
+function readThickness(cell: RawCell, { column, unit }: SetupColumnContext): SetupReading {
+  if (cell.kind === 'date') {
+    const words = `holds a date. Spreadsheets turn 3/16 into one: format the cell as text and type it again.`;
+    return refuse('thickness_unreadable', cell, words);
+  }
+  const text = cell.text.trim();
+  if (cell.kind === 'text' && isGaugeText(text)) return accept(toLabel(text));
+  const isBare = BARE_NUMBER.test(text);
+  const parsed = parseLength(text, unit as LengthUnit);
+  const isRead = (cell.kind === 'text' || (cell.kind === 'number' && !cell.isPercent)) && parsed.ok;
+  if (!isRead || parsed.value.lte(0)) {
+    const words = `holds ${quoted(cell.text)}. ${column.header} must be such as 11 ga, 3/16, 0.12 in or 3 mm.`;
+    return refuse('thickness_unreadable', cell, words);
+  }
+  if (isBare && unit === 'in' && D(text).gte(GAUGE_LEAST)) {
+    const words = `holds ${text}, which would be ${text} inches. Write ${text} ga if it is a gauge, or ${text} in.`;
+    return refuse('thickness_unclear', cell, words);
+  }
+  return accept(isBare ? `${text} ${unit}` : toLabel(text));
 }
 
-function readChoice<T extends string>(
-  cell: RawCell,
-  { column }: SetupColumnContext,
-  choices: readonly T[],
-  alsoKnown: Readonly<Record<string, T>>,
-): SetupReading {
+function readChoice(cell: RawCell, { column }: SetupColumnContext): SetupReading {
+  const choices = findSetupChoices(column.kind);
+  if (!choices) throw new Error(`${column.kind} has no list of words.`);
   const word = toLabel(cell.text).toLowerCase();
-  const choice = choices.find((one) => one === word) ?? alsoKnown[word];
-  return choice
+  const choice = choices.words[word] ?? choices.alsoKnown[word];
+  const known = Object.keys(choices.words).join(', ');
+  return choice !== undefined
     ? accept(choice)
-    : refuse(
-        'choice_unknown',
-        cell,
-        `holds '${cell.text}'. ${column.header} must be one of: ${choices.join(', ')}.`,
-      );
+    : refuse('choice_unknown', cell, `holds '${cell.text}'. ${column.header} must be one of: ${known}.`);
 }
 
 /** A number, or a text that is one without doubt: digits with at most a point. */

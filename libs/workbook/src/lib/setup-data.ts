@@ -1,4 +1,4 @@
-import { type JobStatus, type MachineCostKind } from '@brakeven/contract';
+import { type JobStatus, type MachineCostKind, type MaterialForm } from '@brakeven/contract';
 import { type LocalDate } from '@brakeven/values';
 
 /** Where a row of the set-up workbook stands: its row number and the cell behind each column. */
@@ -72,6 +72,89 @@ export interface SetupJob {
   readonly status: JobStatus;
 }
 
+export interface SetupMaterial {
+  readonly name: string;
+  readonly grade: string | null;
+  readonly form: MaterialForm | null;
+  /** As written, with its unit: '11 ga', '3/16', '0.12 in'. */
+  readonly thickness: string | null;
+  /** Kilograms per cubic metre, decimal text. */
+  readonly densityKgM3: string | null;
+  /** Megapascals, decimal text. */
+  readonly tensileStrengthMpa: string | null;
+  readonly recoveryPricePerKg: string | null;
+}
+
+export interface SetupSheetLot {
+  readonly lot: string;
+  readonly material: string;
+  readonly receivedOn: LocalDate;
+  readonly vendor: string | null;
+  readonly sheets: number | null;
+  /** Millimetres, exact decimal text; so is the width. */
+  readonly sheetLengthMm: string | null;
+  readonly sheetWidthMm: string | null;
+  /** Kilograms, exact decimal text. */
+  readonly weightKg: string | null;
+  readonly cost: string;
+  readonly freight: string | null;
+}
+
+export interface SetupIssue {
+  readonly date: LocalDate;
+  readonly job: string;
+  readonly material: string;
+  readonly kind: 'issue' | 'return';
+  readonly sheets: number | null;
+  readonly pieces: number | null;
+  readonly blankLengthMm: string | null;
+  readonly blankWidthMm: string | null;
+  /** Kilograms, exact decimal text. */
+  readonly weightKg: string | null;
+  readonly note: string | null;
+}
+
+export interface SetupOutsideService {
+  readonly date: LocalDate;
+  readonly job: string;
+  readonly vendor: string | null;
+  readonly description: string | null;
+  readonly amount: string;
+}
+
+export interface SetupInvoice {
+  readonly number: string;
+  readonly date: LocalDate;
+  readonly job: string;
+  readonly kind: 'invoice' | 'credit-note';
+  readonly description: string | null;
+  /** Above 0, for a credit note too. */
+  readonly amount: string;
+}
+
+/** One line of a job's estimate; which cells it needs depends on its kind. */
+export interface SetupEstimateLine {
+  readonly job: string;
+  readonly estimatedOn: LocalDate | null;
+  readonly kind: 'operation' | 'material' | 'outside';
+  readonly operation: string | null;
+  readonly machine: string | null;
+  readonly setupHours: string | null;
+  readonly minutesPerPiece: string | null;
+  readonly pieces: number | null;
+  readonly labourRate: string | null;
+  readonly machineHourRate: string | null;
+  readonly overheadRate: string | null;
+  readonly material: string | null;
+  /** Kilograms, exact decimal text. */
+  readonly weightKg: string | null;
+  readonly pricePerKg: string | null;
+  readonly description: string | null;
+  readonly amount: string | null;
+  readonly scrapAllowancePercent: string | null;
+  readonly marginPercent: string | null;
+}
+
 /** All that a set-up workbook can state, each list in sheet order. */
 export interface SetupData {
   readonly people: readonly SetupPerson[];
@@ -82,6 +165,12 @@ export interface SetupData {
   readonly machineRates: readonly SetupMachineRate[];
   readonly overhead: readonly SetupOverhead[];
   readonly jobs: readonly SetupJob[];
+  readonly materials: readonly SetupMaterial[];
+  readonly sheetLots: readonly SetupSheetLot[];
+  readonly issues: readonly SetupIssue[];
+  readonly outsideServices: readonly SetupOutsideService[];
+  readonly invoices: readonly SetupInvoice[];
+  readonly estimates: readonly SetupEstimateLine[];
 }
 
 export interface SetupProblem {

@@ -1,21 +1,18 @@
-import { JOB_STATUSES, MACHINE_COST_KINDS } from '@brakeven/contract';
-import { D, forceIn, lengthIn, toForce, toLength, toLocalDate, type UnitSystem } from '@brakeven/values';
+import { D, massIn, toLocalDate, toMass, type UnitSystem } from '@brakeven/values';
 import { type Cell, type CellValue, type DataValidation, type Workbook, type Worksheet } from 'exceljs';
 import { columnLetters } from './cell-address';
 import { encodeEscapedText } from './escaped-text';
 import { loadExceljs } from './load-exceljs';
-import {
-  EXPLAINING_SHEET,
-  SETUP_PLANS,
-  type SetupCellKind,
-  type SetupColumn,
-  type SetupSheetPlan,
-} from './setup-columns';
+import { findSetupChoices, toChoiceWord } from './setup-choices';
+import { EXPLAINING_SHEET, SETUP_PLANS } from './setup-columns';
 import { type SetupData } from './setup-data';
+import { type SetupCellKind, type SetupColumn, type SetupSheetPlan } from './setup-plan';
+import { findSetupQuantity, toUnitHeader } from './setup-quantities';
 import {
   DATE_FORMAT,
   HEADER_FILL,
   HEADER_FONT,
+  HOURS_FORMAT,
   MONEY_FORMAT,
   QUIET_FONT,
   RATE_FORMAT,
@@ -33,21 +30,32 @@ const NUMBER_FORMATS: Readonly<Record<SetupCellKind, string>> = {
   rate: RATE_FORMAT,
   percent: '0.####',
   count: WHOLE_FORMAT,
+  hours: HOURS_FORMAT,
+  minutes: '0.####',
   yesNo: TEXT_FORMAT,
   force: '0.##',
   length: '0.###',
+  mass: '0.###',
+  density: '0.####',
+  strength: '0.##',
+  thickness: TEXT_FORMAT,
+  pricePerWeight: RATE_FORMAT,
   costKind: TEXT_FORMAT,
   jobStatus: TEXT_FORMAT,
+  materialForm: TEXT_FORMAT,
+  issueKind: TEXT_FORMAT,
+  invoiceKind: TEXT_FORMAT,
+  estimateKind: TEXT_FORMAT,
 };
-const CHOICES: Readonly<Partial<Record<SetupCellKind, readonly string[]>>> = {
-  yesNo: ['yes', 'no'],
-  costKind: MACHINE_COST_KINDS,
-  jobStatus: JOB_STATUSES,
-};
-const UNITS: Readonly<Record<UnitSystem, Readonly<Partial<Record<SetupCellKind, string>>>>> = {
-  us: { force: 'tons', length: 'in' },
-  metric: { force: 'kN', length: 'mm' },
-};
+const NUMBERS: ReadonlySet<SetupCellKind> = new Set([
+  'money',
+  'rate',
+  'percent',
+  'count',
+  'hours',
+  'minutes',
+] as const);
+const WEIGHT_UNITS = { us: 'lb', metric: 'kg' } as const;
 const EXPLANATION = [
   'Fill in one sheet after the other; sheets that you do not need may stay empty or be deleted.',
   'The words in the blue rows decide what a column means. Their order does not matter.',
@@ -67,15 +75,18 @@ export async function writeSetupTemplate(
   return toBuffer(workbook);
 }
 
-/** A set-up workbook filled with `data`, as a shop would fill the template; forces and lengths in the given units. */
+/**
+ * A set-up workbook filled with `data`, as a shop would fill the template; quantities in the given units. Lists that
+ * are left out give empty sheets.
+ */
 export async function writeSetupWorkbook(
-  data: SetupData,
+  data: Partial<SetupData>,
   { units }: { units: UnitSystem } = { units: 'us' },
 ): Promise<Buffer> {
   const exceljs = await loadExceljs();
   const workbook = new exceljs.Workbook();
   writeExplanation(workbook, units);
-  for (const plan of SETUP_PLANS) writeSheet(workbook, plan, data[plan.list], units);
+  for (const plan of SETUP_PLANS) writeSheet(workbook, plan, data[plan.list] ?? [], units);
   return toBuffer(workbook);
 }
 
@@ -91,7 +102,8 @@ function writeExplanation(workbook: Workbook, units: UnitSystem): void {
     sheet.addRow([plan.sheet, null, null, plan.help]).font = { bold: true };
     for (const column of plan.columns) {
       const need = column.isRequired ? '' : ' (optional)';
-      sheet.addRow([null, `${toHeader(column, units)}${need}`, column.example, column.help]);
+      const header = toUnitHeader(column.header, column.kind, units);
+      sheet.addRow([null, `${header}${need}`, column.example, column.help]);
     }
   }
 }
@@ -113,7 +125,7 @@ function writeSheet(
 }
 
 function prepareColumn(sheet: Worksheet, column: SetupColumn, at: number, units: UnitSystem): void {
-  const header = toHeader(column, units);
+  const header = toUnitHeader(column.header, column.kind, units);
   sheet.getColumn(at).width = Math.max(12, header.length + 4);
   sheet.getColumn(at).numFmt = NUMBER_FORMATS[column.kind];
   const cell = sheet.getCell(1, at);
@@ -123,8 +135,8 @@ function prepareColumn(sheet: Worksheet, column: SetupColumn, at: number, units:
 }
 
 function addChoices(sheet: Worksheet, kind: SetupCellKind, at: number): void {
-  const choices = CHOICES[kind];
-  if (!choices) return;
+  const choices = kind === 'yesNo' ? ['yes', 'no'] : Object.keys(findSetupChoices(kind)?.words ?? {});
+  if (choices.length === 0) return;
   const column = columnLetters(at);
   // The library's types leave out this list; setting it cell by cell would fill a thousand rows with blank cells.
   const { dataValidations } = sheet as Worksheet & {
@@ -146,19 +158,19 @@ function styleHeader(cell: Cell): void {
   cell.numFmt = TEXT_FORMAT;
 }
 
-function toHeader({ header, kind }: SetupColumn, units: UnitSystem): string {
-  const unit = UNITS[units][kind];
-  return unit ? `${header} (${unit})` : header;
-}
-
 function toCellValue(value: string | number | boolean, kind: SetupCellKind, units: UnitSystem): CellValue {
   if (kind === 'yesNo') return value === true ? 'yes' : 'no';
   const text = String(value);
   if (kind === 'date') return toWorkbookDate(toLocalDate(text));
-  if (kind === 'force') return forceIn(toForce(text, 'kN'), units === 'us' ? 'US ton' : 'kN').toNumber();
-  if (kind === 'length') return lengthIn(toLength(text, 'mm'), units === 'us' ? 'in' : 'mm').toNumber();
-  if (['money', 'rate', 'percent', 'count'].includes(kind)) return D(text).toNumber();
-  return encodeEscapedText(text);
+  if (kind === 'pricePerWeight') {
+    return D(text)
+      .times(massIn(toMass(1, WEIGHT_UNITS[units]), 'kg'))
+      .toNumber();
+  }
+  if (NUMBERS.has(kind)) return D(text).toNumber();
+  const choices = findSetupChoices(kind);
+  if (choices) return toChoiceWord(choices, text);
+  return findSetupQuantity(kind)?.fromBase(text, units).toNumber() ?? encodeEscapedText(text);
 }
 
 async function toBuffer(workbook: Workbook): Promise<Buffer> {

@@ -15,6 +15,12 @@ const none: SetupCounts = {
   machineRates: 0,
   overhead: 0,
   jobs: 0,
+  materials: 0,
+  sheetLots: 0,
+  issues: 0,
+  outsideServices: 0,
+  invoices: 0,
+  estimates: 0,
 };
 const good: SetupResult = {
   added: { ...none, people: 9, jobs: 12 },

@@ -82,5 +82,11 @@ const NONE = {
   machineRates: 0,
   overhead: 0,
   jobs: 0,
+  materials: 0,
+  sheetLots: 0,
+  issues: 0,
+  outsideServices: 0,
+  invoices: 0,
+  estimates: 0,
 };
 const EMPTY: SetupResult = { added: NONE, changed: NONE, alreadyThere: NONE, problems: [] };

@@ -10,6 +10,12 @@ const counts = (change: Partial<SetupCounts> = {}): SetupCounts => ({
   machineRates: 0,
   overhead: 0,
   jobs: 0,
+  materials: 0,
+  sheetLots: 0,
+  issues: 0,
+  outsideServices: 0,
+  invoices: 0,
+  estimates: 0,
   ...change,
 });
 const result = (change: Partial<SetupResult> = {}): SetupResult => ({

@@ -10,6 +10,12 @@ export const SHEET_WORDS: Record<SetupSheet, string> = {
   machineRates: 'Machine rates',
   overhead: 'Overhead',
   jobs: 'Jobs',
+  materials: 'Materials',
+  sheetLots: 'Sheet lots',
+  issues: 'Issues',
+  outsideServices: 'Outside services',
+  invoices: 'Invoices',
+  estimates: 'Estimates',
 };
 
 export interface SheetCount {

@@ -22,6 +22,12 @@ export const SHEET_NAMES: Record<SetupSheet, string> = {
   machineRates: 'Machine rates',
   overhead: 'Overhead',
   jobs: 'Jobs',
+  materials: 'Materials',
+  sheetLots: 'Sheet lots',
+  issues: 'Issues',
+  outsideServices: 'Outside services',
+  invoices: 'Invoices',
+  estimates: 'Estimates',
 };
 
 const KEYS: Record<RegisterTable, (values: RegisterValues) => string> = {

@@ -43,7 +43,7 @@ export const GUARDS = {
   isBillable: true,
   status: 'open' as const,
 };
-export const DATA: SetupData = {
+export const DATA = {
   people: [
     DANA,
     { ...DANA, rateFrom: FEBRUARY, wagePerHour: '29.25' },
@@ -72,7 +72,7 @@ export const DATA: SetupData = {
   machineRates: [PRESS_RATE],
   overhead: [{ validFrom: JANUARY, ratePerLabourHour: '18.00' }],
   jobs: [GUARDS],
-};
+} satisfies Partial<SetupData>;
 export const COUNTS = {
   people: 3,
   customers: 1,
@@ -82,6 +82,12 @@ export const COUNTS = {
   machineRates: 1,
   overhead: 1,
   jobs: 1,
+  materials: 0,
+  sheetLots: 0,
+  issues: 0,
+  outsideServices: 0,
+  invoices: 0,
+  estimates: 0,
 };
 export const NONE = Object.fromEntries(Object.keys(COUNTS).map((sheet) => [sheet, 0])) as Record<
   SetupSheet,
@@ -98,6 +104,12 @@ export const NOTHING: SetupData = {
   machineRates: [],
   overhead: [],
   jobs: [],
+  materials: [],
+  sheetLots: [],
+  issues: [],
+  outsideServices: [],
+  invoices: [],
+  estimates: [],
 };
 
 /** An empty shop to be set up; what a workbook leaves out of the usual data is replaced. */
