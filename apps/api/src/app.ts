@@ -6,19 +6,24 @@ import { type Store } from 'express-session';
 import { type Logger } from 'pino';
 import { type Api } from './api';
 import { mountAudit } from './audit/audit.routes';
+import { mountCustomers } from './customers/customers.routes';
 import { mountHours } from './hours/hours.routes';
+import { mountJobMoney } from './job-money/job-money.routes';
 import { mountJobs } from './jobs/jobs.routes';
 import { mountMachines } from './machines/machines.routes';
+import { mountMaterials } from './materials/materials.routes';
 import { handleProblem } from './middleware/problem-handler';
 import { requestLog } from './middleware/request-log';
 import { securityHeaders } from './middleware/security-headers';
 import { signInRateLimit } from './middleware/sign-in-rate-limit';
 import { webApp } from './middleware/web-app';
+import { mountMonths } from './months/months.routes';
 import { createMount } from './mount';
 import { mountPeople } from './people/people.routes';
 import { type ProgressHub } from './progress/progress-hub';
 import { mountProgress } from './progress/progress.routes';
 import { mountRollup } from './rollup/rollup.routes';
+import { mountSavedViews } from './saved-views/saved-views.routes';
 import { mountService } from './service/service.routes';
 import { CsrfTokens } from './session/csrf-tokens';
 import { createAuthenticate } from './session/password-strategy';
@@ -91,11 +96,16 @@ const RESOURCES: readonly ((api: Api) => void)[] = [
   mountPeople,
   mountMachines,
   mountJobs,
+  mountJobMoney,
+  mountMaterials,
+  mountCustomers,
   mountHours,
   mountTimesheets,
+  mountMonths,
   mountProgress,
   mountSetup,
   mountRollup,
   mountAudit,
+  mountSavedViews,
   mountWorkings,
 ];

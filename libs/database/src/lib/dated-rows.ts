@@ -1,0 +1,82 @@
+import { type Insertable, sql } from 'kysely';
+import { type Tables } from './tables';
+import { type ShopTransaction } from './tenancy';
+
+/** Tables whose rows are never overwritten, only voided and replaced, with the column of their ids. */
+const ID_COLUMNS = {
+  sheetLot: 'lotId',
+  materialIssue: 'issueId',
+  outsideService: 'outsideServiceId',
+  invoice: 'invoiceId',
+} as const satisfies Partial<Record<keyof Tables, string>>;
+
+/** A table of dated rows. */
+export type VoidableTable = keyof typeof ID_COLUMNS;
+
+/** What a new row holds besides shop and id. */
+export type DatedRowValues<T extends VoidableTable> = Omit<
+  Insertable<Tables[T]>,
+  'shopId' | (typeof ID_COLUMNS)[T] | 'createdAt' | 'voidedAt' | 'voidedBy'
+>;
+
+/** Tells whether a row is there and voided, and keeps others from changing it until the transaction ends. */
+export async function findDatedRow(
+  trx: ShopTransaction,
+  table: VoidableTable,
+  id: string,
+): Promise<{ isVoided: boolean } | null> {
+  const { rows } = await sql<{ isVoided: boolean }>`
+    select voided_at is not null as is_voided from ${sql.table(table)}
+    where ${sql.ref(ID_COLUMNS[table])} = ${id}::uuid
+    for update`.execute(trx);
+  return rows[0] ?? null;
+}
+
+/** Adds a row. */
+export async function insertDatedRow<T extends VoidableTable>(
+  trx: ShopTransaction,
+  table: T,
+  key: { shopId: string; id: string },
+  values: DatedRowValues<T>,
+): Promise<void> {
+  const names = Object.keys(values);
+  await sql`
+    insert into ${sql.table(table)} (shop_id, ${sql.ref(ID_COLUMNS[table])}, ${sql.join(names.map((name) => sql.ref(name)))})
+    values (${key.shopId}, ${key.id}, ${sql.join(Object.values(values))})`.execute(trx);
+}
+
+/**
+ * Voids a live row in a person's name and puts another in its place, in one statement, so that the books are looked
+ * at with both: a lot may be corrected from which issues were drawn. Tells whether there was such a row.
+ */
+export async function replaceDatedRow<T extends VoidableTable>(
+  trx: ShopTransaction,
+  table: T,
+  { id, newId, voidedBy }: { id: string; newId: string; voidedBy: string },
+  values: DatedRowValues<T>,
+): Promise<boolean> {
+  const idColumn = sql.ref(ID_COLUMNS[table]);
+  const names = Object.keys(values);
+  const result = await sql`
+    with voided as (
+      update ${sql.table(table)} set voided_at = now(), voided_by = ${voidedBy}
+      where ${idColumn} = ${id}::uuid and voided_at is null
+      returning shop_id
+    )
+    insert into ${sql.table(table)} (shop_id, ${idColumn}, ${sql.join(names.map((name) => sql.ref(name)))})
+    select shop_id, ${newId}, ${sql.join(Object.values(values))} from voided`.execute(trx);
+  return result.numAffectedRows === 1n;
+}
+
+/** Voids a row in a person's name, or restores it with null. */
+export async function setDatedRowVoided(
+  trx: ShopTransaction,
+  table: VoidableTable,
+  id: string,
+  voidedBy: string | null,
+): Promise<void> {
+  const voidedAt = voidedBy === null ? sql`null` : sql`now()`;
+  await sql`
+    update ${sql.table(table)} set voided_at = ${voidedAt}, voided_by = ${voidedBy}
+    where ${sql.ref(ID_COLUMNS[table])} = ${id}::uuid`.execute(trx);
+}
