@@ -5,18 +5,26 @@ import { toLineView } from './line-view';
 const line = (lineId: string, amount: string): WorkingsLine => ({
   lineId,
   on: '2026-11-02',
+  postedOn: '2026-11-02',
+  isLate: false,
+  takesBackOn: null,
   category: 'labour',
   label: 'Jon Reyes',
+  detail: null,
   job: '2231',
   operation: 'Form',
   machine: null,
-  hours: '1.5000',
+  quantity: '1.5000',
+  unit: 'hours',
   rate: '26.00',
   rateFactor: '1.28',
   rateValidFrom: '2026-03-01',
   amount,
+  figure: null,
   source: null,
 });
+
+const US = { currency: 'USD', units: 'us' } as const;
 
 const workings = (part: Partial<Workings>): Workings => ({
   figure: { figure: 'job.labour' },
@@ -73,7 +81,7 @@ describe('checkWorkings', () => {
 
 describe('toLineView', () => {
   it('shows how a line was computed, and where it belongs', () => {
-    const view = toLineView(line('1', '49.92'), 'money', 'USD');
+    const view = toLineView(line('1', '49.92'), 'money', US);
     expect(view.sum).toBe('1.50\u00a0h × $26.00 × 1.28');
     expect(view.where).toBe('2231 · Form');
     expect(view.amount).toBe('$49.92');
@@ -82,13 +90,36 @@ describe('toLineView', () => {
   it('leaves out what a line does not have', () => {
     const cost = {
       ...line('1', '1860.00'),
-      hours: null,
+      quantity: null,
+      unit: null,
       rate: null,
       rateFactor: null,
       job: null,
       operation: null,
     };
-    const view = toLineView(cost, 'money', 'USD');
-    expect([view.sum, view.where]).toEqual(['', '']);
+    const view = toLineView(cost, 'money', US);
+    expect([view.sum, view.where, view.note]).toEqual(['', '', '']);
+  });
+
+  it('weighs material in the unit of the shop, at a price for it', () => {
+    const material = {
+      ...line('1', '47.08'),
+      quantity: '50.0000',
+      unit: 'kg' as const,
+      rate: '0.9416',
+      rateFactor: null,
+      detail: '2 sheets',
+    };
+    expect(toLineView(material, 'money', US).sum).toBe('110.23\u00a0lb × $0.4271 per lb');
+    const metric = toLineView(material, 'money', { currency: 'EUR', units: 'metric' });
+    expect(metric.sum).toBe('50\u00a0kg × €0.9416 per kg');
+    expect(metric.where).toBe('2 sheets · 2231 · Form');
+  });
+
+  it('says what a line takes back', () => {
+    const taken = { ...line('1', '-49.92'), postedOn: '2026-12-01', isLate: true, takesBackOn: '2026-11-02' };
+    expect(toLineView(taken, 'money', US).note).toBe(
+      'Posted Dec 1, 2026: takes back what was posted Nov 2, 2026, since the row was voided',
+    );
   });
 });

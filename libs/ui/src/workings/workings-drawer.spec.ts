@@ -17,7 +17,7 @@ const workings: Workings = {
   unit: 'money',
   amount: '40.08',
   rule: 'Earned − operator.',
-  inputs: [{ label: 'Charge-out rate', value: '$85.00', validFrom: '2026-03-01' }],
+  inputs: [{ label: 'Charge-out rate', value: '$85.00', validFrom: '2026-03-01', figure: null }],
   parts: [
     { label: 'Earned', amount: '90.00', figure: { figure: 'payback.earned' } },
     { label: 'Operator', amount: '-49.92', figure: { figure: 'payback.operatorLabour' } },
@@ -27,16 +27,22 @@ const workings: Workings = {
     {
       lineId: '1',
       on: '2026-11-02',
+      postedOn: '2026-12-01',
+      isLate: true,
+      takesBackOn: null,
       category: 'labour',
       label: 'Jon Reyes',
+      detail: null,
       job: '2231',
       operation: 'Form',
       machine: 'Press 2',
-      hours: '1.5000',
+      quantity: '1.5000',
+      unit: 'hours',
       rate: '26.00',
       rateFactor: '1.28',
       rateValidFrom: '2026-03-01',
       amount: '-49.92',
+      figure: { figure: 'overtime.week' },
       source,
     },
   ],
@@ -84,6 +90,26 @@ describe('WorkingsDrawer', () => {
     expect(find('.check').textContent).toContain('The 2 parts add up to $40.08');
     find('button.part').click();
     expect(events).toEqual(['payback.earned']);
+  });
+
+  it('opens a row that is a figure itself, and says when a late one was posted', () => {
+    const row = find('ol li');
+    row.querySelector<HTMLElement>('button.part')?.click();
+    expect(events).toEqual(['overtime.week']);
+    expect(row.querySelector('.note')?.textContent).toBe('Posted Dec 1, 2026, late: its month was closed');
+  });
+
+  it('opens an input that is a figure itself', async () => {
+    const input = {
+      label: 'Earned back',
+      value: '$40.08',
+      validFrom: null,
+      figure: { figure: 'payback.earnedBack' },
+    };
+    drawer.setInput('workings', { ...workings, inputs: [input] });
+    await TestBed.inject(ApplicationRef).whenStable();
+    find('details button.part').click();
+    expect(events).toEqual(['payback.earnedBack']);
   });
 
   it('links a row to its cell, and follows it inside the application', () => {

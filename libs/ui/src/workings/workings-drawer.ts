@@ -19,6 +19,9 @@ import { LoadingSkeleton } from '../states/loading-skeleton';
 import { checkWorkings } from './check-workings';
 import { toLineView } from './line-view';
 
+const INPUTS_SHOWN = 4;
+const LINES_BELOW = 12;
+
 /** How a figure was made: rule, inputs, the figures and rows it sums, each row down to its cell. */
 @Component({
   selector: 'app-workings-drawer',
@@ -47,12 +50,9 @@ export class WorkingsDrawer {
   readonly sourceFollowed = output<SourceCell>();
 
   protected readonly signs = { agrees: '✓', disagrees: '!', open: '…' } as const;
-  /** A longer list of rates would push the rows out of sight. */
-  protected readonly inputsShown = 4;
-
   protected readonly lines = computed(() => {
     const workings = this.workings();
-    return workings?.lines.map((line) => toLineView(line, workings.unit, this.format().currency)) ?? [];
+    return workings?.lines.map((line) => toLineView(line, workings.unit, this.format())) ?? [];
   });
   protected readonly checks = computed(() => {
     const workings = this.workings();
@@ -62,6 +62,11 @@ export class WorkingsDrawer {
   constructor() {
     // The browser keeps the focus inside a modal dialog, closes it on Escape and gives the focus back.
     afterNextRender(() => this.dialog().nativeElement.showModal());
+  }
+
+  /** A longer list of rates would push many rows out of sight. */
+  protected areInputsShort({ inputs, lineCount }: Workings): boolean {
+    return inputs.length <= INPUTS_SHOWN || lineCount <= LINES_BELOW;
   }
 
   protected close(): void {

@@ -18,6 +18,7 @@ import {
   LocalDatePipe,
   PageHeader,
   type PageSource,
+  SHOP_FORMAT,
   StatusTag,
 } from '@brakeven/ui';
 import { JobsApi } from '../api/jobs-api';
@@ -58,6 +59,7 @@ export class JobPage {
   private readonly notifier = inject(Notifier);
   private readonly dialog = inject(MatDialog);
   private readonly router = inject(Router);
+  private readonly format = inject(SHOP_FORMAT);
 
   /** From the address. */
   readonly jobId = input.required<string>();
@@ -80,7 +82,7 @@ export class JobPage {
     word: toCategoryWord(category),
   }));
   protected readonly category = signal<CostCategory | undefined>(undefined);
-  protected readonly columns = computed(() => toLineColumns(this.hasMoney()));
+  protected readonly columns = computed(() => toLineColumns(this.hasMoney(), this.format()));
   protected readonly rowId = (line: JobLine): string => line.lineId;
   /** Without money the three lines of an entry say the same three times: labour stands for all. */
   protected readonly source = computed<PageSource<JobLine>>(() => {

@@ -64,7 +64,7 @@ describe('toLineColumns', () => {
   it('lead each line to its cell', () => {
     const source = { importId: 'i', fileName: 'Week 47.xlsx', sheet: 'Hours', row: 7, cell: 'F7' };
     const line = { source } as Parameters<NonNullable<ReturnType<typeof toLineColumns>[number]['href']>>[0];
-    const column = toLineColumns(false).at(-1);
+    const column = toLineColumns(false, { currency: 'USD', units: 'us', timeZone: 'UTC' }).at(-1);
     expect(column?.value(line)).toBe('F7 · Hours · Week 47.xlsx');
     expect(column?.href?.(line)).toBe('/timesheets/i?sheet=Hours&row=7&cell=F7');
     expect(column?.href?.({ ...line, source: null })).toBeNull();

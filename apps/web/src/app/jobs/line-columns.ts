@@ -1,5 +1,12 @@
 import { type CostCategory, type JobLine } from '@brakeven/contract';
-import { type GridColumn } from '@brakeven/ui';
+import {
+  type GridColumn,
+  type GridNote,
+  type ShopFormat,
+  toLineRateText,
+  toPostingNote,
+  toQuantityText,
+} from '@brakeven/ui';
 import { toSourceUrl } from '../workings/source-url';
 
 const CATEGORY_WORDS: Readonly<Record<CostCategory, string>> = {
@@ -20,30 +27,54 @@ export function toCategoryWord(category: CostCategory): string {
 }
 
 /** The columns of a job's cost lines, each with the cell it came from. */
-export function toLineColumns(withMoney: boolean): GridColumn<JobLine>[] {
-  return [...WORDS, ...(withMoney ? MONEY : []), SOURCE];
+export function toLineColumns(withMoney: boolean, format: ShopFormat): GridColumn<JobLine>[] {
+  const quantity: GridColumn<JobLine> = {
+    id: 'quantity',
+    header: 'Quantity',
+    kind: 'number',
+    value: (line) => toQuantityText(line, format),
+    width: 100,
+  };
+  const rate: GridColumn<JobLine> = {
+    id: 'rate',
+    header: 'Rate',
+    kind: 'number',
+    value: (line) => toLineRateText(line, format),
+    width: 118,
+  };
+  return [...WORDS, quantity, ...(withMoney ? [rate, ...MONEY] : []), SOURCE];
 }
 
 const WORDS: readonly GridColumn<JobLine>[] = [
   { id: 'workedOn', header: 'Date', kind: 'date', value: (line) => line.workedOn, width: 122 },
   { id: 'category', header: 'Category', value: (line) => toCategoryWord(line.category), width: 100 },
-  { id: 'employee', header: 'Employee', value: (line) => line.employee, minWidth: 120, flex: 1 },
-  { id: 'operation', header: 'Operation', value: (line) => line.operation, minWidth: 100, flex: 1 },
-  { id: 'machine', header: 'Machine', value: (line) => line.machine, minWidth: 90, flex: 1 },
-  { id: 'hours', header: 'Hours', kind: 'hours', value: (line) => line.hours, width: 86 },
+  {
+    id: 'label',
+    header: 'Who or what',
+    value: ({ label, detail }) => (detail === null ? label : `${label}, ${detail}`),
+    note: toLateNote,
+    minWidth: 130,
+    flex: 2,
+  },
+  { id: 'operation', header: 'Operation', value: (line) => line.operation, minWidth: 96, flex: 1 },
+  { id: 'machine', header: 'Machine', value: (line) => line.machine, minWidth: 86, flex: 1 },
 ];
 
 const MONEY: readonly GridColumn<JobLine>[] = [
-  { id: 'rate', header: 'Rate', kind: 'rate', value: (line) => line.rate, width: 96 },
-  { id: 'rateFactor', header: '× burden', kind: 'number', value: (line) => line.rateFactor, width: 92 },
+  { id: 'rateFactor', header: '× burden', kind: 'number', value: (line) => line.rateFactor, width: 86 },
   { id: 'amount', header: 'Amount', kind: 'money', value: (line) => line.amount, width: 108 },
 ];
+
+/** A line of a closed month stands where it was posted; what it takes back is told by its workings too. */
+function toLateNote(line: JobLine): GridNote | null {
+  const text = toPostingNote(line);
+  return text === '' ? null : { severity: 'warning', text };
+}
 
 const SOURCE: GridColumn<JobLine> = {
   id: 'source',
   header: 'From',
-  value: ({ source }) =>
-    source ? `${source.cell} · ${source.sheet} · ${source.fileName}` : 'entered by hand',
+  value: ({ source }) => (source ? `${source.cell} · ${source.sheet} · ${source.fileName}` : 'no timesheet'),
   href: ({ source }) => source && toSourceUrl(source),
   minWidth: 200,
   flex: 2,
