@@ -16,6 +16,7 @@ export * from './lib/people';
 export * from './lib/problem';
 export * from './lib/roles';
 export * from './lib/rollup';
+export * from './lib/saved-views';
 export * from './lib/schema-values';
 export * from './lib/session';
 export * from './lib/setup';

@@ -30,6 +30,7 @@ export * from './lib/rollup-months';
 export * from './lib/rollup-run';
 export * from './lib/rollup-state';
 export * from './lib/row-refusal';
+export * from './lib/saved-view-queries';
 export * from './lib/shop-queries';
 export * from './lib/stock-queries';
 export * from './lib/tables';

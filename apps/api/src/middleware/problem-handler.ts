@@ -17,6 +17,7 @@ export const STATUS_BY_CODE: Readonly<Record<ErrorCode, number>> = {
   invalid_input: 400,
   locked_out: 429,
   mapping_incomplete: 422,
+  month_refused: 409,
   not_found: 404,
   not_signed_in: 401,
   password_wrong: 422,

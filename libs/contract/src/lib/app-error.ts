@@ -12,6 +12,7 @@ export const ERROR_CODES = [
   'invalid_input',
   'locked_out',
   'mapping_incomplete',
+  'month_refused',
   'not_found',
   'not_signed_in',
   'password_wrong',

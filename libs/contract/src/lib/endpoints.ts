@@ -9,6 +9,7 @@ import { monthEndpoints } from './months';
 import { paybackEndpoints } from './payback';
 import { peopleEndpoints } from './people';
 import { rollupEndpoints } from './rollup';
+import { savedViewEndpoints } from './saved-views';
 import { sessionEndpoints } from './session';
 import { setupEndpoints } from './setup';
 import { timesheetEndpoints } from './timesheets';
@@ -30,5 +31,6 @@ export const ENDPOINTS = {
   ...setupEndpoints,
   ...rollupEndpoints,
   ...paybackEndpoints,
+  ...savedViewEndpoints,
   ...workingsEndpoints,
 };

@@ -1,5 +1,5 @@
 import { parseDate } from '@internationalized/date';
-import { findLocalDate, type LocalDate } from './local-date';
+import { findLocalDate, type LocalDate, toLocalDate } from './local-date';
 import { accepted, type Parsed, quoted, refused } from './parsed';
 
 /** Orders in which a column of text dates may be declared to be written. */
@@ -100,6 +100,11 @@ export function formatLocalDate(date: LocalDate, style: DateStyle = 'medium', lo
   const format = formats.get(key) ?? new Intl.DateTimeFormat(locale, { ...STYLES[style], timeZone: 'UTC' });
   formats.set(key, format);
   return format.format(parseDate(date).toDate('UTC'));
+}
+
+/** A month 'YYYY-MM' for people: 'March 2026'. */
+export function formatMonth(month: string, locale = 'en-US'): string {
+  return formatLocalDate(toLocalDate(`${month}-01`), 'monthYear', locale);
 }
 
 function toPattern(format: DateFormat): RegExp {

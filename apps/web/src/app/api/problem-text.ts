@@ -31,6 +31,7 @@ const TITLES: Readonly<Record<ErrorCode, string>> = {
   invalid_input: 'Please check what you entered',
   locked_out: 'Sign-in is locked for a while',
   mapping_incomplete: 'Some columns are still missing',
+  month_refused: 'The month stays as it is',
   not_found: 'This is not here, or no longer',
   not_signed_in: 'You are signed out',
   password_wrong: 'The current password is not right',
