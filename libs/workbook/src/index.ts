@@ -19,4 +19,5 @@ export {
 export { readSetupWorkbook } from './lib/read-setup-workbook';
 export { EXPLAINING_SHEET } from './lib/setup-columns';
 export { writeSetupTemplate, writeSetupWorkbook } from './lib/write-setup-workbook';
+export * from './lib/write-table';
 export { type TimesheetLine, type TimesheetWorkbook, writeTimesheetWorkbook } from './lib/write-timesheet';

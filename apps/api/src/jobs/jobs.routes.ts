@@ -3,6 +3,8 @@ import {
   createJob,
   deleteEstimate,
   draftEstimate,
+  exportJobsCsv,
+  exportJobsWorkbook,
   getEstimate,
   getEstimateChoices,
   getEstimateWorkings,
@@ -16,6 +18,7 @@ import {
   updateJob,
 } from '@brakeven/use-cases';
 import { type Api } from '../api';
+import { sendStream } from '../send-stream';
 
 /** Jobs with their figures and cost lines, and customers. */
 export function mountJobs({ mount }: Api): void {
@@ -23,6 +26,12 @@ export function mountJobs({ mount }: Api): void {
   mount(ENDPOINTS.getJob, ({ context, params }) => getJob(context, params));
   mount(ENDPOINTS.listJobLines, ({ context, params, query }) =>
     listJobLines(context, { ...params, ...query }),
+  );
+  mount(ENDPOINTS.exportJobsCsv, async ({ context, query, response }) =>
+    sendStream(await exportJobsCsv(context, query), 'text/csv; charset=utf-8', response),
+  );
+  mount(ENDPOINTS.exportJobsWorkbook, async ({ context, query, response }) =>
+    sendStream(await exportJobsWorkbook(context, query), ENDPOINTS.exportJobsWorkbook.response, response),
   );
   mount(ENDPOINTS.createJob, ({ context, body }) => createJob(context, body));
   mount(ENDPOINTS.updateJob, ({ context, params, body }) => updateJob(context, params, body));

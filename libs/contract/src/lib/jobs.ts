@@ -24,6 +24,7 @@ export const JOB_SORTS = [
   'customer',
   'title',
   'status',
+  'quantity',
   'openedOn',
   'dueOn',
   'hours',
@@ -109,6 +110,19 @@ export const jobListQuerySchema = pageQuerySchema.extend({
   direction: directionSchema.default('desc'),
 });
 export type JobListQuery = z.infer<typeof jobListQuerySchema>;
+
+/** Which columns of the jobs a file gets, in their order; money only for those who may see it. */
+export const jobExportQuerySchema = z.object({
+  ...jobFilterSchema.shape,
+  sort: z.enum(JOB_SORTS).default('lastWorkedOn'),
+  direction: directionSchema.default('desc'),
+  columns: z
+    .string()
+    .max(600)
+    .transform((text) => text.split(','))
+    .pipe(z.array(z.enum(JOB_SORTS)).min(1).max(JOB_SORTS.length)),
+});
+export type JobExportQuery = z.infer<typeof jobExportQuerySchema>;
 export const jobPageSchema = z.object({
   items: z.array(jobSchema),
   nextCursor: z.string().nullable(),
@@ -219,6 +233,22 @@ export const jobEndpoints = {
     params: jobId,
     query: jobLineQuerySchema,
     response: jobLinePageSchema,
+  }),
+  exportJobsCsv: endpoint({
+    method: 'get',
+    path: '/exports/jobs.csv',
+    summary: 'All jobs of a filter as CSV',
+    permission: 'jobs.view',
+    query: jobExportQuerySchema,
+    response: 'text/csv',
+  }),
+  exportJobsWorkbook: endpoint({
+    method: 'get',
+    path: '/exports/jobs.xlsx',
+    summary: 'All jobs of a filter as a workbook with live sums',
+    permission: 'jobs.view',
+    query: jobExportQuerySchema,
+    response: 'application/vnd.openxmlformats-officedocument.spreadsheetml.sheet',
   }),
   createJob: endpoint({
     method: 'post',

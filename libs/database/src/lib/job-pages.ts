@@ -24,6 +24,7 @@ const SORT_KEYS = {
   customer: { expression: inReadingOrder(sql`c.name`), type: 'text', isNullable: true },
   title: { expression: inReadingOrder(sql`j.title`), type: 'text' },
   status: { expression: sql`j.status`, type: 'text' },
+  quantity: { expression: sql`j.quantity`, type: 'numeric', isNullable: true },
   openedOn: { expression: sql`j.opened_on`, type: 'date', isNullable: true },
   dueOn: { expression: sql`j.due_on`, type: 'date', isNullable: true },
   hours: figure('f.hours'),

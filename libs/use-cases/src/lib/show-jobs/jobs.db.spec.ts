@@ -51,7 +51,7 @@ describe('jobs', () => {
     const jobs = await listAll({});
     expect(jobs).toHaveLength(4);
     for (const job of jobs) {
-      const isOfJob = (trace: { jobId: string }) => trace.jobId === job.jobId;
+      const isOfJob = (trace: { jobId: string | null }) => trace.jobId === job.jobId;
       const cost = computeJobCost(lines.filter(isOfJob), gaps.filter(isOfJob));
       expect(job).toMatchObject({
         hours: hoursText(cost.hours),

@@ -10,6 +10,7 @@ const PLAIN_SORTS: readonly JobSort[] = [
   'customer',
   'title',
   'status',
+  'quantity',
   'openedOn',
   'dueOn',
   'hours',
@@ -47,11 +48,16 @@ export async function listJobs(context: ShopContext, query: JobListQuery): Promi
  * @throws AppError `forbidden`
  */
 export function checkJobSort(context: ShopContext, sort: JobSort): void {
-  if (PLAIN_SORTS.includes(sort) || seesMoney(context)) return;
+  if (isPlainSort(sort) || seesMoney(context)) return;
   throw new AppError('forbidden', 'You may not see money on jobs, so they cannot be sorted by it.');
 }
 
 /** A filter as the database takes it. */
 export function toJobSelection({ search, status, customerId }: JobFilter): JobSelection {
   return { status, customerId, search: search?.replaceAll('\0', '') };
+}
+
+/** Whether a column tells nothing of money or of estimates. */
+export function isPlainSort(sort: JobSort): boolean {
+  return PLAIN_SORTS.includes(sort);
 }
