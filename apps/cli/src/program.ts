@@ -5,6 +5,9 @@ import { addDatabase } from './commands/database';
 import { addDoctor } from './commands/doctor';
 import { addForming } from './commands/forming';
 import { addJobs } from './commands/jobs';
+import { addMaterials } from './commands/materials';
+import { addMachines } from './commands/machines';
+import { addMonths } from './commands/months';
 import { addPayback } from './commands/payback';
 import { addRollup } from './commands/rollup';
 import { addSetup } from './commands/setup';
@@ -47,7 +50,10 @@ function createProgram(cli: Cli): Command {
     addTimesheets,
     addRollup,
     addJobs,
+    addMaterials,
     addPayback,
+    addMachines,
+    addMonths,
     addForming,
     addDatabase,
     addDoctor,
