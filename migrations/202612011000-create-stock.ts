@@ -148,7 +148,7 @@ async function createMovingAverage(db: Kysely<unknown>): Promise<void> {
 }
 
 /**
- * Rewrites the ledger of the materials given and marks the days of issues whose amount changed. Stock that would
+ * Rewrites the ledger of the materials given and marks the days of issues whose amount or average changed. Stock that would
  * fall below nothing is refused (BK001), with what is missing as JSON in the detail; so is a return of more than the
  * job drew (BK002).
  */
@@ -229,7 +229,8 @@ async function createRebuild(db: Kysely<unknown>): Promise<void> {
       from unnest(moves_before) b
       full join (select * from stock_move where material_id = any (materials) and rank = 1) a
         on a.source_id = b.source_id
-      where (a.amount, a.moved_on, a.weight_kg) is distinct from (b.amount, b.moved_on, b.weight_kg)
+      where (a.amount, a.average_per_kg, a.moved_on, a.weight_kg)
+          is distinct from (b.amount, b.average_per_kg, b.moved_on, b.weight_kg)
       order by 1, 2
       on conflict (shop_id, worked_on) do update set marked_at = now();
     end $$`.execute(db);

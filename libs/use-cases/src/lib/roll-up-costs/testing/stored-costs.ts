@@ -1,67 +1,88 @@
-import { computeJobCost, computeMachineDays } from '@brakeven/costing';
-import { type ShopTransaction } from '@brakeven/database';
+import { computeJobCost, computeMachineDays, JOB_COST_CATEGORIES, type PostedLine } from '@brakeven/costing';
+import { getClosedThrough, type ShopTransaction } from '@brakeven/database';
 import { type TestShop } from '@brakeven/test-shop';
-import { hoursText, moneyText, rateText } from '@brakeven/values';
+import { type Decimal, hoursText, moneyText, rateText, roundHalfUp } from '@brakeven/values';
 import { type ExpectedCosts } from './expected-costs';
 
-/** Everything that a rollup writes for a shop, comparable as text; the run's own id and clock left out. */
+/**
+ * Everything that a rollup writes for a shop, comparable as text; the run's own id and clock left out. Machine days
+ * are those of the open months.
+ */
 export type StoredCosts = Record<'lines' | 'gaps' | 'jobs' | 'machineDays' | 'machineJobDays', string[]>;
+
+const JOB_CATEGORIES = [...JOB_COST_CATEGORIES, 'invoiced', 'earned'] as const;
 
 /** Reads what the rollup wrote. */
 export function readStoredCosts(shop: TestShop): Promise<StoredCosts> {
-  return shop.inShop(async (trx) => ({
-    lines: await readLines(trx),
-    gaps: await readGaps(trx),
-    jobs: await readJobs(trx),
-    machineDays: await readMachineDays(trx),
-    machineJobDays: await readMachineJobDays(trx),
-  }));
+  return shop.inShop(async (trx) => {
+    const closedThrough = (await getClosedThrough(trx)) ?? '-infinity';
+    return {
+      lines: await readLines(trx),
+      gaps: await readGaps(trx),
+      jobs: await readJobs(trx),
+      machineDays: await readMachineDays(trx, closedThrough),
+      machineJobDays: await readMachineJobDays(trx, closedThrough),
+    };
+  });
+}
+
+/** What closed months hold, every column of it. */
+export function readClosedLines(shop: TestShop, through: string): Promise<string> {
+  return shop.inShop(async (trx) => {
+    const lines = await trx
+      .selectFrom('costLine')
+      .selectAll()
+      .where('postedOn', '<=', through)
+      .orderBy('postedOn')
+      .orderBy('sourceId')
+      .orderBy('category')
+      .execute();
+    const days = await trx
+      .selectFrom('jobDay')
+      .selectAll()
+      .where('postedOn', '<=', through)
+      .orderBy('jobId')
+      .orderBy('postedOn')
+      .orderBy('category')
+      .execute();
+    return JSON.stringify({ lines, days });
+  });
 }
 
 /** The same of what costing computed, so that the two can be compared whole. */
-export function toStoredCosts({ lines, gaps, inServiceOn }: ExpectedCosts): StoredCosts {
-  const jobIds = new Set([...lines, ...gaps].map((trace) => trace.jobId));
-  const ofJob = (jobId: string) => (trace: { jobId: string }) => trace.jobId === jobId;
-  const machineDays = computeMachineDays(lines, inServiceOn, gaps);
+export function toStoredCosts({ lines: open, gaps, frozen, inServiceOn }: ExpectedCosts): StoredCosts {
+  const lines = [...frozen, ...open];
+  const jobIds = new Set([...lines, ...gaps].flatMap((trace) => trace.jobId ?? []));
+  const ofJob = (jobId: string) => (trace: { jobId: string | null }) => trace.jobId === jobId;
+  const assigned = open.filter((line) => line.jobId !== null);
+  // The machine days of a premium alone do not exist, and it never stands alone.
+  const ofMachines = assigned.filter((line) => line.category !== 'overtime');
+  const owed = gaps.filter((gap) => gap.category !== 'overtime');
   return {
-    lines: sorted(
-      lines.map((l) =>
-        text(
-          l.workedOn,
-          l.entryId,
-          l.category,
-          l.jobId,
-          l.employeeId,
-          l.machineId,
-          hoursText(l.quantity),
-          rateText(l.rate),
-          l.rateFactor.toFixed(6),
-          l.rateId,
-          moneyText(l.amount),
-        ),
-      ),
-    ),
+    lines: sorted(lines.map(toLineText)),
     gaps: sorted(
       gaps.map((g) =>
-        text(g.workedOn, g.entryId, g.category, g.jobId, g.employeeId, g.machineId, hoursText(g.hours)),
+        text(
+          g.postedOn,
+          g.workedOn,
+          g.entryId,
+          g.category,
+          g.jobId,
+          g.employeeId,
+          g.machineId,
+          hoursText(g.hours),
+        ),
       ),
     ),
     jobs: sorted(
       [...jobIds].map((jobId) => {
         const cost = computeJobCost(lines.filter(ofJob(jobId)), gaps.filter(ofJob(jobId)));
-        return text(
-          jobId,
-          hoursText(cost.hours),
-          hoursText(cost.machineHours),
-          moneyText(cost.labour),
-          moneyText(cost.machine),
-          moneyText(cost.overhead),
-          moneyText(cost.earned),
-        );
+        const sums = JOB_CATEGORIES.map((category) => moneyText(cost[category]));
+        return text(jobId, hoursText(cost.hours), hoursText(cost.machineHours), ...sums);
       }),
     ),
     machineDays: sorted(
-      machineDays.map((d) =>
+      computeMachineDays(ofMachines, inServiceOn, owed).map((d) =>
         text(
           d.machineId,
           d.workedOn,
@@ -75,7 +96,7 @@ export function toStoredCosts({ lines, gaps, inServiceOn }: ExpectedCosts): Stor
     ),
     machineJobDays: sorted(
       [...jobIds].flatMap((jobId) =>
-        computeMachineDays(lines.filter(ofJob(jobId)), inServiceOn, gaps.filter(ofJob(jobId))).map((d) =>
+        computeMachineDays(ofMachines.filter(ofJob(jobId)), inServiceOn, owed.filter(ofJob(jobId))).map((d) =>
           text(
             d.machineId,
             d.workedOn,
@@ -91,11 +112,34 @@ export function toStoredCosts({ lines, gaps, inServiceOn }: ExpectedCosts): Stor
   };
 }
 
+function toLineText(l: PostedLine): string {
+  return text(
+    l.postedOn,
+    l.workedOn,
+    l.sourceId,
+    l.category,
+    l.jobId,
+    l.employeeId,
+    l.machineId,
+    quantityText(l.quantity),
+    rateText(l.rate),
+    l.rateFactor.toFixed(6),
+    l.rateId,
+    moneyText(l.amount),
+  );
+}
+
+/** As a line keeps it: hours exactly, kg rounded to a tenth of a gram. */
+function quantityText(quantity: Decimal): string {
+  return roundHalfUp(quantity, 4).toFixed(4);
+}
+
 async function readLines(trx: ShopTransaction): Promise<string[]> {
   const rows = await trx.selectFrom('costLine').selectAll().execute();
   return sorted(
     rows.map((r) =>
       text(
+        r.postedOn,
         r.workedOn,
         r.sourceId,
         r.category,
@@ -115,7 +159,9 @@ async function readLines(trx: ShopTransaction): Promise<string[]> {
 async function readGaps(trx: ShopTransaction): Promise<string[]> {
   const rows = await trx.selectFrom('rateGap').selectAll().execute();
   return sorted(
-    rows.map((r) => text(r.workedOn, r.entryId, r.category, r.jobId, r.employeeId, r.machineId, r.hours)),
+    rows.map((r) =>
+      text(r.postedOn, r.workedOn, r.entryId, r.category, r.jobId, r.employeeId, r.machineId, r.hours),
+    ),
   );
 }
 
@@ -139,14 +185,14 @@ async function readJobs(trx: ShopTransaction): Promise<string[]> {
         jobId,
         find('labour')?.hours ?? '0.0000',
         find('machine')?.hours ?? '0.0000',
-        ...['labour', 'machine', 'overhead', 'earned'].map((category) => find(category)?.amount ?? '0.00'),
+        ...JOB_CATEGORIES.map((category) => find(category)?.amount ?? '0.00'),
       );
     }),
   );
 }
 
-async function readMachineDays(trx: ShopTransaction): Promise<string[]> {
-  const rows = await trx.selectFrom('machineDay').selectAll().execute();
+async function readMachineDays(trx: ShopTransaction, closedThrough: string): Promise<string[]> {
+  const rows = await trx.selectFrom('machineDay').selectAll().where('postedOn', '>', closedThrough).execute();
   return sorted(
     rows.map((r) =>
       text(r.machineId, r.postedOn, r.hours, r.billableHours, r.earned, r.operatorLabour, r.running),
@@ -154,8 +200,12 @@ async function readMachineDays(trx: ShopTransaction): Promise<string[]> {
   );
 }
 
-async function readMachineJobDays(trx: ShopTransaction): Promise<string[]> {
-  const rows = await trx.selectFrom('machineJobDay').selectAll().execute();
+async function readMachineJobDays(trx: ShopTransaction, closedThrough: string): Promise<string[]> {
+  const rows = await trx
+    .selectFrom('machineJobDay')
+    .selectAll()
+    .where('postedOn', '>', closedThrough)
+    .execute();
   return sorted(
     rows.map((r) => text(r.machineId, r.postedOn, r.jobId, r.hours, r.earned, r.operatorLabour, r.running)),
   );
