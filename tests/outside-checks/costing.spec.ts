@@ -42,7 +42,7 @@ function costOf(hours: number, book: RateBook) {
 }
 
 // Source: cost-accounting course texts on direct labour and overtime premium; the straight-time part is direct.
-// This release costs straight time; the premium itself comes with the overtime rule.
+// The premium is apart from it: see overtime.spec.ts.
 it.each([
   [44, '20', '880.00'],
   [44, '16', '704.00'],
