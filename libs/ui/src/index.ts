@@ -21,5 +21,5 @@ export * from './grid/grid';
 export * from './grid/grid-column';
 export * from './grid/page-source';
 export * from './problem-words';
-export { Chart, type ChartOption, type ChartTable } from './chart/chart';
+export { Chart, type ChartCell, type ChartOption, type ChartTable } from './chart/chart';
 export { type ChartPalette, ChartPaletteSource } from './chart/chart-palette';

@@ -1,6 +1,8 @@
 import { ChangeDetectionStrategy, Component, computed, inject, input, signal } from '@angular/core';
+import { type FigureRef } from '@brakeven/contract';
 import { type EChartsCoreOption } from 'echarts/core';
 import { NgxEchartsDirective, provideEchartsCore } from 'ngx-echarts';
+import { Figure, type FigureUnit } from '../figure/figure';
 import { type ChartPalette, ChartPaletteSource } from './chart-palette';
 
 /** What a chart draws; made anew for each change, never altered. */
@@ -9,7 +11,16 @@ export type ChartOption = EChartsCoreOption;
 /** The chart's facts as a table, for those who cannot see it or want the numbers. */
 export interface ChartTable {
   headers: readonly string[];
-  rows: readonly (readonly string[])[];
+  rows: readonly (readonly ChartCell[])[];
+}
+
+/** Words, or a figure that opens. */
+export type ChartCell = string | ChartFigure;
+
+export interface ChartFigure {
+  value: string;
+  unit?: FigureUnit;
+  ref: FigureRef;
 }
 
 let count = 0;
@@ -17,7 +28,7 @@ let count = 0;
 /** A chart with a title, a sentence that says the same, and its numbers as a table on demand. */
 @Component({
   selector: 'app-chart',
-  imports: [NgxEchartsDirective],
+  imports: [Figure, NgxEchartsDirective],
   providers: [provideEchartsCore({ echarts: () => import('./echarts-parts') })],
   templateUrl: './chart.html',
   styleUrl: './chart.scss',
@@ -37,4 +48,8 @@ export class Chart {
   protected readonly option = computed(() => this.build()(this.palette()));
   protected readonly isTable = signal(false);
   protected readonly id = `chart-${++count}`;
+
+  protected toFigure(cell: ChartCell): ChartFigure | null {
+    return typeof cell === 'string' ? null : cell;
+  }
 }

@@ -6,6 +6,9 @@ import { toQueryParams } from './query-params';
 
 const HOURS_OF_JOBS = ['job.hours', 'job.machineHours'];
 
+/** Addresses that are not called like their figures. */
+const SOURCES: Readonly<Record<string, string>> = { estimate: 'estimates' };
+
 /** How a figure was made. */
 @Injectable({ providedIn: 'root' })
 export class WorkingsApi {
@@ -20,6 +23,7 @@ export class WorkingsApi {
 }
 
 function findSource({ figure }: FigureRef): string {
-  if (figure.startsWith('payback.')) return 'payback';
+  const [kind = ''] = figure.split('.');
+  if (kind !== 'job') return SOURCES[kind] ?? kind;
   return HOURS_OF_JOBS.includes(figure) ? 'job-hours' : 'jobs';
 }

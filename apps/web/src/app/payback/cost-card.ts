@@ -1,15 +1,16 @@
 import { ChangeDetectionStrategy, Component, computed, inject, input } from '@angular/core';
 import { rxResource } from '@angular/core/rxjs-interop';
 import { RouterLink } from '@angular/router';
-import { EmptyState, ErrorState, Figure, LoadingSkeleton, LocalDatePipe, MoneyPipe } from '@brakeven/ui';
+import { type FigureRef } from '@brakeven/contract';
+import { EmptyState, ErrorState, Figure, LoadingSkeleton, LocalDatePipe } from '@brakeven/ui';
 import { MachinesApi } from '../api/machines-api';
 import { toShownProblem } from '../api/problem-text';
-import { toPaybackRef } from './payback-refs';
+import { toCostItemRef, toPaybackRef } from './payback-refs';
 
 /** The outlay, item by item. */
 @Component({
   selector: 'app-cost-card',
-  imports: [EmptyState, ErrorState, Figure, LoadingSkeleton, LocalDatePipe, MoneyPipe, RouterLink],
+  imports: [EmptyState, ErrorState, Figure, LoadingSkeleton, LocalDatePipe, RouterLink],
   template: `
     <h2>What it cost</h2>
     @if (problem(); as failed) {
@@ -24,7 +25,13 @@ import { toPaybackRef } from './payback-refs';
                   {{ item.kind }}
                   <span class="muted">{{ item.description }} {{ item.incurredOn | localDate }}</span>
                 </th>
-                <td class="number">{{ item.amount | money }}</td>
+                <td class="number">
+                  <app-figure
+                    [value]="item.amount"
+                    [ref]="itemRef(item.machineCostItemId)"
+                    [label]="item.kind"
+                  />
+                </td>
               </tr>
             }
             <tr class="total">
@@ -80,4 +87,8 @@ export class CostCard {
     return error ? toShownProblem(error) : null;
   });
   protected readonly outlayRef = computed(() => toPaybackRef('payback.outlay', this.machineId()));
+
+  protected itemRef(costItemId: string): FigureRef {
+    return toCostItemRef(this.machineId(), costItemId);
+  }
 }

@@ -1,22 +1,24 @@
 import { ChangeDetectionStrategy, Component, computed, input } from '@angular/core';
+import { RouterLink } from '@angular/router';
 import { type FigureRef, type Payback } from '@brakeven/contract';
-import { Figure, HoursPipe, RatePipe } from '@brakeven/ui';
+import { Figure, RatePipe } from '@brakeven/ui';
 import { toMonthRef } from './payback-refs';
 import { toMonthHeading } from './verdict';
 
 /** How the month's net was made: earned, operator, running. */
 @Component({
   selector: 'app-month-card',
-  imports: [Figure, HoursPipe, RatePipe],
+  imports: [Figure, RatePipe, RouterLink],
   template: `
     <h2>{{ heading() }}</h2>
     <table class="figures">
       <tbody>
         <tr>
           <th scope="row">
-            Earned, {{ month().billableHours | hours }} h
+            Earned,
+            <app-figure [value]="month().billableHours" unit="hours" [ref]="ref('payback.billableHours')" />
             @if (month().chargeOutRate; as rate) {
-              × {{ rate | rate }}
+              × <a [routerLink]="['/machines', machineId()]" title="To its rates">{{ rate | rate }}</a>
             } @else {
               at changing rates
             }
@@ -43,7 +45,8 @@ import { toMonthHeading } from './verdict';
     </table>
     <p class="muted">
       <app-figure [value]="month().hours" unit="hours" [ref]="ref('payback.hours')" /> on the machine,
-      {{ month().billableHours | hours }} h of them billable.
+      <app-figure [value]="month().billableHours" unit="hours" [ref]="ref('payback.billableHours')" /> of them
+      billable.
     </p>
   `,
   styles: `

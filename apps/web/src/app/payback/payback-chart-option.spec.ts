@@ -76,9 +76,14 @@ describe('toContinuation', () => {
 
 describe('toPaybackTable', () => {
   it('keeps the last day of each month', () => {
-    expect(toPaybackTable(makePayback(), (amount) => amount).rows).toEqual([
-      ['March 2026', 'Mar 27, 2026', '-36900.10'],
-      ['November 2026', 'Nov 24, 2026', '-18098.00'],
+    const { machineId } = makePayback().machine;
+    const netCash = (value: string, to: string) => ({
+      value,
+      ref: { figure: 'payback.netCash', machineId, to },
+    });
+    expect(toPaybackTable(makePayback()).rows).toEqual([
+      ['March 2026', 'Mar 27, 2026', netCash('-36900.10', '2026-03-27')],
+      ['November 2026', 'Nov 24, 2026', netCash('-18098.00', '2026-11-24')],
     ]);
   });
 });

@@ -9,6 +9,7 @@ import {
   toLocalDate,
 } from '@brakeven/values';
 import { type ChartOption, type ChartPalette, type ChartTable } from '@brakeven/ui';
+import { toNetCashRef } from './payback-refs';
 
 type Point = [on: string, netCash: number];
 
@@ -60,14 +61,14 @@ export function toPaybackChartOption(facts: PaybackChartFacts, palette: ChartPal
 }
 
 /** The curve at the end of each month, for reading. */
-export function toPaybackTable(payback: Payback, formatAmount: (amount: string) => string): ChartTable {
+export function toPaybackTable(payback: Payback): ChartTable {
   const byMonth = new Map(payback.curve.map((point) => [monthOf(toLocalDate(point.on)), point]));
   return {
     headers: ['Month', 'Last day with work', 'Cumulative net cash'],
     rows: [...byMonth.values()].map(({ on, netCash }) => [
       formatLocalDate(toLocalDate(on), 'monthYear'),
       formatLocalDate(toLocalDate(on)),
-      formatAmount(netCash),
+      { value: netCash, ref: toNetCashRef(payback.machine.machineId, on) },
     ]),
   };
 }

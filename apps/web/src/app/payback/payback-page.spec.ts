@@ -7,8 +7,20 @@ import { NEVER, of, throwError } from 'rxjs';
 import { MachinesApi } from '../api/machines-api';
 import { PaybackApi } from '../api/payback-api';
 import { RollupStore } from '../shell/rollup-store';
+import { findClosedFigures } from '../testing/closed-figures';
 import { makePayback } from './payback-fixture';
 import { PaybackPage } from './payback-page';
+
+const COST_ITEMS = [
+  { machineCostItemId: 'c1', incurredOn: '2026-02-10', kind: 'price', description: '', amount: '36000.00' },
+  {
+    machineCostItemId: 'c2',
+    incurredOn: '2026-02-17',
+    kind: 'freight',
+    description: 'By rail',
+    amount: '2260.00',
+  },
+];
 
 describe('PaybackPage', () => {
   const opened: FigureRef[] = [];
@@ -22,7 +34,7 @@ describe('PaybackPage', () => {
         provideRouter([]),
         {
           provide: MachinesApi,
-          useValue: { list: () => of(list), get: () => of({ ...known, costItems: [] }) },
+          useValue: { list: () => of(list), get: () => of({ ...known, costItems: COST_ITEMS }) },
         },
         { provide: PaybackApi, useValue: { getPayback: () => answer } },
         { provide: RollupStore, useValue: { rolledUp: NEVER } },
@@ -50,6 +62,28 @@ describe('PaybackPage', () => {
     expect(textOf('.lead')).toContain('breaks even on May 14, 2027');
     element.querySelectorAll<HTMLElement>('h1 button').forEach((button) => button.click());
     expect(opened.map(({ figure }) => figure)).toEqual(['payback.earnedBack', 'payback.outlay']);
+  });
+
+  it('opens every amount of money and hours, whatever the verdict', async () => {
+    for (const method of ['straight-line', 'reached', 'not-at-this-pace'] as const) {
+      const date = method === 'not-at-this-pace' ? null : '2026-10-02';
+      const { element } = await render(makePayback({ breakEven: { date, method } }));
+      opened.length = 0;
+      const figures = element.querySelectorAll<HTMLElement>('button.figure');
+      figures.forEach((figure) => figure.click());
+      expect(findClosedFigures(element)).toEqual([]);
+      expect(opened).toHaveLength(figures.length);
+      expect(opened.map(({ figure }) => figure)).toEqual(
+        expect.arrayContaining(['payback.costItem', 'payback.otherJobs', 'payback.billableHours']),
+      );
+      TestBed.resetTestingModule();
+    }
+  });
+
+  it('finds amounts that do not open, so that finding none says something', () => {
+    const page = document.createElement('div');
+    page.innerHTML = '<p>It netted $612.44 over 7.50 h.</p><button class="figure">$1.00</button>';
+    expect(findClosedFigures(page)).toEqual(['It netted $612.44 over 7.50 h.']);
   });
 
   it('says when it has paid for itself', async () => {

@@ -11,7 +11,6 @@ import {
   LengthPipe,
   LoadingSkeleton,
   LocalDatePipe,
-  MoneyPipe,
   PageHeader,
   SHOP_FORMAT,
   StatusTag,
@@ -44,7 +43,6 @@ import { findEarlyCaution, findVerdictState, toChartSummary, toPaceWindow } from
     LengthPipe,
     LoadingSkeleton,
     LocalDatePipe,
-    MoneyPipe,
     MonthCard,
     PageHeader,
     RouterLink,
@@ -97,6 +95,7 @@ export class PaybackPage {
       outlay: toPaybackRef('payback.outlay', machineId),
       earnedBack: toPaybackRef('payback.earnedBack', machineId),
       remaining: toPaybackRef('payback.remaining', machineId),
+      pace: toPaybackRef('payback.pacePerWeek', machineId),
     };
   });
   protected readonly gaps = computed(() => this.payback()?.gaps.map(toGapAdvice) ?? []);
@@ -109,7 +108,7 @@ export class PaybackPage {
   });
   protected readonly chartTable = computed(() => {
     const payback = this.payback();
-    return payback ? toPaybackTable(payback, this.formatAmount) : { headers: [], rows: [] };
+    return payback ? toPaybackTable(payback) : { headers: [], rows: [] };
   });
   protected readonly chartSummary = computed(() => {
     const payback = this.payback();

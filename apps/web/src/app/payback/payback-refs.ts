@@ -12,6 +12,16 @@ export function toMonthRef(figure: FigureRef['figure'], machineId: string, month
   return { figure, machineId, from: startOfMonth(first), to: endOfMonth(first) };
 }
 
+/** The net cash that a machine's curve has on a day. */
+export function toNetCashRef(machineId: string, to: string): FigureRef {
+  return { figure: 'payback.netCash', machineId, to };
+}
+
+/** One of the items that a machine's outlay is made of. */
+export function toCostItemRef(machineId: string, costItemId: string): FigureRef {
+  return { figure: 'payback.costItem', machineId, costItemId };
+}
+
 /** What one job has added to the payback. */
 export function toJobShareRef(machineId: string, jobId: string): FigureRef {
   return { figure: 'payback.earnedBack', machineId, jobId };

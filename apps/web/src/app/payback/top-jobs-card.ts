@@ -1,13 +1,13 @@
-import { ChangeDetectionStrategy, Component, input } from '@angular/core';
+import { ChangeDetectionStrategy, Component, computed, input } from '@angular/core';
 import { RouterLink } from '@angular/router';
 import { type FigureRef, type Payback } from '@brakeven/contract';
-import { EmptyState, Figure, MoneyPipe } from '@brakeven/ui';
-import { toJobShareRef } from './payback-refs';
+import { EmptyState, Figure } from '@brakeven/ui';
+import { toJobShareRef, toPaybackRef } from './payback-refs';
 
 /** The jobs that have added most to the payback. */
 @Component({
   selector: 'app-top-jobs-card',
-  imports: [EmptyState, Figure, MoneyPipe, RouterLink],
+  imports: [EmptyState, Figure, RouterLink],
   template: `
     <h2>Jobs that paid most</h2>
     @if (payback().topJobs.length > 0) {
@@ -28,7 +28,13 @@ import { toJobShareRef } from './payback-refs';
               <th scope="row">
                 {{ payback().otherJobs.jobs }} more {{ payback().otherJobs.jobs === 1 ? 'job' : 'jobs' }}
               </th>
-              <td class="number">{{ payback().otherJobs.net | money }}</td>
+              <td class="number">
+                <app-figure
+                  [value]="payback().otherJobs.net"
+                  [ref]="othersRef()"
+                  label="Net of the other jobs"
+                />
+              </td>
             </tr>
           }
         </tbody>
@@ -49,6 +55,9 @@ import { toJobShareRef } from './payback-refs';
 })
 export class TopJobsCard {
   readonly payback = input.required<Payback>();
+  protected readonly othersRef = computed(() =>
+    toPaybackRef('payback.otherJobs', this.payback().machine.machineId),
+  );
 
   protected ref(jobId: string): FigureRef {
     return toJobShareRef(this.payback().machine.machineId, jobId);

@@ -79,11 +79,17 @@ describe('WorkingsApi', () => {
     api.getWorkings({ figure: 'job.hours', jobId: 'j' }).subscribe();
     api.getWorkings({ figure: 'job.total' }, 'c1').subscribe();
     api.getWorkings({ figure: 'payback.earned', machineId: 'm', from: '2026-11-01' }).subscribe();
+    api.getWorkings({ figure: 'overtime.week', employeeId: 'e', from: '2026-11-02' }).subscribe();
+    api.getWorkings({ figure: 'stock.issue', issueId: 'i' }).subscribe();
+    api.getWorkings({ figure: 'estimate.total', jobId: 'j' }).subscribe();
     const urls = http.match(() => true).map(({ request }) => request.urlWithParams);
     expect(urls).toEqual([
       '/api/workings/job-hours?figure=job.hours&jobId=j',
       '/api/workings/jobs?figure=job.total&cursor=c1&limit=500',
       '/api/workings/payback?figure=payback.earned&machineId=m&from=2026-11-01',
+      '/api/workings/overtime?figure=overtime.week&employeeId=e&from=2026-11-02',
+      '/api/workings/stock?figure=stock.issue&issueId=i',
+      '/api/workings/estimates?figure=estimate.total&jobId=j',
     ]);
   });
 });
