@@ -110,16 +110,15 @@ export function computeMachineHourRate(basis: MachineHourRateBasis): MachineHour
  */
 export function prorateFixedCost(fixedPerYear: Money, from: LocalDate, to: LocalDate): Money {
   if (to < from) throw new RangeError(`A period from ${from} cannot end on ${to}.`);
-  let days = { common: 0, leap: 0 };
+  let [commonDays, leapDays] = [0, 0];
   for (let start = from; start <= to; start = addDays(endOfYear(start), 1)) {
     const end = endOfYear(start) < to ? endOfYear(start) : to;
-    const count = daysBetween(start, end) + 1;
-    days = isLeapYear(start)
-      ? { ...days, leap: days.leap + count }
-      : { ...days, common: days.common + count };
+    const days = daysBetween(start, end) + 1;
+    if (isLeapYear(start)) leapDays += days;
+    else commonDays += days;
   }
-  // common ÷ 365 + leap ÷ 366, as one fraction.
-  const share = D(days.common * 366 + days.leap * 365);
+  // Days ÷ 365 + leap days ÷ 366, as one fraction.
+  const share = D(commonDays * 366 + leapDays * 365);
   return toMoney(roundFraction(fixedPerYear.times(share), D(365 * 366), 2));
 }
 

@@ -108,9 +108,11 @@ function takeBack(present: readonly SourceLine[], isLive: boolean): SourceLine[]
   return isLive ? [] : present.map((line) => withSum(line, line.quantity.negated(), line.amount.negated()));
 }
 
-/** Lines that can cancel out: everything but how much. */
-function lineKey({ quantity: _quantity, amount: _amount, postedOn: _postedOn, ...rest }: PostedLine): string {
-  return JSON.stringify({ ...rest, rate: rest.rate.toFixed(), rateFactor: rest.rateFactor.toFixed() });
+/** Lines that can cancel out: the same row and category, the same bearer, the same rate. */
+function lineKey(line: PostedLine): string {
+  const { sourceId, category, jobId, employeeId, machineId, rateId } = line;
+  const rates = [line.rate.toFixed(), line.rateFactor.toFixed()];
+  return [sourceId, category, jobId, employeeId, machineId, rateId, ...rates].join('|');
 }
 
 function addUp(lines: readonly PostedLine[]): SourceLine | undefined {

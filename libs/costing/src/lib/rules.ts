@@ -42,6 +42,12 @@ export const RULES = {
   fixedCostOfPeriod: 'Fixed parts of a year × the days of the period ÷ the days of their calendar year.',
   recovery:
     'Hours really run × the fixed share of the rate − the fixed cost of the period: above 0 over-recovered, below 0 under-recovered.',
+  depreciationStraightLine: 'Each period: (cost − salvage) ÷ life.',
+  depreciationYearsDigits: 'In a period: (cost − salvage) × the periods left with it ÷ (1 + 2 + … + life).',
+  depreciationDoubleDeclining: 'In a period: what is left × factor ÷ life, never below the salvage.',
+  depreciationDeclining:
+    'In a period: what is left × the rate 1 − (salvage ÷ cost)^(1 ÷ life), to three decimals; a first year that is not whole bears its months, one more at the end the rest.',
+  depreciationUnits: 'In a period: (cost − salvage) × its units ÷ the units of the whole life.',
   estimateHours:
     'Set-up hours + pieces × minutes per piece ÷ 60 × (1 + scrap allowance), rounded half-up to four decimals.',
   estimateLabour:
