@@ -8,6 +8,8 @@ export interface BenchShop extends TestShop {
   owner: ShopContext;
   /** Adds entries by one set-based statement, the days one after the other from `FIRST_DAY` on. */
   addHistory(history: History): Promise<void>;
+  /** Adds lots, issues, outside services and invoices over the days that have entries: a tenth as many as entries. */
+  addMoney(history: History): Promise<void>;
   /** What autovacuum does sooner or later, now. */
   tidy(): Promise<void>;
 }
@@ -25,6 +27,9 @@ export const EMPLOYEES = 40;
 const OPERATIONS = 8;
 const MACHINES = 6;
 
+/** Days that a job is worked on, as one of several at a time. */
+const DAYS_OF_JOB = 20;
+
 /** @param jobs a shop has some ten to twenty entries a job and operation, so give about a hundredth of its entries */
 export async function createBenchShop(database: BenchDatabase, jobs: number): Promise<BenchShop> {
   Object.assign(process.env, database);
@@ -34,6 +39,7 @@ export async function createBenchShop(database: BenchDatabase, jobs: number): Pr
     ...shop,
     owner: shop.context('owner', { now: () => NOW }),
     addHistory: (history) => addHistory(shop, history),
+    addMoney: (history) => addMoney(shop, history),
     tidy: async () => {
       await sql`vacuum analyze`.execute(shop.ownerDb);
     },
@@ -91,6 +97,42 @@ async function addHistory(shop: TestShop, history: History): Promise<void> {
   for (const { create } of rows) await sql.raw(create).execute(shop.ownerDb);
 }
 
+const MATERIALS = 20;
+const ENTRIES_PER_MONEY_ROW = 50;
+
+/** In each set of rows: one lot of a material, ten times what is issued from it, services and invoices. */
+async function addMoney(
+  { inShop, shop: { shopId } }: TestShop,
+  { entries, entriesPerDay }: History,
+): Promise<void> {
+  const rows = entries / ENTRIES_PER_MONEY_ROW;
+  const day = sql`${FIRST_DAY}::date + n * ${ENTRIES_PER_MONEY_ROW}::integer / ${entriesPerDay}::integer`;
+  const job = sql`(select array_agg(job_id order by number) from job) as jobs`;
+  const jobOf = sql`jobs[1 + n % array_length(jobs, 1)]`;
+  const series = sql`generate_series(0, ${rows}::integer - 1) n`;
+  await inShop(async (trx) => {
+    await sql`insert into material (shop_id, name, form)
+      select ${shopId}::uuid, 'Sheet ' || n, 'sheet' from generate_series(1, ${MATERIALS}::integer) n`.execute(
+      trx,
+    );
+    const materials = sql`(select array_agg(material_id order by name) from material) as materials`;
+    const materialOf = sql`materials[1 + n % ${MATERIALS}::integer]`;
+    await sql`insert into sheet_lot (shop_id, number, material_id, received_on, weight_kg, cost, freight)
+      select ${shopId}::uuid, 'L' || n, ${materialOf}, ${day}, 1000, 1500 + n % 700, 40
+      from (select ${materials}) ids, ${series}`.execute(trx);
+    await sql`insert into material_issue (shop_id, job_id, material_id, issued_on, kind, weight_kg)
+      select ${shopId}::uuid, ${jobOf}, ${materialOf}, ${day}, 'issue', 31.5 + (n + part) % 60
+      from (select ${job}, ${materials}) ids, ${series}, generate_series(1, 3) part`.execute(trx);
+    await sql`insert into outside_service (shop_id, job_id, incurred_on, amount)
+      select ${shopId}::uuid, ${jobOf}, ${day}, 20 + n % 900 from (select ${job}) ids, ${series}`.execute(
+      trx,
+    );
+    await sql`insert into invoice (shop_id, job_id, kind, number, invoiced_on, amount)
+      select ${shopId}::uuid, ${jobOf}, case when n % 20 = 0 then 'credit-note' else 'invoice' end, n::text, ${day},
+        200 + n % 3000 from (select ${job}) ids, ${series}`.execute(trx);
+  });
+}
+
 /** Most rows name no machine, as people fill timesheets in; some then get their operation's. */
 async function insertEntries(
   { inShop, shop: { shopId } }: TestShop,
@@ -102,13 +144,16 @@ async function insertEntries(
         select (select array_agg(employee_id order by number) from employee) as employees,
           (select array_agg(job_id order by number) from job) as jobs,
           (select array_agg(operation_id order by code) from operation) as operations,
-          (select array_agg(machine_id order by code) from machine) as machines
+          (select array_agg(machine_id order by code) from machine) as machines,
+          (select greatest(1, count(*)::bigint * ${entriesPerDay}::integer * ${DAYS_OF_JOB} / ${entries}::integer)::integer
+            from job) as at_a_time
       )
       insert into time_entry (shop_id, worked_on, employee_id, job_id, operation_id, machine_id, hours, good_pieces,
         source_row, source_cell)
       select ${shopId}::uuid, ${FIRST_DAY}::date + n / ${entriesPerDay}::integer,
         employees[1 + n % ${EMPLOYEES}::integer],
-        jobs[1 + (n::bigint * 7919 % array_length(jobs, 1))::integer],
+        jobs[1 + (n / (${entriesPerDay}::integer * ${DAYS_OF_JOB}) * at_a_time + n * 7 % at_a_time)
+          % array_length(jobs, 1)],
         operations[1 + n * 5 % ${OPERATIONS}::integer],
         case when n % 4 = 0 then machines[1 + n % ${MACHINES}::integer] end,
         0.25 + n % 29 * 0.25, n % 50, n % 10000, 'F' || n % 10000

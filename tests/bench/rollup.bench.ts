@@ -12,12 +12,21 @@ const DAY_ROUNDS = 15;
 
 const bench: Bench = async (context) => {
   const shop = await createShop(context, 'bench_rollup', ENTRIES);
+  await setOvertime(shop, null);
   const full = await compareFullWithStatement(shop);
+  const whole = await compareAllCategories(shop);
   const day = await compareHistories(context, shop);
   await shop.close();
-  return [...full, day];
+  return [...full, whole, day];
 };
 export default bench;
+
+/** @param thresholdHours null computes none, so that entries alone are measured */
+async function setOvertime(shop: BenchShop, thresholdHours: string | null): Promise<void> {
+  await shop.inShop((trx) =>
+    sql`update shop set overtime_threshold_hours = ${thresholdHours}, overtime_to = 'jobs'`.execute(trx),
+  );
+}
 
 async function createShop({ makeDatabase }: BenchContext, name: string, entries: number): Promise<BenchShop> {
   const shop = await createBenchShop(await makeDatabase(name), entries / 100);
@@ -96,9 +105,9 @@ async function summarise(shop: BenchShop): Promise<string> {
 async function writeLinesAtOnce(trx: Trx): Promise<void> {
   await sql`select set_config('work_mem', '64MB', true), set_config('jit', 'off', true)`.execute(trx);
   await sql`
-    insert into cost_line (shop_id, worked_on, source_id, category, source_kind, job_id, operation_id, employee_id,
-      machine_id, quantity, rate, rate_factor, rate_id, amount, run_id)
-    select e.shop_id, e.worked_on, e.entry_id, c.category, 'time_entry', e.job_id, e.operation_id, e.employee_id,
+    insert into cost_line (shop_id, posted_on, worked_on, source_id, category, source_kind, job_id, operation_id,
+      employee_id, machine_id, quantity, rate, rate_factor, rate_id, amount, run_id)
+    select e.shop_id, e.worked_on, e.worked_on, e.entry_id, c.category, 'time_entry', e.job_id, e.operation_id, e.employee_id,
       m.machine_id, e.hours, c.rate, c.factor, c.rate_id, round(e.hours * c.rate * c.factor, 2), e.shop_id
     from time_entry e
     join job j on j.shop_id = e.shop_id and j.job_id = e.job_id
@@ -119,6 +128,96 @@ async function writeLinesAtOnce(trx: Trx): Promise<void> {
     ) as c (category, is_due, rate_id, rate, factor)
     where e.voided_at is null and c.is_due and c.rate_id is not null
     order by e.shop_id, e.worked_on, e.entry_id, c.category`.execute(trx);
+}
+
+/** Entries with overtime, material, outside services and invoices against one plain statement for each. */
+async function compareAllCategories(shop: BenchShop): Promise<BenchRow> {
+  await setOvertime(shop, '40');
+  await shop.addMoney({ entries: ENTRIES, entriesPerDay: ENTRIES_PER_DAY });
+  await shop.tidy();
+  await runRollup(shop.owner, { full: true });
+  const expected = await summarise(shop);
+  const taken = await alternate(FULL_ROUNDS, {
+    statements: async () => {
+      await emptyCosts(shop);
+      const ms = await timeMs(() =>
+        shop.inShop(async (trx) => {
+          await writeLinesAtOnce(trx);
+          await writeOvertimeAtOnce(trx);
+          await writeAmountsAtOnce(trx);
+        }),
+      );
+      const written = await summarise(shop);
+      if (written !== expected) throw new Error(`The statements wrote ${written}, the rollup ${expected}.`);
+      return ms;
+    },
+    rollup: async () => {
+      await emptyCosts(shop);
+      return timeMs(() => runRollup(shop.owner, { full: true }));
+    },
+  });
+  return {
+    measure: `full rollup of all categories over ${ENTRIES} entries ÷ the bare statements of the same sums`,
+    ratio: taken.rollup / taken.statements,
+    aim: { atMost: 3 },
+    detail: formatAgainst('rollup', taken.rollup, 'statements', taken.statements, FULL_ROUNDS),
+  };
+}
+
+/** Half the regular rate for the hours above forty, shared out by hours in whole cents, in one statement. */
+async function writeOvertimeAtOnce(trx: Trx): Promise<void> {
+  await sql`
+    with paid as (
+      select e.*, coalesce(e.machine_id, o.default_machine_id) as resolved_machine_id,
+        date_trunc('week', e.worked_on)::date as week,
+        sum(e.hours) over w as week_hours, sum(e.hours * p.wage_per_hour) over w as week_pay
+      from time_entry e
+      join operation o on o.shop_id = e.shop_id and o.operation_id = e.operation_id
+      join (select *, lead(valid_from, 1, 'infinity') over (partition by employee_id order by valid_from) as until
+        from pay_rate) p
+        on p.employee_id = e.employee_id and e.worked_on >= p.valid_from and e.worked_on < p.until
+      where e.voided_at is null
+      window w as (partition by e.employee_id, date_trunc('week', e.worked_on))
+    ),
+    premium as (
+      select *, round((week_pay * (week_hours - 40))::numeric(60,30) / (2 * week_hours), 2) as premium
+      from paid where week_hours > 40
+    ),
+    cut as (
+      select *, div(premium * 100 * hours, week_hours) as units, mod(premium * 100 * hours, week_hours) as remainder
+      from premium
+    ),
+    shared as (
+      select *, units + case when row_number() over (partition by employee_id, week
+          order by remainder desc, worked_on, entry_id)
+        <= premium * 100 - sum(units) over (partition by employee_id, week) then 1 else 0 end as cents
+      from cut
+    )
+    insert into cost_line (shop_id, posted_on, worked_on, source_id, category, source_kind, job_id, operation_id,
+      employee_id, machine_id, quantity, rate, rate_factor, amount, run_id)
+    select shop_id, worked_on, worked_on, entry_id, 'overtime', 'time_entry', job_id, operation_id, employee_id,
+      resolved_machine_id, hours, round(premium::numeric(60,30) / week_hours, 6), 1, cents / 100, shop_id
+    from shared where cents > 0
+    order by worked_on, entry_id`.execute(trx);
+}
+
+async function writeAmountsAtOnce(trx: Trx): Promise<void> {
+  await sql`
+    insert into cost_line (shop_id, posted_on, worked_on, source_id, category, source_kind, job_id, quantity, rate,
+      rate_factor, amount, run_id)
+    select i.shop_id, i.issued_on, i.issued_on, i.issue_id, 'material', 'material_issue', i.job_id, -s.weight_kg,
+      s.average_per_kg, 1, -s.amount, i.shop_id
+    from stock_move s join material_issue i on i.shop_id = s.shop_id and i.issue_id = s.source_id
+    union all
+    select shop_id, incurred_on, incurred_on, outside_service_id, 'outside', 'outside_service', job_id, 1, amount, 1,
+      amount, shop_id
+    from outside_service where voided_at is null
+    union all
+    select shop_id, invoiced_on, invoiced_on, invoice_id, 'invoiced', 'invoice', job_id,
+      case kind when 'invoice' then 1 else -1 end, amount, 1, case kind when 'invoice' then amount else -amount end,
+      shop_id
+    from invoice where voided_at is null
+    order by 2, 4`.execute(trx);
 }
 
 /** One changed day, another one each time, in a year of entries and in ten. */
