@@ -28,6 +28,36 @@ export async function findVoidableEntry(
   return rows[0] ?? null;
 }
 
+/** A live entry that came after another was voided and says the same; where it came from. */
+export interface ReplacingEntry {
+  entryId: string;
+  createdAt: Date;
+  fileName: string | null;
+  sheet: string | null;
+  sourceCell: string | null;
+}
+
+/**
+ * Finds what took a voided entry's place: the same employee, day, job, operation, machine and hours, added after the
+ * voiding. Equal rows that stood beside it before are no replacement.
+ */
+export async function findReplacingEntry(
+  trx: ShopTransaction,
+  entryId: string,
+): Promise<ReplacingEntry | null> {
+  const { rows } = await sql<ReplacingEntry>`
+    select r.entry_id, r.created_at, i.file_name, i.sheet, r.source_cell
+    from time_entry v
+    join time_entry r on r.shop_id = v.shop_id and r.employee_id = v.employee_id and r.worked_on = v.worked_on
+      and r.job_id = v.job_id and r.operation_id = v.operation_id and r.hours = v.hours
+      and r.machine_id is not distinct from v.machine_id and r.created_at >= v.voided_at
+    left join timesheet_import i on i.shop_id = r.shop_id and i.import_id = r.import_id
+    where v.entry_id = ${entryId}::uuid and r.voided_at is null
+    order by r.created_at, r.entry_id
+    limit 1`.execute(trx);
+  return rows[0] ?? null;
+}
+
 /** Voids an entry in a person's name, or restores it with null. */
 export async function setEntryVoided(
   trx: ShopTransaction,

@@ -220,6 +220,36 @@ describe('voiding an entry', () => {
     });
   });
 
+  it('cannot be taken back once the same entry was added again, and can once that is voided', async () => {
+    const same = await shop.inShop((trx) =>
+      trx
+        .selectFrom('timeEntry')
+        .select(['workedOn', 'employeeId', 'jobId', 'operationId', 'machineId', 'hours'])
+        .where('entryId', '=', entryId)
+        .executeTakeFirstOrThrow(),
+    );
+    // Equal rows that are there all along replace nothing.
+    const [twin] = await shop.addEntries([same]);
+    await voidEntry(bookkeeper, { entryId });
+    await restoreEntry(bookkeeper, { entryId });
+    await voidEntry(bookkeeper, { entryId: twin ?? '' });
+    await voidEntry(bookkeeper, { entryId });
+    const importId = await shop.addImport({ fileName: 'again.xlsx', sheet: 'Week 11' });
+    const [again] = await shop.addEntries([{ ...same, importId, sourceRow: 9, sourceCell: 'F9' }]);
+    const entries = await getEntryTotals(bookkeeper, {});
+    await expect(restoreEntry(bookkeeper, { entryId })).rejects.toMatchObject({
+      code: 'conflict',
+      message: expect.stringContaining("from 'again.xlsx', sheet Week 11, cell F9"),
+    });
+    expect(await getEntryTotals(bookkeeper, {})).toEqual(entries);
+    await voidEntry(bookkeeper, { entryId: again ?? '' });
+    await restoreEntry(bookkeeper, { entryId });
+    expect(await getEntryTotals(bookkeeper, {})).toMatchObject({
+      entries: entries.entries,
+      hours: entries.hours,
+    });
+  });
+
   it('does not find an entry that is not there', async () => {
     const nowhere = { entryId: '0198aaaa-0000-7000-8000-000000000abc' };
     await expect(voidEntry(bookkeeper, nowhere)).rejects.toMatchObject({ code: 'not_found' });

@@ -1,8 +1,9 @@
 import { AppError, type SheetExcerpt, timesheetMappingSchema } from '@brakeven/contract';
 import { type SheetRow } from '@brakeven/workbook';
 import { type ShopContext } from '../context';
-import { readUpload, type UploadTools } from '../import-timesheet/upload';
+import { type UploadTools } from '../import-timesheet/upload';
 import { getKeptFile } from './get-import-file';
+import { readKeptSheets } from './kept-sheets';
 
 const ROWS_AROUND = 4;
 
@@ -17,7 +18,7 @@ export async function getSheetExcerpt(
   { reader }: Pick<UploadTools, 'reader'>,
 ): Promise<SheetExcerpt> {
   const kept = await getKeptFile(context, importId);
-  const file = await readUpload({ name: kept.fileName, bytes: kept.content }, { reader });
+  const file = await readKeptSheets(importId, { name: kept.fileName, bytes: kept.content }, reader);
   const sheet = file.sheets.find(({ name }) => name === sheetName);
   if (!sheet) throw new AppError('not_found', `'${kept.fileName}' has no sheet '${sheetName}'.`);
   const mapping = timesheetMappingSchema.safeParse(kept.mapping);
