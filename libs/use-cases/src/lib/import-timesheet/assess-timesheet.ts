@@ -4,6 +4,7 @@ import {
   countStoredEntries,
   countVoidedEntries,
   findCommittedImport,
+  getClosedThrough,
   readTimesheetRegister,
   type ShopTransaction,
   type TimesheetImportRow,
@@ -12,6 +13,7 @@ import {
 import { type TimesheetRow } from '@brakeven/workbook';
 import { type ShopContext, todayOf } from '../context';
 import { groupBy } from '../group-by';
+import { listLateWarnings } from './late-warning';
 import { createNameIndexes } from './name-indexes';
 import { ITEMS_PER_TURN, nextTurn } from './next-turn';
 import { type TimesheetReading } from './read-timesheet';
@@ -57,11 +59,12 @@ export async function assessTimesheet(
     await countVoidedEntries(trx, shopId, days),
   );
   const judged = await judgeCandidates(candidates, stored, context);
-  const problems = [
-    ...listSheetProblems(reading),
-    ...[...resolved.flatMap((row) => row.problems), ...judged.problems].sort(byRow),
-  ];
-  return { rows: toAssessedRows(resolved, problems, judged.rowsThere), problems, alreadyImported, register };
+  const rowProblems = [...resolved.flatMap((row) => row.problems), ...judged.problems].sort(byRow);
+  const sheetProblems = listSheetProblems(reading);
+  const rows = toAssessedRows(resolved, [...sheetProblems, ...rowProblems], judged.rowsThere);
+  const late = listLateWarnings(reading.timesheet?.sheet ?? '', rows, await getClosedThrough(trx));
+  const problems = [...sheetProblems, ...late, ...rowProblems];
+  return { rows, problems, alreadyImported, register };
 }
 
 async function resolveRows(

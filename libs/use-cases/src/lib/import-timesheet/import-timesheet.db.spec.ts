@@ -30,6 +30,43 @@ describe('importTimesheet', () => {
   const countRows = async (table: 'timesheetFile' | 'nameAlias' | 'savedMapping') =>
     (await shop.inShop((trx) => trx.selectFrom(table).select('shopId').execute())).length;
 
+  it('takes rows of a closed month, warned of, and has them posted late', async () => {
+    await shop.addOverheadRate({ validFrom: '2025-01-01', ratePerLabourHour: '10' });
+    await shop.addMonthClose('2026-02-01');
+    const early = '2026-02-27,12,J-1041,WELD,,8,,,';
+    const file = toCsv([
+      '2026-02-26,99,J-1041,WELD,,8,,,',
+      early,
+      '2026-02-26,12,J-1041,WELD,,4.5,,,',
+      ...GOOD_ROWS,
+    ]);
+    const check = await shop.check(file);
+    expect(check).toMatchObject({ entriesReady: 5, refused: 1 });
+    expect(check.problems[0]).toMatchObject({
+      code: 'posted_late',
+      severity: 'warning',
+      cell: 'A3',
+      row: null,
+      message: expect.stringContaining('2 rows (12.50 h) are dated in a closed month'),
+    });
+    expect(check.problems[0]?.message).toContain('posted on Mar 1, 2026, late');
+    await shop.take(file, { goodRows: true });
+    const late = await shop.inShop((trx) =>
+      trx
+        .selectFrom('costLine')
+        .select(['postedOn', 'workedOn', 'quantity'])
+        .where('category', '=', 'labour')
+        .whereRef('postedOn', '<>', 'workedOn')
+        .orderBy('workedOn')
+        .execute(),
+    );
+    expect(late).toEqual([
+      { postedOn: '2026-03-01', workedOn: '2026-02-26', quantity: '4.5000' },
+      { postedOn: '2026-03-01', workedOn: '2026-02-27', quantity: '8.0000' },
+    ]);
+    expect((await shop.check(toCsv([early]))).problems).toEqual([]);
+  });
+
   it('writes the entries with file, row and cell, and keeps the file as it came', async () => {
     const file = toCsv(GOOD_ROWS);
     const imported = await shop.take(file);
