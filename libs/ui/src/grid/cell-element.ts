@@ -11,6 +11,7 @@ export interface CellContent {
   figure?: FigureRef | null;
   href?: string | null;
   tone?: Tone | null;
+  isLoss?: boolean;
   note?: GridNote | null;
   actions?: readonly GridAction[];
 }
@@ -26,7 +27,7 @@ export interface CellHandlers {
  */
 export function toCellElement(content: CellContent, handlers: CellHandlers): HTMLElement {
   const cell = document.createElement('span');
-  cell.className = 'cell';
+  cell.className = content.isLoss ? 'cell loss' : 'cell';
   if (content.actions) {
     cell.append(...content.actions.map(toActionButton));
     return cell;
@@ -90,7 +91,13 @@ function toLink(text: string, href: string, follow: (href: string) => void): HTM
 function toNoteElement({ text, severity }: GridNote): HTMLElement {
   const note = document.createElement('span');
   note.className = `note ${severity}`;
-  note.textContent = `${severity === 'refused' ? '✕' : '!'} ${text}`;
+  note.textContent = `${NOTE_SIGNS[severity]}${text}`;
   note.title = text;
   return note;
 }
+
+const NOTE_SIGNS: Readonly<Record<GridNote['severity'], string>> = {
+  refused: '✕ ',
+  warning: '! ',
+  quiet: '',
+};

@@ -52,6 +52,7 @@ function toContent<T>(column: GridColumn<T>, row: T, format: ShopFormat): CellCo
     figure: column.figure?.(row),
     href: column.href?.(row),
     tone: column.tone?.(row),
+    isLoss: column.isLoss?.(row),
     note: column.note?.(row),
     actions: column.actions?.(row),
   };

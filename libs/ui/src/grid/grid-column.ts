@@ -10,7 +10,8 @@ export interface GridAction {
 
 export interface GridNote {
   text: string;
-  severity: 'refused' | 'warning';
+  /** `quiet`: a remark, no problem. */
+  severity: 'refused' | 'warning' | 'quiet';
 }
 
 /** A column: what it shows of a row, and what a press on it does. */
@@ -27,6 +28,8 @@ export interface GridColumn<T> {
   href?: (row: T) => string | null;
   /** Shows the value as a tag of this tone. */
   tone?: (row: T) => Tone | null;
+  /** Money that was lost; the sign says it, the colour helps. */
+  isLoss?: (row: T) => boolean;
   /** A problem with this cell: tinted, with a sign and the words. */
   note?: (row: T) => GridNote | null;
   /** Buttons instead of a value. */

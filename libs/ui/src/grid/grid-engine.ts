@@ -64,7 +64,7 @@ const PINNING_WIDTH_MIN = 720;
       (gridReady)="start($event)"
       (cellKeyDown)="pressCell($event)"
       (columnResized)="$event.finished && keepColumns()"
-      (columnMoved)="$event.finished && keepColumns()"
+      (columnMoved)="$event.finished && keepMoved($event.source)"
       (sortChanged)="changeOrder()"
     />
   `,
@@ -91,10 +91,14 @@ export class GridEngine<T> {
   readonly totals = input<GridTotals | null>(null);
   readonly order = input<GridOrder>();
   readonly stateKey = input<string>();
+  /** False where the page itself keeps the order of columns. */
+  readonly keepsOrder = input(true);
   readonly isAutoHeight = input(false);
 
   readonly linkFollowed = output<string>();
   readonly orderChanged = output<GridOrder>();
+  /** Ids of the columns in their new order, after somebody has moved one. */
+  readonly columnsMoved = output<string[]>();
   /** How many rows there are, once the end has been seen; undefined when loading starts again. */
   readonly rowCountChanged = output<number | undefined>();
   readonly failed = output<unknown>();
@@ -151,8 +155,9 @@ export class GridEngine<T> {
     this.api.set(api);
     const key = this.stateKey();
     const kept = key && this.memory.find(key);
-    if (kept)
-      api.applyColumnState({ state: kept.map(({ colId, width }) => ({ colId, width })), applyOrder: true });
+    if (!kept) return;
+    const state = kept.map(({ colId, width }) => ({ colId, width }));
+    api.applyColumnState({ state, applyOrder: this.keepsOrder() });
   }
 
   protected keepColumns(): void {
@@ -163,6 +168,18 @@ export class GridEngine<T> {
         key,
         columns.map(({ colId, width }) => ({ colId, width })),
       );
+  }
+
+  protected keepMoved(source: string): void {
+    this.keepColumns();
+    const columns = this.api()?.getColumnState();
+    if (columns && source === 'uiColumnMoved') this.columnsMoved.emit(columns.map(({ colId }) => colId));
+  }
+
+  /** Sorts by one of the columns shown; without one, as the source likes it. */
+  sortBy(order: GridOrder | null): void {
+    const state = order ? [{ colId: order.sort, sort: order.direction }] : [];
+    this.api()?.applyColumnState({ state, defaultState: { sort: null } });
   }
 
   protected changeOrder(): void {

@@ -48,9 +48,13 @@ export class Grid<T> {
   readonly order = input<GridOrder>();
   /** Under which name widths and order of columns are kept in this browser. */
   readonly stateKey = input<string>();
+  /** False where the page itself keeps the order of columns. */
+  readonly keepsOrder = input(true);
 
   readonly linkFollowed = output<string>();
   readonly orderChanged = output<GridOrder>();
+  /** Ids of the columns in their new order, after somebody has moved one. */
+  readonly columnsMoved = output<string[]>();
 
   private readonly error = signal<unknown>(null);
   private readonly count = signal<number | undefined>(undefined);
@@ -73,6 +77,11 @@ export class Grid<T> {
   refresh(): void {
     this.error.set(null);
     this.engine()?.refresh();
+  }
+
+  /** Sorts by one of the columns shown; without one, as the source likes it. */
+  sortBy(order: GridOrder | null): void {
+    this.engine()?.sortBy(order);
   }
 
   /** Brings a row into view and puts the focus on one of its cells. */

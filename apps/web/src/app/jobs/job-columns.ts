@@ -1,55 +1,146 @@
-import { type FigureRef, type Job, type JobPage } from '@brakeven/contract';
-import { type GridColumn, type GridKind, type GridNote, type GridTotals } from '@brakeven/ui';
+import { type Figure, type FigureRef, type Job, type JobPage, type JobSort } from '@brakeven/contract';
+import { type GridColumn, type GridNote, type GridTotals } from '@brakeven/ui';
 import { toStatusTone } from './job-status';
 
-type FigureField = 'hours' | 'machineHours' | 'labour' | 'machine' | 'overhead' | 'total';
-
-const WIDTHS: Readonly<Record<FigureField, number>> = {
-  hours: 86,
-  machineHours: 90,
-  labour: 104,
-  machine: 104,
-  overhead: 104,
-  total: 142,
-};
-
 /** Which jobs the totals are over. */
-export type JobFilter = Pick<FigureRef, 'search' | 'status'>;
+export type JobFilter = Pick<FigureRef, 'search' | 'status' | 'customerId'>;
 
-const HOURS: readonly [FigureField, string][] = [
-  ['hours', 'Hours'],
-  ['machineHours', 'Machine h'],
-];
-const MONEY: readonly [FigureField, string][] = [
-  ['labour', 'Labour'],
-  ['machine', 'Machine'],
-  ['overhead', 'Overhead'],
-  ['total', 'Cost'],
-];
+type FigureField = keyof Pick<
+  Job,
+  | 'hours'
+  | 'machineHours'
+  | 'labour'
+  | 'overtime'
+  | 'machine'
+  | 'overhead'
+  | 'material'
+  | 'outside'
+  | 'total'
+  | 'quotedPrice'
+  | 'estimatedHours'
+  | 'estimate'
+  | 'variance'
+  | 'invoiced'
+  | 'margin'
+  | 'workInProgress'
+>;
 
-/** The columns of the jobs grid; money only for those to whom the server sends it. */
-export function toJobColumns(withMoney: boolean): GridColumn<Job>[] {
-  const money = withMoney ? [...MONEY.map((field) => toFigureColumn(field, 'money')), QUOTED] : [];
-  return [...WORDS, ...HOURS.map((field) => toFigureColumn(field, 'hours')), ...money, DUE, LAST_WORKED];
+interface FigureColumn {
+  field: FigureField;
+  header: string;
+  figure: Figure;
+  kind: 'money' | 'hours';
+  width: number;
+  rest?: Partial<GridColumn<Job>>;
 }
+
+const hours = (field: FigureField, header: string, figure: Figure, width: number): FigureColumn => ({
+  field,
+  header,
+  figure,
+  kind: 'hours',
+  width,
+});
+const money = (
+  field: FigureField,
+  header: string,
+  figure: Figure,
+  rest?: Partial<GridColumn<Job>>,
+): FigureColumn => ({ field, header, figure, kind: 'money', width: rest?.width ?? 100, rest });
+
+const HOURS: readonly FigureColumn[] = [
+  hours('hours', 'Hours', 'job.hours', 84),
+  hours('machineHours', 'Machine h', 'job.machineHours', 92),
+];
+
+const MONEY: readonly FigureColumn[] = [
+  hours('estimatedHours', 'Est. hours', 'estimate.hours', 92),
+  money('estimate', 'Estimate', 'estimate.total'),
+  money('labour', 'Labour', 'job.labour'),
+  money('overtime', 'Overtime', 'job.overtime'),
+  money('machine', 'Machine', 'job.machine'),
+  money('overhead', 'Overhead', 'job.overhead'),
+  money('material', 'Material', 'job.material'),
+  money('outside', 'Outside', 'job.outside'),
+  money('total', 'Cost', 'job.total', { note: toGapNote, width: 104 }),
+  money('variance', 'Variance', 'estimate.variance', { isLoss: ({ variance }) => isAboveZero(variance) }),
+  money('quotedPrice', 'Quoted', 'job.quotedPrice'),
+  money('invoiced', 'Invoiced', 'job.invoiced'),
+  money('margin', 'Margin', 'job.margin', {
+    note: toProvisionalNote,
+    isLoss: ({ margin, marginIsProvisional }) => marginIsProvisional === false && isBelowZero(margin),
+    width: 146,
+  }),
+  money('workInProgress', 'In progress', 'job.workInProgress', { width: 104 }),
+];
+
+const MONEY_FIELDS: readonly string[] = MONEY.map(({ field }) => field);
+
+/** Every column that the grid can have, by its place in the chooser; money only for those to whom it is sent. */
+export function toJobColumns(withMoney: boolean): GridColumn<Job>[] {
+  const figures = withMoney ? [...HOURS, ...MONEY] : HOURS;
+  return [...WORDS, ...figures.map(toGridColumn), ...DATES];
+}
+
+/** Those of them that are chosen, in the order chosen; what is not known is left out. */
+export function chooseColumns(
+  columns: readonly GridColumn<Job>[],
+  chosen: readonly string[],
+): GridColumn<Job>[] {
+  return chosen.flatMap((id) => columns.find((column) => column.id === id) ?? []);
+}
+
+/** What somebody sees who has chosen nothing: all of it fits beside the rail at 1440 px. */
+export function toStandardColumns(withMoney: boolean): JobSort[] {
+  return withMoney
+    ? [
+        'number',
+        'title',
+        'customer',
+        'status',
+        'estimate',
+        'total',
+        'variance',
+        'invoiced',
+        'margin',
+        'workInProgress',
+        'lastWorkedOn',
+      ]
+    : ['number', 'title', 'customer', 'status', 'quantity', 'hours', 'machineHours', 'dueOn', 'lastWorkedOn'];
+}
+
+/** What each job cost, category by category. */
+export const COST_COLUMNS: readonly JobSort[] = [
+  'number',
+  'title',
+  'status',
+  'hours',
+  'labour',
+  'overtime',
+  'machine',
+  'overhead',
+  'material',
+  'outside',
+  'total',
+];
 
 /** The totals over all jobs of the filter. */
 export function toJobTotals(totals: JobPage['totals'], filter: JobFilter): GridTotals {
-  const fields = [...HOURS, ...MONEY].map(([field]) => field);
-  const figures = fields.map((field) => [
-    field,
-    { value: totals[field] ?? null, figure: { figure: `job.${field}` as const, ...filter } },
-  ]);
+  const figures = [...HOURS, ...MONEY].map(({ field, figure }) => {
+    const value = totals[field] ?? null;
+    return [field, { value, figure: value === null ? null : { figure, ...filter } }];
+  });
   const jobs = totals.jobs.toLocaleString('en-US');
   return {
     ...Object.fromEntries(figures),
     number: { value: 'Total', isText: true },
     title: { value: `${jobs} ${totals.jobs === 1 ? 'job' : 'jobs'}`, isText: true },
-    quotedPrice: {
-      value: totals.quotedPrice ?? null,
-      figure: { figure: 'job.quotedPrice', ...filter },
-    },
   };
+}
+
+/** Whether a column shows money or what comes of an estimate. */
+export function isMoneyColumn(id: string): boolean {
+  return MONEY_FIELDS.includes(id);
 }
 
 const WORDS: readonly GridColumn<Job>[] = [
@@ -60,16 +151,16 @@ const WORDS: readonly GridColumn<Job>[] = [
     href: (job) => `/jobs/${job.jobId}`,
     isSortable: true,
     isPinned: true,
-    width: 80,
+    width: 78,
   },
-  { id: 'title', header: 'Title', value: (job) => job.title, isSortable: true, minWidth: 130, flex: 2 },
+  { id: 'title', header: 'Title', value: (job) => job.title, isSortable: true, minWidth: 116, flex: 2 },
   {
     id: 'customer',
     header: 'Customer',
     value: (job) => job.customer,
     isSortable: true,
-    minWidth: 130,
-    flex: 1,
+    minWidth: 104,
+    flex: 1.5,
   },
   {
     id: 'status',
@@ -77,52 +168,56 @@ const WORDS: readonly GridColumn<Job>[] = [
     value: (job) => job.status,
     tone: (job) => toStatusTone(job.status),
     isSortable: true,
-    width: 90,
+    width: 92,
+  },
+  {
+    id: 'quantity',
+    header: 'Pieces',
+    kind: 'count',
+    value: (job) => job.quantity,
+    isSortable: true,
+    width: 84,
   },
 ];
 
-const QUOTED: GridColumn<Job> = {
-  id: 'quotedPrice',
-  header: 'Quoted',
-  kind: 'money',
-  value: (job) => job.quotedPrice,
-  figure: (job) => ({ figure: 'job.quotedPrice', jobId: job.jobId }),
-  isSortable: true,
-  width: 106,
-};
+const DATES: readonly GridColumn<Job>[] = [
+  toDateColumn('openedOn', 'Opened', (job) => job.openedOn),
+  toDateColumn('dueOn', 'Due', (job) => job.dueOn),
+  toDateColumn('lastWorkedOn', 'Last worked', (job) => job.lastWorkedOn),
+];
 
-const DUE: GridColumn<Job> = {
-  id: 'dueOn',
-  header: 'Due',
-  kind: 'date',
-  value: (job) => job.dueOn,
-  isSortable: true,
-  width: 110,
-};
+function toDateColumn(id: JobSort, header: string, value: GridColumn<Job>['value']): GridColumn<Job> {
+  return { id, header, kind: 'date', value, isSortable: true, width: 114 };
+}
 
-const LAST_WORKED: GridColumn<Job> = {
-  id: 'lastWorkedOn',
-  header: 'Last worked',
-  kind: 'date',
-  value: (job) => job.lastWorkedOn,
-  isSortable: true,
-  width: 112,
-};
-
-function toFigureColumn([field, header]: readonly [FigureField, string], kind: GridKind): GridColumn<Job> {
+function toGridColumn({ field, header, figure, kind, width, rest }: FigureColumn): GridColumn<Job> {
   return {
     id: field,
     header,
     kind,
     value: (job) => job[field],
-    figure: (job) => ({ figure: `job.${field}`, jobId: job.jobId }),
-    note: field === 'total' ? toGapNote : undefined,
+    figure: (job) => (job[field] === null ? null : { figure, jobId: job.jobId }),
     isSortable: true,
-    width: WIDTHS[field],
+    width,
+    ...rest,
   };
 }
 
 /** Entries without a rate cost nothing yet: the figure is not the whole. */
 function toGapNote({ entriesWithoutRate }: Job): GridNote | null {
   return entriesWithoutRate > 0 ? { severity: 'warning', text: 'no rate' } : null;
+}
+
+/** Before a job is finished its margin is what has come of it so far. */
+function toProvisionalNote({ marginIsProvisional }: Job): GridNote | null {
+  return marginIsProvisional ? { severity: 'quiet', text: 'so far' } : null;
+}
+
+/** It cost more than estimated. */
+function isAboveZero(amount: string | null | undefined): boolean {
+  return typeof amount === 'string' && Number(amount) > 0;
+}
+
+function isBelowZero(amount: string | undefined): boolean {
+  return amount?.startsWith('-') ?? false;
 }

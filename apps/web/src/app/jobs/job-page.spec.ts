@@ -17,6 +17,7 @@ const money = { labour: '2662.40', machine: '1328.00', overhead: '1440.00', tota
 const withoutMoney: JobDetail = {
   jobId,
   number: '2231',
+  customerId: '0190c6e0-0000-7000-8000-00000000c001',
   customer: 'Coldwater Grain Co-op',
   title: 'Conveyor guards',
   quantity: 24,

@@ -8,32 +8,41 @@ import {
   signal,
   viewChild,
 } from '@angular/core';
-import { takeUntilDestroyed } from '@angular/core/rxjs-interop';
+import { takeUntilDestroyed, toSignal } from '@angular/core/rxjs-interop';
 import { FormControl, ReactiveFormsModule } from '@angular/forms';
 import { MatDialog } from '@angular/material/dialog';
 import { Router } from '@angular/router';
-import { type Job } from '@brakeven/contract';
+import { type Job, type ViewState } from '@brakeven/contract';
 import {
+  ColumnChooser,
   EmptyState,
   Grid,
+  type GridOrder,
   type GridTotals,
+  LoadingSkeleton,
   type PageRequest,
   type PageSource,
   PageHeader,
 } from '@brakeven/ui';
-import { debounceTime, tap } from 'rxjs';
+import { catchError, debounceTime, of, tap } from 'rxjs';
 import { JobsApi } from '../api/jobs-api';
+import { toQueryParams } from '../api/query-params';
 import { SessionStore } from '../session/session-store';
 import { RollupStore } from '../shell/rollup-store';
-import { type JobFilter, toJobColumns, toJobTotals } from './job-columns';
+import { chooseColumns, type JobFilter, toJobColumns, toJobTotals } from './job-columns';
 import { isJobStatus, JOB_STATUS_ORDER, toStatusWord } from './job-status';
+import { type JobView } from './job-views';
+import { JobViewsStore } from './job-views-store';
+import { ViewPicker } from './view-picker';
 
 const TYPING_PAUSE_MS = 300;
+type FilterParams = Record<'search' | 'status' | 'customerId', string | null>;
 
-/** All jobs: hours and cost, each figure with its workings. */
+/** All jobs: cost against estimate, income and margin, each figure with its workings. */
 @Component({
   selector: 'app-jobs-page',
-  imports: [EmptyState, Grid, PageHeader, ReactiveFormsModule],
+  imports: [ColumnChooser, EmptyState, Grid, LoadingSkeleton, PageHeader, ReactiveFormsModule, ViewPicker],
+  providers: [JobViewsStore],
   templateUrl: './jobs-page.html',
   styleUrl: './jobs-page.scss',
   changeDetection: ChangeDetectionStrategy.OnPush,
@@ -43,30 +52,57 @@ export class JobsPage implements OnInit {
   private readonly session = inject(SessionStore);
   private readonly dialog = inject(MatDialog);
   private readonly router = inject(Router);
-  private readonly grid = viewChild.required<Grid<Job>>(Grid);
+  protected readonly views = inject(JobViewsStore);
+  private readonly grid = viewChild<Grid<Job>>(Grid);
 
   /** From the address, so that a filtered list can be sent to somebody. */
   readonly search = input<string>();
   readonly status = input<string>();
+  readonly customerId = input<string>();
 
   protected readonly statuses = JOB_STATUS_ORDER;
   protected readonly toStatusWord = toStatusWord;
-  protected readonly order = { sort: 'number', direction: 'desc' } as const;
   protected readonly rowId = (job: Job): string => job.jobId;
-  protected readonly columns = computed(() => toJobColumns(this.session.can('jobs.money')));
+  protected readonly choices = computed(() =>
+    toJobColumns(this.session.can('jobs.money')).map((column) => ({
+      ...column,
+      isFixed: column.id === 'number',
+    })),
+  );
+  protected readonly columns = computed(() => chooseColumns(this.choices(), this.views.columns()));
   protected readonly canEdit = computed(() => this.session.can('jobs.edit'));
   protected readonly totals = signal<GridTotals | null>(null);
   protected readonly searchBox = new FormControl('', { nonNullable: true });
+  // Without the list the other filters still work.
+  protected readonly customers = toSignal(this.api.listCustomers().pipe(catchError(() => of([]))), {
+    initialValue: [],
+  });
 
   protected readonly filter = computed<JobFilter>(() => {
-    const [search, status] = [this.search(), this.status()];
-    return { ...(search && { search }), ...(isJobStatus(status) && { status }) };
+    const [search, status, customerId] = [this.search(), this.status(), this.customerId()];
+    return {
+      ...(search && { search }),
+      ...(isJobStatus(status) && { status }),
+      ...(customerId && { customerId }),
+    };
   });
   protected readonly isFiltered = computed(() => Object.keys(this.filter()).length > 0);
   protected readonly source = computed<PageSource<Job>>(() => {
     const filter = this.filter();
     return { load: (request) => this.load(filter, request) };
   });
+  /** The rows, columns and order that are shown, as the export takes them. */
+  private readonly exportQuery = computed(() =>
+    toQueryParams({
+      ...this.filter(),
+      ...this.views.order(),
+      columns: this.columns()
+        .map(({ id }) => id)
+        .join(','),
+    }).toString(),
+  );
+  protected readonly csvUrl = computed(() => `/api/exports/jobs.csv?${this.exportQuery()}`);
+  protected readonly workbookUrl = computed(() => `/api/exports/jobs.xlsx?${this.exportQuery()}`);
 
   constructor() {
     this.searchBox.valueChanges
@@ -74,20 +110,37 @@ export class JobsPage implements OnInit {
       .subscribe((search) => this.setFilter({ search: search.trim() || null }));
     inject(RollupStore)
       .rolledUp.pipe(takeUntilDestroyed())
-      .subscribe(() => this.grid().refresh());
+      .subscribe(() => this.grid()?.refresh());
   }
 
   ngOnInit(): void {
     this.searchBox.setValue(this.search() ?? '', { emitEvent: false });
+    this.views.load((view) => {
+      if (!this.isFiltered()) this.applyFilter(view.state);
+    });
   }
 
-  protected setFilter(queryParams: { search?: string | null; status?: string | null }): void {
+  protected setFilter(queryParams: Partial<FilterParams>): void {
     void this.router.navigate([], { queryParams, queryParamsHandling: 'merge', replaceUrl: true });
+  }
+
+  protected filterCustomer({ target }: Event): void {
+    this.setFilter({ customerId: (target as HTMLSelectElement).value || null });
   }
 
   protected clearFilter(): void {
     this.searchBox.setValue('', { emitEvent: false });
-    this.setFilter({ search: null, status: null });
+    this.setFilter({ search: null, status: null, customerId: null });
+  }
+
+  protected chooseView(view: JobView): void {
+    this.views.choose(view);
+    this.applyFilter(view.state);
+    this.grid()?.sortBy(this.views.shownOrder());
+  }
+
+  protected changeOrder(order: GridOrder): void {
+    this.views.setOrder(order);
   }
 
   protected openJob(url: string): void {
@@ -102,8 +155,15 @@ export class JobsPage implements OnInit {
     });
   }
 
+  private applyFilter({ filter }: ViewState): void {
+    const { search = null, status = null, customerId = null } = filter;
+    this.searchBox.setValue(search ?? '', { emitEvent: false });
+    this.setFilter({ search, status, customerId });
+  }
+
   private load(filter: JobFilter, { cursor, sort, direction, limit }: PageRequest) {
-    const query = { ...filter, cursor, direction, limit, sort: sort as 'number' | undefined };
+    const order = sort ? { sort, direction } : this.views.order();
+    const query = { ...filter, cursor, limit, ...order };
     return this.api
       .listJobs(query as Parameters<JobsApi['listJobs']>[0])
       .pipe(tap(({ totals }) => this.totals.set(toJobTotals(totals, filter))));

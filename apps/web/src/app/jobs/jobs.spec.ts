@@ -9,6 +9,7 @@ import { toLineColumns } from './line-columns';
 const job: Job = {
   jobId: '0190c6e0-0000-7000-8000-000000002231',
   number: '2231',
+  customerId: null,
   customer: null,
   title: 'Conveyor guards',
   quantity: 24,
