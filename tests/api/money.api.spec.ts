@@ -4,7 +4,7 @@ import { writeSetupWorkbook, writeTimesheetWorkbook } from '@brakeven/workbook';
 import { SETUP, WEEK } from '../fixtures/first-week';
 import { startTestApi, type TestApi, type Visitor } from './test-api';
 
-/** Names that only money goes by; `machine` is a code elsewhere, and `amount` may be hours. */
+/** Names that only money goes by; `machine` and `material` are names elsewhere, and `amount` may be hours. */
 const MONEY_NAMES = [
   'wagePerHour',
   'burdenPercent',
@@ -23,7 +23,15 @@ const MONEY_NAMES = [
   'runningCost',
   'earnedBack',
   'remaining',
+  'overtime',
+  'outside',
+  'invoiced',
+  'margin',
+  'workInProgress',
+  'variance',
 ];
+/** Hours of a setting, which are kept with two decimals. */
+const HOURS_NAMES = ['overtimeThresholdHours'];
 /** Money and rates are the only texts that are a number with two, three, five or six decimals. */
 const MONEY_TEXT = /^-?\d+\.(\d{2}|\d{3}|\d{5,6})$/;
 
@@ -34,6 +42,7 @@ beforeAll(async () => {
   const tools = { reader: createReader() };
   const toFile = (name: string, bytes: Uint8Array) => ({ name, bytes });
   await importSetup(context, toFile('s.xlsx', await writeSetupWorkbook(SETUP, { units: 'us' })), {}, tools);
+  await addMoneyOnJob();
   const week = await writeTimesheetWorkbook({ title: 'Week 10', rows: WEEK });
   await importTimesheet(context, toFile('w.xlsx', week), {}, tools);
 });
@@ -46,7 +55,7 @@ async function readEverything(role: Role): Promise<{ name: string; answer: unkno
   const answers = [];
   for (const [name, definition] of Object.entries<Endpoint>(ENDPOINTS)) {
     if (!isReadable(definition, role)) continue;
-    for (const query of listQueries(name, ids)) {
+    for (const query of listQueries(name, definition, ids)) {
       const path = definition.path.replace(/:(\w+)/g, (_, id: string) => ids[id] ?? 'no such id');
       answers.push(await read(visitor, name, path + query));
     }
@@ -65,19 +74,35 @@ function isReadable({ method, permission, response }: Endpoint, role: Role): boo
   return method === 'get' && isJson && permission !== null && hasPermission(role, permission);
 }
 
-function listQueries(name: string, ids: Record<string, string>): string[] {
-  const workings: Record<string, (figure: string) => boolean> = {
-    getJobWorkings: (figure) => figure.startsWith('job.'),
-    getJobHoursWorkings: (figure) => ['job.hours', 'job.machineHours'].includes(figure),
-    getPaybackWorkings: (figure) => figure.startsWith('payback.'),
+function listQueries(name: string, { query }: Endpoint, ids: Record<string, string>): string[] {
+  const workings: Record<string, [(figure: string) => boolean, string[]]> = {
+    getJobWorkings: [(figure) => figure.startsWith('job.'), ['jobId']],
+    getJobHoursWorkings: [(figure) => ['job.hours', 'job.machineHours'].includes(figure), ['jobId']],
+    getPaybackWorkings: [(figure) => figure.startsWith('payback.'), ['machineId', 'costItemId']],
+    getOvertimeWorkings: [(figure) => figure.startsWith('overtime.'), ['employeeId', 'from']],
+    getStockWorkings: [(figure) => figure.startsWith('stock.'), ['materialId', 'issueId']],
+    getEstimateWorkings: [(figure) => figure.startsWith('estimate.'), ['jobId']],
   };
-  const isMeant = workings[name];
-  if (isMeant) {
-    const of = name === 'getPaybackWorkings' ? `machineId=${ids['machineId']}` : `jobId=${ids['jobId']}`;
+  const found = workings[name];
+  if (found) {
+    const [isMeant, names] = found;
+    const of = new URLSearchParams(names.map((one) => [one, ids[one] ?? ''])).toString();
     return FIGURES.filter(isMeant).map((figure) => `?figure=${figure}&${of}`);
   }
-  return name === 'getSheetExcerpt' ? [`?sheet=${encodeURIComponent(ids['sheet'] ?? '')}&row=5`] : [''];
+  // One query that holds what any of them may ask for; each takes its own part.
+  const isAsked = query !== undefined && !query.safeParse({}).success;
+  return [isAsked ? `?${new URLSearchParams({ ...ids, ...ASKED }).toString()}` : ''];
 }
+
+const ASKED = {
+  row: '5',
+  page: 'jobs',
+  rates: 'today',
+  from: '2024-03-01',
+  to: '2024-03-31',
+  on: '2024-03-31',
+  month: '2024-03',
+};
 
 async function findIds(): Promise<Record<string, string>> {
   return api.shop.inShop(async (trx) => {
@@ -91,7 +116,49 @@ async function findIds(): Promise<Record<string, string>> {
       .selectFrom('timesheetImport')
       .select(['importId', 'sheet'])
       .executeTakeFirstOrThrow();
-    return { ...machine, ...job, ...sheet };
+    const item = await trx
+      .selectFrom('machineCostItem')
+      .select('machineCostItemId as costItemId')
+      .executeTakeFirstOrThrow();
+    const employee = await trx.selectFrom('employee').select('employeeId').executeTakeFirstOrThrow();
+    const issue = await trx
+      .selectFrom('materialIssue')
+      .select(['materialId', 'issueId'])
+      .executeTakeFirstOrThrow();
+    const customer = await trx.selectFrom('customer').select('customerId').executeTakeFirstOrThrow();
+    const rows = {
+      ...machine,
+      ...job,
+      ...sheet,
+      ...item,
+      ...employee,
+      ...issue,
+      ...customer,
+      fromJobId: job.jobId,
+    };
+    return { ...rows, from: '2024-03-04', month: '2024-03' };
+  });
+}
+
+/** Material, a service and an invoice, so that there is something that must not be sent. */
+async function addMoneyOnJob(): Promise<void> {
+  const { shop } = api;
+  const { jobId } = await shop.inShop((trx) =>
+    trx.selectFrom('job').select('jobId').where('number', '=', 'J-100').executeTakeFirstOrThrow(),
+  );
+  const materialId = await shop.addMaterial({ name: '11 ga mild steel' });
+  await shop.addLot({ materialId, receivedOn: '2024-03-01', weightKg: '100', cost: '130.05', freight: '0' });
+  await shop.addIssue({ materialId, jobId, issuedOn: '2024-03-05', weightKg: '25.5' });
+  await shop.addOutsideService({ jobId, incurredOn: '2024-03-06', vendor: 'Prairie Coat', amount: '75.25' });
+  await shop.addInvoice({ jobId, invoicedOn: '2024-03-08', amount: '900.00' });
+  const { shopId } = shop.shop;
+  await shop.inShop(async (trx) => {
+    await trx.insertInto('estimate').values({ shopId, jobId, estimatedOn: '2024-03-01' }).execute();
+    const coat = { kind: 'outside' as const, description: 'Powder coat', amount: '80.10' };
+    await trx
+      .insertInto('estimateLine')
+      .values({ shopId, jobId, position: 1, ...coat })
+      .execute();
   });
 }
 
@@ -99,7 +166,8 @@ async function findIds(): Promise<Record<string, string>> {
 function findMoney(value: unknown, path = ''): string[] {
   if (typeof value === 'string') return MONEY_TEXT.test(value) ? [`${path} = ${value}`] : [];
   if (typeof value !== 'object' || value === null) return [];
-  return Object.entries(value).flatMap(([key, inner]) =>
+  const entries = Object.entries(value).filter(([key]) => !HOURS_NAMES.includes(key));
+  return entries.flatMap(([key, inner]) =>
     MONEY_NAMES.includes(key) ? [`${path}.${key}`] : findMoney(inner, `${path}.${key}`),
   );
 }
@@ -132,6 +200,7 @@ describe('what the owner is sent', () => {
       'getPayback',
       'getJobWorkings',
       'getPaybackWorkings',
+      'getStockWorkings',
     ])
       expect(names).toContain(name);
   });
