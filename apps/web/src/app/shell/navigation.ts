@@ -22,7 +22,13 @@ export const NAVIGATION: readonly NavigationGroup[] = [
     ],
   },
   { label: 'Shop', pages: [{ path: '/machines', label: 'Machines', permission: 'machines.view' }] },
-  { label: 'Books', pages: [{ path: '/timesheets', label: 'Timesheets', permission: 'timesheets.use' }] },
+  {
+    label: 'Books',
+    pages: [
+      { path: '/timesheets', label: 'Timesheets', permission: 'timesheets.use' },
+      { path: '/month-end', label: 'Month end', permission: 'months.view' },
+    ],
+  },
   {
     label: 'Shop setup',
     pages: [

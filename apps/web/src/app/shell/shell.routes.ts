@@ -49,6 +49,11 @@ export const shellRoutes: Routes = [
         loadChildren: () => import('../timesheets/timesheets.routes').then((m) => m.timesheetsRoutes),
       },
       {
+        path: 'month-end',
+        data: needs('months.view'),
+        loadChildren: () => import('../month-end/month-end.routes').then((m) => m.monthEndRoutes),
+      },
+      {
         path: 'people',
         data: needs('people.view'),
         loadChildren: () => import('../setup/setup.routes').then((m) => m.peopleRoutes),
