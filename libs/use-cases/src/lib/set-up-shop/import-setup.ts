@@ -1,22 +1,33 @@
 import { AppError, type SetupResult } from '@brakeven/contract';
 import {
+  deleteRegisterRows,
   findConstraintViolation,
   insertRegisterRows,
+  listPostedIssueAmounts,
   listRegisterRows,
   lockBooks,
   REGISTER,
   type RegisterTable,
+  replaceRegisterRows,
   type ShopTransaction,
   updateRegisterRows,
 } from '@brakeven/database';
 import { readSetupWorkbook, type SetupFile, type SheetFile } from '@brakeven/workbook';
-import { inShopOf, type ShopContext } from '../context';
+import { inShopOf, type ShopContext, todayOf } from '../context';
 import { toStorableJson } from '../import-timesheet/storable-text';
 import { readUpload, type UploadedFile, type UploadTools } from '../import-timesheet/upload';
+import { refusingRows } from '../refuse-rows';
 import { rollUpAfter } from '../roll-up-after';
+import { checkStock } from './check-stock';
+import { checkOpenings } from './dated-rows';
+import { planEstimates } from './plan-estimates';
+import { planIssues } from './plan-issues';
+import { planInvoices, planOutsideServices } from './plan-job-money';
 import { planCustomers, planJobs, planOverhead } from './plan-jobs';
 import { planMachineCosts, planMachineRates, planMachines, planOperations } from './plan-machines';
+import { planMaterials } from './plan-materials';
 import { planPeople } from './plan-people';
+import { planSheetLots } from './plan-sheet-lots';
 import { SetupDraft, type SetupRegister, SHEET_NAMES } from './setup-draft';
 
 /**
@@ -47,13 +58,14 @@ export async function importSetup(
   tools: UploadTools,
 ): Promise<SetupResult> {
   const sheetFile = await readUpload(file, tools);
-  const draft = await inShopOf(context, async (trx) => {
+  const work = async (trx: ShopTransaction): Promise<SetupDraft> => {
     await lockBooks(trx, context.shop.shopId);
     const planned = await draftSetup(trx, context, sheetFile);
     refuseProblems(toSetupResult(planned));
-    await writeSetup(trx, context.shop.shopId, planned, tools);
+    await writeSetup(trx, context, planned, tools);
     return planned;
-  }).catch(refuseRace);
+  };
+  const draft = await refusingRows(context.shop.units, {}, () => inShopOf(context, work)).catch(refuseRace);
   await rollUpAfter(context, tools);
   tools.onProgress?.({ stage: 'done', done: 1, total: 1, message: 'The shop is set up' });
   return toSetupResult(draft);
@@ -70,20 +82,32 @@ const WRITE_ORDER = [
   'operation',
   'overheadRate',
   'job',
+  'material',
+  'sheetLot',
+  'materialIssue',
+  'outsideService',
+  'invoice',
+  'estimate',
+  'estimateLine',
 ] as const satisfies readonly RegisterTable[];
 
 async function draftSetup(
   trx: ShopTransaction,
-  { shop }: ShopContext,
+  context: ShopContext,
   sheetFile: SheetFile,
 ): Promise<SetupDraft> {
+  const { shop } = context;
   const read = readSetupWorkbook(sheetFile, { units: shop.units });
   const stated = JSON.parse(toStorableJson(read)) as SetupFile;
   const register: Partial<SetupRegister> = {};
   for (const table of Object.keys(REGISTER) as RegisterTable[]) {
     register[table] = await listRegisterRows(trx, shop.shopId, table);
   }
-  const draft = new SetupDraft(register as SetupRegister);
+  const draft = new SetupDraft(register as SetupRegister, {
+    today: todayOf(context),
+    units: shop.units,
+    postedAmounts: await listPostedIssueAmounts(trx, shop.shopId),
+  });
   draft.problems.push(...stated.problems);
   planSheets(draft, stated, listFilledCells(sheetFile, SHEET_NAMES.jobs));
   return draft;
@@ -99,6 +123,13 @@ function planSheets(draft: SetupDraft, stated: SetupFile, filledJobCells: Readon
   planOperations(draft, stated.operations);
   planOverhead(draft, stated.overhead);
   planJobs(draft, stated.jobs, (address) => address !== undefined && filledJobCells.has(address));
+  checkOpenings(draft, stated.jobs);
+  planMaterials(draft, stated.materials);
+  planSheetLots(draft, stated.sheetLots);
+  checkStock(draft, planIssues(draft, stated.issues), stated.sheetLots);
+  planOutsideServices(draft, stated.outsideServices);
+  planInvoices(draft, stated.invoices);
+  planEstimates(draft, stated.estimates);
 }
 
 function listFilledCells({ sheets }: SheetFile, sheetName: string): Set<string> {
@@ -110,13 +141,17 @@ function listFilledCells({ sheets }: SheetFile, sheetName: string): Set<string> 
 
 async function writeSetup(
   trx: ShopTransaction,
-  shopId: string,
+  { shop: { shopId }, actor }: ShopContext,
   draft: SetupDraft,
   { onProgress }: UploadTools,
 ): Promise<void> {
   for (const [done, table] of WRITE_ORDER.entries()) {
     onProgress?.({ stage: 'writing', done, total: WRITE_ORDER.length, message: 'Writing the register' });
-    await insertRegisterRows(trx, shopId, table, draft.tables[table].inserts);
+    const { inserts, voidedIds, deletedIds } = draft.tables[table];
+    await deleteRegisterRows(trx, shopId, table, deletedIds);
+    if (voidedIds.length > 0) {
+      await replaceRegisterRows(trx, shopId, table, inserts, { ids: voidedIds, by: actor.name });
+    } else await insertRegisterRows(trx, shopId, table, inserts);
     await updateRegisterRows(trx, shopId, table, draft.tables[table].listUpdates());
   }
 }

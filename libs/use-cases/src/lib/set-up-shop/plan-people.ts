@@ -18,7 +18,7 @@ export function planPeople(draft: SetupDraft, rows: SetupFile['people']): void {
     }
     const person = first
       ? null
-      : draft.tables.employee.state(row.number, { name: row.name }, { number: row.number });
+      : draft.tables.employee.state(row.number, { name: row.name }, { number: row.number, isActive: true });
     const employeeId = person?.id ?? draft.tables.employee.findId(row.number);
     if (employeeId === undefined) continue;
     const rate = row.rateFrom === null ? null : planRate(draft, row, employeeId);

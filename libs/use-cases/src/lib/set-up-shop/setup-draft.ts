@@ -1,5 +1,6 @@
 import { SETUP_SHEETS, type SetupCounts, type SetupProblem, type SetupSheet } from '@brakeven/contract';
 import { type RegisterRow, type RegisterTable, type RegisterValues } from '@brakeven/database';
+import { type LocalDate, type UnitSystem } from '@brakeven/values';
 import { type SetupRowSource } from '@brakeven/workbook';
 import { normaliseName } from '../import-timesheet/near-matches';
 import { TablePlan, type Verdict } from './table-plan';
@@ -41,7 +42,30 @@ const KEYS: Record<RegisterTable, (values: RegisterValues) => string> = {
   operation: ({ code }) => String(code),
   overheadRate: ({ validFrom }) => String(validFrom),
   job: ({ number }) => String(number),
+  material: ({ name }) => String(name),
+  sheetLot: ({ number }) => String(number),
+  materialIssue: ({ jobId, materialId, issuedOn, kind }) => [jobId, materialId, issuedOn, kind].join('|'),
+  outsideService: ({ jobId, incurredOn, amount }) => [jobId, incurredOn, amount].join('|'),
+  invoice: ({ jobId, kind, number }) => [jobId, kind, number].join('|'),
+  estimate: ({ jobId }) => String(jobId),
+  estimateLine: ({ jobId, position }) => `${jobId}|${position}`,
 };
+
+/** Where rows name what others refer to, and by what. */
+const REFERENCES = {
+  machine: { sheet: 'Machines', key: 'code' },
+  operation: { sheet: 'Operations', key: 'code' },
+  material: { sheet: 'Materials', key: 'name' },
+  job: { sheet: 'Jobs', key: 'number' },
+} as const;
+
+/** What a workbook is looked at with, besides the register. */
+export interface SetupSurroundings {
+  today: LocalDate;
+  units: UnitSystem;
+  /** What issues and returns cost their jobs in closed months. */
+  postedAmounts: ReadonlyMap<string, string>;
+}
 
 /** The shop as a set-up workbook would leave it, with what is to be said about that. */
 export class SetupDraft {
@@ -53,7 +77,10 @@ export class SetupDraft {
     alreadyThere: createCounts(),
   };
 
-  constructor(register: SetupRegister) {
+  constructor(
+    register: SetupRegister,
+    readonly surroundings: SetupSurroundings,
+  ) {
     const plans = Object.entries(KEYS).map(([table, keyOf]) => [
       table,
       new TablePlan(register[table as RegisterTable], keyOf),
@@ -86,18 +113,58 @@ export class SetupDraft {
 
   /** The machine of this code, or of this name if only one has it; refused in words if there is none. */
   findMachine(list: SetupSheet, row: SetupRowSource, spelling: string): string | undefined {
-    const byCode = this.tables.machine.findId(spelling);
+    return this.findNamed('machine', list, row, spelling);
+  }
+
+  /** The operation of this code, or of this name if only one has it; refused in words if there is none. */
+  findOperation(list: SetupSheet, row: SetupRowSource, spelling: string): string | undefined {
+    return this.findNamed('operation', list, row, spelling);
+  }
+
+  /** The material of this name; refused in words if there is none. */
+  findMaterial(list: SetupSheet, row: SetupRowSource, spelling: string): string | undefined {
+    const id = this.tables.material.findId(spelling);
+    if (id === undefined) this.refuseUnknown('material', list, row, spelling);
+    return id;
+  }
+
+  /** The job of this number; refused in words if there is none. */
+  findJob(list: SetupSheet, row: SetupRowSource, spelling: string): string | undefined {
+    const id = this.tables.job.findId(spelling);
+    if (id === undefined) this.refuseUnknown('job', list, row, spelling);
+    return id;
+  }
+
+  private findNamed(
+    table: 'machine' | 'operation',
+    list: SetupSheet,
+    row: SetupRowSource,
+    spelling: string,
+  ): string | undefined {
+    const byCode = this.tables[table].findId(spelling);
     if (byCode) return byCode;
-    const named = this.tables.machine
+    const named = this.tables[table]
       .listRows()
       .filter(({ values }) => normaliseName(String(values['name'])) === normaliseName(spelling));
     if (named.length === 1) return named[0]?.id;
-    const message =
-      named.length > 1
-        ? `More than one machine is called '${spelling}'. Write its code.`
-        : `Machine '${spelling}' stands neither on sheet Machines nor in the shop. Add it to Machines or correct the code.`;
-    this.refuse(list, row, 'machine', { code: 'machine_unknown', message });
+    if (named.length === 0) this.refuseUnknown(table, list, row, spelling);
+    else {
+      const message = `More than one ${table} is called '${spelling}'. Write its code.`;
+      this.refuse(list, row, table, { code: `${table}_unknown`, message });
+    }
     return undefined;
+  }
+
+  private refuseUnknown(
+    column: 'machine' | 'operation' | 'material' | 'job',
+    list: SetupSheet,
+    row: SetupRowSource,
+    spelling: string,
+  ): void {
+    const { sheet, key } = REFERENCES[column];
+    const what = `${column.charAt(0).toUpperCase()}${column.slice(1)} '${spelling}'`;
+    const message = `${what} stands neither on sheet ${sheet} nor in the shop. Add it to ${sheet} or correct the ${key}.`;
+    this.refuse(list, row, column, { code: `${column}_unknown`, message });
   }
 
   private report(

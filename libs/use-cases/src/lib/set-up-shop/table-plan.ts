@@ -8,6 +8,9 @@ export type Verdict = 'added' | 'changed' | 'alreadyThere';
 /** What is to become of one table: its rows as they are and will be, and what has to be written for that. */
 export class TablePlan {
   readonly inserts: RegisterRow[] = [];
+  /** Ids of rows whose place others take. */
+  readonly voidedIds: string[] = [];
+  readonly deletedIds: string[] = [];
   private readonly updates = new Map<string, RegisterRow>();
   private readonly rows = new Map<string, RegisterRow>();
   private readonly idsByKey = new Map<string, string>();
@@ -25,6 +28,15 @@ export class TablePlan {
   /** The id of the row with this key, stored or planned. */
   findId(key: string): string | undefined {
     return this.idsByKey.get(key) ?? this.idsByLooseKey.get(normaliseName(key));
+  }
+
+  get(id: string): RegisterRow | undefined {
+    return this.rows.get(id);
+  }
+
+  /** The row with this key, stored or planned. */
+  find(key: string): RegisterRow | undefined {
+    return this.rows.get(this.findId(key) ?? '');
   }
 
   /** All rows as they will be. */
@@ -79,11 +91,35 @@ export class TablePlan {
     return { id, verdict: 'changed' };
   }
 
+  /**
+   * Plans what is stated for a row that costs something: if one of the columns `costing` differs, the row is voided
+   * and another takes its place; what is only words is changed where it stands.
+   */
+  restate(
+    before: RegisterRow,
+    stated: RegisterValues,
+    costing: readonly string[],
+  ): { id: string; verdict: Verdict } {
+    const isSame = costing.every((name) => !(name in stated) || stated[name] === before.values[name]);
+    if (isSame) return this.change(before, stated);
+    this.voidedIds.push(before.id);
+    this.rows.delete(before.id);
+    const { id } = this.add({ id: newId(), values: { ...before.values, ...stated } });
+    return { id, verdict: 'changed' };
+  }
+
+  /** Plans that a row goes. */
+  remove({ id }: RegisterRow): void {
+    this.deletedIds.push(id);
+    this.rows.delete(id);
+  }
+
   private keep(row: RegisterRow): void {
     const key = this.keyOf(row.values);
     this.rows.set(row.id, row);
     this.idsByKey.set(key, row.id);
-    if (!this.idsByLooseKey.has(normaliseName(key))) this.idsByLooseKey.set(normaliseName(key), row.id);
+    const likeId = this.idsByLooseKey.get(normaliseName(key));
+    if (likeId === undefined || !this.rows.has(likeId)) this.idsByLooseKey.set(normaliseName(key), row.id);
   }
 }
 
