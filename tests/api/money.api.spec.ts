@@ -80,6 +80,7 @@ function listQueries(name: string, { query }: Endpoint, ids: Record<string, stri
     getJobHoursWorkings: [(figure) => ['job.hours', 'job.machineHours'].includes(figure), ['jobId']],
     getPaybackWorkings: [(figure) => figure.startsWith('payback.'), ['machineId', 'costItemId']],
     getOvertimeWorkings: [(figure) => figure.startsWith('overtime.'), ['employeeId', 'from']],
+    getBooksWorkings: [(figure) => figure.startsWith('books.'), []],
     getStockWorkings: [(figure) => figure.startsWith('stock.'), ['materialId', 'issueId']],
     getEstimateWorkings: [(figure) => figure.startsWith('estimate.'), ['jobId']],
   };

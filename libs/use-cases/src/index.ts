@@ -68,6 +68,7 @@ export {
 } from './lib/show-jobs/get-job';
 export * from './lib/show-jobs/list-jobs';
 export * from './lib/show-payback/get-payback';
+export * from './lib/show-workings/get-books-workings';
 export * from './lib/show-workings/get-job-workings';
 export * from './lib/show-workings/get-overtime-workings';
 export * from './lib/show-workings/get-payback-workings';

@@ -1,5 +1,6 @@
 import { ENDPOINTS } from '@brakeven/contract';
 import {
+  getBooksWorkings,
   getJobHoursWorkings,
   getJobWorkings,
   getOvertimeWorkings,
@@ -14,5 +15,6 @@ export function mountWorkings({ mount }: Api): void {
   mount(ENDPOINTS.getJobHoursWorkings, ({ context, query }) => getJobHoursWorkings(context, query));
   mount(ENDPOINTS.getPaybackWorkings, ({ context, query }) => getPaybackWorkings(context, query));
   mount(ENDPOINTS.getOvertimeWorkings, ({ context, query }) => getOvertimeWorkings(context, query));
+  mount(ENDPOINTS.getBooksWorkings, ({ context, query }) => getBooksWorkings(context, query));
   mount(ENDPOINTS.getStockWorkings, ({ context, query }) => getStockWorkings(context, query));
 }

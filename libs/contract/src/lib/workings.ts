@@ -72,6 +72,20 @@ export const PAYBACK_FIGURES = [
 /** What stands behind single lines: the week of a premium, the stock at the moment of an issue. */
 export const SOURCE_FIGURES = ['overtime.week', 'stock.issue', 'stock.value'] as const;
 
+/** What the books hold of days, whatever job it is of or none. */
+export const BOOKS_FIGURES = [
+  'books.labour',
+  'books.overtime',
+  'books.machine',
+  'books.overhead',
+  'books.material',
+  'books.outside',
+  'books.cost',
+  'books.invoiced',
+  'books.earned',
+  'books.running',
+] as const;
+
 /** Figures of a job's estimate. */
 export const ESTIMATE_FIGURES = [
   'estimate.hours',
@@ -85,13 +99,20 @@ export const ESTIMATE_FIGURES = [
   'estimate.variance',
 ] as const;
 
-export const FIGURES = [...JOB_FIGURES, ...PAYBACK_FIGURES, ...SOURCE_FIGURES, ...ESTIMATE_FIGURES] as const;
+export const FIGURES = [
+  ...JOB_FIGURES,
+  ...PAYBACK_FIGURES,
+  ...SOURCE_FIGURES,
+  ...BOOKS_FIGURES,
+  ...ESTIMATE_FIGURES,
+] as const;
 export type Figure = (typeof FIGURES)[number];
 
 /**
  * Which figure is meant. `job.*` without `jobId`: over all jobs that `customerId`, `search` and `status` leave.
  * `payback.*` needs `machineId`; with `jobId` only that job's share, with `from`/`to` only those days;
  * `payback.costItem` needs `costItemId` too. `overtime.week` needs `employeeId` and, as `from`, a day of the week;
+ * `books.*` is of the days in the books from `from` through `to`; with `part` only what went to overhead, or came late.
  * `stock.issue` needs `issueId`; `stock.value` needs `materialId`, and is before the issue if there is an `issueId`.
  */
 export const figureRefSchema = z.object({
@@ -104,6 +125,7 @@ export const figureRefSchema = z.object({
   costItemId: idSchema.optional(),
   materialId: idSchema.optional(),
   issueId: idSchema.optional(),
+  part: z.enum(['overhead', 'late']).optional(),
   from: localDateSchema.optional(),
   to: localDateSchema.optional(),
   search: z.string().max(100).optional(),
@@ -214,6 +236,14 @@ export const workingsEndpoints = {
     path: '/workings/overtime',
     summary: 'How the overtime premium of an employee’s week was made, and over which entries it was spread',
     permission: 'jobs.money',
+    query: workingsQuerySchema,
+    response: workingsSchema,
+  }),
+  getBooksWorkings: endpoint({
+    method: 'get',
+    path: '/workings/books',
+    summary: 'The lines behind a total of a month',
+    permission: 'months.view',
     query: workingsQuerySchema,
     response: workingsSchema,
   }),

@@ -20,6 +20,8 @@ export interface LineSelection {
   /** Only a machine in service: its lines from that day on; null takes none. */
   machine?: { machineId: string; inServiceOn: string | null };
   employeeId?: string;
+  /** Only what went to overhead, or only what came late for a closed month. */
+  part?: 'overhead' | 'late';
   /** Of one row. */
   sourceId?: string;
   /** Days in the books. */
@@ -137,7 +139,8 @@ function cutBy(idColumn: 'source_id' | 'entry_id', cut: LineCut | undefined): Ra
 }
 
 function isSelected(selection: LineSelection): RawBuilder<boolean> {
-  const { signs, jobId, jobs, operationId, employeeId, sourceId, machine, from, to, worked } = selection;
+  const { signs, jobId, jobs, operationId, employeeId, part, sourceId, machine, from, to, worked } =
+    selection;
   const conditions: RawBuilder<unknown>[] = [sql`category = any (${Object.keys(signs)}::text[])`];
   if (jobId !== undefined) conditions.push(sql`job_id = ${jobId}::uuid`);
   if (jobs !== undefined) {
@@ -150,6 +153,8 @@ function isSelected(selection: LineSelection): RawBuilder<boolean> {
   }
   if (operationId !== undefined) conditions.push(sql`operation_id = ${operationId}::uuid`);
   if (employeeId !== undefined) conditions.push(sql`employee_id = ${employeeId}::uuid`);
+  if (part === 'overhead') conditions.push(sql`job_id is null`);
+  if (part === 'late') conditions.push(sql`posted_on <> worked_on`);
   if (sourceId !== undefined) conditions.push(sql`source_id = ${sourceId}::uuid`);
   if (worked !== undefined) conditions.push(isWorkedIn(worked));
   if (machine !== undefined) {

@@ -122,6 +122,25 @@ export const LINE_FIGURES: Readonly<Record<SummedFigure, LineFigure>> = {
   },
 };
 
+type BooksFigure = Extract<Figure, `books.${string}`>;
+
+/** Totals of the books: the figures of jobs, and what went to overhead besides. */
+export const BOOKS_LINE_FIGURES: Readonly<Record<BooksFigure, LineFigure>> = {
+  'books.labour': LINE_FIGURES['job.labour'],
+  'books.overtime': LINE_FIGURES['job.overtime'],
+  'books.machine': LINE_FIGURES['job.machine'],
+  'books.overhead': LINE_FIGURES['job.overhead'],
+  'books.material': LINE_FIGURES['job.material'],
+  'books.outside': LINE_FIGURES['job.outside'],
+  'books.cost': {
+    ...LINE_FIGURES['job.total'],
+    parts: JOB_COST.map((part) => ({ ...part, figure: `books.${part.category}` as BooksFigure })),
+  },
+  'books.invoiced': LINE_FIGURES['job.invoiced'],
+  'books.earned': LINE_FIGURES['job.earned'],
+  'books.running': LINE_FIGURES['payback.running'],
+};
+
 /** The premiums of one employee's week. */
 export const OVERTIME_WEEK = money('Overtime premium', RULES.overtime, 'overtime');
 

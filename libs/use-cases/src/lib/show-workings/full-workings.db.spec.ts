@@ -1,4 +1,4 @@
-import { JOB_FIGURES, PAYBACK_FIGURES, type FigureRef } from '@brakeven/contract';
+import { BOOKS_FIGURES, JOB_FIGURES, PAYBACK_FIGURES, type FigureRef } from '@brakeven/contract';
 import { D } from '@brakeven/values';
 import { type ShopContext } from '../context';
 import { runRollup } from '../roll-up-costs/run-rollup';
@@ -6,6 +6,7 @@ import { getJob, listJobLines } from '../show-jobs/get-job';
 import { listJobs } from '../show-jobs/list-jobs';
 import { getPayback } from '../show-payback/get-payback';
 import { WORKED_NOW } from '../testing/worked-shop';
+import { getBooksWorkings } from './get-books-workings';
 import { getOvertimeWorkings } from './get-overtime-workings';
 import { getPaybackWorkings } from './get-payback-workings';
 import { getStockWorkings } from './get-stock-workings';
@@ -214,6 +215,34 @@ describe('workings of a shop with every category and a closed month', () => {
     });
   });
 
+  describe('of the books', () => {
+    const april = { from: '2026-04-01', to: '2026-04-30' };
+
+    it('add up, parts and rows, to the lines posted in the days', async () => {
+      for (const figure of BOOKS_FIGURES) expectToAddUp(await readAll(owner, { figure, ...april }));
+      const cost = await readAll(owner, { figure: 'books.cost', ...april });
+      expect(cost.parts.map((part) => part.figure?.figure)).toEqual([
+        'books.labour',
+        'books.overtime',
+        'books.machine',
+        'books.overhead',
+        'books.material',
+        'books.outside',
+      ]);
+      const ofJobs = await readAll(owner, { figure: 'job.total', ...april });
+      const toOverhead = await readAll(owner, { figure: 'books.cost', part: 'overhead', ...april });
+      expect(D(ofJobs.amount).plus(toOverhead.amount).toFixed(2)).toBe(cost.amount);
+    });
+
+    it('tell what came late, by itself', async () => {
+      const late = await readAll(owner, { figure: 'books.cost', part: 'late', ...april });
+      expectToAddUp(late);
+      expect(late.lineCount).toBeGreaterThan(3);
+      expect(late.lines.every((line) => line.isLate)).toBe(true);
+      expect((await readAll(owner, { figure: 'books.cost', part: 'late' })).amount).toBe(late.amount);
+    });
+  });
+
   it('name vendor, invoice and credit note', async () => {
     const labels = async (figure: 'job.outside' | 'job.invoiced') =>
       (await readAll(owner, { figure, jobId: shop.jobs.covers })).lines.map(
@@ -268,6 +297,7 @@ describe('workings of a shop with every category and a closed month', () => {
       [getStockWorkings, { figure: 'stock.issue' }, 'issueId'],
       [getStockWorkings, { figure: 'stock.value' }, 'materialId'],
       [getStockWorkings, { figure: 'job.total' }, 'figure'],
+      [getBooksWorkings, { figure: 'job.total' }, 'figure'],
       [getPaybackWorkings, { figure: 'payback.costItem', machineId: press }, 'costItemId'],
     ] as const;
     for (const [read, ref, field] of refusals) {

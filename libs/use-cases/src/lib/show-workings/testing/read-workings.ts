@@ -1,6 +1,7 @@
 import { type FigureRef, type Workings, workingsSchema } from '@brakeven/contract';
 import { D, sum } from '@brakeven/values';
 import { type ShopContext } from '../../context';
+import { getBooksWorkings } from '../get-books-workings';
 import { getJobWorkings } from '../get-job-workings';
 import { getOvertimeWorkings } from '../get-overtime-workings';
 import { getPaybackWorkings } from '../get-payback-workings';
@@ -9,6 +10,7 @@ import { getStockWorkings } from '../get-stock-workings';
 const PAGE = 17;
 
 const READERS: Readonly<Record<string, typeof getJobWorkings>> = {
+  books: getBooksWorkings,
   job: getJobWorkings,
   overtime: getOvertimeWorkings,
   payback: getPaybackWorkings,
