@@ -1,13 +1,15 @@
 import { ChangeDetectionStrategy, Component, computed, input } from '@angular/core';
-import { JOB_COST_CATEGORIES, type MonthTotal } from '@brakeven/contract';
-import { EmptyState, MoneyPipe } from '@brakeven/ui';
+import { type CostCategory, type FigureRef, JOB_COST_CATEGORIES, type MonthTotal } from '@brakeven/contract';
+import { EmptyState, Figure } from '@brakeven/ui';
 import { D, moneyText, sum, toMoney } from '@brakeven/values';
 import { CATEGORY_WORDS } from './month-words';
+
+type Amounts = Pick<MonthTotal, 'amount' | 'toOverhead' | 'late'>;
 
 /** What the books of a month come to by category: cost with its total, what was invoiced, and what machines earned. */
 @Component({
   selector: 'app-month-totals-card',
-  imports: [EmptyState, MoneyPipe],
+  imports: [EmptyState, Figure],
   template: `
     <section class="card" aria-labelledby="totals-heading">
       <h2 id="totals-heading">In the books of the month</h2>
@@ -33,18 +35,22 @@ import { CATEGORY_WORDS } from './month-words';
                 @for (row of group.rows; track row.category) {
                   <tr>
                     <th scope="row">{{ words[row.category] }}</th>
-                    <td class="number">{{ row.amount | money }}</td>
-                    <td class="number">{{ isZero(row.toOverhead) ? '–' : (row.toOverhead | money) }}</td>
-                    <td class="number">{{ isZero(row.late) ? '–' : (row.late | money) }}</td>
+                    @for (cell of toCells(row, row.category); track $index) {
+                      <td class="number">
+                        <app-figure [value]="cell.value" [ref]="cell.ref" [label]="words[row.category]" />
+                      </td>
+                    }
                     <td class="number muted">{{ row.lines.toLocaleString('en-US') }}</td>
                   </tr>
                 }
                 @if (group.total; as total) {
                   <tr class="total">
                     <th scope="row">{{ group.name }}</th>
-                    <td class="number">{{ total.amount | money }}</td>
-                    <td class="number">{{ total.toOverhead | money }}</td>
-                    <td class="number">{{ total.late | money }}</td>
+                    @for (cell of toCells(total, 'cost'); track $index) {
+                      <td class="number">
+                        <app-figure [value]="cell.value" [ref]="cell.ref" [label]="group.name" />
+                      </td>
+                    }
                     <td class="number"></td>
                   </tr>
                 }
@@ -59,6 +65,9 @@ import { CATEGORY_WORDS } from './month-words';
 })
 export class MonthTotalsCard {
   readonly totals = input.required<readonly MonthTotal[]>();
+  /** The month's first and last day. */
+  readonly from = input.required<string>();
+  readonly to = input.required<string>();
   protected readonly words = CATEGORY_WORDS;
   protected readonly groups = computed(() => {
     const costs: readonly string[] = JOB_COST_CATEGORIES;
@@ -70,12 +79,19 @@ export class MonthTotalsCard {
     ];
   });
 
-  protected isZero(amount: string): boolean {
-    return D(amount).isZero();
+  /** The amount and its two parts as figures that open; a part that is not there is a dash. */
+  protected toCells(
+    row: Amounts,
+    of: CostCategory | 'cost',
+  ): { value: string | null; ref: FigureRef | null }[] {
+    const figure = { figure: `books.${of}` as const, from: this.from(), to: this.to() };
+    const toPart = (value: string, part: 'overhead' | 'late') =>
+      D(value).isZero() ? { value: null, ref: null } : { value, ref: { ...figure, part } };
+    return [{ value: row.amount, ref: figure }, toPart(row.toOverhead, 'overhead'), toPart(row.late, 'late')];
   }
 }
 
-function toTotal(rows: readonly MonthTotal[]): Pick<MonthTotal, 'amount' | 'toOverhead' | 'late'> {
+function toTotal(rows: readonly MonthTotal[]): Amounts {
   const add = (of: (row: MonthTotal) => string) => moneyText(sum(rows.map((row) => toMoney(of(row)))));
   return {
     amount: add(({ amount }) => amount),
