@@ -5,6 +5,7 @@ import { HoursPipe } from './hours-pipe';
 import { InstantPipe } from './instant-pipe';
 import { LengthPipe } from './length-pipe';
 import { LocalDatePipe } from './local-date-pipe';
+import { MassPipe } from './mass-pipe';
 import { MoneyPipe } from './money-pipe';
 import { RatePipe } from './rate-pipe';
 import { SHOP_FORMAT, type ShopFormat } from './shop-format';
@@ -38,16 +39,27 @@ describe('pipes for figures', () => {
     expect(make(InstantPipe).transform('2026-03-02T03:15:00Z')).toMatch(/^Mar 1, 2026, 9:15\sPM$/u);
   });
 
-  it('convert lengths and forces to the shop’s units', () => {
+  it('convert lengths, forces and weights to the shop’s units', () => {
     expect(make(LengthPipe).transform('1828.8')).toBe('72\u00a0in');
     expect(make(ForcePipe).transform('533.786594')).toBe('60\u00a0US tons');
+    expect(make(MassPipe).transform('15.966451424')).toBe('35.2\u00a0lb');
     format.set({ ...format(), units: 'metric' });
     expect(make(LengthPipe).transform('1828.8')).toBe('1,828.8\u00a0mm');
     expect(make(ForcePipe).transform('533.786594')).toBe('533.8\u00a0kN');
+    expect(make(MassPipe).transform('886.1851530455')).toBe('886.19\u00a0kg');
   });
 
   it('show a dash for what is absent, never 0', () => {
-    for (const pipe of [MoneyPipe, RatePipe, HoursPipe, LocalDatePipe, InstantPipe, LengthPipe, ForcePipe]) {
+    for (const pipe of [
+      MoneyPipe,
+      RatePipe,
+      HoursPipe,
+      LocalDatePipe,
+      InstantPipe,
+      LengthPipe,
+      ForcePipe,
+      MassPipe,
+    ]) {
       expect(make<{ transform(value: null): string }>(pipe).transform(null)).toBe('–');
     }
   });

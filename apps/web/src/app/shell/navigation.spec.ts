@@ -16,7 +16,7 @@ describe('the rail', () => {
   });
 
   it('shows the lead no wages and no payback', () => {
-    expect(pathsOf('lead')).toEqual(['/jobs', '/hours', '/machines']);
+    expect(pathsOf('lead')).toEqual(['/jobs', '/hours', '/machines', '/materials']);
   });
 
   it.each(ROLES)('leads the %s to a page that the role may open', (role) => {

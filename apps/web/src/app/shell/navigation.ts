@@ -18,6 +18,7 @@ export const NAVIGATION: readonly NavigationGroup[] = [
     pages: [
       { path: '/payback', label: 'Payback', permission: 'payback.view' },
       { path: '/jobs', label: 'Jobs', permission: 'jobs.view' },
+      { path: '/customers', label: 'Customers', permission: 'jobs.money' },
       { path: '/hours', label: 'Hours', permission: 'hours.own' },
     ],
   },
@@ -33,6 +34,7 @@ export const NAVIGATION: readonly NavigationGroup[] = [
     label: 'Shop setup',
     pages: [
       { path: '/people', label: 'People & rates', permission: 'people.view' },
+      { path: '/materials', label: 'Materials', permission: 'materials.view' },
       { path: '/shop', label: 'Shop', permission: 'shop.edit' },
     ],
   },

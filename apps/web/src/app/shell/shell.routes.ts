@@ -34,6 +34,11 @@ export const shellRoutes: Routes = [
         loadChildren: () => import('../jobs/jobs.routes').then((m) => m.jobsRoutes),
       },
       {
+        path: 'customers',
+        data: needs('jobs.money'),
+        loadChildren: () => import('../customers/customers.routes').then((m) => m.customersRoutes),
+      },
+      {
         path: 'hours',
         data: needs('hours.own'),
         loadChildren: () => import('../hours/hours.routes').then((m) => m.hoursRoutes),
@@ -57,6 +62,11 @@ export const shellRoutes: Routes = [
         path: 'people',
         data: needs('people.view'),
         loadChildren: () => import('../setup/setup.routes').then((m) => m.peopleRoutes),
+      },
+      {
+        path: 'materials',
+        data: needs('materials.view'),
+        loadChildren: () => import('../materials/materials.routes').then((m) => m.materialsRoutes),
       },
       {
         path: 'shop',

@@ -1,0 +1,37 @@
+import { ChangeDetectionStrategy, Component, computed, inject } from '@angular/core';
+import { rxResource, takeUntilDestroyed } from '@angular/core/rxjs-interop';
+import { RouterLink } from '@angular/router';
+import { EmptyState, LoadingSkeleton, LocalDatePipe, MoneyPipe, PageHeader, StatusTag } from '@brakeven/ui';
+import { CustomersApi } from '../api/customers-api';
+import { LoadError } from '../shell/load-error';
+import { RollupStore } from '../shell/rollup-store';
+
+/** Whom the shop works for: what their jobs cost, what was invoiced, and what stands between. */
+@Component({
+  selector: 'app-customers-page',
+  imports: [
+    EmptyState,
+    LoadError,
+    LoadingSkeleton,
+    LocalDatePipe,
+    MoneyPipe,
+    PageHeader,
+    RouterLink,
+    StatusTag,
+  ],
+  templateUrl: './customers-page.html',
+  styleUrl: './customers-page.scss',
+  changeDetection: ChangeDetectionStrategy.OnPush,
+})
+export class CustomersPage {
+  private readonly api = inject(CustomersApi);
+
+  protected readonly customers = rxResource({ stream: () => this.api.list() });
+  protected readonly rows = computed(() => (this.customers.hasValue() ? this.customers.value().items : []));
+
+  constructor() {
+    inject(RollupStore)
+      .rolledUp.pipe(takeUntilDestroyed())
+      .subscribe(() => this.customers.reload());
+  }
+}
