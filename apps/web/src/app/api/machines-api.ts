@@ -2,9 +2,11 @@ import { HttpClient } from '@angular/common/http';
 import { inject, Injectable } from '@angular/core';
 import {
   type Machine,
+  type MachineBuiltRateInput,
   type MachineCostItemInput,
   type MachineInput,
   type MachineRateInput,
+  type MachineRecovery,
 } from '@brakeven/contract';
 import { type Observable } from 'rxjs';
 
@@ -47,6 +49,20 @@ export class MachinesApi {
 
   updateRate(machineId: string, rateId: string, input: MachineRateInput): Observable<Machine> {
     return this.http.patch<Machine>(`/api/machines/${machineId}/rates/${rateId}`, input);
+  }
+
+  addBuiltRate(machineId: string, input: MachineBuiltRateInput): Observable<Machine> {
+    return this.http.post<Machine>(`/api/machines/${machineId}/built-rates`, input);
+  }
+
+  updateBuiltRate(machineId: string, rateId: string, input: MachineBuiltRateInput): Observable<Machine> {
+    return this.http.patch<Machine>(`/api/machines/${machineId}/built-rates/${rateId}`, input);
+  }
+
+  /** Fixed cost of a period against what the hours really run have carried of it. */
+  getRecovery(machineId: string, from: string, to: string): Observable<MachineRecovery> {
+    const params = { from, to };
+    return this.http.get<MachineRecovery>(`/api/machines/${machineId}/recovery`, { params });
   }
 
   deleteRate(machineId: string, rateId: string): Observable<Machine> {

@@ -23,6 +23,7 @@ const rate: MachineRate = {
   machineHourRate: '20.10',
   chargeOutRate: '78.00',
   runningCostPerHour: '4.10',
+  basis: null,
 };
 
 describe('dialogs of a machine', () => {

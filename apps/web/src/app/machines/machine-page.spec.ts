@@ -38,6 +38,7 @@ const machine: Machine = {
       machineHourRate: '20.10',
       chargeOutRate: '78.00',
       runningCostPerHour: '4.10',
+      basis: null,
     },
   ],
 };

@@ -92,9 +92,13 @@ export class MachinePage {
   }
 
   protected deleteRate(rate: MachineRate): void {
-    const { machineRateId, ...input } = rate;
+    const { machineRateId, basis, ...input } = rate;
+    const putBack = () =>
+      basis
+        ? this.api.addBuiltRate(this.machineId(), { ...input, basis })
+        : this.api.addRate(this.machineId(), input);
     this.change(this.api.deleteRate(this.machineId(), machineRateId), 'Rates taken out.', () =>
-      this.change(this.api.addRate(this.machineId(), input), 'Rates put back.'),
+      this.change(putBack(), 'Rates put back.'),
     );
   }
 

@@ -1,4 +1,5 @@
 import { ChangeDetectionStrategy, Component, computed, input, output } from '@angular/core';
+import { RouterLink } from '@angular/router';
 import { type MachineRate } from '@brakeven/contract';
 import { EmptyState, LocalDatePipe, RatePipe, StatusTag } from '@brakeven/ui';
 import { stateRates } from '../rates/current-rate';
@@ -6,13 +7,16 @@ import { stateRates } from '../rates/current-rate';
 /** The machine's rates from each day on; which one holds today is said in a word. */
 @Component({
   selector: 'app-machine-rates-card',
-  imports: [EmptyState, LocalDatePipe, RatePipe, StatusTag],
+  imports: [EmptyState, LocalDatePipe, RatePipe, RouterLink, StatusTag],
   template: `
     <section class="card" aria-labelledby="rates-heading">
       <div class="head">
         <h2 id="rates-heading">Hourly rates</h2>
         @if (canEdit()) {
-          <button type="button" class="button" (click)="added.emit()">Add rates from a day on</button>
+          <span class="ways">
+            <a class="button" [routerLink]="['/machines', machineId(), 'rate']">Build a machine-hour rate</a>
+            <button type="button" class="button" (click)="added.emit()">Add rates from a day on</button>
+          </span>
         }
       </div>
       @if (stated().length === 0) {
@@ -47,7 +51,18 @@ import { stateRates } from '../rates/current-rate';
                       />
                     }
                   </td>
-                  <td class="number">{{ rate.machineHourRate | rate }}</td>
+                  <td class="number">
+                    {{ rate.machineHourRate | rate }}
+                    @if (rate.basis) {
+                      <a
+                        class="built"
+                        [routerLink]="['/machines', machineId(), 'rate']"
+                        [queryParams]="{ rate: rate.machineRateId }"
+                        [attr.aria-label]="'How the rate from ' + (rate.validFrom | localDate) + ' was built'"
+                        >built</a
+                      >
+                    }
+                  </td>
                   <td class="number">{{ rate.chargeOutRate | rate }}</td>
                   <td class="number">{{ rate.runningCostPerHour | rate }}</td>
                   @if (canEdit()) {
@@ -79,9 +94,21 @@ import { stateRates } from '../rates/current-rate';
     </section>
   `,
   styleUrl: '../rates/dated-card.scss',
+  styles: `
+    .ways {
+      display: flex;
+      flex-wrap: wrap;
+      gap: 8px;
+    }
+    .built {
+      margin-left: 6px;
+      font-size: 12.5px;
+    }
+  `,
   changeDetection: ChangeDetectionStrategy.OnPush,
 })
 export class MachineRatesCard {
+  readonly machineId = input.required<string>();
   readonly rates = input.required<readonly MachineRate[]>();
   readonly today = input.required<string>();
   readonly canEdit = input(false);

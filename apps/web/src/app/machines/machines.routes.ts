@@ -7,4 +7,10 @@ export const machinesRoutes: Routes = [
     title: 'Machine',
     loadComponent: () => import('./machine-page').then((m) => m.MachinePage),
   },
+  {
+    path: ':machineId/rate',
+    title: 'Machine-hour rate',
+    data: { permission: 'machines.money' },
+    loadComponent: () => import('./rate-builder-page').then((m) => m.RateBuilderPage),
+  },
 ];
