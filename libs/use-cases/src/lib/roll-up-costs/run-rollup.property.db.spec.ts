@@ -3,7 +3,9 @@ import { type TestShop } from '@brakeven/test-shop';
 import fc from 'fast-check';
 import { runRollup } from './run-rollup';
 import { computeExpectedCosts } from './testing/expected-costs';
-import { applyChange, createBareShop, createRatedShop, someChanges } from './testing/random-shop';
+import { applyChange } from './testing/apply-change';
+import { someChanges } from './testing/random-changes';
+import { createBareShop, createRatedShop } from './testing/random-shop';
 import { readClosedLines, readStoredCosts, type StoredCosts, toStoredCosts } from './testing/stored-costs';
 
 const RUNS = Number(process.env['FC_DB_RUNS'] ?? 25);
