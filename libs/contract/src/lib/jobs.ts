@@ -12,7 +12,13 @@ import {
   pageQuerySchema,
   rateSchema,
 } from './schema-values';
-import { COST_CATEGORIES, JOB_COST_CATEGORIES, lineFactsSchema, sourceCellSchema } from './workings';
+import {
+  COST_CATEGORIES,
+  JOB_COST_CATEGORIES,
+  figureRefSchema,
+  lineFactsSchema,
+  sourceCellSchema,
+} from './workings';
 
 /** Hours or kg as text, as many decimals as it takes. */
 const quantityTextSchema = z.string().regex(/^-?\d+(\.\d+)?$/);
@@ -182,6 +188,8 @@ export const jobLineSchema = lineFactsSchema.extend({
   rate: rateSchema.optional(),
   rateFactor: rateSchema.nullable().optional(),
   amount: moneySchema.optional(),
+  /** Tells how the amount was made where it is no product of the rate: the week of a premium, the stock of an issue. */
+  figure: figureRefSchema.nullable().optional(),
   source: sourceCellSchema.nullable(),
 });
 export type JobLine = z.infer<typeof jobLineSchema>;

@@ -62,7 +62,14 @@ const WORDS: readonly GridColumn<JobLine>[] = [
 
 const MONEY: readonly GridColumn<JobLine>[] = [
   { id: 'rateFactor', header: '× burden', kind: 'number', value: (line) => line.rateFactor, width: 86 },
-  { id: 'amount', header: 'Amount', kind: 'money', value: (line) => line.amount, width: 108 },
+  {
+    id: 'amount',
+    header: 'Amount',
+    kind: 'money',
+    value: (line) => line.amount,
+    figure: (line) => line.figure ?? null,
+    width: 108,
+  },
 ];
 
 /** A line of a closed month stands where it was posted; what it takes back is told by its workings too. */

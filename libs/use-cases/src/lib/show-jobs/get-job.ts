@@ -24,7 +24,7 @@ import { hoursText, moneyText, rateText, toMoney, toRate } from '@brakeven/value
 import { inShopOf, type ShopContext } from '../context';
 import { readEstimate, type StoredEstimate } from '../estimate-jobs/estimate-cost';
 import { cutPage, linePositionSchema, readCursor, writeCursor } from '../page-cursor';
-import { toLineFacts, toLineId } from '../show-workings/line-facts';
+import { toLineFacts, toLineFigure, toLineId } from '../show-workings/line-facts';
 import { toSourceCell } from '../source-cell';
 import { compareJob } from './compare-job';
 import { seesMoney, toJob, toJobCost } from './job-dto';
@@ -191,6 +191,7 @@ function toJobLine(context: ShopContext, row: JobLineRow): JobLine {
     rate: rateText(toRate(row.rate)),
     rateFactor: category === 'labour' ? rateText(toRate(row.rateFactor)) : null,
     amount,
+    figure: toLineFigure(row),
   };
   return {
     ...toLineFacts(row),
