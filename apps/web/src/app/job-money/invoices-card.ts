@@ -59,7 +59,7 @@ export class InvoicesCard {
       });
   }
 
-  protected void(invoice: Invoice): void {
+  protected voidRow(invoice: Invoice): void {
     const { invoiceId } = invoice;
     this.changes.void(toName(invoice), this.api.voidInvoice(invoiceId), () =>
       this.api.restoreInvoice(invoiceId),

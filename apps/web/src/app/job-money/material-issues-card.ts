@@ -76,7 +76,7 @@ export class MaterialIssuesCard {
       });
   }
 
-  protected void(issue: MaterialIssue): void {
+  protected voidRow(issue: MaterialIssue): void {
     const { issueId } = issue;
     this.changes.void(toName(issue), this.api.voidIssue(issueId), () => this.api.restoreIssue(issueId));
   }

@@ -54,7 +54,7 @@ export class OutsideServicesCard {
       });
   }
 
-  protected void(service: OutsideService): void {
+  protected voidRow(service: OutsideService): void {
     const id = service.outsideServiceId;
     this.changes.void(toName(service), this.api.voidService(id), () => this.api.restoreService(id));
   }

@@ -164,11 +164,11 @@ export class MaterialPage {
     const correct = () => (move.kind === 'lot' ? this.openLot(move) : this.openIssue(move, move.kind));
     return [
       { label: 'Correct', run: () => void correct() },
-      { label: 'Void', run: () => this.void(move) },
+      { label: 'Void', run: () => this.voidMove(move) },
     ];
   }
 
-  private void(move: StockMove): void {
+  private voidMove(move: StockMove): void {
     const request = move.kind === 'lot' ? this.api.voidLot(move.moveId) : this.api.voidIssue(move.moveId);
     this.change(request, `${MOVE_WORDS[move.kind]} row voided.`, () =>
       this.change(this.toRestore(move), 'Put back.'),
