@@ -1,4 +1,5 @@
 import { type JobStatus } from '@brakeven/contract';
+import { planEstimate, quote } from './plan-estimates';
 import { type Random } from './random';
 import { CUSTOMERS, JOB_KINDS, UPKEEP_JOB, WEEKS } from './story';
 
@@ -15,6 +16,8 @@ export interface PlannedJob {
   isBillable: boolean;
   /** How it stands today; while it was worked on it was open. */
   statusNow: JobStatus;
+  /** Hours as they were estimated, by operation. */
+  plannedHours: ReadonlyMap<string, number>;
   /** Hours still to be worked by operation. */
   hoursLeft: Map<string, number>;
   piecesPerHour: number;
@@ -22,11 +25,14 @@ export interface PlannedJob {
   isLosing: boolean;
   /** Runs on a sheet lot that scrapped badly. */
   isBadLot: boolean;
+  /** Part of it is estimated to be done outside. */
+  isSentOut: boolean;
 }
 
 const LOSING_JOB = 47;
 const BAD_LOT_JOB = 61;
-const DOLLARS_AN_HOUR = 74;
+/** What the losing job was quoted for, of the price it should have had. */
+const LOSING_SHARE = 0.93;
 
 /** The shop's jobs over the whole history: slow to start, busy in autumn. */
 export function planJobs(random: Random): PlannedJob[] {
@@ -47,8 +53,9 @@ function planJob(index: number, week: number, random: Random): PlannedJob {
   const hours = Math.round(random.between(70, 165));
   const weeks = Math.round(random.between(2, 5));
   const customer = CUSTOMERS[random.pick(kind.customers)] ?? null;
-  const quoted = Math.round((hours * DOLLARS_AN_HOUR * random.between(0.92, 1.12)) / 10) * 10;
-  return {
+  const eagerness = random.between(0.92, 1.12);
+  const plannedHours = new Map(Object.entries(kind.route).map(([code, share]) => [code, hours * share]));
+  const job = {
     number: String(2200 + index),
     title: kind.title,
     customer,
@@ -56,15 +63,20 @@ function planJob(index: number, week: number, random: Random): PlannedJob {
     openedWeek: week,
     lastWeek: week + weeks,
     dueWeek: week + weeks + 1,
-    quotedPrice: quoted.toFixed(2),
     isBillable: true,
     statusNow: statusNow(week + weeks),
-    hoursLeft: new Map(
-      Object.entries(kind.route).map(([code, share]) => [code, hours * share * (isLosing ? 1.55 : 1)]),
-    ),
+    plannedHours,
+    hoursLeft: new Map([...plannedHours].map(([code, planned]) => [code, planned * (isLosing ? 1.55 : 1)])),
     piecesPerHour: kind.piecesPerHour,
     isLosing,
     isBadLot: index === BAD_LOT_JOB,
+    isSentOut: index % 5 < 2,
+  };
+  const estimate = planEstimate(job);
+  if (!estimate) throw new Error(`There is no telling what ${job.title} cost.`);
+  return {
+    ...job,
+    quotedPrice: quote(estimate, job.quantity, isLosing ? LOSING_SHARE : eagerness).toFixed(2),
   };
 }
 
@@ -84,9 +96,11 @@ function upkeepJob(): PlannedJob {
     quotedPrice: null,
     isBillable: false,
     statusNow: 'open',
+    plannedHours: new Map(),
     hoursLeft: new Map(),
     piecesPerHour: 0,
     isLosing: false,
     isBadLot: false,
+    isSentOut: false,
   };
 }

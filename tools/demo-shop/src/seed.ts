@@ -16,8 +16,10 @@ import {
 } from '@brakeven/use-cases';
 import { addDays, formatLocalDate, type LocalDate, startOfWeek, todayIn } from '@brakeven/values';
 import { writeSetupWorkbook, writeTimesheetWorkbook } from '@brakeven/workbook';
+import { buildCosts } from './build-costs';
 import { buildSetup } from './build-setup';
 import { buildTimesheet, buildUnsettledTimesheet } from './build-timesheets';
+import { planCosts, type PlannedCosts } from './plan-costs';
 import { type PlannedJob, planJobs } from './plan-jobs';
 import { type PlannedEntry, planWeeks } from './plan-weeks';
 import { createRandom } from './random';
@@ -38,16 +40,19 @@ export interface Demo {
   firstMonday: LocalDate;
   jobs: readonly PlannedJob[];
   weeks: readonly (readonly PlannedEntry[])[];
+  costs: PlannedCosts;
 }
 
 /** The demo shop's whole history, ending with the last full week before `today`. */
 export function planDemo(today: LocalDate): Demo {
   const random = createRandom(SEED);
   const jobs = planJobs(random);
+  const weeks = planWeeks(jobs, random);
   return {
     firstMonday: addDays(startOfWeek(today, MONDAY), -7 * WEEKS),
     jobs,
-    weeks: planWeeks(jobs, random),
+    weeks,
+    costs: planCosts(jobs, weeks),
   };
 }
 
@@ -98,7 +103,11 @@ const fileName = (monday: LocalDate): string => `Timesheet ${monday}.xlsx`;
 
 async function importHistory(context: ShopContext, demo: Demo, tools: DemoTools): Promise<void> {
   const importWorkbook = async (isHistory: boolean): Promise<void> => {
-    const bytes = await writeSetupWorkbook(buildSetup(demo.firstMonday, demo.jobs, { isHistory }));
+    const { firstMonday, jobs, costs } = demo;
+    const bytes = await writeSetupWorkbook({
+      ...buildSetup(firstMonday, jobs, { isHistory }),
+      ...buildCosts(firstMonday, jobs, costs, { isHistory }),
+    });
     await importSetup(context, { name: 'Set-up.xlsx', bytes }, {}, { reader: tools.reader });
   };
   await importWorkbook(true);
