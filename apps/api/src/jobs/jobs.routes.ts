@@ -1,5 +1,6 @@
 import { ENDPOINTS } from '@brakeven/contract';
 import {
+  changeJobStatus,
   createJob,
   deleteEstimate,
   draftEstimate,
@@ -35,6 +36,7 @@ export function mountJobs({ mount }: Api): void {
   );
   mount(ENDPOINTS.createJob, ({ context, body }) => createJob(context, body));
   mount(ENDPOINTS.updateJob, ({ context, params, body }) => updateJob(context, params, body));
+  mount(ENDPOINTS.changeJobStatus, ({ context, params, body }) => changeJobStatus(context, params, body));
   mount(ENDPOINTS.getEstimate, ({ context, params }) => getEstimate(context, params));
   mount(ENDPOINTS.saveEstimate, ({ context, params, body }) => saveEstimate(context, params, body));
   mount(ENDPOINTS.deleteEstimate, ({ context, params }) => deleteEstimate(context, params));

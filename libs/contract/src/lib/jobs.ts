@@ -275,6 +275,15 @@ export const jobEndpoints = {
     body: jobInputSchema,
     response: jobSchema,
   }),
+  changeJobStatus: endpoint({
+    method: 'post',
+    path: '/jobs/:jobId/status',
+    summary: 'Say where a job stands',
+    permission: 'jobs.edit',
+    params: jobId,
+    body: z.object({ status: z.enum(JOB_STATUSES) }),
+    response: jobSchema,
+  }),
   listCustomers: endpoint({
     method: 'get',
     path: '/customers',

@@ -8,6 +8,7 @@ import {
   type JobLineQuery,
   type JobListQuery,
   type JobPage,
+  type JobStatus,
 } from '@brakeven/contract';
 import { type Observable } from 'rxjs';
 import { toQueryParams } from './query-params';
@@ -35,6 +36,10 @@ export class JobsApi {
 
   updateJob(jobId: string, input: JobInput): Observable<Job> {
     return this.http.patch<Job>(`/api/jobs/${jobId}`, input);
+  }
+
+  changeStatus(jobId: string, status: JobStatus): Observable<Job> {
+    return this.http.post<Job>(`/api/jobs/${jobId}/status`, { status });
   }
 
   listCustomers(): Observable<{ customerId: string; name: string }[]> {

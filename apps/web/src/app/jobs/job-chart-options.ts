@@ -2,19 +2,111 @@ import { type JobDetail } from '@brakeven/contract';
 import { type ChartOption, type ChartPalette, type ChartTable } from '@brakeven/ui';
 import { formatHours, formatLocalDate, formatMoney, toLocalDate } from '@brakeven/values';
 
-type Category = 'labour' | 'machine' | 'overhead';
+type Category = (typeof CATEGORIES)[number]['field'];
 
-const CATEGORIES: readonly { field: Category; word: string; colour: keyof ChartPalette }[] = [
-  { field: 'labour', word: 'Labour', colour: 'layoutBlue' },
-  { field: 'machine', word: 'Machine', colour: 'brass' },
-  { field: 'overhead', word: 'Overhead', colour: 'inkMuted' },
-];
+const CATEGORIES = [
+  { field: 'labour', word: 'Labour' },
+  { field: 'overtime', word: 'Overtime' },
+  { field: 'machine', word: 'Machine' },
+  { field: 'overhead', word: 'Overhead' },
+  { field: 'material', word: 'Material' },
+  { field: 'outside', word: 'Outside' },
+] as const satisfies readonly { field: keyof JobDetail; word: string }[];
+
+/** Categories that a job has, in their order; those that are empty on both sides say nothing. */
+function listCategories(job: JobDetail): readonly (typeof CATEGORIES)[number][] {
+  return CATEGORIES.filter(
+    ({ field }) => Number(job[field] ?? 0) !== 0 || Number(toEstimate(job, field)) !== 0,
+  );
+}
+
+function toEstimate(job: JobDetail, field: Category): string {
+  return job.comparison?.categories.find(({ category }) => category === field)?.estimate ?? '0';
+}
+
+/** Cost beside estimate by category, two bars each. */
+export function toComparisonChartOption(
+  job: JobDetail,
+  currency: string,
+  palette: ChartPalette,
+): ChartOption {
+  const categories = listCategories(job);
+  const label = {
+    show: true,
+    position: 'right',
+    color: palette.ink,
+    formatter: ({ value }: { value: number }) => formatMoney(value.toFixed(2), currency),
+  };
+  const series = (name: string, values: number[], itemStyle: object) => ({
+    name,
+    type: 'bar',
+    data: values,
+    barMaxWidth: 15,
+    barGap: '15%',
+    silent: true,
+    itemStyle: { borderRadius: 2, ...itemStyle },
+    label,
+  });
+  return {
+    ...toFrame(palette),
+    grid: { left: 0, right: 8, top: 30, bottom: 4, outerBoundsMode: 'same', outerBoundsContain: 'axisLabel' },
+    legend: { left: 0, top: 0, itemWidth: 14, textStyle: { color: palette.ink }, selectedMode: false },
+    xAxis: { type: 'value', show: false, max: ({ max }: { max: number }) => max * 1.35 || 1 },
+    yAxis: {
+      type: 'category',
+      inverse: true,
+      data: categories.map(({ word }) => word),
+      axisLine: { show: false },
+      axisTick: { show: false },
+      axisLabel: { color: palette.ink, fontSize: 13 },
+    },
+    series: [
+      series(
+        'Estimate',
+        categories.map(({ field }) => Number(toEstimate(job, field))),
+        { color: palette.sheet, borderColor: palette.brass, borderWidth: 1.5 },
+      ),
+      series(
+        'Cost',
+        categories.map(({ field }) => Number(job[field] ?? 0)),
+        { color: palette.layoutBlue },
+      ),
+    ],
+  };
+}
+
+/** Cost beside estimate by category, for reading. */
+export function toComparisonTable(job: JobDetail): ChartTable {
+  const { jobId } = job;
+  return {
+    headers: ['Category', 'Estimate', 'Cost'],
+    rows: listCategories(job).map(({ field, word }) => [
+      word,
+      field === 'overtime'
+        ? '–'
+        : { value: toEstimate(job, field), ref: { figure: `estimate.${field}`, jobId } },
+      { value: job[field] ?? '0', ref: { figure: `job.${field}`, jobId } },
+    ]),
+  };
+}
+
+/** What the chart of cost beside estimate says. */
+export function toComparisonSummary(job: JobDetail, currency: string): string {
+  return listCategories(job)
+    .map(({ field, word }) => {
+      const [cost, estimate] = [job[field] ?? '0', toEstimate(job, field)].map((one) =>
+        formatMoney(one, currency),
+      );
+      return `${word} ${cost}, estimated ${estimate}`;
+    })
+    .join('; ');
+}
 
 /** A job's cost by category, as bars with their share. */
 export function toCategoryChartOption(job: JobDetail, currency: string, palette: ChartPalette): ChartOption {
-  const bars = CATEGORIES.map(({ field, colour }) => ({
+  const bars = listCategories(job).map(({ field }) => ({
     value: Number(job[field] ?? 0),
-    itemStyle: { color: palette[colour] },
+    itemStyle: { color: palette.layoutBlue },
     label: { formatter: toShareText(job, field, currency) },
   }));
   return {
@@ -23,7 +115,7 @@ export function toCategoryChartOption(job: JobDetail, currency: string, palette:
     yAxis: {
       type: 'category',
       inverse: true,
-      data: CATEGORIES.map(({ word }) => word),
+      data: listCategories(job).map(({ word }) => word),
       axisLine: { show: false },
       axisTick: { show: false },
       axisLabel: { color: palette.ink, fontSize: 13 },
@@ -89,7 +181,7 @@ export function toWeekChartOption(job: JobDetail, currency: string, palette: Cha
 export function toCategoryTable(job: JobDetail, currency: string): ChartTable {
   return {
     headers: ['Category', 'Cost', 'Share'],
-    rows: CATEGORIES.map(({ field, word }) => [
+    rows: listCategories(job).map(({ field, word }) => [
       word,
       formatMoney(job[field] ?? '0', currency),
       `${toShare(job, field)} %`,
@@ -112,7 +204,9 @@ export function toWeekTable(job: JobDetail, currency: string): ChartTable {
 
 /** What the chart by category says. */
 export function toCategorySummary(job: JobDetail, currency: string): string {
-  return CATEGORIES.map(({ field, word }) => `${word} ${toShareText(job, field, currency)}`).join(', ');
+  return listCategories(job)
+    .map(({ field, word }) => `${word} ${toShareText(job, field, currency)}`)
+    .join(', ');
 }
 
 function toShareText(job: JobDetail, field: Category, currency: string): string {

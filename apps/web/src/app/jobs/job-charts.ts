@@ -5,6 +5,9 @@ import {
   toCategoryChartOption,
   toCategorySummary,
   toCategoryTable,
+  toComparisonChartOption,
+  toComparisonSummary,
+  toComparisonTable,
   toWeekChartOption,
   toWeekTable,
 } from './job-chart-options';
@@ -14,14 +17,23 @@ import {
   selector: 'app-job-charts',
   imports: [Chart],
   template: `
-    @if (hasMoney()) {
+    @if (job().comparison) {
+      <app-chart
+        class="card"
+        title="Cost beside estimate"
+        [summary]="comparisonSummary()"
+        [build]="buildComparison()"
+        [table]="comparisonTable()"
+        [heightPx]="heightPx()"
+      />
+    } @else if (hasMoney()) {
       <app-chart
         class="card"
         title="By category"
         [summary]="categorySummary()"
         [build]="buildCategories()"
         [table]="categoryTable()"
-        [heightPx]="190"
+        [heightPx]="heightPx()"
       />
     }
     <app-chart
@@ -30,7 +42,7 @@ import {
       [summary]="weekSummary()"
       [build]="buildWeeks()"
       [table]="weekTable()"
-      [heightPx]="190"
+      [heightPx]="heightPx()"
     />
   `,
   styles: `
@@ -55,6 +67,16 @@ export class JobCharts {
   protected readonly weekSummary = computed(() => {
     const weeks = this.job().byWeek.length;
     return `${weeks} ${weeks === 1 ? 'week' : 'weeks'} with work; the table has the numbers.`;
+  });
+  /** Room for a pair of bars for each category. */
+  protected readonly heightPx = computed(() =>
+    this.job().comparison ? Math.max(190, 40 + this.comparisonTable().rows.length * 46) : 190,
+  );
+  protected readonly comparisonSummary = computed(() => toComparisonSummary(this.job(), this.currency()));
+  protected readonly comparisonTable = computed(() => toComparisonTable(this.job()));
+  protected readonly buildComparison = computed(() => {
+    const [job, currency] = [this.job(), this.currency()];
+    return (palette: ChartPalette) => toComparisonChartOption(job, currency, palette);
   });
   protected readonly buildCategories = computed(() => {
     const [job, currency] = [this.job(), this.currency()];

@@ -81,11 +81,17 @@ describe('JobPage', () => {
     press('.strip button');
     expect(opened.map(({ figure }) => figure)).toEqual([
       'job.total',
-      'job.labour',
-      'job.machine',
-      'job.overhead',
+      'job.invoiced',
+      'job.margin',
+      'job.workInProgress',
       'job.hours',
       'job.machineHours',
+      'job.labour',
+      'job.overtime',
+      'job.machine',
+      'job.overhead',
+      'job.material',
+      'job.outside',
     ]);
     opened.length = 0;
     press('app-operation-table button');
@@ -120,7 +126,7 @@ describe('JobPage', () => {
   });
 
   it('says what to do while no time is on the job', async () => {
-    const { element } = await render({ ...withMoney, lastWorkedOn: null });
+    const { element } = await render({ ...withMoney, total: '0.00', lastWorkedOn: null });
     expect(element.querySelector('app-empty-state')?.textContent).toContain('No time on this job yet');
     expect(element.querySelector('app-grid')).toBeNull();
   });

@@ -24,16 +24,20 @@ import {
 import { JobsApi } from '../api/jobs-api';
 import { toShownProblem } from '../api/problem-text';
 import { SessionStore } from '../session/session-store';
+import { InvoicesCard, MaterialIssuesCard, OutsideServicesCard } from '../job-money';
 import { Notifier } from '../shell/notifier';
 import { RollupStore } from '../shell/rollup-store';
+import { ComparisonCard } from './comparison-card';
 import { JobCharts } from './job-charts';
 import { OperationTable } from './operation-table';
 import { toStatusTone } from './job-status';
 import { toCategoryWord, toLineColumns } from './line-columns';
+import { StatusActions } from './status-actions';
+import { VerdictCard } from './verdict-card';
 
-const CATEGORIES: readonly CostCategory[] = ['labour', 'machine', 'overhead'];
+const CATEGORIES = ['labour', 'overtime', 'machine', 'overhead', 'material', 'outside'] as const;
 
-/** One job: what it has taken, by category, week and operation, down to the cells of the timesheets. */
+/** One job: what came of it against its estimate, by category and operation, down to the cells of the timesheets. */
 @Component({
   selector: 'app-job-page',
   imports: [
@@ -41,13 +45,19 @@ const CATEGORIES: readonly CostCategory[] = ['labour', 'machine', 'overhead'];
     ErrorState,
     Figure,
     Grid,
+    ComparisonCard,
+    InvoicesCard,
     JobCharts,
     LoadingSkeleton,
     LocalDatePipe,
+    MaterialIssuesCard,
     OperationTable,
+    OutsideServicesCard,
     PageHeader,
     RouterLink,
+    StatusActions,
     StatusTag,
+    VerdictCard,
   ],
   templateUrl: './job-page.html',
   styleUrl: './job-page.scss',
@@ -75,12 +85,25 @@ export class JobPage {
   });
   protected readonly canEdit = computed(() => this.session.can('jobs.edit'));
   protected readonly hasMoney = computed(() => this.job()?.total !== undefined);
+  protected readonly seesMaterials = computed(() => this.session.can('materials.view'));
+  protected readonly seesRows = computed(() => this.session.can('jobs.money'));
   protected readonly toStatusTone = toStatusTone;
 
   protected readonly categories = CATEGORIES.map((category) => ({
     category,
+    figure: `job.${category}` as const,
     word: toCategoryWord(category),
   }));
+  protected readonly lineCategories: readonly { category: CostCategory; word: string }[] = [
+    ...this.categories,
+    { category: 'invoiced', word: toCategoryWord('invoiced') },
+  ];
+  /** Whether anything has been spent on the job or invoiced for it. */
+  protected readonly hasCost = computed(() => {
+    const job = this.job();
+    if (!job) return false;
+    return job.lastWorkedOn !== null || [job.total, job.invoiced].some((amount) => Number(amount ?? 0) !== 0);
+  });
   protected readonly category = signal<CostCategory | undefined>(undefined);
   protected readonly columns = computed(() => toLineColumns(this.hasMoney(), this.format()));
   protected readonly rowId = (line: JobLine): string => line.lineId;

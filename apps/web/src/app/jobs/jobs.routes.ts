@@ -1,6 +1,13 @@
 import { type Routes } from '@angular/router';
+import { type EstimatePage } from './estimate/estimate-page';
 
 export const jobsRoutes: Routes = [
   { path: '', title: 'Jobs', loadComponent: () => import('./jobs-page').then((m) => m.JobsPage) },
+  {
+    path: ':jobId/estimate',
+    title: 'Estimate',
+    loadComponent: () => import('./estimate/estimate-page').then((m) => m.EstimatePage),
+    canDeactivate: [(page: EstimatePage) => page.canLeave()],
+  },
   { path: ':jobId', title: 'Job', loadComponent: () => import('./job-page').then((m) => m.JobPage) },
 ];

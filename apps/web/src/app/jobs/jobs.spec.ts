@@ -127,9 +127,9 @@ describe('the picture of a job', () => {
     expect(toCategorySummary(detail, 'USD')).toBe(
       'Labour $2,662.40 · 49 %, Machine $1,328.00 · 24 %, Overhead $1,440.00 · 27 %',
     );
-    expect(toCategoryTable({ ...detail, total: '0.00', labour: '0.00' }, 'USD').rows[0]).toEqual([
+    expect(toCategoryTable({ ...detail, total: '0.00' }, 'USD').rows[0]).toEqual([
       'Labour',
-      '$0.00',
+      '$2,662.40',
       '0 %',
     ]);
   });

@@ -1,4 +1,4 @@
-import { AppError, type Job, type JobInput } from '@brakeven/contract';
+import { AppError, type Job, type JobInput, type JobStatus } from '@brakeven/contract';
 import {
   insertJob,
   listCustomerRows,
@@ -43,6 +43,22 @@ export function updateJob(context: ShopContext, { jobId }: { jobId: string }, bo
       return toJob(context, await getJobRow(trx, { jobId }));
     }),
   );
+}
+
+/**
+ * Says where a job stands: its margin is final once it is finished, and its work in progress follows.
+ * @throws AppError `not_found`
+ */
+export function changeJobStatus(
+  context: ShopContext,
+  { jobId }: { jobId: string },
+  { status }: { status: JobStatus },
+): Promise<Job> {
+  return inShopOf(context, async (trx) => {
+    const isThere = await updateJobRow(trx, jobId, { status });
+    if (!isThere) throw new AppError('not_found', 'There is no such job. Load the jobs again.');
+    return toJob(context, await getJobRow(trx, { jobId }));
+  });
 }
 
 /** Names of customers, for the form. */

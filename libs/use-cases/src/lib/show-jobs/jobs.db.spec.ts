@@ -13,7 +13,7 @@ import { type ShopContext } from '../context';
 import { getRollupStatus } from '../roll-up-costs/get-rollup-status';
 import { computeExpectedCosts } from '../roll-up-costs/testing/expected-costs';
 import { createWorkedShop, WORKED_NOW, type WorkedShop } from '../testing/worked-shop';
-import { createJob, listCustomers, updateJob } from './change-job';
+import { changeJobStatus, createJob, listCustomers, updateJob } from './change-job';
 import { getJob, getJobCost, listJobLines } from './get-job';
 import { listJobs } from './list-jobs';
 
@@ -232,5 +232,18 @@ describe('changing jobs', () => {
     const change = updateJob(owner, { jobId }, input({ number: '9', customer: 'Nobody' }));
     await expect(change).rejects.toMatchObject({ code: 'not_found' });
     expect(await listCustomers(owner)).toEqual(before);
+  });
+
+  it('says where they stand, and whether their margin may still change', async () => {
+    const jobId = shop.jobs.guards;
+    const finished = await changeJobStatus(owner, { jobId }, { status: 'finished' });
+    expect(finished).toMatchObject({ status: 'finished', marginIsProvisional: false });
+    expect(finished.workInProgress).toBe(finished.total);
+    const lost = await changeJobStatus(owner, { jobId }, { status: 'lost' });
+    expect(lost).toMatchObject({ workInProgress: '0.00', marginIsProvisional: true });
+    const nowhere = { jobId: '0198aaaa-0000-7000-8000-000000000abc' };
+    await expect(changeJobStatus(owner, nowhere, { status: 'open' })).rejects.toMatchObject({
+      code: 'not_found',
+    });
   });
 });
