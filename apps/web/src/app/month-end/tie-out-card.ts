@@ -34,6 +34,9 @@ export class TieOutCard {
     payrollHours: total(this.rows(), ({ payrollHours }) => payrollHours),
     difference: total(this.rows(), ({ difference }) => difference),
   }));
+  protected readonly hasPayroll = computed(() =>
+    this.rows().some(({ payrollHours }) => payrollHours !== null),
+  );
   /** A sum of differences says nothing while somebody's hours are missing. */
   protected readonly isWhole = computed(() =>
     this.rows().every(({ payrollHours, hours }) => payrollHours !== null || D(hours).isZero()),
