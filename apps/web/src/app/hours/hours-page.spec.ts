@@ -5,6 +5,7 @@ import { type Role, type TimeEntry } from '@brakeven/contract';
 import { Grid, type GridColumn, type GridOrder, type PageSource } from '@brakeven/ui';
 import { of } from 'rxjs';
 import { EntriesApi } from '../api/entries-api';
+import { MonthsApi } from '../api/months-api';
 import { Notifier } from '../shell/notifier';
 import { RollupStore } from '../shell/rollup-store';
 import { provideSession } from '../testing/fake-session';
@@ -40,8 +41,11 @@ describe('HoursPage', () => {
     restore: jest.fn(),
   };
 
+  const monthsApi = { list: jest.fn() };
+
   beforeEach(() => {
     jest.resetAllMocks();
+    monthsApi.list.mockReturnValue(of({ closedThrough: null, latePostedOn: null, months: [], closings: [] }));
     window.matchMedia = jest.fn().mockReturnValue({ matches: false });
     api.list.mockReturnValue(of({ items: [], nextCursor: null }));
     api.getTotals.mockReturnValue(of({ entries: 12, hours: '81.2500', goodPieces: 90, scrapPieces: 1 }));
@@ -56,6 +60,7 @@ describe('HoursPage', () => {
         provideRouter([]),
         provideSession(role),
         { provide: EntriesApi, useValue: api },
+        { provide: MonthsApi, useValue: monthsApi },
         { provide: RollupStore, useValue: { refresh: jest.fn() } },
       ],
     });
@@ -80,6 +85,25 @@ describe('HoursPage', () => {
     );
     expect(api.getTotals).toHaveBeenCalledWith(expect.objectContaining(filter));
     expect(page.text).toContain('81.25 h in 12 entries · Nov 1, 2026 and later');
+  });
+
+  it('says that changes in a closed month are posted late, where its days are shown', async () => {
+    const closed = { closedThrough: '2026-10-31', latePostedOn: '2026-11-01', months: [], closings: [] };
+    monthsApi.list.mockReturnValue(of(closed));
+    const words = 'closed through Oct 31, 2026';
+    const { page, grid } = await open('bookkeeper', { period: 'all' });
+    expect(page.text).toContain(words);
+    api.void.mockReturnValue(of(undefined));
+    const late = { ...entry, workedOn: '2026-10-30' };
+    const column = grid.columns().find(({ id }) => id === 'actions');
+    column?.actions?.(late)[0]?.run();
+    expect(TestBed.inject(Notifier).notice()?.text).toContain('it is taken back on Nov 1, 2026, late.');
+    await page.set({ period: 'custom', from: '2026-11-01' });
+    expect(page.text).not.toContain(words);
+    TestBed.resetTestingModule();
+    monthsApi.list.mockClear();
+    await open('lead');
+    expect(monthsApi.list).not.toHaveBeenCalled();
   });
 
   it('keeps what is chosen in the address', async () => {

@@ -22,6 +22,7 @@ import {
 import { type DayOfWeek, formatHours, formatLocalDate, toLocalDate, todayIn } from '@brakeven/values';
 import { debounceTime, Subject } from 'rxjs';
 import { EntriesApi } from '../api/entries-api';
+import { MonthsApi } from '../api/months-api';
 import { toProblemSentence } from '../api/problem-text';
 import { SessionStore } from '../session/session-store';
 import { LoadError } from '../shell/load-error';
@@ -54,6 +55,7 @@ export class HoursPage {
   readonly direction = input<string>();
 
   private readonly api = inject(EntriesApi);
+  private readonly monthsApi = inject(MonthsApi);
   private readonly session = inject(SessionStore);
   private readonly notifier = inject(Notifier);
   private readonly rollup = inject(RollupStore);
@@ -110,6 +112,17 @@ export class HoursPage {
     params: () => this.filter(),
     stream: ({ params }) => this.api.getTotals(params),
   });
+  private readonly months = rxResource({
+    params: () => (this.session.can('months.view') ? true : undefined),
+    stream: () => this.monthsApi.list(),
+  });
+  /** The closed books, if days of theirs are shown: what changes there is posted late. */
+  protected readonly closed = computed(() => {
+    const { closedThrough = null, latePostedOn = null } = this.months.hasValue() ? this.months.value() : {};
+    const { from } = this.range();
+    const isShown = closedThrough !== null && (from === undefined || from <= closedThrough);
+    return isShown && latePostedOn !== null ? { closedThrough, latePostedOn } : null;
+  });
   protected readonly totalsRow = computed(() =>
     this.totals.hasValue() ? toEntryTotals(this.totals.value()) : null,
   );
@@ -151,11 +164,17 @@ export class HoursPage {
     const words = `${formatHours(entry.hours)} h of ${entry.employee}, ${formatLocalDate(toLocalDate(entry.workedOn))}`;
     this.api.void(entry.entryId).subscribe({
       next: () => {
-        this.notifier.say(`Voided ${words}.`, () => this.restore(entry));
+        this.notifier.say(`Voided ${words}.${this.toLateWords(entry)}`, () => this.restore(entry));
         this.reload();
       },
       error: (error: unknown) => this.notifier.warn(toProblemSentence(error)),
     });
+  }
+
+  private toLateWords({ workedOn }: TimeEntry): string {
+    const closed = this.closed();
+    if (!closed || workedOn > closed.closedThrough) return '';
+    return ` Its month is closed: it is taken back on ${formatLocalDate(toLocalDate(closed.latePostedOn))}, late.`;
   }
 
   private restore(entry: TimeEntry): void {
