@@ -1,10 +1,10 @@
 import { ChangeDetectionStrategy, Component, computed, inject, input, output } from '@angular/core';
 import { RouterLink } from '@angular/router';
 import { type MonthEnd } from '@brakeven/contract';
-import { InstantPipe, LocalDatePipe, MoneyPipe } from '@brakeven/ui';
+import { InstantPipe, MoneyPipe } from '@brakeven/ui';
 import { toGapAdvice } from '../payback/gap-text';
 import { SessionStore } from '../session/session-store';
-import { type CheckState, toChecks } from './month-words';
+import { type CheckState, toChecks, toDayRanges } from './month-words';
 
 const MARKS: Record<CheckState, { sign: string; word: string }> = {
   done: { sign: '✓', word: 'In order' },
@@ -15,7 +15,7 @@ const MARKS: Record<CheckState, { sign: string; word: string }> = {
 /** What is missing in a month, each item with what it is about and the way to where it is mended. */
 @Component({
   selector: 'app-checklist-card',
-  imports: [InstantPipe, LocalDatePipe, MoneyPipe, RouterLink],
+  imports: [InstantPipe, MoneyPipe, RouterLink],
   templateUrl: './checklist-card.html',
   styleUrl: './checklist-card.scss',
   changeDetection: ChangeDetectionStrategy.OnPush,
@@ -29,6 +29,7 @@ export class ChecklistCard {
   readonly rolledUp = output();
 
   protected readonly marks = MARKS;
+  protected readonly toDayRanges = toDayRanges;
   protected readonly checks = computed(() => toChecks(this.month()));
   protected readonly list = computed(() => this.month().checklist);
   /** Somebody who may not see machines is told who may. */

@@ -1,5 +1,5 @@
 import { makeMonth, MONTHS } from './month-fixture';
-import { canClose, chooseMonth, toChecks, toVerdict } from './month-words';
+import { canClose, chooseMonth, toChecks, toDayRanges, toVerdict } from './month-words';
 
 const clean = makeMonth().checklist;
 
@@ -87,5 +87,15 @@ describe('the verdict on a month', () => {
     expect(canClose(behind)).toBe(true);
     expect(toVerdict(behind)).toBe('November 2026 is ready to be closed');
     expect(canClose(makeMonth({ state: 'running' }))).toBe(false);
+  });
+});
+
+describe('days in words', () => {
+  it('are told in runs, which a weekend does not end', () => {
+    expect(toDayRanges(['2026-11-02'])).toBe('Nov 2');
+    expect(toDayRanges(['2026-11-05', '2026-11-06', '2026-11-09', '2026-11-11'])).toBe(
+      'Nov 5 – Nov 9, Nov 11',
+    );
+    expect(toDayRanges([])).toBe('');
   });
 });

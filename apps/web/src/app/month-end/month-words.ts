@@ -1,5 +1,12 @@
 import { type CostCategory, type MonthEnd, type Months, type MonthState } from '@brakeven/contract';
-import { formatLocalDate, formatMonth, toLocalDate } from '@brakeven/values';
+import {
+  addDays,
+  dayOfWeek,
+  formatLocalDate,
+  formatMonth,
+  type LocalDate,
+  toLocalDate,
+} from '@brakeven/values';
 
 /** How an item of the checklist stands: nothing to do, to be looked at, or in the way of the close. */
 export type CheckState = 'done' | 'look' | 'stops';
@@ -67,6 +74,24 @@ export function toVerdict(month: MonthEnd): string {
 /** Whether nothing but the rollup, which the close does by itself, is in the way. */
 export function canClose({ state, blockers }: MonthEnd): boolean {
   return state === 'open' && blockers.every(({ code }) => code === 'rollup_behind');
+}
+
+/** Weekdays as people say them, runs in one: 'Nov 2 – Nov 13, Nov 18'; a weekend does not end a run. */
+export function toDayRanges(days: readonly string[]): string {
+  const runs: { from: LocalDate; to: LocalDate }[] = [];
+  for (const day of days.map(toLocalDate)) {
+    const last = runs.at(-1);
+    if (last && day === nextWeekday(last.to)) last.to = day;
+    else runs.push({ from: day, to: day });
+  }
+  const name = (day: LocalDate) => formatLocalDate(day, 'dayMonth');
+  return runs.map(({ from, to }) => (from === to ? name(from) : `${name(from)} – ${name(to)}`)).join(', ');
+}
+
+const FRIDAY = 5;
+
+function nextWeekday(day: LocalDate): LocalDate {
+  return addDays(day, dayOfWeek(day) === FRIDAY ? 3 : 1);
 }
 
 type Checklist = MonthEnd['checklist'];
