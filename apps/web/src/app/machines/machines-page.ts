@@ -2,14 +2,14 @@ import { ChangeDetectionStrategy, Component, computed, inject } from '@angular/c
 import { rxResource } from '@angular/core/rxjs-interop';
 import { MatDialog } from '@angular/material/dialog';
 import { Router, RouterLink } from '@angular/router';
-import { type Machine } from '@brakeven/contract';
+import { type FigureRef, type Machine } from '@brakeven/contract';
 import {
   EmptyState,
+  Figure,
   ForcePipe,
   LengthPipe,
   LoadingSkeleton,
   LocalDatePipe,
-  MoneyPipe,
   PageHeader,
   RatePipe,
   StatusTag,
@@ -27,12 +27,12 @@ import { PlateCaution } from './plate-caution';
   selector: 'app-machines-page',
   imports: [
     EmptyState,
+    Figure,
     ForcePipe,
     LengthPipe,
     LoadError,
     LoadingSkeleton,
     LocalDatePipe,
-    MoneyPipe,
     PageHeader,
     PlateCaution,
     RatePipe,
@@ -56,6 +56,10 @@ export class MachinesPage {
       ? this.machines.value().map((machine) => ({ machine, rate: this.findRate(machine) }))
       : [],
   );
+
+  protected outlayRef(machineId: string): FigureRef {
+    return { figure: 'payback.outlay', machineId };
+  }
 
   protected add(): void {
     const data: MachineDialogData = { machine: null, units: this.session.shopFormat().units };

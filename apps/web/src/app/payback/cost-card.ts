@@ -22,8 +22,10 @@ import { toCostItemRef, toPaybackRef } from './payback-refs';
             @for (item of items; track item.machineCostItemId) {
               <tr>
                 <th scope="row">
-                  {{ item.kind }}
-                  <span class="muted">{{ item.description }} {{ item.incurredOn | localDate }}</span>
+                  <span class="kind">{{ item.kind }}</span>
+                  <span class="muted">
+                    {{ item.description ? item.description + ' · ' : '' }}{{ item.incurredOn | localDate }}
+                  </span>
                 </th>
                 <td class="number">
                   <app-figure
@@ -56,15 +58,20 @@ import { toCostItemRef, toPaybackRef } from './payback-refs';
     :host {
       display: block;
     }
-    th {
-      text-transform: none;
+    .kind {
+      display: inline-block;
+      min-width: 104px;
     }
-    th::first-letter {
+    .kind::first-letter {
       text-transform: uppercase;
     }
     .muted {
-      display: block;
       font-size: 12.5px;
+    }
+    @media (width < 700px) {
+      .muted {
+        display: block;
+      }
     }
   `,
   changeDetection: ChangeDetectionStrategy.OnPush,

@@ -145,6 +145,9 @@ function toEvenMark(date: string, palette: ChartPalette): object {
       offset: [-36, 0],
       color: palette.layoutBlue,
       fontWeight: 500,
+      // So that the line of today does not strike it through.
+      backgroundColor: palette.sheet,
+      padding: [1, 4],
     },
     data: [{ coord: [date, 0] }],
   };

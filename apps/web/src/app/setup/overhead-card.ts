@@ -33,54 +33,55 @@ import { OverheadRateDialog, type OverheadRateDialogData } from './overhead-rate
             text="Without one jobs carry labour and machine only, and their pages say that overhead is missing."
           />
         } @else {
-          <table class="figures">
-            <thead>
-              <tr>
-                <th scope="col">From</th>
-                <th scope="col"><span class="visually-hidden">Holds today</span></th>
-                <th scope="col" class="number">Rate</th>
-                @if (canEdit()) {
-                  <th scope="col"><span class="visually-hidden">Actions</span></th>
-                }
-              </tr>
-            </thead>
-            <tbody>
-              @for (rate of stated(); track rate.overheadRateId) {
-                <tr [class.past]="rate.state === 'earlier'">
-                  <th scope="row" class="date">{{ rate.validFrom | localDate }}</th>
-                  <td>
-                    @if (rate.state !== 'earlier') {
-                      <app-status-tag
-                        [word]="rate.state"
-                        [tone]="rate.state === 'current' ? 'good' : 'plan'"
-                      />
-                    }
-                  </td>
-                  <td class="number">{{ rate.ratePerLabourHour | rate }}</td>
+          <div class="scroll-x">
+            <table class="figures">
+              <thead>
+                <tr>
+                  <th scope="col">From</th>
+                  <th scope="col" class="number">Rate</th>
                   @if (canEdit()) {
-                    <td class="actions">
-                      <button
-                        type="button"
-                        class="button quiet"
-                        [attr.aria-label]="'Correct the overhead rate from ' + (rate.validFrom | localDate)"
-                        (click)="edit(rate)"
-                      >
-                        Correct
-                      </button>
-                      <button
-                        type="button"
-                        class="button quiet"
-                        [attr.aria-label]="'Delete the overhead rate from ' + (rate.validFrom | localDate)"
-                        (click)="delete(rate)"
-                      >
-                        Delete
-                      </button>
-                    </td>
+                    <th scope="col"><span class="visually-hidden">Actions</span></th>
                   }
                 </tr>
-              }
-            </tbody>
-          </table>
+              </thead>
+              <tbody>
+                @for (rate of stated(); track rate.overheadRateId) {
+                  <tr [class.past]="rate.state === 'earlier'">
+                    <th scope="row">
+                      <span class="date">{{ rate.validFrom | localDate }}</span>
+                      @if (rate.state !== 'earlier') {
+                        <app-status-tag
+                          [word]="rate.state"
+                          [tone]="rate.state === 'current' ? 'good' : 'plan'"
+                        />
+                      }
+                    </th>
+                    <td class="number">{{ rate.ratePerLabourHour | rate }}</td>
+                    @if (canEdit()) {
+                      <td class="actions">
+                        <button
+                          type="button"
+                          class="button quiet"
+                          [attr.aria-label]="'Correct the overhead rate from ' + (rate.validFrom | localDate)"
+                          (click)="edit(rate)"
+                        >
+                          Correct
+                        </button>
+                        <button
+                          type="button"
+                          class="button quiet"
+                          [attr.aria-label]="'Delete the overhead rate from ' + (rate.validFrom | localDate)"
+                          (click)="delete(rate)"
+                        >
+                          Delete
+                        </button>
+                      </td>
+                    }
+                  </tr>
+                }
+              </tbody>
+            </table>
+          </div>
         }
       } @else {
         <app-loading-skeleton [lines]="3" />
