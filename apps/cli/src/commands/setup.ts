@@ -1,4 +1,11 @@
-import { AppError, type SetupCounts, type SetupResult } from '@brakeven/contract';
+import {
+  AppError,
+  SETUP_SHEET_NAMES,
+  SETUP_SHEETS,
+  type SetupCounts,
+  type SetupResult,
+  type SetupSheet,
+} from '@brakeven/contract';
 import { type Command } from 'commander';
 import { writeFile } from 'node:fs/promises';
 import { resolve } from 'node:path';
@@ -72,14 +79,16 @@ function answer(cli: Cli, result: SetupResult, isCheck: boolean): void {
   });
 }
 
+/** Sheets that the workbook says something on. */
 function printCounts({ added, changed, alreadyThere }: SetupResult, isCheck: boolean): string {
-  const sheets = [...new Set([added, changed, alreadyThere].flatMap((counts) => Object.keys(counts)))];
-  const count = (counts: SetupCounts, sheet: string) => String(counts[sheet as keyof SetupCounts] ?? 0);
+  const sheets = SETUP_SHEETS.filter((sheet) => added[sheet] + changed[sheet] + alreadyThere[sheet] > 0);
+  if (sheets.length === 0) return 'The workbook has no rows that could be taken.';
+  const count = (counts: SetupCounts) => (sheet: SetupSheet) => String(counts[sheet]);
   return printTable(sheets, [
-    { title: isCheck ? 'Nothing is written' : 'Sheet', of: (sheet) => sheet },
-    { title: 'Added', of: (sheet) => count(added, sheet), isFigure: true },
-    { title: 'Changed', of: (sheet) => count(changed, sheet), isFigure: true },
-    { title: 'Already there', of: (sheet) => count(alreadyThere, sheet), isFigure: true },
+    { title: isCheck ? 'Nothing is written' : 'Sheet', of: (sheet) => SETUP_SHEET_NAMES[sheet] },
+    { title: 'Added', of: count(added), isFigure: true },
+    { title: 'Changed', of: count(changed), isFigure: true },
+    { title: 'Already there', of: count(alreadyThere), isFigure: true },
   ]);
 }
 

@@ -19,6 +19,24 @@ export const SETUP_SHEETS = [
 ] as const;
 export type SetupSheet = (typeof SETUP_SHEETS)[number];
 
+/** What the sheets are called in the workbook. */
+export const SETUP_SHEET_NAMES: Readonly<Record<SetupSheet, string>> = {
+  people: 'People',
+  customers: 'Customers',
+  operations: 'Operations',
+  machines: 'Machines',
+  machineCosts: 'Machine costs',
+  machineRates: 'Machine rates',
+  overhead: 'Overhead',
+  jobs: 'Jobs',
+  materials: 'Materials',
+  sheetLots: 'Sheet lots',
+  issues: 'Issues',
+  outsideServices: 'Outside services',
+  invoices: 'Invoices',
+  estimates: 'Estimates',
+};
+
 /** Rows by sheet. */
 export const setupCountsSchema = z.record(z.enum(SETUP_SHEETS), z.number().int());
 export type SetupCounts = z.infer<typeof setupCountsSchema>;

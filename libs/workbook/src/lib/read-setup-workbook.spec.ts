@@ -258,6 +258,8 @@ describe('written set-up workbooks', () => {
         ...['Recovery price per kg', 'Price per kg', 'Weight (kg)', 'Thickness or gauge (mm)'],
       ]),
     );
+    // 60 US tons, 72 in and 0.2836 lb/in³, to four digits.
+    for (const example of ['533.8', '1829', '7850']) expect(explained).toContain(example);
     for (const header of headers) {
       expect([...explained].some((text) => text === header || text === `${header} (optional)`)).toBe(true);
     }

@@ -23,6 +23,7 @@ import {
 import { toWorkbookDate } from './workbook-date';
 
 const LISTED_ROWS = 1_000;
+const EXAMPLE_DIGITS = 4;
 const NUMBER_FORMATS: Readonly<Record<SetupCellKind, string>> = {
   label: TEXT_FORMAT,
   date: DATE_FORMAT,
@@ -103,9 +104,22 @@ function writeExplanation(workbook: Workbook, units: UnitSystem): void {
     for (const column of plan.columns) {
       const need = column.isRequired ? '' : ' (optional)';
       const header = toUnitHeader(column.header, column.kind, units);
-      sheet.addRow([null, `${header}${need}`, column.example, column.help]);
+      sheet.addRow([null, `${header}${need}`, toExample(column, units), column.help]);
     }
   }
+}
+
+/** Examples are kept in the units of the United States. */
+function toExample({ example, kind }: SetupColumn, units: UnitSystem): string {
+  if (units === 'us') return example;
+  if (kind === 'pricePerWeight')
+    return D(example)
+      .div(massIn(toMass(1, 'lb'), 'kg'))
+      .toFixed(2);
+  const quantity = findSetupQuantity(kind);
+  if (!quantity) return example;
+  const base = quantity.toBase(example, quantity.units.us);
+  return quantity.fromBase(base.toFixed(), units).toSignificantDigits(EXAMPLE_DIGITS).toFixed();
 }
 
 function writeSheet(

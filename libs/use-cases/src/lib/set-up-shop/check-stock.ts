@@ -1,3 +1,4 @@
+import { SETUP_SHEET_NAMES } from '@brakeven/contract';
 import {
   computeMovingAverage,
   type StockLedger,
@@ -9,9 +10,13 @@ import { D, type Mass, toLocalDate, toMoney } from '@brakeven/values';
 import { type SetupFile } from '@brakeven/workbook';
 import { toRefusalWords } from '../refuse-rows';
 import { type IssueRow } from './plan-issues';
-import { type SetupDraft, SHEET_NAMES } from './setup-draft';
+import { type SetupDraft } from './setup-draft';
 
-const STOCK_SHEETS: readonly string[] = [SHEET_NAMES.materials, SHEET_NAMES.sheetLots, SHEET_NAMES.issues];
+const STOCK_SHEETS: readonly string[] = [
+  SETUP_SHEET_NAMES.materials,
+  SETUP_SHEET_NAMES.sheetLots,
+  SETUP_SHEET_NAMES.issues,
+];
 
 /** All moves of a material as they will be. */
 export function listStockMoves(draft: SetupDraft, materialId: string): StockMove[] {

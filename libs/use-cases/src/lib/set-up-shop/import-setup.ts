@@ -1,4 +1,4 @@
-import { AppError, type SetupResult } from '@brakeven/contract';
+import { AppError, SETUP_SHEET_NAMES, type SetupResult } from '@brakeven/contract';
 import {
   deleteRegisterRows,
   findConstraintViolation,
@@ -28,7 +28,7 @@ import { planMachineCosts, planMachineRates, planMachines, planOperations } from
 import { planMaterials } from './plan-materials';
 import { planPeople } from './plan-people';
 import { planSheetLots } from './plan-sheet-lots';
-import { SetupDraft, type SetupRegister, SHEET_NAMES } from './setup-draft';
+import { SetupDraft, type SetupRegister } from './setup-draft';
 
 /**
  * Says what importing a set-up workbook would do, and what stands in its way; writes nothing.
@@ -109,7 +109,7 @@ async function draftSetup(
     postedAmounts: await listPostedIssueAmounts(trx, shop.shopId),
   });
   draft.problems.push(...stated.problems);
-  planSheets(draft, stated, listFilledCells(sheetFile, SHEET_NAMES.jobs));
+  planSheets(draft, stated, listFilledCells(sheetFile, SETUP_SHEET_NAMES.jobs));
   return draft;
 }
 

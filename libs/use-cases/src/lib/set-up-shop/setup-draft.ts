@@ -1,4 +1,10 @@
-import { SETUP_SHEETS, type SetupCounts, type SetupProblem, type SetupSheet } from '@brakeven/contract';
+import {
+  SETUP_SHEET_NAMES,
+  SETUP_SHEETS,
+  type SetupCounts,
+  type SetupProblem,
+  type SetupSheet,
+} from '@brakeven/contract';
 import { type RegisterRow, type RegisterTable, type RegisterValues } from '@brakeven/database';
 import { type LocalDate, type UnitSystem } from '@brakeven/values';
 import { type SetupRowSource } from '@brakeven/workbook';
@@ -13,23 +19,6 @@ export interface SetupTrouble {
 
 /** The shop's register, table by table. */
 export type SetupRegister = Record<RegisterTable, readonly RegisterRow[]>;
-
-export const SHEET_NAMES: Record<SetupSheet, string> = {
-  people: 'People',
-  customers: 'Customers',
-  operations: 'Operations',
-  machines: 'Machines',
-  machineCosts: 'Machine costs',
-  machineRates: 'Machine rates',
-  overhead: 'Overhead',
-  jobs: 'Jobs',
-  materials: 'Materials',
-  sheetLots: 'Sheet lots',
-  issues: 'Issues',
-  outsideServices: 'Outside services',
-  invoices: 'Invoices',
-  estimates: 'Estimates',
-};
 
 const KEYS: Record<RegisterTable, (values: RegisterValues) => string> = {
   employee: ({ number }) => String(number),
@@ -107,7 +96,7 @@ export class SetupDraft {
 
   /** A row that says again what a row above has said of the same thing. */
   refuseTwice(list: SetupSheet, row: SetupRowSource, column: string, what: string): void {
-    const message = `${what} stands on sheet ${SHEET_NAMES[list]} more than once. Keep one of the rows.`;
+    const message = `${what} stands on sheet ${SETUP_SHEET_NAMES[list]} more than once. Keep one of the rows.`;
     this.refuse(list, row, column, { code: 'row_twice', message });
   }
 
@@ -175,7 +164,7 @@ export class SetupDraft {
     { code, message }: SetupTrouble,
   ): void {
     const cell = row.cells[column] ?? `A${row.row}`;
-    this.problems.push({ code, message, severity, sheet: SHEET_NAMES[list], cell });
+    this.problems.push({ code, message, severity, sheet: SETUP_SHEET_NAMES[list], cell });
   }
 }
 
