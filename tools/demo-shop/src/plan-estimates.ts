@@ -1,13 +1,22 @@
 import { D, massIn, sum } from '@brakeven/values';
 import { KIND_COSTS, MATERIALS } from './cost-story';
 import { weighPieces } from './piece-weight';
-import { type PlannedJob } from './plan-jobs';
 import { MACHINES, OPERATIONS, PRESS_WEEK } from './story';
 
 export const SCRAP_ALLOWANCE_PERCENT = 3;
 export const WANTED_MARGIN_PERCENT = 18;
 /** An hour with burden and its overhead, as the shop reckons when it quotes. */
 const LABOUR_AND_OVERHEAD = 33.6 + 21.4;
+
+/** What the shop knows of a job when it estimates it. */
+export interface JobToEstimate {
+  title: string;
+  quantity: number | null;
+  openedWeek: number;
+  /** Hours by operation. */
+  plannedHours: ReadonlyMap<string, number>;
+  isSentOut: boolean;
+}
 
 export interface EstimatedOperation {
   operation: string;
@@ -25,7 +34,7 @@ export interface PlannedEstimate {
 }
 
 /** The estimate of a job with a route: a twelfth of each operation's hours to set up, the rest by the piece. */
-export function planEstimate(job: Omit<PlannedJob, 'quotedPrice'>): PlannedEstimate | null {
+export function planEstimate(job: JobToEstimate): PlannedEstimate | null {
   const costs = KIND_COSTS[job.title];
   const { quantity } = job;
   if (!costs || quantity === null) return null;
