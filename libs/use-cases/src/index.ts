@@ -59,13 +59,8 @@ export * from './lib/show-customers/customers';
 export * from './lib/show-hours/entries';
 export * from './lib/show-hours/void-entry';
 export * from './lib/show-jobs/change-job';
-export {
-  type EstimateSummary,
-  getJob,
-  getJobCost,
-  type JobCostSummary,
-  listJobLines,
-} from './lib/show-jobs/get-job';
+export { getJob, listJobLines } from './lib/show-jobs/get-job';
+export * from './lib/show-jobs/job-costs';
 export * from './lib/show-jobs/list-jobs';
 export * from './lib/show-payback/get-payback';
 export * from './lib/show-workings/get-books-workings';

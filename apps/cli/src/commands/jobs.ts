@@ -1,24 +1,22 @@
-import { type Job, JOB_STATUSES, type JobStatus } from '@brakeven/contract';
-import { type JobCostSummary, type ShopContext } from '@brakeven/use-cases';
+import { JOB_STATUSES, type JobStatus } from '@brakeven/contract';
+import { type JobCostSummary } from '@brakeven/use-cases';
 import { type Command, Option } from 'commander';
 import { type Cli } from '../cli';
 import { withShop } from '../databases';
 import { printPairs, printTable } from '../print-table';
-
-const PAGE_SIZE = 500;
 
 /** `jobs cost`, `jobs list` */
 export function addJobs(program: Command, cli: Cli): void {
   const jobs = program.command('jobs').description('What jobs have cost');
   jobs
     .command('cost')
-    .description('Hours and cost of a job, as rolled up')
+    .description('Hours, cost, income and estimate of a job, as rolled up')
     .argument('<number>', 'number of the job')
     .requiredOption('--shop <name>', 'in which shop')
     .action((number: string, options: { shop: string }) => cost(cli, number, options.shop));
   jobs
     .command('list')
-    .description('All jobs with hours and cost')
+    .description('All jobs with hours, cost, income and estimate')
     .requiredOption('--shop <name>', 'in which shop')
     .addOption(new Option('--status <status>', 'only jobs of this status').choices(JOB_STATUSES))
     .option('--search <text>', 'only jobs whose number, title or customer holds this')
@@ -62,7 +60,8 @@ async function list(
   cli: Cli,
   { shop, ...filter }: { shop: string; status?: JobStatus; search?: string },
 ): Promise<void> {
-  const jobs = await withShop(cli, shop, (context) => listAll(context, filter));
+  const { listJobCosts } = await import('@brakeven/use-cases');
+  const jobs = await withShop(cli, shop, (context) => listJobCosts(context, filter));
   cli.answer({
     json: { jobs },
     text: () =>
@@ -72,27 +71,11 @@ async function list(
         { title: 'Title', of: ({ title }) => title },
         { title: 'Status', of: ({ status }) => status },
         { title: 'Hours', of: ({ hours }) => hours, isFigure: true },
-        { title: 'Estimate', of: ({ estimate }) => estimate ?? '', isFigure: true },
-        { title: 'Cost', of: ({ total }) => total ?? '', isFigure: true },
+        { title: 'Estimate', of: ({ estimate }) => estimate?.total ?? '', isFigure: true },
+        { title: 'Cost', of: ({ total }) => total, isFigure: true },
         { title: 'Quoted', of: ({ quotedPrice }) => quotedPrice ?? '', isFigure: true },
-        { title: 'Invoiced', of: ({ invoiced }) => invoiced ?? '', isFigure: true },
-        { title: 'Margin', of: ({ margin }) => margin ?? '', isFigure: true },
+        { title: 'Invoiced', of: ({ invoiced }) => invoiced, isFigure: true },
+        { title: 'Margin', of: ({ margin }) => margin, isFigure: true },
       ]),
   });
-}
-
-async function listAll(
-  context: ShopContext,
-  filter: { status?: JobStatus; search?: string },
-): Promise<Job[]> {
-  const { listJobs } = await import('@brakeven/use-cases');
-  const jobs: Job[] = [];
-  let cursor: string | undefined;
-  do {
-    const query = { ...filter, cursor, limit: PAGE_SIZE, sort: 'number', direction: 'asc' } as const;
-    const page = await listJobs(context, query);
-    jobs.push(...page.items);
-    cursor = page.nextCursor ?? undefined;
-  } while (cursor);
-  return jobs;
 }

@@ -15,7 +15,7 @@ export interface EstimateHeadRow {
 /** A line of an estimate with the names of what it refers to. */
 export interface EstimateLineRow extends Omit<
   EstimateLineTable,
-  'shopId' | 'jobId' | 'description' | 'estimateLineId'
+  'shopId' | 'description' | 'estimateLineId'
 > {
   estimateLineId: string;
   description: string;
@@ -24,27 +24,33 @@ export interface EstimateLineRow extends Omit<
   material: string | null;
 }
 
-/** The head of a job's estimate, if it has one. */
-export function findEstimate(trx: ShopTransaction, jobId: string): Promise<EstimateHeadRow | undefined> {
+/** The heads of the estimates of jobs; a job without one has none. */
+export function listEstimateHeads(
+  trx: ShopTransaction,
+  jobIds: readonly string[],
+): Promise<EstimateHeadRow[]> {
   return trx
     .selectFrom('estimate')
     .select(['jobId', 'estimatedOn', 'scrapAllowancePercent', 'marginPercent'])
-    .where('jobId', '=', jobId)
-    .executeTakeFirst();
+    .where('jobId', 'in', [...jobIds])
+    .execute();
 }
 
-/** The lines of a job's estimate in their order. */
-export async function listEstimateLines(trx: ShopTransaction, jobId: string): Promise<EstimateLineRow[]> {
+/** The lines of the estimates of jobs, each job's in their order. */
+export async function listEstimateLines(
+  trx: ShopTransaction,
+  jobIds: readonly string[],
+): Promise<EstimateLineRow[]> {
   const { rows } = await sql<EstimateLineRow>`
-    select l.estimate_line_id, l.position, l.kind, l.operation_id, o.name as operation, l.machine_id,
+    select l.job_id, l.estimate_line_id, l.position, l.kind, l.operation_id, o.name as operation, l.machine_id,
       m.name as machine, l.setup_hours, l.minutes_per_piece, l.pieces, l.labour_rate, l.machine_hour_rate,
       l.overhead_rate, l.material_id, t.name as material, l.weight_kg, l.price_per_kg, l.description, l.amount
     from estimate_line l
     left join operation o on o.shop_id = l.shop_id and o.operation_id = l.operation_id
     left join machine m on m.shop_id = l.shop_id and m.machine_id = l.machine_id
     left join material t on t.shop_id = l.shop_id and t.material_id = l.material_id
-    where l.job_id = ${jobId}::uuid
-    order by l.position`.execute(trx);
+    where l.job_id = any (${[...jobIds]}::uuid[])
+    order by l.job_id, l.position`.execute(trx);
   return rows;
 }
 

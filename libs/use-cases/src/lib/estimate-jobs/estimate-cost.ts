@@ -2,11 +2,12 @@ import { computeEstimate, type EstimateCost, type EstimateLine as CostingLine } 
 import {
   type EstimateHeadRow,
   type EstimateLineRow,
-  findEstimate,
+  listEstimateHeads,
   listEstimateLines,
   type ShopTransaction,
 } from '@brakeven/database';
 import { D, toHours, toMass, toMoney, toPercent, toRate } from '@brakeven/values';
+import { groupBy } from '../group-by';
 
 /** A line as it is costed, however it is kept. */
 export type CostedLine = Pick<
@@ -32,10 +33,23 @@ export interface StoredEstimate {
 
 /** Reads and costs the estimate of a job; null if it has none. */
 export async function readEstimate(trx: ShopTransaction, jobId: string): Promise<StoredEstimate | null> {
-  const head = await findEstimate(trx, jobId);
-  if (!head) return null;
-  const lines = await listEstimateLines(trx, jobId);
-  return { head, lines, cost: costLines(lines, head.scrapAllowancePercent) };
+  return (await readEstimates(trx, [jobId])).get(jobId) ?? null;
+}
+
+/** Reads and costs the estimates of jobs, by job; those without one are absent. */
+export async function readEstimates(
+  trx: ShopTransaction,
+  jobIds: readonly string[],
+): Promise<ReadonlyMap<string, StoredEstimate>> {
+  if (jobIds.length === 0) return new Map();
+  const heads = await listEstimateHeads(trx, jobIds);
+  const linesOf = groupBy(await listEstimateLines(trx, jobIds), (line) => line.jobId);
+  return new Map(
+    heads.map((head) => {
+      const lines = linesOf.get(head.jobId) ?? [];
+      return [head.jobId, { head, lines, cost: costLines(lines, head.scrapAllowancePercent) }];
+    }),
+  );
 }
 
 /** What lines come to with a scrap allowance. */

@@ -12,7 +12,8 @@ import { createTestShop, type TestShop } from '@brakeven/test-shop';
 import { D, sum } from '@brakeven/values';
 import fc from 'fast-check';
 import { type ShopContext } from '../context';
-import { getJob, getJobCost } from '../show-jobs/get-job';
+import { getJob } from '../show-jobs/get-job';
+import { getJobCost, listJobCosts } from '../show-jobs/job-costs';
 import { listJobs } from '../show-jobs/list-jobs';
 import { draftEstimate, listLikeJobs } from './copy-estimate';
 import { getEstimateChoices } from './estimate-choices';
@@ -128,6 +129,8 @@ describe('estimates', () => {
     expect((await getJob(shop.context('lead'), { jobId: ids.job })).comparison).toBeUndefined();
     const { estimate } = await getJobCost(owner, '2231');
     expect(estimate).toMatchObject({ hours: '3.6500', total: '619.71', invoiced: null, margin: null });
+    const listed = await listJobCosts(owner, {});
+    expect(listed.map((job) => job.estimate)).toEqual([estimate, null]);
   });
 
   it('open into their lines, which add up', async () => {

@@ -7,16 +7,7 @@ import {
   type ShopTransaction,
   sumEstimateItems,
 } from '@brakeven/database';
-import {
-  D,
-  formatPercent,
-  hoursText,
-  type Money,
-  moneyText,
-  toHours,
-  toMoney,
-  toPercent,
-} from '@brakeven/values';
+import { D, formatPercent, hoursText, moneyText, toHours, toMoney, toPercent } from '@brakeven/values';
 import { inShopOf, type ShopContext } from '../context';
 import { getJobRow } from '../show-jobs/get-job';
 import { readItemWorkings } from '../show-workings/item-workings';
@@ -29,6 +20,7 @@ import {
 } from '../show-workings/workings-request';
 import { readEstimate, type StoredEstimate } from './estimate-cost';
 import { type EstimateFigure, readLineFigure, TITLES } from './estimate-line-workings';
+import { readVariance } from './variance-workings';
 
 /**
  * How a figure of a job's estimate was made, line by line; of several jobs, job by job.
@@ -41,7 +33,7 @@ export async function getEstimateWorkings(context: ShopContext, query: WorkingsQ
   return inShopOf(context, (trx) =>
     jobId === undefined
       ? readOfJobs(trx, { ...ref, figure }, paging)
-      : readOfJob(trx, { ...ref, figure, jobId }),
+      : readOfJob(context, trx, { ...ref, figure, jobId }),
   );
 }
 
@@ -51,7 +43,11 @@ function isEstimateFigure(figure: FigureRef['figure']): figure is EstimateFigure
   return figure.startsWith('estimate.');
 }
 
-async function readOfJob(trx: ShopTransaction, ref: EstimateRef & { jobId: string }): Promise<Workings> {
+async function readOfJob(
+  context: ShopContext,
+  trx: ShopTransaction,
+  ref: EstimateRef & { jobId: string },
+): Promise<Workings> {
   const job = await getJobRow(trx, { jobId: ref.jobId });
   const stored = await readEstimate(trx, ref.jobId);
   if (!stored) throw new AppError('not_found', `Job ${job.number} has no estimate.`);
@@ -60,7 +56,7 @@ async function readOfJob(trx: ShopTransaction, ref: EstimateRef & { jobId: strin
     case 'estimate.price':
       return toPrice(head, stored, ref.jobId);
     case 'estimate.variance':
-      return toVariance(head, stored, ref.jobId, toMoney(job.total));
+      return readVariance(context, trx, { ...head, figure: ref }, stored);
     default:
       return readLineFigure(head, stored);
   }
@@ -78,18 +74,6 @@ function toPrice(head: WorkingsHead, { head: kept, cost }: StoredEstimate, jobId
     ],
     [{ ...input, figure: null }],
   );
-}
-
-function toVariance(head: WorkingsHead, { cost }: StoredEstimate, jobId: string, actual: Money): Workings {
-  const variance = toMoney(actual.minus(cost.total));
-  return toMadeOf({ ...head, rule: RULES.variance, amount: moneyText(variance) }, [
-    { label: 'Cost', amount: moneyText(actual), figure: { figure: 'job.total', jobId } },
-    {
-      label: 'Estimated cost',
-      amount: moneyText(toMoney(cost.total.negated())),
-      figure: { figure: 'estimate.total', jobId },
-    },
-  ]);
 }
 
 function toMadeOf(

@@ -3,7 +3,7 @@ import { D, sum } from '@brakeven/values';
 import { type ShopContext } from '../context';
 import { getRollupStatus } from '../roll-up-costs/get-rollup-status';
 import { runRollup } from '../roll-up-costs/run-rollup';
-import { getJobCost } from '../show-jobs/get-job';
+import { getJobCost } from '../show-jobs/job-costs';
 import { createWorkedShop, WORKED_NOW, type WorkedShop } from '../testing/worked-shop';
 import { getEntryChoices, getEntryTotals, listEntries } from './entries';
 import { restoreEntry, voidEntry } from './void-entry';

@@ -7,9 +7,7 @@ import {
   type JobLinePage,
   type JobLineQuery,
 } from '@brakeven/contract';
-import { computeMargin } from '@brakeven/costing';
 import {
-  findThrough,
   type JobLineRow,
   type JobRow,
   type JobSelection,
@@ -20,9 +18,9 @@ import {
   listJobWeekSums,
   type ShopTransaction,
 } from '@brakeven/database';
-import { hoursText, moneyText, rateText, toMoney, toRate } from '@brakeven/values';
+import { rateText, toRate } from '@brakeven/values';
 import { inShopOf, type ShopContext } from '../context';
-import { readEstimate, type StoredEstimate } from '../estimate-jobs/estimate-cost';
+import { readEstimate } from '../estimate-jobs/estimate-cost';
 import { cutPage, linePositionSchema, readCursor, writeCursor } from '../page-cursor';
 import { toLineFacts, toLineFigure, toLineId } from '../show-workings/line-facts';
 import { toSourceCell } from '../source-cell';
@@ -109,71 +107,6 @@ export async function listJobLines(
 /** Lines that say something without their money: hours worked and material drawn. */
 function hasMeasure(category: CostCategory): boolean {
   return ['labour', 'machine', 'overhead', 'material'].includes(category);
-}
-
-type Category = (typeof JOB_COST_CATEGORIES)[number];
-
-/** What a job cost, for the command line. */
-export interface JobCostSummary extends Record<Category, string> {
-  job: string;
-  /** The last day in the costs; null before the first rollup. */
-  through: string | null;
-  hours: string;
-  total: string;
-  invoiced: string;
-  margin: string;
-  marginIsProvisional: boolean;
-  workInProgress: string;
-  /** The same as estimated: `invoiced` is the quoted price; null without an estimate. */
-  estimate: EstimateSummary | null;
-}
-
-/** What a job was estimated to cost; income and margin are null without a quoted price. */
-export interface EstimateSummary extends Record<Category, string> {
-  hours: string;
-  total: string;
-  invoiced: string | null;
-  margin: string | null;
-}
-
-/**
- * What a job has cost through the last day rolled up, by its number, beside its estimate.
- * @throws AppError `not_found`, `forbidden` without `jobs.money`
- */
-export async function getJobCost(context: ShopContext, number: string): Promise<JobCostSummary> {
-  if (!seesMoney(context)) throw new AppError('forbidden', 'You may not see money on jobs.');
-  return inShopOf(context, async (trx) => {
-    const job = await getJobRow(trx, { number: number.trim() });
-    const estimate = await readEstimate(trx, job.jobId);
-    return {
-      job: job.number,
-      through: await findThrough(trx),
-      hours: job.hours,
-      labour: job.labour,
-      overtime: job.overtime,
-      machine: job.machine,
-      overhead: job.overhead,
-      material: job.material,
-      outside: job.outside,
-      total: job.total,
-      invoiced: job.invoiced,
-      margin: job.margin,
-      marginIsProvisional: job.marginIsProvisional,
-      workInProgress: job.workInProgress,
-      estimate: estimate && toEstimateSummary(estimate, job.quotedPrice),
-    };
-  });
-}
-
-function toEstimateSummary({ cost }: StoredEstimate, quotedPrice: string | null): EstimateSummary {
-  const amounts = JOB_COST_CATEGORIES.map((category) => [category, moneyText(cost.figures[category].amount)]);
-  return {
-    hours: hoursText(cost.hours),
-    ...(Object.fromEntries(amounts) as Record<Category, string>),
-    total: moneyText(cost.total),
-    invoiced: quotedPrice,
-    margin: quotedPrice === null ? null : moneyText(computeMargin(toMoney(quotedPrice), cost.total)),
-  };
 }
 
 /** Reads the one job that is meant. */

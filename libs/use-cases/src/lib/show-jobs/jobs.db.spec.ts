@@ -14,7 +14,8 @@ import { getRollupStatus } from '../roll-up-costs/get-rollup-status';
 import { computeExpectedCosts } from '../roll-up-costs/testing/expected-costs';
 import { createWorkedShop, WORKED_NOW, type WorkedShop } from '../testing/worked-shop';
 import { changeJobStatus, createJob, listCustomers, updateJob } from './change-job';
-import { getJob, getJobCost, listJobLines } from './get-job';
+import { getJob, listJobLines } from './get-job';
+import { getJobCost, listJobCosts } from './job-costs';
 import { listJobs } from './list-jobs';
 
 jest.setTimeout(30_000);
@@ -150,6 +151,10 @@ describe('jobs', () => {
     expect(cost).toMatchObject({ job: '1042', through, hours, labour, machine, overhead, total });
     expect(cost).toMatchObject({ invoiced: '0.00', margin: `-${total}`, marginIsProvisional: true });
     expect(cost).toMatchObject({ workInProgress: total, estimate: null });
+    const listed = await listJobCosts(owner, {});
+    expect(listed.map((one) => one.job)).toEqual(['1042', '1043', '1100', '900']);
+    expect(listed[0]).toMatchObject({ ...cost, number: '1042', status: 'open' });
+    await expect(listJobCosts(shop.context('lead'), {})).rejects.toMatchObject({ code: 'forbidden' });
     await expect(getJobCost(owner, '77')).rejects.toMatchObject({ code: 'not_found' });
   });
 
