@@ -11,16 +11,19 @@ const PAGES: Readonly<Record<Role, readonly string[]>> = {
   owner: [
     '/payback',
     '/jobs',
+    '/customers',
     '/hours',
     '/machines',
     '/timesheets',
+    '/month-end',
     '/people',
+    '/materials',
     '/shop',
     '/account',
     '/nowhere',
   ],
-  bookkeeper: ['/timesheets', '/jobs', '/people'],
-  lead: ['/jobs', '/machines'],
+  bookkeeper: ['/timesheets', '/jobs', '/people', '/month-end', '/materials'],
+  lead: ['/jobs', '/machines', '/materials'],
   operator: ['/hours', '/payback'],
 };
 const WIDTHS_PX = [390, 1024, 1440];
@@ -77,19 +80,22 @@ describe.each(['light', 'dark'] as const)('In %s colours', (theme) => {
   });
 });
 
-/** The pages of the rail, and one machine, one job and one import where the role may open them. */
+/** The pages of the rail, and one of each list with its sub-pages where the role may open them. */
 async function listPaths(role: Role, page: Page): Promise<string[]> {
   const details: string[] = [];
   for (const [list, pick] of [
     ['/api/jobs?limit=1', 'jobs'],
     ['/api/machines', 'machines'],
     ['/api/timesheets', 'timesheets'],
+    ['/api/materials', 'materials'],
+    ['/api/customers/figures?limit=1', 'customers'],
   ] as const) {
     const answer = await page.context().request.get(list);
     const id = answer.ok()
-      ? /"(?:jobId|machineId|importId)":"([^"]+)"/.exec(await answer.text())?.[1]
+      ? /"(?:jobId|machineId|importId|materialId|customerId)":"([^"]+)"/.exec(await answer.text())?.[1]
       : undefined;
     if (id) details.push(`/${pick}/${id}`);
+    if (id && pick === 'jobs' && role === 'owner') details.push(`/jobs/${id}/estimate`);
   }
   return [...PAGES[role], ...details];
 }
