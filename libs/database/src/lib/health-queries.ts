@@ -25,7 +25,7 @@ export interface TotalMismatch {
 /** Totals that differ between the cost lines and the sums of days that are kept beside them; none is as it should be. */
 export async function listTotalMismatches(trx: ShopTransaction): Promise<TotalMismatch[]> {
   const { rows } = await sql<TotalMismatch>`
-    with line as (select category, sum(amount) as amount from cost_line group by 1),
+    with line as (select category, sum(amount) as amount from cost_line where job_id is not null group by 1),
     day as (
       select 'jobs: ' || category as total, category, sum(amount) as amount from job_day group by 1, 2
       union all

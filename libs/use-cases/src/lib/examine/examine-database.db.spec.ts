@@ -7,23 +7,10 @@ beforeAll(async () => {
   shop = await createTestShop();
   const employeeId = await shop.addEmployee();
   await shop.addPayRate({ employeeId, validFrom: '2024-01-01', wagePerHour: '30' });
-  await shop.addEntries([
-    {
-      workedOn: '2024-03-04',
-      employeeId,
-      jobId: await shop.addJob(),
-      operationId: await shop.addOperation(),
-      machineId: null,
-      hours: '8',
-      goodPieces: null,
-      scrapPieces: null,
-      note: null,
-      importId: null,
-      sourceRow: null,
-      sourceCell: null,
-      voidedBy: null,
-    },
-  ]);
+  const work = { employeeId, jobId: await shop.addJob(), operationId: await shop.addOperation() };
+  // The rest of the week has overtime, which goes to overhead and to no job.
+  const days = ['2024-03-04', '2024-03-05', '2024-03-06', '2024-03-07', '2024-03-08', '2024-03-09'];
+  await shop.addEntries(days.map((workedOn) => ({ ...work, workedOn, hours: '8' })));
   await runRollup(shop.context(), {});
 });
 afterAll(() => shop.close());
@@ -43,13 +30,18 @@ describe('examining', () => {
       { subject, isGood: true, message: 'days and cost lines agree' },
     ]);
     await shop.inShop((trx) =>
-      trx.updateTable('jobDay').set({ amount: '241.00' }).where('category', '=', 'labour').execute(),
+      trx
+        .updateTable('jobDay')
+        .set({ amount: '241.00' })
+        .where('category', '=', 'labour')
+        .where('postedOn', '=', '2024-03-04')
+        .execute(),
     );
     expect(await examineBooks(shop.context())).toEqual([
       {
         subject,
         isGood: false,
-        message: 'jobs: labour: lines make 240.00, days 241.00; run rollup --full',
+        message: 'jobs: labour: lines make 1440.00, days 1441.00; run rollup --full',
       },
     ]);
     await runRollup(shop.context(), { full: true });
