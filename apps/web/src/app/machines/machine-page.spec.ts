@@ -1,7 +1,7 @@
 import { TestBed } from '@angular/core/testing';
-import { provideRouter } from '@angular/router';
+import { provideRouter, Router } from '@angular/router';
 import { HttpErrorResponse } from '@angular/common/http';
-import { type Machine, type Role } from '@brakeven/contract';
+import { type Machine, type MachineRateBasis, type Role } from '@brakeven/contract';
 import { WORKINGS_OPENER } from '@brakeven/ui';
 import { of, throwError } from 'rxjs';
 import { MachinesApi } from '../api/machines-api';
@@ -44,7 +44,13 @@ const machine: Machine = {
 };
 
 describe('MachinePage', () => {
-  const api = { get: jest.fn(), deleteCostItem: jest.fn(), addCostItem: jest.fn(), deleteRate: jest.fn() };
+  const api = {
+    get: jest.fn(),
+    deleteCostItem: jest.fn(),
+    addCostItem: jest.fn(),
+    deleteRate: jest.fn(),
+    addBuiltRate: jest.fn(),
+  };
   const rollup = { refresh: jest.fn() };
 
   beforeEach(() => {
@@ -97,6 +103,28 @@ describe('MachinePage', () => {
     await page.press('Take out the rates from Mar 3, 2026');
     expect(TestBed.inject(Notifier).notice()?.text).toContain('38 entries would lose their rate.');
     expect(page.all('app-machine-rates-card tbody tr')).toHaveLength(1);
+  });
+
+  it('leads from a built rate to where it is built anew, and puts it back with what it was built from', async () => {
+    const [rate] = machine.rates ?? [];
+    const basis = { price: '48000.00' } as MachineRateBasis;
+    const built = { ...machine, rates: rate ? [{ ...rate, basis }] : [] };
+    api.get.mockReturnValue(of(built));
+    api.deleteRate.mockReturnValue(of({ ...machine, rates: [] }));
+    api.addBuiltRate.mockReturnValue(of(built));
+    const page = await open('owner');
+    expect(page.find('How the rate from Mar 3, 2026 was built').getAttribute('href')).toBe(
+      '/machines/m1/rate?rate=r1',
+    );
+    const navigate = jest.spyOn(TestBed.inject(Router), 'navigate').mockResolvedValue(true);
+    await page.press('Correct the rates from Mar 3, 2026');
+    expect(navigate).toHaveBeenCalledWith(['/machines', 'm1', 'rate'], { queryParams: { rate: 'r1' } });
+    await page.press('Take out the rates from Mar 3, 2026');
+    TestBed.inject(Notifier).notice()?.action?.run();
+    expect(api.addBuiltRate).toHaveBeenCalledWith(
+      'm1',
+      expect.objectContaining({ validFrom: '2026-03-03', basis }),
+    );
   });
 
   it('shows a lead the facts without money, and nothing to change', async () => {

@@ -1,7 +1,7 @@
 import { ChangeDetectionStrategy, Component, computed, inject, input } from '@angular/core';
 import { rxResource } from '@angular/core/rxjs-interop';
 import { MatDialog } from '@angular/material/dialog';
-import { RouterLink } from '@angular/router';
+import { Router, RouterLink } from '@angular/router';
 import { type Machine, type MachineCostItem, type MachineRate } from '@brakeven/contract';
 import { ForcePipe, LengthPipe, LoadingSkeleton, LocalDatePipe, PageHeader } from '@brakeven/ui';
 import { todayIn } from '@brakeven/values';
@@ -47,6 +47,7 @@ export class MachinePage {
   private readonly dialog = inject(MatDialog);
   private readonly notifier = inject(Notifier);
   private readonly rollup = inject(RollupStore);
+  private readonly router = inject(Router);
 
   protected readonly machine = rxResource({
     params: () => this.machineId(),
@@ -82,6 +83,7 @@ export class MachinePage {
   }
 
   protected editRate(rate: MachineRate | null, rates: readonly MachineRate[]): void {
+    if (rate?.basis) return this.buildAnew(rate);
     const current = findCurrentRate(rates, this.today()) ?? rates[0] ?? null;
     const data: MachineRateDialogData = { machineId: this.machineId(), rate, current, today: this.today() };
     this.take(
@@ -89,6 +91,13 @@ export class MachinePage {
         .open<MachineRateDialog, MachineRateDialogData, Machine>(MachineRateDialog, { data, width: '480px' })
         .afterClosed(),
     );
+  }
+
+  /** What was built is built anew: typed over, it would lose what it was built from. */
+  private buildAnew({ machineRateId }: MachineRate): void {
+    void this.router.navigate(['/machines', this.machineId(), 'rate'], {
+      queryParams: { rate: machineRateId },
+    });
   }
 
   protected deleteRate(rate: MachineRate): void {

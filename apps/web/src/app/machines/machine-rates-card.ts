@@ -52,7 +52,6 @@ import { stateRates } from '../rates/current-rate';
                     }
                   </td>
                   <td class="number">
-                    {{ rate.machineHourRate | rate }}
                     @if (rate.basis) {
                       <a
                         class="built"
@@ -62,6 +61,7 @@ import { stateRates } from '../rates/current-rate';
                         >built</a
                       >
                     }
+                    {{ rate.machineHourRate | rate }}
                   </td>
                   <td class="number">{{ rate.chargeOutRate | rate }}</td>
                   <td class="number">{{ rate.runningCostPerHour | rate }}</td>
@@ -101,7 +101,7 @@ import { stateRates } from '../rates/current-rate';
       gap: 8px;
     }
     .built {
-      margin-left: 6px;
+      margin-right: 8px;
       font-size: 12.5px;
     }
   `,

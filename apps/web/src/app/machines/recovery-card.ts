@@ -8,7 +8,7 @@ import { MachinesApi } from '../api/machines-api';
 import { LoadError } from '../shell/load-error';
 
 const PERIODS = [
-  { id: 'months', label: 'This month and two before' },
+  { id: 'months', label: 'Three months' },
   { id: 'year', label: 'This year' },
   { id: 'twelve', label: 'Last 12 months' },
 ] as const;
