@@ -11,7 +11,7 @@ export const customerFiguresSchema = z.object({
   invoiced: moneySchema,
   /** invoiced − total */
   margin: moneySchema,
-  /** True while it is true of one job. */
+  /** True while it is true of one job that has cost or brought something. */
   marginIsProvisional: z.boolean(),
   workInProgress: moneySchema,
   lastWorkedOn: localDateSchema.nullable(),

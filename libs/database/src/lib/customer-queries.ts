@@ -32,7 +32,8 @@ export async function listCustomerFigureRows(
       count(*) filter (where g.status = 'open')::int as open_jobs,
       coalesce(sum(g.total), 0)::numeric(16,2) as total, coalesce(sum(g.invoiced), 0)::numeric(16,2) as invoiced,
       coalesce(sum(g.margin), 0)::numeric(16,2) as margin,
-      coalesce(bool_or(g.margin_is_provisional), false) as margin_is_provisional,
+      coalesce(bool_or(g.margin_is_provisional and (g.total <> 0 or g.invoiced <> 0)), false)
+        as margin_is_provisional,
       coalesce(sum(g.work_in_progress), 0)::numeric(16,2) as work_in_progress,
       max(g.last_worked_on) as last_worked_on
     from (select customer_id, name from customer where ${isMeant}) c

@@ -10,10 +10,9 @@ const toMoneyColumn = (id: MoneyField, header: string): GridColumn<Job> => ({
   kind: 'money',
   value: (job) => job[id],
   figure: (job) => ({ figure: `job.${id}`, jobId: job.jobId }),
-  note: (job) =>
-    id === 'margin' && job.marginIsProvisional ? { severity: 'warning', text: 'provisional' } : null,
+  note: (job) => (id === 'margin' && job.marginIsProvisional ? { severity: 'quiet', text: 'so far' } : null),
   isSortable: true,
-  width: id === 'margin' ? 190 : 130,
+  width: id === 'margin' ? 160 : 124,
 });
 
 /** The columns of a customer's jobs. */

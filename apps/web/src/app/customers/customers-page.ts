@@ -1,7 +1,7 @@
 import { ChangeDetectionStrategy, Component, computed, inject } from '@angular/core';
 import { rxResource, takeUntilDestroyed } from '@angular/core/rxjs-interop';
 import { RouterLink } from '@angular/router';
-import { EmptyState, LoadingSkeleton, LocalDatePipe, MoneyPipe, PageHeader, StatusTag } from '@brakeven/ui';
+import { EmptyState, LoadingSkeleton, LocalDatePipe, MoneyPipe, PageHeader } from '@brakeven/ui';
 import { CustomersApi } from '../api/customers-api';
 import { LoadError } from '../shell/load-error';
 import { RollupStore } from '../shell/rollup-store';
@@ -9,16 +9,7 @@ import { RollupStore } from '../shell/rollup-store';
 /** Whom the shop works for: what their jobs cost, what was invoiced, and what stands between. */
 @Component({
   selector: 'app-customers-page',
-  imports: [
-    EmptyState,
-    LoadError,
-    LoadingSkeleton,
-    LocalDatePipe,
-    MoneyPipe,
-    PageHeader,
-    RouterLink,
-    StatusTag,
-  ],
+  imports: [EmptyState, LoadError, LoadingSkeleton, LocalDatePipe, MoneyPipe, PageHeader, RouterLink],
   templateUrl: './customers-page.html',
   styleUrl: './customers-page.scss',
   changeDetection: ChangeDetectionStrategy.OnPush,

@@ -76,7 +76,7 @@ describe('CustomersPage', () => {
     const page = await render(CustomersPage);
     expect(page.text).toContain('Margin of all jobs −$45.00');
     expect(page.textsOf('tbody tr')).toEqual([
-      'Harbor Boats 2 (1 open) $140.00 $165.00 provisional $25.00 $25.00 Mar 10, 2026',
+      'Harbor Boats 2 (1 open) $140.00 $165.00 so far $25.00 $25.00 Mar 10, 2026',
       'Jobs without a customer 1 $140.00 $165.00 −$70.00 $25.00 –',
     ]);
     expect(page.find('Harbor Boats').getAttribute('href')).toBe('/c1');
@@ -107,7 +107,7 @@ describe('the columns of a customer’s jobs', () => {
     const margin = CUSTOMER_JOB_COLUMNS.find(({ id }) => id === 'margin');
     const job = { jobId: 'j1', margin: '5.00', marginIsProvisional: true } as Job;
     expect(margin?.figure?.(job)).toEqual({ figure: 'job.margin', jobId: 'j1' });
-    expect(margin?.note?.(job)).toMatchObject({ text: 'provisional' });
+    expect(margin?.note?.(job)).toMatchObject({ text: 'so far' });
     expect(margin?.note?.({ ...job, marginIsProvisional: false })).toBeNull();
   });
 });

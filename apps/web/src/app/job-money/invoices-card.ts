@@ -2,7 +2,7 @@ import { ChangeDetectionStrategy, Component, computed, inject, input, output } f
 import { rxResource, takeUntilDestroyed } from '@angular/core/rxjs-interop';
 import { MatDialog } from '@angular/material/dialog';
 import { type FigureRef, type Invoice } from '@brakeven/contract';
-import { EmptyState, Figure, LoadingSkeleton, LocalDatePipe, MoneyPipe, StatusTag } from '@brakeven/ui';
+import { Figure, LoadingSkeleton, LocalDatePipe, MoneyPipe, StatusTag } from '@brakeven/ui';
 import { todayIn } from '@brakeven/values';
 import { JobMoneyApi } from '../api/job-money-api';
 import { SessionStore } from '../session/session-store';
@@ -13,7 +13,7 @@ import { RowChanges } from './row-changes';
 /** What was invoiced for a job and credited again, dated, with the sum that counts as its income. */
 @Component({
   selector: 'app-invoices-card',
-  imports: [EmptyState, Figure, LoadError, LoadingSkeleton, LocalDatePipe, MoneyPipe, StatusTag],
+  imports: [Figure, LoadError, LoadingSkeleton, LocalDatePipe, MoneyPipe, StatusTag],
   providers: [RowChanges],
   templateUrl: './invoices-card.html',
   styleUrl: './voided-row.scss',

@@ -3,7 +3,7 @@ import { rxResource, takeUntilDestroyed } from '@angular/core/rxjs-interop';
 import { MatDialog } from '@angular/material/dialog';
 import { RouterLink } from '@angular/router';
 import { type FigureRef, type IssueKind, type MaterialIssue } from '@brakeven/contract';
-import { EmptyState, Figure, LoadingSkeleton, LocalDatePipe, MassPipe, StatusTag } from '@brakeven/ui';
+import { Figure, LoadingSkeleton, LocalDatePipe, MassPipe, StatusTag } from '@brakeven/ui';
 import { todayIn } from '@brakeven/values';
 import { MaterialsApi } from '../api/materials-api';
 import { type IssueStart } from '../materials/issue-form';
@@ -16,7 +16,7 @@ import { RowChanges } from './row-changes';
 /** What a job drew from stock and gave back, with the cost that it bears. A lead sees weights only. */
 @Component({
   selector: 'app-material-issues-card',
-  imports: [EmptyState, Figure, LoadError, LoadingSkeleton, LocalDatePipe, MassPipe, RouterLink, StatusTag],
+  imports: [Figure, LoadError, LoadingSkeleton, LocalDatePipe, MassPipe, RouterLink, StatusTag],
   providers: [RowChanges],
   templateUrl: './material-issues-card.html',
   styleUrl: './voided-row.scss',

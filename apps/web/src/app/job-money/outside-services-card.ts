@@ -2,7 +2,7 @@ import { ChangeDetectionStrategy, Component, computed, inject, input, output } f
 import { rxResource, takeUntilDestroyed } from '@angular/core/rxjs-interop';
 import { MatDialog } from '@angular/material/dialog';
 import { type FigureRef, type OutsideService } from '@brakeven/contract';
-import { EmptyState, Figure, LoadingSkeleton, LocalDatePipe, MoneyPipe, StatusTag } from '@brakeven/ui';
+import { Figure, LoadingSkeleton, LocalDatePipe, MoneyPipe, StatusTag } from '@brakeven/ui';
 import { todayIn } from '@brakeven/values';
 import { JobMoneyApi } from '../api/job-money-api';
 import { SessionStore } from '../session/session-store';
@@ -13,7 +13,7 @@ import { RowChanges } from './row-changes';
 /** What others did for a job, dated, with the total that the job bears. */
 @Component({
   selector: 'app-outside-services-card',
-  imports: [EmptyState, Figure, LoadError, LoadingSkeleton, LocalDatePipe, MoneyPipe, StatusTag],
+  imports: [Figure, LoadError, LoadingSkeleton, LocalDatePipe, MoneyPipe, StatusTag],
   providers: [RowChanges],
   templateUrl: './outside-services-card.html',
   styleUrl: './voided-row.scss',

@@ -1,7 +1,7 @@
 import { type StockMove, type StockMoveKind } from '@brakeven/contract';
 import { type GridAction, type GridColumn } from '@brakeven/ui';
 import { formatLength, toLength, type UnitSystem } from '@brakeven/values';
-import { MASS_UNITS, toMassWords, toRatePerUnit } from './stock-text';
+import { MASS_UNITS, toMassWords, toPriceWords } from './stock-text';
 
 export const MOVE_WORDS: Readonly<Record<StockMoveKind, string>> = {
   lot: 'Received',
@@ -12,6 +12,7 @@ export const MOVE_WORDS: Readonly<Record<StockMoveKind, string>> = {
 /** What the columns depend on besides the rows. */
 export interface LedgerView {
   units: UnitSystem;
+  currency: string;
   withMoney: boolean;
   /** Voided moves have no value and no balance. */
   isVoided: boolean;
@@ -24,9 +25,8 @@ export function toLedgerColumns(view: LedgerView): GridColumn<StockMove>[] {
   return [
     ...toWordColumns(units),
     ...(isVoided ? VOIDED : []),
-    ...(withMoney && !isVoided ? toMoneyColumns(units) : []),
+    ...(withMoney && !isVoided ? toMoneyColumns(view) : []),
     ...(isVoided ? [] : toBalanceColumns(view)),
-    NOTE,
     ...(actionsOf ? [toActionColumn(actionsOf)] : []),
   ];
 }
@@ -48,29 +48,35 @@ export function toSizeWords(
 
 function toWordColumns(units: UnitSystem): GridColumn<StockMove>[] {
   return [
-    { id: 'movedOn', header: 'Date', kind: 'date', value: (move) => move.movedOn, width: 112 },
+    { id: 'movedOn', header: 'Date', kind: 'date', value: (move) => move.movedOn, width: 106 },
     {
       id: 'kind',
       header: 'Move',
       value: (move) => MOVE_WORDS[move.kind],
       tone: (move) => (move.kind === 'lot' ? 'blue' : null),
-      width: 100,
+      width: 92,
     },
     {
       id: 'of',
       header: 'Lot or job',
       value: toSubject,
       href: (move) => (move.job ? `/jobs/${move.job.jobId}` : null),
-      minWidth: 150,
+      minWidth: 140,
+      flex: 1,
+    },
+    {
+      id: 'size',
+      header: 'How much',
+      value: (move) => [toSizeWords(move, units), move.note].filter(Boolean).join(' · '),
+      minWidth: 190,
       flex: 2,
     },
-    { id: 'size', header: 'How much', value: (move) => toSizeWords(move, units), minWidth: 130, flex: 2 },
     {
       id: 'weight',
       header: 'Weight',
       kind: 'number',
       value: (move) => toMassWords(move.weightKg, units),
-      width: 116,
+      width: 108,
     },
   ];
 }
@@ -80,13 +86,13 @@ function toSubject({ lot, job }: StockMove): string {
   return [lot?.number, lot?.vendor].filter(Boolean).join(' · ');
 }
 
-function toMoneyColumns(units: UnitSystem): GridColumn<StockMove>[] {
+function toMoneyColumns(view: LedgerView): GridColumn<StockMove>[] {
   return [
     {
       id: 'average',
-      header: `Per ${MASS_UNITS[units]}`,
-      kind: 'rate',
-      value: ({ averagePerKg }) => averagePerKg && toRatePerUnit(averagePerKg, units),
+      header: `Per ${MASS_UNITS[view.units]}`,
+      kind: 'number',
+      value: ({ averagePerKg }) => toPriceWords(averagePerKg, view),
       width: 92,
     },
     {
@@ -95,7 +101,7 @@ function toMoneyColumns(units: UnitSystem): GridColumn<StockMove>[] {
       kind: 'money',
       value: (move) => move.amount,
       figure: (move) => (move.kind === 'lot' ? null : { figure: 'stock.issue', issueId: move.moveId }),
-      width: 116,
+      width: 108,
     },
   ];
 }
@@ -106,14 +112,14 @@ function toBalanceColumns({ units, withMoney }: LedgerView): GridColumn<StockMov
     header: 'Stock then',
     kind: 'number',
     value: ({ balanceKg }) => (balanceKg === null ? null : toMassWords(balanceKg, units)),
-    width: 116,
+    width: 108,
   };
   const value: GridColumn<StockMove> = {
     id: 'value',
     header: 'Value then',
     kind: 'money',
     value: (move) => move.balanceAmount,
-    width: 116,
+    width: 108,
   };
   return withMoney ? [stock, value] : [stock];
 }
@@ -122,8 +128,6 @@ const VOIDED: readonly GridColumn<StockMove>[] = [
   { id: 'voidedBy', header: 'Voided by', value: (move) => move.voidedBy, minWidth: 120, flex: 1 },
 ];
 
-const NOTE: GridColumn<StockMove> = { id: 'note', header: 'Note', value: (move) => move.note, width: 130 };
-
 function toActionColumn(actions: (move: StockMove) => readonly GridAction[]): GridColumn<StockMove> {
-  return { id: 'actions', header: '', value: () => null, actions, width: 138 };
+  return { id: 'actions', header: '', value: () => null, actions, width: 128 };
 }

@@ -27,7 +27,6 @@ import {
   MassPipe,
   PageHeader,
   type PageSource,
-  RatePipe,
 } from '@brakeven/ui';
 import { todayIn } from '@brakeven/values';
 import { type Observable } from 'rxjs';
@@ -42,7 +41,7 @@ import { MOVE_WORDS, toLedgerColumns } from './ledger-columns';
 import { type LotDialogData } from './lot-dialog';
 import { type MaterialDialogData } from './material-dialog';
 import { toMaterialFacts } from './material-words';
-import { MASS_UNITS, toRatePerUnit } from './stock-text';
+import { MASS_UNITS, toPriceWords } from './stock-text';
 import { toIssueRow } from './to-issue-row';
 
 const SHOWN: readonly { show: StockMoveQuery['show']; word: string }[] = [
@@ -65,7 +64,6 @@ const SHOWN: readonly { show: StockMoveQuery['show']; word: string }[] = [
     LocalDatePipe,
     MassPipe,
     PageHeader,
-    RatePipe,
     RouterLink,
   ],
   templateUrl: './material-page.html',
@@ -103,6 +101,7 @@ export class MaterialPage {
   protected readonly columns = computed(() =>
     toLedgerColumns({
       units: this.units(),
+      currency: this.session.shopFormat().currency,
       withMoney: this.hasMoney(),
       isVoided: this.show() === 'voided',
       actionsOf: this.canEdit() ? (move) => this.listActions(move) : null,
@@ -117,8 +116,8 @@ export class MaterialPage {
     return toMaterialFacts(material, this.units());
   }
 
-  protected toPerUnit(ratePerKg: string | null | undefined): string | null {
-    return ratePerKg ? toRatePerUnit(ratePerKg, this.units()) : null;
+  protected toPrice(ratePerKg: string | null | undefined): string {
+    return toPriceWords(ratePerKg, this.session.shopFormat());
   }
 
   protected async edit(material: Material): Promise<void> {

@@ -11,7 +11,6 @@ import {
   MassPipe,
   MoneyPipe,
   PageHeader,
-  RatePipe,
   StatusTag,
 } from '@brakeven/ui';
 import { D, moneyText, sum, todayIn, toMoney } from '@brakeven/values';
@@ -23,7 +22,7 @@ import { RollupStore } from '../shell/rollup-store';
 import { type LotDialogData } from './lot-dialog';
 import { type MaterialDialogData } from './material-dialog';
 import { toMaterialFacts } from './material-words';
-import { MASS_UNITS, toRatePerUnit } from './stock-text';
+import { MASS_UNITS, toPriceWords } from './stock-text';
 
 /** What is in stock, what it has cost, and when each material last came in. */
 @Component({
@@ -37,7 +36,6 @@ import { MASS_UNITS, toRatePerUnit } from './stock-text';
     MassPipe,
     MoneyPipe,
     PageHeader,
-    RatePipe,
     RouterLink,
     StatusTag,
   ],
@@ -66,7 +64,7 @@ export class MaterialsPage {
       material,
       facts: toMaterialFacts(material, this.units()),
       isInStock: D(material.stockKg).gt(0),
-      perUnit: material.averagePerKg && toRatePerUnit(material.averagePerKg, this.units()),
+      perUnit: toPriceWords(material.averagePerKg, this.session.shopFormat()),
       share: highest > 0 ? (100 * Number(material.stockValue ?? 0)) / highest : 0,
     }));
   });

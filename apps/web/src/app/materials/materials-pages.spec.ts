@@ -51,7 +51,7 @@ describe('MaterialsPage', () => {
     expect(page.text).toContain('Weight in stock 100 lb');
     expect(page.text).toContain('Materials in stock 1 of 2');
     const [steel, bar] = page.textsOf('tbody tr');
-    expect(steel).toContain('Sheet · A1011 CS · 11 ga (0.1196 in) 100 lb $1.00 $100.00');
+    expect(steel).toContain('Sheet · A1011 CS · 11 ga (0.1196 in) 100 lb $1.0000 $100.00');
     expect(bar).toContain('none – $0.00 none received');
     await page.press('Value of Mild steel 11 ga: $100.00');
     expect(opener.open).toHaveBeenCalledWith({ figure: 'stock.value', materialId: 'steel' });
@@ -86,7 +86,7 @@ describe('MaterialPage', () => {
   it('shows stock, average and value, and asks for the moves that are chosen', async () => {
     api.get.mockReturnValue(of(STEEL));
     const page = await open('owner');
-    expect(page.text).toContain('In stock 100 lb Average per lb $1.00 Value $100.00');
+    expect(page.text).toContain('In stock 100 lb Average per lb $1.0000 Value $100.00');
     await page.press('Lots');
     const grid = page.fixture.debugElement.query(By.directive(Grid)).componentInstance as Grid<StockMove>;
     grid.source()?.load({ cursor: undefined, limit: 50, sort: undefined, direction: undefined });
@@ -131,7 +131,6 @@ describe('MaterialPage', () => {
       'size',
       'weight',
       'balance',
-      'note',
     ]);
   });
 });
@@ -141,7 +140,7 @@ function findActions(columns: readonly GridColumn<StockMove>[], move: StockMove)
 }
 
 describe('the columns of the ledger', () => {
-  const view = { units: 'us', withMoney: true, isVoided: false, actionsOf: null } as const;
+  const view = { units: 'us', currency: 'USD', withMoney: true, isVoided: false, actionsOf: null } as const;
   const textsOf = (move: StockMove) =>
     Object.fromEntries(toLedgerColumns(view).map((column) => [column.id, column.value(move)]));
 
@@ -149,7 +148,7 @@ describe('the columns of the ledger', () => {
     expect(textsOf(ISSUE)).toMatchObject({
       of: '1042 Rack shelves',
       weight: '−157.72\u00a0lb',
-      average: '0.8064',
+      average: '$0.8064',
       amount: '-127.19',
       value: '1448.31',
     });
@@ -161,7 +160,7 @@ describe('the columns of the ledger', () => {
 
   it('leave value and balance out where a move is voided', () => {
     const columns = toLedgerColumns({ ...view, isVoided: true }).map(({ id }) => id);
-    expect(columns).toEqual(['movedOn', 'kind', 'of', 'size', 'weight', 'voidedBy', 'note']);
+    expect(columns).toEqual(['movedOn', 'kind', 'of', 'size', 'weight', 'voidedBy']);
   });
 
   it('open the value of an issue', () => {

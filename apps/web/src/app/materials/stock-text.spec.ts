@@ -5,6 +5,7 @@ import {
   toMassFieldText,
   toMegapascals,
   toRatePerKg,
+  toPriceWords,
   toRatePerUnit,
   toStressText,
 } from './stock-text';
@@ -30,6 +31,8 @@ describe('prices by weight', () => {
     expect(toRatePerUnit('0.220462', 'us')).toBe('0.10');
     expect(toRatePerKg('0.10', 'us', '0.2204623')).toBe('0.2204623');
     expect(toRatePerUnit('2.50', 'metric')).toBe('2.50');
+    expect(toPriceWords('0.220462', { units: 'us', currency: 'USD' })).toBe('$0.1000');
+    expect(toPriceWords(null, { units: 'us', currency: 'USD' })).toBe('–');
     expect(toRatePerKg('', 'us', null)).toBe('0');
     expect(toRatePerKg('cheap', 'us', null)).toBe('cheap');
   });

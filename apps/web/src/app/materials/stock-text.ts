@@ -4,6 +4,7 @@ import {
   densityIn,
   type DensityUnit,
   formatMass,
+  formatNumber,
   massIn,
   type MassUnit,
   parseDensity,
@@ -52,6 +53,20 @@ export function toMassWords(kilograms: string, units: UnitSystem): string {
 /** Money per kilogram as money per unit of weight of the shop, four decimals. */
 export function toRatePerUnit(ratePerKg: string, units: UnitSystem): string {
   return rateText(toRate(roundHalfUp(D(ratePerKg).times(kilogramsPerUnit(units)), SHOWN_DECIMALS)));
+}
+
+/** Money per kilogram as people of the shop read it, per unit of weight and always four decimals; a dash for none. */
+export function toPriceWords(
+  ratePerKg: string | null | undefined,
+  { units, currency }: { units: UnitSystem; currency: string },
+): string {
+  if (ratePerKg === null || ratePerKg === undefined) return '–';
+  const decimals = { minimumFractionDigits: SHOWN_DECIMALS, maximumFractionDigits: SHOWN_DECIMALS };
+  return formatNumber(D(toRatePerUnit(ratePerKg, units)), 'en-US', {
+    style: 'currency',
+    currency,
+    ...decimals,
+  });
 }
 
 /** Money per unit of weight of the shop, as typed, as money per kilogram; what cannot be read goes as it is. */
