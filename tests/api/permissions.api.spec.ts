@@ -65,8 +65,23 @@ describe('the table of permissions', () => {
 
   it.each<[Role, string[]]>([
     ['lead', ['shop.edit', 'users.manage', 'payback.view', 'jobs.money', 'machines.money', 'people.view']],
-    ['operator', ['jobs.view', 'jobs.money', 'hours.all', 'machines.view', 'people.view', 'rollup.view']],
-    ['bookkeeper', ['shop.edit', 'users.manage', 'machines.view', 'payback.view']],
+    [
+      'operator',
+      [
+        'jobs.view',
+        'jobs.money',
+        'hours.all',
+        'machines.view',
+        'people.view',
+        'rollup.view',
+        'tooling.edit',
+        'press-runs.view',
+      ],
+    ],
+    [
+      'bookkeeper',
+      ['shop.edit', 'users.manage', 'machines.view', 'payback.view', 'forming.use', 'press-runs.log'],
+    ],
   ])('keeps from the %s what the role must not see or do', (role, kept) => {
     const table: Record<string, readonly Role[]> = PERMISSIONS;
     for (const permission of kept) expect(table[permission]).not.toContain(role);

@@ -27,6 +27,11 @@ export const PERMISSIONS = {
   'materials.view': ['owner', 'bookkeeper', 'lead'],
   'materials.money': ['owner', 'bookkeeper'],
   'materials.edit': ['owner', 'bookkeeper'],
+  // Machines by name and rating, tools, materials and trial bends, for whoever sets a press up; no money.
+  'forming.use': ['owner', 'lead', 'operator'],
+  'tooling.edit': ['owner', 'lead'],
+  'press-runs.log': ['owner', 'lead', 'operator'],
+  'press-runs.view': ['owner', 'lead'],
   'months.view': ['owner', 'bookkeeper'],
   'months.close': ['owner', 'bookkeeper'],
   'months.reopen': ['owner'],

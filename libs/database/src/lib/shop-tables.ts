@@ -12,6 +12,8 @@ export interface ShopTable {
   /** Null: overtime is not computed. */
   overtimeThresholdHours: ColumnType<Numeric | null, Numeric | null | undefined, Numeric | null>;
   overtimeTo: Generated<'overhead' | 'jobs'>;
+  /** The share of a rating, in percent, that the shop keeps below. */
+  forceLinePercent: Generated<Numeric>;
   createdAt: Instant;
 }
 

@@ -11,6 +11,17 @@ import {
   type PayrollHoursTable,
 } from './book-tables';
 import {
+  type DepthCardSheetTable,
+  type DepthCardTable,
+  type DieOpeningTable,
+  type DieTable,
+  type FormingMaterialTable,
+  type PressRunTable,
+  type PunchTable,
+  type ShopGaugeTable,
+  type TrialBendTable,
+} from './forming-tables';
+import {
   type MaterialTable,
   type SheetLotTable,
   type MaterialIssueTable,
@@ -47,6 +58,7 @@ import {
 } from './timesheet-tables';
 
 export type * from './book-tables';
+export type * from './forming-tables';
 export type * from './job-money-tables';
 export type * from './register-tables';
 export type * from './shop-tables';
@@ -91,4 +103,13 @@ export interface Tables {
   monthClose: MonthCloseTable;
   payrollHours: PayrollHoursTable;
   savedView: SavedViewTable;
+  formingMaterial: FormingMaterialTable;
+  shopGauge: ShopGaugeTable;
+  punch: PunchTable;
+  die: DieTable;
+  dieOpening: DieOpeningTable;
+  trialBend: TrialBendTable;
+  depthCard: DepthCardTable;
+  depthCardSheet: DepthCardSheetTable;
+  pressRun: PressRunTable;
 }
