@@ -43,10 +43,12 @@ import { toVarianceWords } from './variance-words';
                 <td class="number">
                   <app-figure [value]="row.actual" [ref]="row.actualRef" [label]="row.word + ' cost'" />
                 </td>
-                <td class="number"><app-money-words [amount]="row.variance" /></td>
-                <td class="number"><app-money-words [amount]="row.ratePart" /></td>
-                <td class="number"><app-money-words [amount]="row.quantityPart" /></td>
-                <td>{{ row.words }}</td>
+                @for (amount of [row.variance, row.ratePart, row.quantityPart]; track $index) {
+                  <td class="number">
+                    <app-money-words [amount]="amount" [ref]="row.varianceRef" [label]="row.word" />
+                  </td>
+                }
+                <td class="why">{{ row.words }}</td>
               </tr>
             }
           </tbody>
@@ -59,11 +61,12 @@ import { toVarianceWords } from './variance-words';
               <td class="number">
                 <app-figure [value]="comparison.total.actual" [ref]="ref('job.total')" />
               </td>
-              <td class="number">
-                <app-figure [value]="comparison.total.variance" [ref]="ref('estimate.variance')" />
-              </td>
-              <td class="number"><app-money-words [amount]="comparison.total.ratePart" /></td>
-              <td class="number"><app-money-words [amount]="comparison.total.quantityPart" /></td>
+              @let total = comparison.total;
+              @for (amount of [total.variance, total.ratePart, total.quantityPart]; track $index) {
+                <td class="number">
+                  <app-money-words [amount]="amount" [ref]="ref('estimate.variance')" label="Total" />
+                </td>
+              }
               <td></td>
             </tr>
           </tfoot>
@@ -89,9 +92,11 @@ export class ComparisonCard {
       ...one,
       word: toCategoryWord(one.category),
       words: toVarianceWords(one, this.format()),
-      // Overtime is estimated at nothing, so that there is nothing to open.
+      // Overtime is never estimated, so that there is nothing to open.
+      estimate: one.category === 'overtime' ? null : one.estimate,
       estimateRef: one.category === 'overtime' ? null : this.ref(`estimate.${one.category}`),
       actualRef: this.ref(`job.${one.category}`),
+      varianceRef: { ...this.ref('estimate.variance'), category: one.category },
     })),
   );
 

@@ -1,6 +1,6 @@
 import { type JobDetail } from '@brakeven/contract';
 import { type ChartOption, type ChartPalette, type ChartTable } from '@brakeven/ui';
-import { formatHours, formatLocalDate, formatMoney, toLocalDate } from '@brakeven/values';
+import { addDays, formatHours, formatLocalDate, formatMoney, toLocalDate } from '@brakeven/values';
 
 type Category = (typeof CATEGORIES)[number]['field'];
 
@@ -178,26 +178,30 @@ export function toWeekChartOption(job: JobDetail, currency: string, palette: Cha
 }
 
 /** Cost by category, for reading. */
-export function toCategoryTable(job: JobDetail, currency: string): ChartTable {
+export function toCategoryTable(job: JobDetail): ChartTable {
   return {
     headers: ['Category', 'Cost', 'Share'],
     rows: listCategories(job).map(({ field, word }) => [
       word,
-      formatMoney(job[field] ?? '0', currency),
+      { value: job[field] ?? '0', ref: { figure: `job.${field}`, jobId: job.jobId } },
       `${toShare(job, field)} %`,
     ]),
   };
 }
 
 /** Hours and cost by week, for reading. */
-export function toWeekTable(job: JobDetail, currency: string): ChartTable {
+export function toWeekTable(job: JobDetail): ChartTable {
   const hasMoney = job.total !== undefined;
+  const toRef = (figure: 'job.hours' | 'job.total', weekFrom: string) => {
+    const from = toLocalDate(weekFrom);
+    return { figure, jobId: job.jobId, from, to: addDays(from, 6) };
+  };
   return {
     headers: ['Week from', 'Hours', ...(hasMoney ? ['Cost'] : [])],
     rows: job.byWeek.map(({ weekFrom, hours, total }) => [
       formatLocalDate(toLocalDate(weekFrom)),
-      formatHours(hours),
-      ...(total === undefined ? [] : [formatMoney(total, currency)]),
+      { value: hours, unit: 'hours' as const, ref: toRef('job.hours', weekFrom) },
+      ...(total === undefined ? [] : [{ value: total, ref: toRef('job.total', weekFrom) }]),
     ]),
   };
 }

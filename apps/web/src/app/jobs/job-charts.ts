@@ -62,8 +62,8 @@ export class JobCharts {
   protected readonly hasMoney = computed(() => this.job().total !== undefined);
   private readonly currency = computed(() => this.format().currency);
   protected readonly categorySummary = computed(() => toCategorySummary(this.job(), this.currency()));
-  protected readonly categoryTable = computed(() => toCategoryTable(this.job(), this.currency()));
-  protected readonly weekTable = computed(() => toWeekTable(this.job(), this.currency()));
+  protected readonly categoryTable = computed(() => toCategoryTable(this.job()));
+  protected readonly weekTable = computed(() => toWeekTable(this.job()));
   protected readonly weekSummary = computed(() => {
     const weeks = this.job().byWeek.length;
     return `${weeks} ${weeks === 1 ? 'week' : 'weeks'} with work; the table has the numbers.`;

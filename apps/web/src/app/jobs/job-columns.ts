@@ -46,7 +46,7 @@ const money = (
   header: string,
   figure: Figure,
   rest?: Partial<GridColumn<Job>>,
-): FigureColumn => ({ field, header, figure, kind: 'money', width: rest?.width ?? 100, rest });
+): FigureColumn => ({ field, header, figure, kind: 'money', width: rest?.width ?? 96, rest });
 
 const HOURS: readonly FigureColumn[] = [
   hours('hours', 'Hours', 'job.hours', 84),
@@ -62,16 +62,18 @@ const MONEY: readonly FigureColumn[] = [
   money('overhead', 'Overhead', 'job.overhead'),
   money('material', 'Material', 'job.material'),
   money('outside', 'Outside', 'job.outside'),
-  money('total', 'Cost', 'job.total', { note: toGapNote, width: 104 }),
+  money('total', 'Cost', 'job.total', { note: toGapNote, width: 100 }),
   money('variance', 'Variance', 'estimate.variance', { isLoss: ({ variance }) => isAboveZero(variance) }),
   money('quotedPrice', 'Quoted', 'job.quotedPrice'),
   money('invoiced', 'Invoiced', 'job.invoiced'),
   money('margin', 'Margin', 'job.margin', {
     note: toProvisionalNote,
-    isLoss: ({ margin, marginIsProvisional }) => marginIsProvisional === false && isBelowZero(margin),
-    width: 146,
+    // What is done and not invoiced yet is work in progress, no loss.
+    isLoss: (job) =>
+      job.marginIsProvisional === false && Number(job.invoiced) !== 0 && isBelowZero(job.margin),
+    width: 140,
   }),
-  money('workInProgress', 'In progress', 'job.workInProgress', { width: 104 }),
+  money('workInProgress', 'In progress', 'job.workInProgress', { width: 100 }),
 ];
 
 const MONEY_FIELDS: readonly string[] = MONEY.map(({ field }) => field);
@@ -168,7 +170,7 @@ const WORDS: readonly GridColumn<Job>[] = [
     value: (job) => job.status,
     tone: (job) => toStatusTone(job.status),
     isSortable: true,
-    width: 92,
+    width: 86,
   },
   {
     id: 'quantity',
@@ -187,7 +189,7 @@ const DATES: readonly GridColumn<Job>[] = [
 ];
 
 function toDateColumn(id: JobSort, header: string, value: GridColumn<Job>['value']): GridColumn<Job> {
-  return { id, header, kind: 'date', value, isSortable: true, width: 114 };
+  return { id, header, kind: 'date', value, isSortable: true, width: 108 };
 }
 
 function toGridColumn({ field, header, figure, kind, width, rest }: FigureColumn): GridColumn<Job> {

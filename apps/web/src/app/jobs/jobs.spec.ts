@@ -127,9 +127,9 @@ describe('the picture of a job', () => {
     expect(toCategorySummary(detail, 'USD')).toBe(
       'Labour $2,662.40 · 49 %, Machine $1,328.00 · 24 %, Overhead $1,440.00 · 27 %',
     );
-    expect(toCategoryTable({ ...detail, total: '0.00' }, 'USD').rows[0]).toEqual([
+    expect(toCategoryTable({ ...detail, total: '0.00' }).rows[0]).toEqual([
       'Labour',
-      '$2,662.40',
+      { value: '2662.40', ref: { figure: 'job.labour', jobId: detail.jobId } },
       '0 %',
     ]);
   });
@@ -148,9 +148,10 @@ describe('the picture of a job', () => {
     };
     expect(valuesOf(detail)).toEqual(['Cost', [1357.6]]);
     expect(valuesOf(withoutMoney)).toEqual(['Hours', [20]]);
-    expect(toWeekTable(withoutMoney, 'USD')).toEqual({
+    const week = { jobId: detail.jobId, from: '2026-11-22', to: '2026-11-28' };
+    expect(toWeekTable(withoutMoney)).toEqual({
       headers: ['Week from', 'Hours'],
-      rows: [['Nov 22, 2026', '20.00']],
+      rows: [['Nov 22, 2026', { value: '20.0000', unit: 'hours', ref: { figure: 'job.hours', ...week } }]],
     });
   });
 });
