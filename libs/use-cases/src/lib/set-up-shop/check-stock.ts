@@ -18,6 +18,11 @@ const STOCK_SHEETS: readonly string[] = [
   SETUP_SHEET_NAMES.issues,
 ];
 
+/** Whether all of materials, lots and issues could be read and hold: without one of them the stock is not known. */
+export function isStockKnown({ problems }: SetupDraft): boolean {
+  return !problems.some(({ severity, sheet }) => severity === 'refused' && STOCK_SHEETS.includes(sheet));
+}
+
 /** All moves of a material as they will be. */
 export function listStockMoves(draft: SetupDraft, materialId: string): StockMove[] {
   const lots = ofMaterial(draft.tables.sheetLot.listRows(), materialId).map(({ id, values }): StockMove => ({
@@ -52,9 +57,7 @@ export function checkStock(
   issues: ReadonlyMap<string, IssueRow>,
   lots: SetupFile['sheetLots'],
 ): void {
-  // Without all of the lots, the stock is not known.
-  if (draft.problems.some(({ severity, sheet }) => severity === 'refused' && STOCK_SHEETS.includes(sheet)))
-    return;
+  if (!isStockKnown(draft)) return;
   const { sheetLot, materialIssue, material } = draft.tables;
   const touched = [...sheetLot.inserts, ...materialIssue.inserts].map(({ values }) => values['materialId']);
   const moved = sheetLot.voidedIds.length > 0 ? material.listRows().map(({ id }) => id) : touched;

@@ -1,6 +1,7 @@
 import { type RegisterValues } from '@brakeven/database';
-import { D } from '@brakeven/values';
+import { D, formatLocalDate, toLocalDate } from '@brakeven/values';
 import { type SetupFile } from '@brakeven/workbook';
+import { isStockKnown } from './check-stock';
 import { type EstimateDefaults } from './estimate-defaults';
 import { type SetupDraft } from './setup-draft';
 import { type DecimalColumn, toStoredNumber } from './stored-number';
@@ -154,6 +155,8 @@ function toMaterial(read: LineReader): RegisterValues | null {
   const weightKg = row.weightKg === null ? read.missing('weightKg') : read.decimal('weightKg', 'weight');
   if (materialId === undefined || materialId === null || weightKg === null) return null;
   const kept = at.kept?.['materialId'] === materialId ? at.kept : undefined;
+  // What is wrong with the stock has been said; that it has no average then would be news of the same.
+  if (row.pricePerKg === null && !kept && !isStockKnown(draft)) return null;
   const average = () => at.defaults.pricePerKg(materialId, at.on);
   const pricePerKg = read.rate('pricePerKg', kept, average, `No ${row.material} had come in`);
   return pricePerKg === undefined ? null : { materialId, weightKg, pricePerKg };
@@ -205,7 +208,11 @@ class LineReader {
     }
     const rate = kept?.[column] ?? ofTheDay();
     if (typeof rate === 'string') return rate;
-    this.refuse(column, 'rate_missing', `${why} on ${this.at.on}. Write it here, or correct Estimated on.`);
+    this.refuse(
+      column,
+      'rate_missing',
+      `${why} on ${formatLocalDate(toLocalDate(this.at.on))}. Write it here, or correct Estimated on.`,
+    );
     return undefined;
   }
 }
