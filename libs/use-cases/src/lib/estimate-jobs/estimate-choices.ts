@@ -43,7 +43,7 @@ export async function readChoices(trx: ShopTransaction, on: string): Promise<Est
   };
 }
 
-/** Value ÷ weight in stock, or the last average of what is used up; null if there never was any. */
+/** Value ÷ weight in stock, or the last average of what is used up; null if nothing ever came in. */
 function toAverage({ balanceKg, balanceAmount, averagePerKg }: StockRow): string | null {
   if (balanceKg === null || balanceAmount === null) return null;
   if (!D(balanceKg).gt(0)) return toText(averagePerKg);
