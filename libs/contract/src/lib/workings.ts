@@ -125,6 +125,8 @@ export const figureRefSchema = z.object({
   costItemId: idSchema.optional(),
   materialId: idSchema.optional(),
   issueId: idSchema.optional(),
+  /** Of `estimate.variance`. */
+  category: z.enum(JOB_COST_CATEGORIES).optional(),
   part: z.enum(['overhead', 'late']).optional(),
   from: localDateSchema.optional(),
   to: localDateSchema.optional(),

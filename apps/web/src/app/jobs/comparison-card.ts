@@ -75,6 +75,9 @@ import { toVarianceWords } from './variance-words';
     }
   `,
   styles: `
+    .why {
+      min-width: 210px;
+    }
     .lead {
       margin-bottom: 8px;
       max-width: 88ch;
