@@ -49,7 +49,10 @@ describe('The owner follows a figure to its cell', () => {
   });
 
   it('opens what labour has cost a job, from the grid, down to a cell of the workbook', async () => {
-    await shell.goTo('/jobs?status=finished');
+    await shell.goTo('/jobs');
+    await owner.page.getByLabel('View', { exact: true }).selectOption({ label: 'Cost by category' });
+    await owner.page.getByRole('button', { name: 'Finished', exact: true }).click();
+    await owner.page.waitForURL(/status=finished/);
     const grid = new DataGrid(owner.page, 'Jobs');
     const labour = grid.cell(0, 'labour').locator('button.figure');
     const cents = toCents((await labour.textContent()) ?? '');
