@@ -111,10 +111,10 @@ const decimalInput = (integerDigits: number, places: number, example: string) =>
   z
     .string()
     .trim()
-    .regex(
-      new RegExp(`^\\d{1,${integerDigits}}(\\.\\d{1,${places}})?$`),
-      `Write a number of 0 or more with at most ${places} decimals, for example ${example}.`,
-    );
+    .regex(new RegExp(`^\\d{1,${integerDigits}}(\\.\\d{1,${places}})?$`), {
+      error: `Write a number of 0 or more with at most ${places} decimals, for example ${example}.`,
+      abort: true,
+    });
 export const machineRateBasisInputSchema = z
   .object({
     price: positive(amountInputSchema, 'The price must be above 0.'),

@@ -141,7 +141,10 @@ export const payrollHoursInputSchema = z.object({
   hours: z
     .string()
     .trim()
-    .regex(/^\d{1,3}(\.\d{1,4})?$/, 'Write hours with at most 4 decimals, for example 168.5.')
+    .regex(/^\d{1,3}(\.\d{1,4})?$/, {
+      error: 'Write hours with at most 4 decimals, for example 168.5.',
+      abort: true,
+    })
     .refine((text) => Number(text) <= 744, 'A month has at most 744 hours.')
     .nullable(),
 });

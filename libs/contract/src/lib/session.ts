@@ -29,7 +29,10 @@ export type Shop = z.infer<typeof shopSchema>;
 const thresholdInputSchema = z
   .string()
   .trim()
-  .regex(/^\d{1,3}(\.\d{1,2})?$/, 'Write hours with at most 2 decimals, for example 40.')
+  .regex(/^\d{1,3}(\.\d{1,2})?$/, {
+    error: 'Write hours with at most 2 decimals, for example 40.',
+    abort: true,
+  })
   .refine(
     (text) => Number(text) > 0 && Number(text) <= 168,
     'Must be above 0 and at most 168, the hours of a week.',
