@@ -189,7 +189,7 @@ const DATES: readonly GridColumn<Job>[] = [
 ];
 
 function toDateColumn(id: JobSort, header: string, value: GridColumn<Job>['value']): GridColumn<Job> {
-  return { id, header, kind: 'date', value, isSortable: true, width: 108 };
+  return { id, header, kind: 'date', value, isSortable: true, width: 120 };
 }
 
 function toGridColumn({ field, header, figure, kind, width, rest }: FigureColumn): GridColumn<Job> {
