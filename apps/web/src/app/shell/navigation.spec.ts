@@ -10,13 +10,13 @@ describe('the rail', () => {
     expect(pathsOf('owner')).toEqual(NAVIGATION.flatMap((group) => group.pages.map((page) => page.path)));
   });
 
-  it('shows an operator the own hours, and no group without a page', () => {
-    expect(pathsOf('operator')).toEqual(['/hours']);
-    expect(listNavigation('operator')).toHaveLength(1);
+  it('shows an operator the own hours and Forming, and no group without a page', () => {
+    expect(pathsOf('operator')).toEqual(['/hours', '/forming']);
+    expect(listNavigation('operator').map(({ label }) => label)).toEqual(['Money', 'Shop']);
   });
 
   it('shows the lead no wages and no payback', () => {
-    expect(pathsOf('lead')).toEqual(['/jobs', '/hours', '/machines', '/materials']);
+    expect(pathsOf('lead')).toEqual(['/jobs', '/hours', '/forming', '/machines', '/materials']);
   });
 
   it.each(ROLES)('leads the %s to a page that the role may open', (role) => {

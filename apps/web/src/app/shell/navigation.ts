@@ -22,7 +22,13 @@ export const NAVIGATION: readonly NavigationGroup[] = [
       { path: '/hours', label: 'Hours', permission: 'hours.own' },
     ],
   },
-  { label: 'Shop', pages: [{ path: '/machines', label: 'Machines', permission: 'machines.view' }] },
+  {
+    label: 'Shop',
+    pages: [
+      { path: '/forming', label: 'Forming', permission: 'forming.use' },
+      { path: '/machines', label: 'Machines', permission: 'machines.view' },
+    ],
+  },
   {
     label: 'Books',
     pages: [

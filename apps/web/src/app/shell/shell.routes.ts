@@ -49,6 +49,11 @@ export const shellRoutes: Routes = [
         loadChildren: () => import('../machines/machines.routes').then((m) => m.machinesRoutes),
       },
       {
+        path: 'forming',
+        data: needs('forming.use'),
+        loadChildren: () => import('../forming/forming.routes').then((m) => m.formingRoutes),
+      },
+      {
         path: 'timesheets',
         data: needs('timesheets.use'),
         loadChildren: () => import('../timesheets/timesheets.routes').then((m) => m.timesheetsRoutes),

@@ -1,0 +1,107 @@
+import { ChangeDetectionStrategy, Component, computed, effect, inject, untracked } from '@angular/core';
+import { ReactiveFormsModule } from '@angular/forms';
+import { type BlankBend, FORMING_RULES, type SheetLayout } from '@brakeven/forming';
+import { MassPipe } from '@brakeven/ui';
+import { FormField } from '../../forms/form-field';
+import { SessionStore } from '../../session/session-store';
+import { keepInAddress, toTextForm } from '../address-form';
+import { toAngleWords, toLengthWords, toNumberWords, toPercentWords, toSizeWords } from '../forming-words';
+import { FormingStore } from '../forming-store';
+import { PrintButton } from '../print-button';
+import { showFieldWords } from '../show-field-words';
+import { BLANK_DEFAULTS, K_CHOICES, readBlankQuestion } from './blank-question';
+import { PartEditor } from './part-editor';
+import { toWays } from './profile-drawing';
+import { ProfileSketch } from './profile-sketch';
+
+/** The blank of a part: flanges and angles in, flat length, deductions, gauge positions and pieces out. */
+@Component({
+  selector: 'app-blank-page',
+  imports: [FormField, MassPipe, PartEditor, PrintButton, ProfileSketch, ReactiveFormsModule],
+  templateUrl: './blank-page.html',
+  styleUrl: './blank-page.scss',
+  changeDetection: ChangeDetectionStrategy.OnPush,
+})
+export class BlankPage {
+  private readonly store = inject(FormingStore);
+  protected readonly units = inject(SessionStore).shopFormat().units;
+  private readonly defaults = BLANK_DEFAULTS[this.units];
+  protected readonly form = toTextForm(this.defaults);
+  protected readonly texts = keepInAddress(this.form, this.defaults);
+  protected readonly question = computed(() => readBlankQuestion(this.texts(), this.store.facts()));
+  protected readonly materials = this.store.materialOptions;
+  protected readonly kChoices = K_CHOICES;
+  protected readonly rules = FORMING_RULES;
+  protected readonly ways = computed(() => toWays(this.texts().ways));
+  protected readonly shown = computed(() => this.toShown());
+  protected readonly partIssues = computed(() =>
+    this.question().issues.filter(({ field }) => ['flanges', 'angles'].includes(field)),
+  );
+
+  constructor() {
+    effect(() => {
+      const { issues } = this.question();
+      untracked(() => showFieldWords(this.form, issues));
+    });
+  }
+
+  /** The answer in words and in the shop's units. */
+  private toShown() {
+    const { answer, material } = this.question();
+    if (!answer) return null;
+    const { input, blank, k, layouts } = answer;
+    const outsideMm = input.flangesMm.reduce((total, flange) => total + flange, 0);
+    const length = (millimetres: number) => toLengthWords(millimetres, this.units);
+    return {
+      flat: length(blank.flatMm),
+      outside: `${input.flangesMm.map((flange) => toSizeWords(flange, this.units)).join(' + ')}`,
+      outsideSum: length(outsideMm),
+      deducted: length(blank.flatMm - outsideMm),
+      radius: length(input.radiusMm),
+      radiusRatio: toNumberWords(input.radiusMm / input.thicknessMm, 2),
+      k: toNumberWords(k.k, 3),
+      kWords: k.words,
+      kSpread: k.spread && `${toNumberWords(k.spread.min, 3)} to ${toNumberWords(k.spread.max, 3)}`,
+      massKg: answer.massKg?.toFixed(6) ?? null,
+      words: `${material.name} ${toSizeWords(input.thicknessMm, this.units)}`,
+      bends: blank.bends.map((bend, index) => this.toShownBend(bend, index)),
+      layouts: layouts.map((layout) => this.toShownLayout(layout)),
+    };
+  }
+
+  private toShownBend(bend: BlankBend, index: number) {
+    const length = (millimetres: number) => toLengthWords(millimetres, this.units);
+    const isSharp = bend.convention === 'virtual-sharp';
+    return {
+      number: index + 1,
+      angle: toAngleWords(bend.insideAngle),
+      turned: toAngleWords(bend.turned),
+      measured: isSharp ? 'to the sharp corner' : 'to the tangent of the bend',
+      rule: isSharp ? FORMING_RULES.bendDeduction : FORMING_RULES.acuteDeduction,
+      allowance: length(bend.allowanceMm),
+      deduction: length(bend.deductionMm),
+      gauge: length(bend.gaugeMm),
+      gaugeTurned: length(bend.gaugeTurnedRoundMm),
+      line: length(bend.bendLineMm),
+    };
+  }
+
+  private toShownLayout(layout: SheetLayout) {
+    const offcuts = layout.offcuts.map(
+      ({ widthMm, lengthMm }) =>
+        `${toSizeWords(round(widthMm), this.units)} × ${toSizeWords(round(lengthMm), this.units)}`,
+    );
+    return {
+      grain: layout.grain === 'bends-across-grain' ? 'Bends across the grain' : 'Bends along the grain',
+      pieces: layout.pieces,
+      rows: `${layout.acrossSheet} × ${layout.alongSheet}`,
+      yield: toPercentWords(layout.yield),
+      offcuts: offcuts.length > 0 ? offcuts.join(', ') : 'none',
+    };
+  }
+}
+
+/** An offcut to a tenth of a millimetre is near enough. */
+function round(millimetres: number): number {
+  return Math.round(millimetres * 10) / 10;
+}

@@ -1,0 +1,61 @@
+import { ChangeDetectionStrategy, Component, computed, inject } from '@angular/core';
+import { RouterLink, RouterLinkActive, RouterOutlet } from '@angular/router';
+import { type Permission } from '@brakeven/contract';
+import { LoadingSkeleton, PageHeader } from '@brakeven/ui';
+import { SessionStore } from '../session/session-store';
+import { LoadError } from '../shell/load-error';
+import { FormingCaution } from './forming-caution';
+import { FormingStore } from './forming-store';
+
+interface FormingPart {
+  path: string;
+  label: string;
+  permission: Permission;
+}
+
+const PARTS: readonly FormingPart[] = [
+  { path: 'fit', label: 'Will it fit', permission: 'forming.use' },
+  { path: 'blank', label: 'Blank', permission: 'forming.use' },
+];
+
+/** The frame of Forming: its parts as links, the part chosen, and what must be said of all of them. */
+@Component({
+  selector: 'app-forming-page',
+  imports: [
+    FormingCaution,
+    LoadError,
+    LoadingSkeleton,
+    PageHeader,
+    RouterLink,
+    RouterLinkActive,
+    RouterOutlet,
+  ],
+  template: `
+    <app-page-header title="Forming">
+      Settle the bend before metal is cut. Angles are inside angles of the finished part: 180° is flat, and
+      ‘turned’ is 180° minus it.
+    </app-page-header>
+    <nav aria-label="Parts of Forming">
+      @for (part of parts(); track part.path) {
+        <a [routerLink]="part.path" routerLinkActive="here" ariaCurrentWhenActive="page">{{ part.label }}</a>
+      }
+    </nav>
+    <app-forming-caution />
+    <div class="part">
+      @if (store.reference.error(); as error) {
+        <app-load-error [error]="error" (retried)="store.reload()" />
+      } @else if (store.reference.hasValue()) {
+        <router-outlet />
+      } @else {
+        <app-loading-skeleton [lines]="10" />
+      }
+    </div>
+  `,
+  styleUrl: './forming-page.scss',
+  changeDetection: ChangeDetectionStrategy.OnPush,
+})
+export class FormingPage {
+  private readonly session = inject(SessionStore);
+  protected readonly store = inject(FormingStore);
+  protected readonly parts = computed(() => PARTS.filter(({ permission }) => this.session.can(permission)));
+}
