@@ -48,7 +48,7 @@ export function toSizeWords(
 
 function toWordColumns(units: UnitSystem): GridColumn<StockMove>[] {
   return [
-    { id: 'movedOn', header: 'Date', kind: 'date', value: (move) => move.movedOn, width: 106 },
+    { id: 'movedOn', header: 'Date', kind: 'date', value: (move) => move.movedOn, width: 104 },
     {
       id: 'kind',
       header: 'Move',
@@ -68,7 +68,7 @@ function toWordColumns(units: UnitSystem): GridColumn<StockMove>[] {
       id: 'size',
       header: 'How much',
       value: (move) => [toSizeWords(move, units), move.note].filter(Boolean).join(' · '),
-      minWidth: 190,
+      minWidth: 176,
       flex: 2,
     },
     {
@@ -76,7 +76,7 @@ function toWordColumns(units: UnitSystem): GridColumn<StockMove>[] {
       header: 'Weight',
       kind: 'number',
       value: (move) => toMassWords(move.weightKg, units),
-      width: 108,
+      width: 102,
     },
   ];
 }
@@ -101,7 +101,7 @@ function toMoneyColumns(view: LedgerView): GridColumn<StockMove>[] {
       kind: 'money',
       value: (move) => move.amount,
       figure: (move) => (move.kind === 'lot' ? null : { figure: 'stock.issue', issueId: move.moveId }),
-      width: 108,
+      width: 102,
     },
   ];
 }
@@ -112,14 +112,14 @@ function toBalanceColumns({ units, withMoney }: LedgerView): GridColumn<StockMov
     header: 'Stock then',
     kind: 'number',
     value: ({ balanceKg }) => (balanceKg === null ? null : toMassWords(balanceKg, units)),
-    width: 108,
+    width: 102,
   };
   const value: GridColumn<StockMove> = {
     id: 'value',
     header: 'Value then',
     kind: 'money',
     value: (move) => move.balanceAmount,
-    width: 108,
+    width: 102,
   };
   return withMoney ? [stock, value] : [stock];
 }
@@ -129,5 +129,5 @@ const VOIDED: readonly GridColumn<StockMove>[] = [
 ];
 
 function toActionColumn(actions: (move: StockMove) => readonly GridAction[]): GridColumn<StockMove> {
-  return { id: 'actions', header: '', value: () => null, actions, width: 128 };
+  return { id: 'actions', header: '', value: () => null, actions, width: 146 };
 }

@@ -3,7 +3,6 @@ import {
   type Decimal,
   densityIn,
   type DensityUnit,
-  formatMass,
   formatNumber,
   massIn,
   type MassUnit,
@@ -27,7 +26,8 @@ export const DENSITY_UNITS: Record<UnitSystem, DensityUnit> = { us: 'lb/in³', m
 export const STRESS_UNITS: Record<UnitSystem, StressUnit> = { us: 'ksi', metric: 'MPa' };
 
 const SHOWN_DECIMALS = 4;
-const shown = (value: Decimal): string => D(roundHalfUp(value, SHOWN_DECIMALS)).toFixed();
+const shown = (value: Decimal, decimals = SHOWN_DECIMALS): string =>
+  D(roundHalfUp(value, decimals)).toFixed();
 
 /** How many kilograms the shop's unit of weight holds, exactly. */
 const kilogramsPerUnit = (units: UnitSystem): Decimal => toMass(1, MASS_UNITS[units]);
@@ -45,9 +45,11 @@ export function toKilograms(text: string, units: UnitSystem, kept: string | null
   return parsed.ok ? roundHalfUp(parsed.value, 10).toFixed() : null;
 }
 
-/** A weight for people, with its sign and unit. */
+/** A weight for people, with its sign and unit, always two decimals so that columns of them align. */
 export function toMassWords(kilograms: string, units: UnitSystem): string {
-  return formatMass(toMass(kilograms, 'kg'), units);
+  const unit = MASS_UNITS[units];
+  const decimals = { minimumFractionDigits: 2, maximumFractionDigits: 2 };
+  return `${formatNumber(massIn(toMass(kilograms, 'kg'), unit), 'en-US', decimals)}\u00a0${unit}`;
 }
 
 /** Money per kilogram as money per unit of weight of the shop, four decimals. */
@@ -96,7 +98,7 @@ export function toKilogramsPerM3(
 
 /** MPa as a field shows them in the shop's unit; empty for none. */
 export function toStressText(mpa: string | null, units: UnitSystem): string {
-  return mpa === null ? '' : shown(stressIn(toStress(mpa, 'MPa'), STRESS_UNITS[units]));
+  return mpa === null ? '' : shown(stressIn(toStress(mpa, 'MPa'), STRESS_UNITS[units]), 2);
 }
 
 /** What a field says in MPa; likewise. */
