@@ -1,6 +1,6 @@
 import { type TimesheetProblem } from '@brakeven/contract';
 import { addDays, formatHours, formatLocalDate, sum, toLocalDate } from '@brakeven/values';
-import { type AssessedRow } from './assess-timesheet';
+import { type ResolvedRow } from './resolve-row';
 
 /**
  * One warning for all rows that would go in for a month that is closed: they are taken, and posted late. It points
@@ -8,7 +8,7 @@ import { type AssessedRow } from './assess-timesheet';
  */
 export function listLateWarnings(
   sheet: string,
-  rows: readonly AssessedRow[],
+  rows: readonly (ResolvedRow & { state: 'ready' | 'already-there' | 'refused' })[],
   closedThrough: string | null,
 ): TimesheetProblem[] {
   if (closedThrough === null) return [];
