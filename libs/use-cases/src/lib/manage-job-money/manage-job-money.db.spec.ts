@@ -76,6 +76,26 @@ describe('outside services', () => {
     expect(await getJobCost(shop.context(), '1042')).toMatchObject({ outside: '0.00', total: '0.00' });
   });
 
+  it('hold the opening of their job: it is not moved past them', async () => {
+    await createOutsideService(shop.context(), { jobId }, service());
+    const job = {
+      number: '1042',
+      customer: null,
+      title: 'Rack shelves',
+      quantity: null,
+      dueOn: null,
+      quotedPrice: null,
+      isBillable: true,
+      status: 'open',
+    } as const;
+    const open = (openedOn: string) => updateJob(shop.context(), { jobId }, { ...job, openedOn });
+    await expect(open('2026-03-11')).rejects.toMatchObject({
+      code: 'invalid_input',
+      issues: [{ field: 'openedOn', message: expect.stringContaining('has rows dated Mar 10, 2026') }],
+    });
+    expect(await open('2026-03-10')).toMatchObject({ openedOn: '2026-03-10' });
+  });
+
   it('are not dated before the job, nor after today, nor without an amount', async () => {
     const early = createOutsideService(shop.context(), { jobId }, service({ incurredOn: '2026-02-28' }));
     await expect(early).rejects.toMatchObject({

@@ -9,6 +9,7 @@ import {
 import { v7 as newId } from 'uuid';
 import { inShopOf, type ShopContext } from '../context';
 import { refusingConflicts } from '../refuse-conflict';
+import { refusingRows } from '../refuse-rows';
 import { getJobRow } from './get-job';
 import { toJob } from './job-dto';
 
@@ -33,15 +34,17 @@ export function createJob(context: ShopContext, body: JobInput): Promise<Job> {
 
 /**
  * Changes a job; making it billable or not marks its days for the next rollup.
- * @throws AppError `not_found`, `conflict` (number taken)
+ * @throws AppError `not_found`, `conflict` (number taken), `invalid_input` (opened after its own dated rows)
  */
 export function updateJob(context: ShopContext, { jobId }: { jobId: string }, body: JobInput): Promise<Job> {
-  return refusingConflicts(CONFLICTS, () =>
-    inShopOf(context, async (trx) => {
-      const isThere = await updateJobRow(trx, jobId, await toValues(context, trx, body));
-      if (!isThere) throw new AppError('not_found', 'There is no such job. Load the jobs again.');
-      return toJob(context, await getJobRow(trx, { jobId }));
-    }),
+  return refusingRows(context.shop.units, { 'before-job': 'openedOn' }, () =>
+    refusingConflicts(CONFLICTS, () =>
+      inShopOf(context, async (trx) => {
+        const isThere = await updateJobRow(trx, jobId, await toValues(context, trx, body));
+        if (!isThere) throw new AppError('not_found', 'There is no such job. Load the jobs again.');
+        return toJob(context, await getJobRow(trx, { jobId }));
+      }),
+    ),
   );
 }
 
