@@ -6,6 +6,7 @@ import {
   outsideServiceListSchema,
 } from '@brakeven/contract';
 import { createTestShop, type TestShop } from '@brakeven/test-shop';
+import { updateJob } from '../show-jobs/change-job';
 import { getJobCost } from '../show-jobs/job-costs';
 import { createInvoice, listInvoices, restoreInvoice, updateInvoice, voidInvoice } from './invoices';
 import {
