@@ -1,11 +1,13 @@
 import {
   type Database,
   changePassword,
+  closeMonth,
   createShop,
   createUser,
   importSetup,
   importTimesheet,
   listEmployees,
+  listMonths,
   listShops,
   listUsers,
   openShop,
@@ -14,7 +16,14 @@ import {
   type SheetReader,
   type ShopContext,
 } from '@brakeven/use-cases';
-import { addDays, formatLocalDate, type LocalDate, startOfWeek, todayIn } from '@brakeven/values';
+import {
+  addDays,
+  formatLocalDate,
+  type LocalDate,
+  startOfWeek,
+  todayIn,
+  toLocalDate,
+} from '@brakeven/values';
 import { writeSetupWorkbook, writeTimesheetWorkbook } from '@brakeven/workbook';
 import { buildCosts } from './build-costs';
 import { buildSetup } from './build-setup';
@@ -27,6 +36,7 @@ import { SHOP, SIGN_INS, WEEKS } from './story';
 
 const SEED = 20260301;
 const MONDAY = 1;
+const DAYS_LEFT_OPEN = 62;
 
 export interface DemoTools {
   db: Database;
@@ -79,6 +89,7 @@ export async function seedDemoShop(tools: DemoTools): Promise<'made' | 'there' |
   if ((await listUsers(context)).length >= SIGN_INS.length) return 'there';
   const demo = planDemo(todayIn(SHOP.timeZone, tools.now));
   await importHistory(asBookkeeper(context), demo, tools);
+  await closeOldMonths(asBookkeeper(context), addDays(todayIn(SHOP.timeZone, tools.now), -DAYS_LEFT_OPEN));
   await createSignIns(context);
   return 'made';
 }
@@ -122,6 +133,17 @@ async function importHistory(context: ShopContext, demo: Demo, tools: DemoTools)
   }
   await importWorkbook(false);
 }
+
+/** As the bookkeeper would have: in order, the latest months left open for whoever tries it. */
+async function closeOldMonths(context: ShopContext, before: LocalDate): Promise<void> {
+  for (;;) {
+    const next = (await listMonths(context)).months.find(({ isNext }) => isNext);
+    if (!next || startOfNextMonth(next.month) > before) return;
+    await closeMonth(context, { month: next.month });
+  }
+}
+
+const startOfNextMonth = (month: string): string => addDays(toLocalDate(`${month}-28`), 4).slice(0, 8) + '01';
 
 async function createSignIns(context: ShopContext): Promise<void> {
   const employees = await listEmployees(context);
