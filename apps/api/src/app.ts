@@ -7,6 +7,7 @@ import { type Logger } from 'pino';
 import { type Api } from './api';
 import { mountAudit } from './audit/audit.routes';
 import { mountCustomers } from './customers/customers.routes';
+import { mountForming } from './forming/forming.routes';
 import { mountHours } from './hours/hours.routes';
 import { mountJobMoney } from './job-money/job-money.routes';
 import { mountJobs } from './jobs/jobs.routes';
@@ -99,6 +100,7 @@ const RESOURCES: readonly ((api: Api) => void)[] = [
   mountJobMoney,
   mountMaterials,
   mountCustomers,
+  mountForming,
   mountHours,
   mountTimesheets,
   mountMonths,

@@ -47,8 +47,20 @@ export * from './lib/manage-stock/material-issues';
 export { createMaterial, getMaterial, listMaterials, updateMaterial } from './lib/manage-stock/materials';
 export * from './lib/manage-stock/sheet-lots';
 export * from './lib/manage-stock/stock-moves';
+export { createDie, deleteDie, updateDie } from './lib/manage-tooling/dies';
+export { createPunch, deletePunch, updatePunch } from './lib/manage-tooling/punches';
+export * from './lib/manage-tooling/reference';
 export * from './lib/manage-users/users';
 export * from './lib/open-database';
+export { getForceDistribution } from './lib/press-runs/force-distribution';
+export { createPressRun } from './lib/press-runs/log-press-run';
+export {
+  getPressRunChoices,
+  getSetupCard,
+  listPressRuns,
+  restorePressRun,
+  voidPressRun,
+} from './lib/press-runs/press-runs';
 export { type RefusedFields, refusingRows, toRefusalWords } from './lib/refuse-rows';
 export * from './lib/roll-up-costs/get-rollup-status';
 export * from './lib/roll-up-costs/run-rollup';
@@ -74,4 +86,13 @@ export * from './lib/sign-in/sign-in';
 export { getImportFile } from './lib/timesheet-history/get-import-file';
 export * from './lib/timesheet-history/get-sheet-excerpt';
 export { getImport, listImports } from './lib/timesheet-history/list-imports';
+export { getDepthCard, updateDepthCard } from './lib/trial-bends/depth-card';
+export { getDepthFit } from './lib/trial-bends/depth-fit';
+export { pasteTrialBends } from './lib/trial-bends/paste-trial-bends';
+export {
+  createTrialBend,
+  listTrialBends,
+  restoreTrialBend,
+  voidTrialBend,
+} from './lib/trial-bends/trial-bends';
 export * from './lib/workbook-reader';

@@ -127,8 +127,11 @@ function readAngle(text: string): number | undefined {
   return read.ok ? read.value : undefined;
 }
 
-/** A reading of the ram may lie below nought; ranges are checked with the fit. */
-function readLengthMm(text: string, unit: LengthUnit): number | undefined {
+/**
+ * Reads a length in mm that may lie below nought, as a reading of the ram may; a bare number is in `unit`. Undefined
+ * for what is no length. Ranges are checked with the fit.
+ */
+export function readLengthMm(text: string, unit: LengthUnit): number | undefined {
   const [, sign, rest = ''] = /^([-−])?\s*(.*)$/.exec(text.trim()) ?? [];
   const read = parseLength(rest, unit);
   if (!read.ok || /^[+−-]/.test(rest)) return undefined;
