@@ -15,7 +15,12 @@ interface FormingPart {
 
 const PARTS: readonly FormingPart[] = [
   { path: 'fit', label: 'Will it fit', permission: 'forming.use' },
+  { path: 'depth', label: 'Ram depth', permission: 'forming.use' },
+  { path: 'card', label: 'Card for the press', permission: 'forming.use' },
   { path: 'blank', label: 'Blank', permission: 'forming.use' },
+  { path: 'runs', label: 'Press runs', permission: 'press-runs.log' },
+  { path: 'setup-card', label: 'Set-up card', permission: 'press-runs.log' },
+  { path: 'tooling', label: 'Dies and punches', permission: 'forming.use' },
 ];
 
 /** The frame of Forming: its parts as links, the part chosen, and what must be said of all of them. */

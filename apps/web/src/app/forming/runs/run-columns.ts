@@ -1,0 +1,127 @@
+import { type PressRun } from '@brakeven/contract';
+import { type GridColumn } from '@brakeven/ui';
+import { type UnitSystem } from '@brakeven/values';
+import { toForceBand, toForceWords, toPercentWords, toSizeWords } from '../forming-words';
+
+/** Who looks at the runs, and what they may do with one. */
+export interface RunView {
+  units: UnitSystem;
+  canOpenJobs: boolean;
+  isNarrow: boolean;
+  /** Absent for those who may not. */
+  voidRun?: (run: PressRun) => void;
+}
+
+type RunColumn = GridColumn<PressRun>;
+
+/** The columns of the press runs: force observed beside force computed, and the share of the rating. */
+export function toRunColumns(view: RunView): RunColumn[] {
+  const size = (millimetres: string) => toSizeWords(Number(millimetres), view.units);
+  const columns: RunColumn[] = [
+    { id: 'runOn', header: 'Run on', kind: 'date', value: (run) => run.runOn, isSortable: true, width: 122 },
+    {
+      id: 'job',
+      header: 'Job',
+      value: (run) => `${run.jobNumber} ${run.jobTitle}`,
+      href: (run) => (view.canOpenJobs ? `/jobs/${run.jobId}` : null),
+      isSortable: true,
+      minWidth: 130,
+      flex: 2,
+    },
+    { id: 'machine', header: 'Machine', value: (run) => run.machine, isSortable: true, width: 104 },
+    {
+      id: 'material',
+      header: 'Material',
+      value: (run) => `${size(run.thicknessMm)} ${run.material}`,
+      isSortable: true,
+      minWidth: 140,
+      flex: 2,
+    },
+    {
+      id: 'openingMm',
+      header: 'Opening',
+      value: (run) => size(run.openingMm),
+      isSortable: true,
+      width: 104,
+    },
+    {
+      id: 'bendLengthMm',
+      header: 'Bend length',
+      value: (run) => size(run.bendLengthMm),
+      isSortable: true,
+      width: 116,
+    },
+    {
+      id: 'strokes',
+      header: 'Strokes',
+      kind: 'count',
+      value: (run) => run.strokes,
+      isSortable: true,
+      width: 92,
+    },
+    {
+      id: 'pieces',
+      header: 'Pieces',
+      kind: 'count',
+      value: (run) => run.pieces,
+      isSortable: true,
+      width: 88,
+    },
+    {
+      id: 'computed',
+      header: 'Force computed',
+      value: (run) => toForceBand(Number(run.forceLowKn), Number(run.forceHighKn), view.units),
+      width: 152,
+    },
+    {
+      id: 'forceUsedKn',
+      header: 'Force shown',
+      value: (run) =>
+        run.highestForceKn === null ? null : toForceWords(Number(run.highestForceKn), view.units),
+      isSortable: true,
+      width: 118,
+    },
+    toShareColumn(),
+    {
+      id: 'isGood',
+      header: 'Run',
+      value: (run) => (run.isGood ? 'good' : 'not good'),
+      tone: (run) => (run.isGood ? 'good' : 'loss'),
+      width: 96,
+    },
+  ];
+  return [...columns.filter(({ id }) => !view.isNarrow || NARROW.includes(id)), ...toActions(view)];
+}
+
+/** On a telephone: what was bent, and what it took. */
+const NARROW = ['runOn', 'job', 'forceUsedKn', 'share'];
+
+function toShareColumn(): RunColumn {
+  return {
+    id: 'share',
+    header: 'Of the rating',
+    value: (run) =>
+      run.share === null ? 'no rating' : `${toPercentWords(run.share)} of the ${run.ratingOf}`,
+    tone: (run) => toShareTone(run),
+    isSortable: true,
+    width: 142,
+  };
+}
+
+function toShareTone({ share, isAboveLine }: PressRun): 'loss' | 'plan' | null {
+  if (share !== null && share > 1) return 'loss';
+  return isAboveLine ? 'plan' : null;
+}
+
+function toActions({ voidRun }: RunView): RunColumn[] {
+  if (!voidRun) return [];
+  return [
+    {
+      id: 'actions',
+      header: '',
+      value: () => null,
+      actions: (run) => [{ label: 'Void', run: () => voidRun(run) }],
+      width: 84,
+    },
+  ];
+}

@@ -1,0 +1,132 @@
+import { ChangeDetectionStrategy, Component, computed, effect, inject, untracked } from '@angular/core';
+import { rxResource, toSignal } from '@angular/core/rxjs-interop';
+import { ReactiveFormsModule } from '@angular/forms';
+import { MAT_DIALOG_DATA } from '@angular/material/dialog';
+import { formatHours, formatLocalDate, todayIn, toLocalDate } from '@brakeven/values';
+import { startWith } from 'rxjs';
+import { PressRunsApi } from '../../api/press-runs-api';
+import { FormDialog } from '../../forms/form-dialog';
+import { FormField } from '../../forms/form-field';
+import { SessionStore } from '../../session/session-store';
+import { LoadError } from '../../shell/load-error';
+import { type FitFacts } from '../fit/fit-question';
+import { toForceBand } from '../forming-words';
+import { toOpeningWords } from '../press-tooling';
+import { previewForce, toRunForm, toRunInput } from './run-form';
+
+/** Logs a run: what was bent with what, and the highest force that the gauge showed. */
+@Component({
+  selector: 'app-run-dialog',
+  imports: [FormDialog, FormField, LoadError, ReactiveFormsModule],
+  template: `
+    @let fields = form.controls;
+    <app-form-dialog heading="Log a press run" submitLabel="Log the run" [form]="form" [save]="save">
+      @if (choices.error(); as error) {
+        <app-load-error lead [error]="error" (retried)="choices.reload()" />
+      }
+      <app-form-field class="wide" label="Job" [control]="fields.jobId" [options]="jobs()" />
+      <app-form-field label="Machine" [control]="fields.machine" [options]="presses" />
+      <app-form-field label="Die opening" [control]="fields.dieOpeningId" [options]="openings()" />
+      <app-form-field label="Punch" [control]="fields.punchId" [options]="punches()" />
+      <app-form-field label="Material" [control]="fields.materialCode" [options]="materials" />
+      <app-form-field label="Thickness" hint="10 ga, 3/16, 3 mm" [control]="fields.thickness" />
+      <app-form-field label="Bend length" hint="48 in, 1200 mm" [control]="fields.bendLength" />
+      <app-form-field label="Strokes" [isNumber]="true" [control]="fields.strokes" />
+      <app-form-field label="Pieces" [isNumber]="true" [control]="fields.pieces" />
+      <app-form-field
+        label="Highest force shown"
+        [hint]="facts.units === 'us' ? 'US tons; empty if nobody looked' : 'kN; empty if nobody looked'"
+        [control]="fields.highestForce"
+      />
+      <app-form-field label="Run on" type="date" [control]="fields.runOn" />
+      <app-form-field class="wide" label="Time entry" [control]="fields.entryId" [options]="entries()" />
+      <app-form-field class="wide" label="Note" hint="may stay empty" [control]="fields.note" />
+      <p class="check">
+        <label>
+          <input type="checkbox" [formControl]="fields.isGood" /> A good run: the next set-up follows it
+        </label>
+      </p>
+      <p class="preview" role="status">
+        @if (force(); as words) {
+          The rules expect {{ words }}.
+        }
+      </p>
+    </app-form-dialog>
+  `,
+  styles: `
+    .check {
+      padding: 6px 0;
+    }
+    .preview {
+      min-height: 22px;
+      font-weight: 500;
+    }
+  `,
+  changeDetection: ChangeDetectionStrategy.OnPush,
+})
+export class RunDialog {
+  protected readonly facts = inject<FitFacts>(MAT_DIALOG_DATA);
+  private readonly api = inject(PressRunsApi);
+  protected readonly form = toRunForm(this.facts, todayIn(inject(SessionStore).shopFormat().timeZone));
+  private readonly value = toSignal(this.form.valueChanges.pipe(startWith(null)));
+
+  private readonly jobId = computed(() => {
+    this.value();
+    return this.form.controls.jobId.value;
+  });
+  protected readonly choices = rxResource({
+    params: () => ({ jobId: this.jobId() || undefined }),
+    stream: ({ params }) => this.api.getChoices(params.jobId),
+    defaultValue: { jobs: [], entries: [] },
+  });
+  private readonly offered = computed(() =>
+    this.choices.hasValue() ? this.choices.value() : { jobs: [], entries: [] },
+  );
+  protected readonly jobs = computed(() => [
+    { value: '', label: '' },
+    ...this.offered().jobs.map(({ jobId, number, title }) => ({ value: jobId, label: `${number} ${title}` })),
+  ]);
+  protected readonly entries = computed(() => [
+    { value: '', label: 'none' },
+    ...this.offered().entries.map((entry) => ({
+      value: entry.entryId,
+      label: `${formatLocalDate(toLocalDate(entry.workedOn))} · ${entry.employee} · ${entry.operation} · ${formatHours(entry.hours)} h`,
+    })),
+  ]);
+  private readonly press = computed(() => {
+    this.value();
+    return this.facts.presses.find(({ code }) => code === this.form.controls.machine.value);
+  });
+  protected readonly presses = this.facts.presses.map(({ code, name }) => ({ value: code, label: name }));
+  protected readonly materials = this.facts.materials.map(({ code, name }) => ({ value: code, label: name }));
+  protected readonly openings = computed(() =>
+    (this.press()?.openings ?? []).map((opening) => ({
+      value: opening.code,
+      label: toOpeningWords(opening, this.facts.units),
+    })),
+  );
+  protected readonly punches = computed(() => [
+    { value: '', label: 'not said' },
+    ...(this.press()?.punches ?? []).map(({ code, name }) => ({ value: code, label: name })),
+  ]);
+  protected readonly force = computed(() => {
+    this.value();
+    const force = previewForce(this.form, this.facts);
+    return force && toForceBand(force.lowKn, force.highKn, this.facts.units);
+  });
+
+  constructor() {
+    // Tools belong to a machine: another one starts with its own first opening and with no punch.
+    effect(() => {
+      const [press, { dieOpeningId, punchId }] = [this.press(), this.form.controls];
+      untracked(() => {
+        if (!press?.openings.some(({ code }) => code === dieOpeningId.value)) {
+          dieOpeningId.setValue(press?.openings[0]?.code ?? '');
+        }
+        if (!press?.punches.some(({ code }) => code === punchId.value)) punchId.setValue('');
+      });
+    });
+  }
+
+  protected readonly save = () => this.api.create(toRunInput(this.form, this.facts));
+}

@@ -1,0 +1,175 @@
+import {
+  ChangeDetectionStrategy,
+  Component,
+  computed,
+  DOCUMENT,
+  inject,
+  input,
+  viewChild,
+} from '@angular/core';
+import { rxResource, takeUntilDestroyed } from '@angular/core/rxjs-interop';
+import { MatDialog } from '@angular/material/dialog';
+import { Router } from '@angular/router';
+import { type PressRun, type PressRunFilter, type PressRunQuery } from '@brakeven/contract';
+import {
+  Chart,
+  type ChartPalette,
+  EmptyState,
+  Grid,
+  type GridOrder,
+  LoadingSkeleton,
+  type PageSource,
+} from '@brakeven/ui';
+import { debounceTime, Subject } from 'rxjs';
+import { PressRunsApi } from '../../api/press-runs-api';
+import { toProblemSentence } from '../../api/problem-text';
+import { SessionStore } from '../../session/session-store';
+import { LoadError } from '../../shell/load-error';
+import { Notifier } from '../../shell/notifier';
+import { toPercentWords, toSizeWords } from '../forming-words';
+import { FormingStore } from '../forming-store';
+import { toDistributionOption, toDistributionTable, toDistributionWords } from './distribution-option';
+import { toRunColumns } from './run-columns';
+import { RunDialog } from './run-dialog';
+
+const DEFAULT_ORDER: GridOrder = { sort: 'runOn', direction: 'desc' };
+
+/** Press runs: what was bent with what, and how much of the rating it took. */
+@Component({
+  selector: 'app-runs-page',
+  imports: [Chart, EmptyState, Grid, LoadError, LoadingSkeleton],
+  templateUrl: './runs-page.html',
+  styleUrl: './runs-page.scss',
+  changeDetection: ChangeDetectionStrategy.OnPush,
+})
+export class RunsPage {
+  readonly search = input<string>();
+  readonly machineId = input<string>();
+  readonly dieOpeningId = input<string>();
+  readonly materialCode = input<string>();
+  readonly aboveLine = input<string>();
+  readonly sort = input<string>();
+  readonly direction = input<string>();
+
+  private readonly api = inject(PressRunsApi);
+  private readonly store = inject(FormingStore);
+  private readonly session = inject(SessionStore);
+  private readonly notifier = inject(Notifier);
+  private readonly dialog = inject(MatDialog);
+  private readonly router = inject(Router);
+  private readonly grid = viewChild<Grid<PressRun>>(Grid);
+  private readonly isNarrow = inject(DOCUMENT).defaultView?.matchMedia('(width < 640px)').matches ?? false;
+  private readonly typed = new Subject<string>();
+  private readonly units = this.session.shopFormat().units;
+
+  protected readonly canSeeAll = computed(() => this.session.can('press-runs.view'));
+  protected readonly line = computed(() => toPercentWords(this.store.lineShare()));
+  protected readonly presses = this.store.presses;
+  protected readonly materials = this.store.materials;
+  protected readonly openings = computed(() =>
+    this.store.presses().flatMap((press) =>
+      press.openings.map((opening) => ({
+        id: opening.code,
+        label: `${press.name}: ${toSizeWords(opening.openingMm, this.units)}, ${opening.dieName}`,
+      })),
+    ),
+  );
+  protected readonly filter = computed<PressRunFilter>(() => ({
+    search: this.search(),
+    machineId: this.machineId(),
+    dieOpeningId: this.dieOpeningId(),
+    materialCode: this.materialCode(),
+    aboveLine: this.aboveLine() === 'true' ? 'true' : undefined,
+  }));
+  protected readonly isFiltered = computed(() => Object.values(this.filter()).some(Boolean));
+  protected readonly source = computed<PageSource<PressRun>>(() => {
+    const filter = this.filter();
+    return { load: (request) => this.api.list({ ...filter, ...(request as Partial<PressRunQuery>) }) };
+  });
+  protected readonly order = computed<GridOrder>(() =>
+    this.sort()
+      ? { sort: this.sort() ?? '', direction: this.direction() === 'asc' ? 'asc' : 'desc' }
+      : DEFAULT_ORDER,
+  );
+  protected readonly columns = computed(() =>
+    toRunColumns({
+      units: this.units,
+      canOpenJobs: this.session.can('jobs.view'),
+      isNarrow: this.isNarrow,
+      voidRun: (run) => this.void(run),
+    }),
+  );
+  protected readonly distribution = rxResource({
+    params: () => (this.canSeeAll() ? this.filter() : undefined),
+    stream: ({ params }) => this.api.getDistribution(params),
+  });
+  protected readonly chart = computed(() => {
+    if (!this.distribution.hasValue()) return null;
+    const facts = this.distribution.value();
+    return {
+      runs: facts.runs,
+      above: facts.runsAboveLine,
+      summary: toDistributionWords(facts),
+      build: (palette: ChartPalette) => toDistributionOption(facts, palette),
+      table: toDistributionTable(facts),
+    };
+  });
+  protected readonly rowId = (run: PressRun): string => run.pressRunId;
+  protected readonly rowTone = (run: PressRun): 'problem' | null => (run.isAboveLine ? 'problem' : null);
+
+  constructor() {
+    this.typed
+      .pipe(debounceTime(300), takeUntilDestroyed())
+      .subscribe((search) => this.ask({ search: search.trim() || null }));
+  }
+
+  protected ask(queryParams: Record<string, string | null>): void {
+    void this.router.navigate([], { queryParams, queryParamsHandling: 'merge', replaceUrl: true });
+  }
+
+  protected searchFor(text: string): void {
+    this.typed.next(text);
+  }
+
+  protected clear(): void {
+    void this.router.navigate([], { queryParams: {} });
+  }
+
+  protected follow(href: string): void {
+    void this.router.navigateByUrl(href);
+  }
+
+  protected log(): void {
+    this.dialog
+      .open<RunDialog, unknown, PressRun>(RunDialog, { data: this.store.facts(), width: '640px' })
+      .afterClosed()
+      .subscribe((run) => {
+        if (!run) return;
+        this.reload();
+        const share = run.share === null ? '' : ` It took ${toPercentWords(run.share)} of the rating.`;
+        this.notifier.say(`The run is logged.${share}`);
+      });
+  }
+
+  private void(run: PressRun): void {
+    this.api.void(run.pressRunId).subscribe({
+      next: () => {
+        this.reload();
+        this.notifier.say(`Voided the run of ${run.jobNumber}.`, () => this.restore(run));
+      },
+      error: (error: unknown) => this.notifier.warn(toProblemSentence(error)),
+    });
+  }
+
+  private restore({ pressRunId }: PressRun): void {
+    this.api.restore(pressRunId).subscribe({
+      next: () => this.reload(),
+      error: (error: unknown) => this.notifier.warn(toProblemSentence(error)),
+    });
+  }
+
+  private reload(): void {
+    this.grid()?.refresh();
+    this.distribution.reload();
+  }
+}
