@@ -10,6 +10,7 @@ import * as createJobMoney from './202612011010-create-job-money';
 import * as closeMonths from './202612011020-close-months';
 import * as markMoneyDays from './202612011030-mark-money-days';
 import * as showOvertimeSettings from './202612011040-show-overtime-settings';
+import * as keepCorrections from './202612011050-keep-corrections';
 import * as createTooling from './202612011100-create-tooling';
 import * as createBends from './202612011105-create-bends';
 
@@ -26,6 +27,7 @@ export const migrations: Record<string, Migration> = {
   '202612011020-close-months': closeMonths,
   '202612011030-mark-money-days': markMoneyDays,
   '202612011040-show-overtime-settings': showOvertimeSettings,
+  '202612011050-keep-corrections': keepCorrections,
   '202612011100-create-tooling': createTooling,
   '202612011105-create-bends': createBends,
 };

@@ -16,7 +16,7 @@ export type VoidableTable = keyof typeof ID_COLUMNS;
 /** What a new row holds besides shop and id. */
 export type DatedRowValues<T extends VoidableTable> = Omit<
   Insertable<Tables[T]>,
-  'shopId' | (typeof ID_COLUMNS)[T] | 'createdAt' | 'voidedAt' | 'voidedBy'
+  'shopId' | (typeof ID_COLUMNS)[T] | 'createdAt' | 'voidedAt' | 'voidedBy' | 'corrects'
 >;
 
 /** Tells whether a row is there and voided, and keeps others from changing it until the transaction ends. */
@@ -61,11 +61,28 @@ export async function replaceDatedRow<T extends VoidableTable>(
     with voided as (
       update ${sql.table(table)} set voided_at = now(), voided_by = ${voidedBy}
       where ${idColumn} = ${id}::uuid and voided_at is null
-      returning shop_id
+      returning shop_id, coalesce(corrects, ${idColumn}) as corrects
     )
-    insert into ${sql.table(table)} (shop_id, ${idColumn}, ${sql.join(names.map((name) => sql.ref(name)))})
-    select shop_id, ${newId}, ${sql.join(Object.values(values))} from voided`.execute(trx);
+    insert into ${sql.table(table)} (shop_id, ${idColumn}, corrects, ${sql.join(names.map((name) => sql.ref(name)))})
+    select shop_id, ${newId}, corrects, ${sql.join(Object.values(values))} from voided`.execute(trx);
   return result.numAffectedRows === 1n;
+}
+
+/** Whether a row that took the place of this one, or the one that it took the place of, counts. */
+export async function hasLiveCorrection(
+  trx: ShopTransaction,
+  table: VoidableTable,
+  id: string,
+): Promise<boolean> {
+  const idColumn = ID_COLUMNS[table];
+  const { rows } = await sql`
+    select from ${sql.table(table)} of_row
+    join ${sql.table(table)} other
+      on coalesce(other.corrects, ${sql.ref(`other.${idColumn}`)}) = coalesce(of_row.corrects, ${sql.ref(`of_row.${idColumn}`)})
+    where ${sql.ref(`of_row.${idColumn}`)} = ${id}::uuid and ${sql.ref(`other.${idColumn}`)} <> ${id}::uuid
+      and other.voided_at is null
+    limit 1`.execute(trx);
+  return rows.length > 0;
 }
 
 /** Voids a row in a person's name, or restores it with null. */

@@ -31,6 +31,8 @@ export interface SheetLotTable {
   createdAt: Instant;
   voidedAt: InstantOrNull;
   voidedBy: string | null;
+  /** The first row that this one took the place of. */
+  corrects: string | null;
 }
 
 export interface MaterialIssueTable {
@@ -49,6 +51,8 @@ export interface MaterialIssueTable {
   createdAt: Instant;
   voidedAt: InstantOrNull;
   voidedBy: string | null;
+  /** The first row that this one took the place of. */
+  corrects: string | null;
 }
 
 /** The stock ledger, written by the database itself whenever lots or issues change. Signed as stock moves. */
@@ -78,6 +82,8 @@ export interface OutsideServiceTable {
   createdAt: Instant;
   voidedAt: InstantOrNull;
   voidedBy: string | null;
+  /** The first row that this one took the place of. */
+  corrects: string | null;
 }
 
 export interface InvoiceTable {
@@ -93,6 +99,8 @@ export interface InvoiceTable {
   createdAt: Instant;
   voidedAt: InstantOrNull;
   voidedBy: string | null;
+  /** The first row that this one took the place of. */
+  corrects: string | null;
 }
 
 export interface EstimateTable {

@@ -2,6 +2,7 @@ import { AppError } from '@brakeven/contract';
 import {
   type DatedRowValues,
   findDatedRow,
+  hasLiveCorrection,
   insertDatedRow,
   lockBooks,
   replaceDatedRow,
@@ -76,7 +77,7 @@ export function correctDatedRow<T extends VoidableTable>(
 
 /**
  * Voids a dated row, or takes the voiding back; doing it twice is doing it once.
- * @throws AppError `not_found`, `conflict` (what the books refuse)
+ * @throws AppError `not_found`; `conflict` (what the books refuse; to restore a row while a correction of it counts)
  */
 export async function setVoided<T extends VoidableTable>(
   context: ShopContext,
@@ -87,6 +88,10 @@ export async function setVoided<T extends VoidableTable>(
   await changeBooks(context, rows, tools, async (trx) => {
     const row = await getDatedRow(trx, rows, id);
     if (row.isVoided === isVoided) return;
+    if (!isVoided && (await hasLiveCorrection(trx, rows.table, id))) {
+      const message = `This ${rows.noun} was corrected, and what took its place counts. Change or void that one instead.`;
+      throw new AppError('conflict', message);
+    }
     await setDatedRowVoided(trx, rows.table, id, isVoided ? context.actor.name : null);
   });
 }

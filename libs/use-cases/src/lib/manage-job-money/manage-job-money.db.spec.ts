@@ -64,6 +64,10 @@ describe('outside services', () => {
       ['240.50', 'Test owner'],
       ['99.99', null],
     ]);
+    await expect(restoreOutsideService(shop.context(), added)).rejects.toMatchObject({
+      code: 'conflict',
+      message: expect.stringContaining('was corrected'),
+    });
     await voidOutsideService(shop.context(), corrected);
     expect(await listOutsideServices(shop.context(), { jobId })).toMatchObject({ total: '99.99' });
     await restoreOutsideService(shop.context(), corrected);
