@@ -55,21 +55,56 @@ async function fillEveryTable(shop: TestShop): Promise<void> {
   await shop.addOverheadRate({ validFrom: '2026-01-01', ratePerLabourHour: '10' });
   const { machineId } = ids;
   await shop.addMachineCostItem({ machineId, incurredOn: '2026-01-01', amount: '100', description: '' });
-  await shop.addMachineRate({
-    machineId,
-    validFrom: '2026-01-01',
-    machineHourRate: '1',
-    chargeOutRate: '2',
-    runningCostPerHour: '1',
-  });
-  const values: Record<string, string> = { ...toSnakeCase(ids), shop_id: shop.shop.shopId };
+  const rates = { machineHourRate: '1', chargeOutRate: '2', runningCostPerHour: '1' };
+  const machineRateId = await shop.addMachineRate({ machineId, validFrom: '2026-01-01', ...rates });
+  const values: Record<string, string> = {
+    ...toSnakeCase({ ...ids, ...(await addStockAndTools(shop, ids)), machineRateId }),
+    shop_id: shop.shop.shopId,
+  };
   await shop.inShop(async (trx) => {
     // The order lets whatever a row refers to come first.
-    for (const table of ['rollup_run', ...tables]) {
+    for (const table of ['rollup_run', 'user_account', ...tables]) {
       const { rows } = await sql`select 1 from ${sql.table(table)} limit 1`.execute(trx);
       if (rows.length === 0) await insertAnything(trx, table, values);
     }
   });
+}
+
+async function addStockAndTools(
+  shop: TestShop,
+  { jobId, machineId, operationId }: { jobId: string; machineId: string; operationId: string },
+): Promise<Record<string, string>> {
+  const materialId = await shop.addMaterial();
+  await shop.addLot({ materialId, receivedOn: '2026-01-02', weightKg: '10', cost: '10' });
+  await shop.addIssue({ materialId, jobId, issuedOn: '2026-01-02', weightKg: '1' });
+  await shop.addOutsideService({ jobId, incurredOn: '2026-01-02', amount: '1' });
+  await shop.addInvoice({ jobId, invoicedOn: '2026-01-02', amount: '1' });
+  const punchId = await shop.addPunch({ machineId });
+  const { dieId, dieOpeningId } = await shop.addDie({ machineId }, { openingMm: '16' });
+  await shop.inShop(async (trx) => {
+    const { shopId } = shop.shop;
+    await trx.insertInto('estimate').values({ shopId, jobId, estimatedOn: '2026-01-02' }).execute();
+    await addEstimateLines(trx, { shopId, jobId, materialId, machineId, operationId });
+    // A card's sheets refer to the card, which its name would bring second.
+    await trx.insertInto('depthCard').values({ shopId, machineId, angles: '[90]' }).execute();
+  });
+  return { materialId, punchId, dieId, dieOpeningId };
+}
+
+/** One of each kind, so that each column that refers to something does so somewhere. */
+async function addEstimateLines(
+  trx: ShopTransaction,
+  { shopId, jobId, materialId, machineId, operationId }: Record<string, string>,
+): Promise<void> {
+  await sql`
+    insert into estimate_line (shop_id, job_id, position, kind, operation_id, machine_id, setup_hours,
+      minutes_per_piece, pieces, labour_rate, overhead_rate, machine_hour_rate)
+    values (${shopId}, ${jobId}, 1, 'operation', ${operationId}, ${machineId}, 1, 1, 1, 1, 1, 1)`.execute(
+    trx,
+  );
+  await sql`
+    insert into estimate_line (shop_id, job_id, position, kind, material_id, weight_kg, price_per_kg)
+    values (${shopId}, ${jobId}, 2, 'material', ${materialId}, 1, 1)`.execute(trx);
 }
 
 function toSnakeCase(record: Record<string, string>): Record<string, string> {
@@ -93,6 +128,9 @@ async function insertAnything(
     kind: 'employee',
     action: 'added',
     category: 'labour',
+    gauge_system: 'steel',
+    system: 'steel',
+    month: '2020-01-01',
   };
   const aliasTarget = table === 'name_alias' ? ['employee_id'] : [];
   const wanted = columns.filter(
@@ -100,10 +138,12 @@ async function insertAnything(
       tableName === table && (isRequired || aliasTarget.includes(columnName)),
   );
   const runs = await sql<{ runId: string }>`select run_id from rollup_run limit 1`.execute(trx);
+  const users = await sql<{ userId: string }>`select user_id from user_account limit 1`.execute(trx);
   const values = wanted.map(({ columnName, dataType }) => {
     const value =
       known[columnName] ??
       (columnName === 'run_id' ? runs.rows[0]?.runId : undefined) ??
+      (columnName === 'user_id' ? users.rows[0]?.userId : undefined) ??
       choices[columnName] ??
       SAMPLES[dataType];
     return sql`${value}::text::${sql.raw(dataType)}`;
@@ -259,7 +299,8 @@ describe('every reference', () => {
       const makeWay = others.map((one) => sql`, ${sql.ref(one)} = null`);
       const point = mine.inShop((trx) =>
         sql`update ${sql.table(tableName)} set ${sql.ref(column)} = ${stranger}
-          ${tableName === 'name_alias' ? sql.join(makeWay, sql``) : sql``}`.execute(trx),
+          ${tableName === 'name_alias' ? sql.join(makeWay, sql``) : sql``}
+          ${tableName === 'estimate_line' ? sql`where ${sql.ref(column)} is not null` : sql``}`.execute(trx),
       );
       expect([tableName, column, await messageOf(point)]).toEqual([
         tableName,

@@ -37,6 +37,12 @@ export interface TestShop {
   addIssue(row: Row<'materialIssue', 'kind'>): Promise<string>;
   addOutsideService(row: Row<'outsideService'>): Promise<string>;
   addInvoice(row: Row<'invoice', 'kind' | 'number'>): Promise<string>;
+  addPunch(row: Row<'punch', 'name' | 'noseRadiusMm'>): Promise<string>;
+  /** @returns the ids of the die and its one opening */
+  addDie(
+    row: Row<'die', 'name'>,
+    opening: Row<'dieOpening', 'dieId' | 'shoulderRadiusMm'>,
+  ): Promise<{ dieId: string; dieOpeningId: string }>;
   /** @param month its first day; roll up before */
   addMonthClose(month: string): Promise<string>;
   /** Ends both connections; the rows stay, other tests do not see them. */
@@ -110,6 +116,12 @@ function createBuilders(shopId: string, run: TestShop['inShop']): Builders {
     addIssue: (row) => add('materialIssue', 'issueId', { kind: 'issue', ...row }),
     addOutsideService: (row) => add('outsideService', 'outsideServiceId', row),
     addInvoice: (row) => add('invoice', 'invoiceId', { kind: 'invoice', number: nth('I'), ...row }),
+    addPunch: (row) => add('punch', 'punchId', { name: nth('P'), noseRadiusMm: '1', ...row }),
+    addDie: async (row, opening) => {
+      const dieId = await add('die', 'dieId', { name: nth('D'), ...row });
+      const values = { dieId, shoulderRadiusMm: '2', ...opening };
+      return { dieId, dieOpeningId: await add('dieOpening', 'dieOpeningId', values) };
+    },
     addMonthClose: (month) => add('monthClose', 'monthCloseId', { month, closedBy: 'Test' }),
     addEntries: (rows) => run((trx) => insertEntries(trx, shopId, rows)),
   };
