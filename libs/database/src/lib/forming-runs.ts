@@ -234,7 +234,7 @@ export function listRunnableJobs(trx: ShopTransaction) {
     .select(['jobId', 'number', 'title'])
     .where('status', 'in', ['open', 'finished', 'invoiced'])
     .orderBy(sql`status = 'open'`, 'desc')
-    .orderBy('openedOn', sql`desc nulls last`)
+    .orderBy('openedOn', (order) => order.desc().nullsLast())
     .orderBy('number')
     .limit(500)
     .execute();
