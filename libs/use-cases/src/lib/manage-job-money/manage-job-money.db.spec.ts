@@ -151,9 +151,7 @@ describe('invoices and credit notes', () => {
     expect(await createInvoice(shop.context(), otherJob, invoice())).toMatchObject({ number: '5001' });
     const corrected = await updateInvoice(shop.context(), first, invoice({ amount: '1300' }));
     expect(corrected).toMatchObject({ number: '5001', amount: '1300.00' });
-    await expect(restoreInvoice(shop.context(), first)).rejects.toMatchObject({
-      issues: [{ field: 'number' }],
-    });
+    await expect(restoreInvoice(shop.context(), first)).rejects.toMatchObject({ code: 'conflict' });
     await voidInvoice(shop.context(), corrected);
     expect(await listInvoices(shop.context(), { jobId })).toMatchObject({ total: '0.00' });
     await restoreInvoice(shop.context(), corrected);
