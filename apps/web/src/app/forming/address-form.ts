@@ -4,6 +4,7 @@ import { type FormControl, FormGroup } from '@angular/forms';
 import { ActivatedRoute, type ParamMap, Router } from '@angular/router';
 import { debounceTime, map, startWith } from 'rxjs';
 import { textControl } from '../forms/text-control';
+import { keepsWords } from './show-field-words';
 
 /** What the fields of a form say, by name. */
 type Texts<T> = { [K in keyof T]: string };
@@ -14,9 +15,9 @@ export type TextForm<T extends Texts<T>> = FormGroup<{ [K in keyof T]: FormContr
 /** Quiet time after the last keystroke before the address follows, in ms. */
 const QUIET_MS = 250;
 
-/** A field for each text. */
+/** A field for each text; what is wrong with it is said by `showFieldWords`. */
 export function toTextForm<T extends Texts<T>>(texts: T): TextForm<T> {
-  const controls = Object.entries<string>(texts).map(([name, text]) => [name, textControl(text)]);
+  const controls = Object.entries<string>(texts).map(([name, text]) => [name, textControl(text, keepsWords)]);
   return new FormGroup(Object.fromEntries(controls)) as TextForm<T>;
 }
 

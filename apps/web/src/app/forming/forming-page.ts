@@ -37,8 +37,7 @@ const PARTS: readonly FormingPart[] = [
   ],
   template: `
     <app-page-header title="Forming">
-      Settle the bend before metal is cut. Angles are inside angles of the finished part: 180° is flat, and
-      ‘turned’ is 180° minus it.
+      Settle the bend before metal is cut. Angles are inside angles: 180° is flat, ‘turned’ is 180° minus it.
     </app-page-header>
     <nav aria-label="Parts of Forming">
       @for (part of parts(); track part.path) {

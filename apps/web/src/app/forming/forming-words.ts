@@ -36,6 +36,16 @@ export function toForceBand(lowKn: number, highKn: number, units: UnitSystem): s
   return `${low}–${toForceWords(highKn, units)}`;
 }
 
+/** The same band as bare numbers, for a column that names the unit. */
+export function toForceBandNumbers(lowKn: number, highKn: number, units: UnitSystem): string {
+  return [lowKn, highKn].map((force) => toForceNumber(force, units)).join('–');
+}
+
+/** A force as a bare number, one decimal. */
+export function toForceNumber(kilonewtons: number, units: UnitSystem): string {
+  return toNumberWords(toForceUnit(kilonewtons, LENGTH_UNIT_OF[units]), 1);
+}
+
 /** An angle in degrees: 90° or 92.5°. */
 export function toAngleWords(degrees: number): string {
   return `${formatNumber(D(degrees.toFixed(2)), LOCALE, { maximumFractionDigits: 1 })}°`;

@@ -1,4 +1,4 @@
-import { type FormingReference } from '@brakeven/contract';
+import { type FormingMachine, type FormingReference } from '@brakeven/contract';
 import { type OwnedOpening, type OwnedPunch, type Press } from '@brakeven/forming';
 import { type UnitSystem } from '@brakeven/values';
 import { toSizeWords } from './forming-words';
@@ -28,9 +28,25 @@ export interface PressTooling extends Press {
   openings: readonly RackOpening[];
 }
 
+/** The machines that bend: with a rating, a bed or tools, or called a press. */
+export function listPresses({ machines, punches, dies }: FormingReference): FormingMachine[] {
+  const tools = new Set([...punches, ...dies].map(({ machineId }) => machineId));
+  return machines.filter(
+    ({ machineId, kind, ratedForceKn, bedLengthMm }) =>
+      ratedForceKn !== null || bedLengthMm !== null || tools.has(machineId) || /press|brake/i.test(kind),
+  );
+}
+
+/** The press to begin with: the strongest of those with a die. */
+export function findFirstPress(presses: readonly PressTooling[]): PressTooling | undefined {
+  const withDies = presses.filter(({ openings }) => openings.length > 0);
+  const [strongest] = [...withDies].sort((a, b) => (b.ratedKn ?? 0) - (a.ratedKn ?? 0));
+  return strongest ?? presses[0];
+}
+
 /** The presses of the shop, each with its own tooling. */
 export function toPresses(reference: FormingReference): PressTooling[] {
-  return reference.machines.map((machine) => ({
+  return listPresses(reference).map((machine) => ({
     machineId: machine.machineId,
     code: machine.code,
     name: machine.name,

@@ -3,7 +3,7 @@ import { ChangeDetectionStrategy, Component, DOCUMENT, inject, input } from '@an
 /** Prints the page as its print style lays it out. */
 @Component({
   selector: 'app-print-button',
-  template: `<button type="button" class="button quiet" (click)="print()">{{ label() }}</button>`,
+  template: `<button type="button" class="button" (click)="print()">{{ label() }}</button>`,
   styles: `
     @media print {
       :host {

@@ -2,6 +2,7 @@ import { ChangeDetectionStrategy, Component, computed, effect, inject, untracked
 import { ReactiveFormsModule } from '@angular/forms';
 import { type BlankBend, FORMING_RULES, type SheetLayout } from '@brakeven/forming';
 import { MassPipe } from '@brakeven/ui';
+import { type UnitSystem } from '@brakeven/values';
 import { FormField } from '../../forms/form-field';
 import { SessionStore } from '../../session/session-store';
 import { keepInAddress, toTextForm } from '../address-form';
@@ -65,6 +66,7 @@ export class BlankPage {
       massKg: answer.massKg?.toFixed(6) ?? null,
       words: `${material.name} ${toSizeWords(input.thicknessMm, this.units)}`,
       bends: blank.bends.map((bend, index) => this.toShownBend(bend, index)),
+      rules: [...new Set(blank.bends.map((bend) => this.toRule(bend)))],
       layouts: layouts.map((layout) => this.toShownLayout(layout)),
     };
   }
@@ -77,7 +79,7 @@ export class BlankPage {
       angle: toAngleWords(bend.insideAngle),
       turned: toAngleWords(bend.turned),
       measured: isSharp ? 'to the sharp corner' : 'to the tangent of the bend',
-      rule: isSharp ? FORMING_RULES.bendDeduction : FORMING_RULES.acuteDeduction,
+      rule: this.toRule(bend),
       allowance: length(bend.allowanceMm),
       deduction: length(bend.deductionMm),
       gauge: length(bend.gaugeMm),
@@ -86,11 +88,13 @@ export class BlankPage {
     };
   }
 
+  private toRule({ convention }: BlankBend): string {
+    return convention === 'virtual-sharp' ? FORMING_RULES.bendDeduction : FORMING_RULES.acuteDeduction;
+  }
+
   private toShownLayout(layout: SheetLayout) {
-    const offcuts = layout.offcuts.map(
-      ({ widthMm, lengthMm }) =>
-        `${toSizeWords(round(widthMm), this.units)} × ${toSizeWords(round(lengthMm), this.units)}`,
-    );
+    const size = (millimetres: number) => toOffcutWords(millimetres, this.units);
+    const offcuts = layout.offcuts.map(({ widthMm, lengthMm }) => `${size(widthMm)} × ${size(lengthMm)}`);
     return {
       grain: layout.grain === 'bends-across-grain' ? 'Bends across the grain' : 'Bends along the grain',
       pieces: layout.pieces,
@@ -101,7 +105,8 @@ export class BlankPage {
   }
 }
 
-/** An offcut to a tenth of a millimetre is near enough. */
-function round(millimetres: number): number {
-  return Math.round(millimetres * 10) / 10;
+/** An offcut is cut by a shear: a hundredth of an inch, or a tenth of a millimetre, is near enough. */
+function toOffcutWords(millimetres: number, units: UnitSystem): string {
+  const step = units === 'us' ? 0.254 : 0.1;
+  return toSizeWords(Math.round(millimetres / step) * step, units);
 }

@@ -29,7 +29,7 @@ interface EditedFlange {
           </label>
           @if (row.bend; as bend) {
             <label class="bend">
-              <span>Bend {{ index + 1 }}, inside angle</span>
+              <span>Inside angle {{ index + 1 }}</span>
               <input
                 class="field"
                 inputmode="decimal"

@@ -8,8 +8,9 @@ import { TrialBendsApi } from '../../api/trial-bends-api';
 import { SessionStore } from '../../session/session-store';
 import { LoadError } from '../../shell/load-error';
 import { Notifier } from '../../shell/notifier';
-import { toAngleWords, toLengthNumber, toNumberWords, toSizeWords, LENGTH_UNIT_OF } from '../forming-words';
+import { toAngleWords, toLengthNumber, toNumberWords, toSizeWords } from '../forming-words';
 import { FormingStore } from '../forming-store';
+import { findFirstPress } from '../press-tooling';
 import { PrintButton } from '../print-button';
 import { CardEditor } from './card-editor';
 
@@ -33,7 +34,7 @@ export class CardPage {
   private readonly notifier = inject(Notifier);
   private readonly router = inject(Router);
   private readonly units = this.session.shopFormat().units;
-  protected readonly unit = LENGTH_UNIT_OF[this.units];
+  protected readonly unitWord = this.units === 'us' ? 'inches' : 'mm';
   protected readonly shopName = computed(() => this.session.shop()?.name ?? '');
   protected readonly today = todayIn(this.session.shopFormat().timeZone);
   protected readonly canEdit = computed(() => this.session.can('tooling.edit'));
@@ -42,12 +43,7 @@ export class CardPage {
   protected readonly presses = this.store.presses;
   protected readonly press = computed(() => {
     const presses = this.presses();
-    return (
-      presses.find(({ code }) => code === this.machine()) ??
-      presses.find(({ openings }) => openings.length > 0) ??
-      presses[0] ??
-      null
-    );
+    return presses.find(({ code }) => code === this.machine()) ?? findFirstPress(presses) ?? null;
   });
   protected readonly card = rxResource({
     params: () => this.press()?.machineId,

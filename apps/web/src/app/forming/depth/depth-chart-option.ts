@@ -7,7 +7,7 @@ import { type CurvePoint } from './depth-curve';
 export interface ChartBend {
   depthMm: number;
   insideAngle: number;
-  isOutlier: boolean;
+  kind: 'measured' | 'full length' | 'outlier';
 }
 
 export interface DepthChartFacts {
@@ -17,6 +17,13 @@ export interface DepthChartFacts {
   answer: { depthMm: number; insideAngle: number } | null;
   units: UnitSystem;
 }
+
+/** How each kind of bend is marked: by shape as well as by colour. */
+const MARKS = [
+  { kind: 'measured', symbol: 'circle', symbolSize: 9, isFilled: false },
+  { kind: 'full length', symbol: 'rect', symbolSize: 10, isFilled: true },
+  { kind: 'outlier', symbol: 'diamond', symbolSize: 13, isFilled: true },
+] as const;
 
 /** Inside angle over ram depth: the fitted curve in its band, the bends that were made, and the answer. */
 export function toDepthChartOption(facts: DepthChartFacts, palette: ChartPalette): ChartOption {
@@ -65,30 +72,29 @@ export function toDepthChartOption(facts: DepthChartFacts, palette: ChartPalette
       line('band', ({ low, high }) => high - low, {
         stack: 'band',
         stackStrategy: 'all',
-        areaStyle: { color: palette.layoutBlueTint, opacity: 0.9 },
+        areaStyle: { color: palette.layoutBlue, opacity: 0.22 },
       }),
       line('fitted', ({ insideAngle }) => insideAngle, {
-        lineStyle: { width: 2.5, color: palette.layoutBlue },
+        lineStyle: { width: 1.5, color: palette.layoutBlue },
         markLine: toAnswerLines(facts, at, palette),
       }),
-      ...[false, true].map((isOutlier) => ({
-        name: isOutlier ? 'outlier' : 'measured',
+      ...MARKS.map(({ kind, symbol, symbolSize, isFilled }) => ({
+        name: kind,
         type: 'line',
-        data: bends
-          .filter((bend) => bend.isOutlier === isOutlier)
-          .map((bend) => [at(bend.depthMm), bend.insideAngle]),
-        symbol: isOutlier ? 'diamond' : 'circle',
-        symbolSize: isOutlier ? 12 : 9,
+        data: bends.filter((bend) => bend.kind === kind).map((bend) => [at(bend.depthMm), bend.insideAngle]),
+        symbol,
+        symbolSize,
         showSymbol: true,
         lineStyle: { width: 0 },
-        itemStyle: {
-          color: isOutlier ? palette.rust : palette.sheet,
-          borderColor: isOutlier ? palette.rust : palette.layoutBlue,
-          borderWidth: 2,
-        },
+        itemStyle: toMarkStyle(kind, isFilled, palette),
       })),
     ],
   };
+}
+
+function toMarkStyle(kind: ChartBend['kind'], isFilled: boolean, palette: ChartPalette): object {
+  const borderColor = kind === 'outlier' ? palette.rust : palette.layoutBlue;
+  return { color: isFilled ? borderColor : palette.sheet, borderColor, borderWidth: 2 };
 }
 
 function toAnswerLines(

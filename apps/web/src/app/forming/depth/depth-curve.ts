@@ -12,34 +12,31 @@ import {
 } from '@brakeven/forming';
 import { type Parsed } from '@brakeven/values';
 
-/** Shoulder radius of a trial's die; the server fits with the same where nobody has entered one. */
-export type ShoulderOf = (trial: TrialBendDto) => number;
-
 /** The fit of the server's bends, made again here so that answers follow each keystroke; null without a fit. */
 export function refit(
   fit: DepthFit,
   trials: readonly TrialBendDto[],
   radiusPerOpening: number,
-  shoulderOf: ShoulderOf,
 ): RamDepthFit | null {
   if (!fit.fit) return null;
   const find = (id: string) => trials.filter(({ trialBendId }) => trialBendId === id);
   const fitted = fit.bends.flatMap(({ trialBendId }) => find(trialBendId));
   const made = fitRamDepth(
-    fitted.map((trial) => toTrial(trial, shoulderOf)),
+    fitted.map((trial) => toTrial(trial)),
     radiusPerOpening,
   );
   if (!made.ok || fitted.length !== fit.bends.length) return null;
   const [full] = fit.correction ? find(fit.correction.trialBendId) : [];
-  return full ? correctDatum(made.value, toTrial(full, shoulderOf)) : made.value;
+  return full ? correctDatum(made.value, toTrial(full)) : made.value;
 }
 
-function toTrial(trial: TrialBendDto, shoulderOf: ShoulderOf): TrialBend {
+/** Only bends on openings with a shoulder radius are fitted. */
+function toTrial(trial: TrialBendDto): TrialBend {
   return {
     openingMm: Number(trial.openingMm),
     thicknessMm: Number(trial.thicknessMm),
     punchRadiusMm: Number(trial.noseRadiusMm),
-    shoulderRadiusMm: shoulderOf(trial),
+    shoulderRadiusMm: Number(trial.shoulderRadiusMm),
     depthMm: Number(trial.depthMm),
     insideAngle: Number(trial.measuredAngle),
   };

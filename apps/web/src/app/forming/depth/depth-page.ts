@@ -16,10 +16,10 @@ import { Notifier } from '../../shell/notifier';
 import { keepInAddress, toTextForm } from '../address-form';
 import { toAngleWords, toLengthWords, toNumberWords, toSizeWords } from '../forming-words';
 import { FormingStore } from '../forming-store';
-import { shoulderRadiusMm, toOpeningWords } from '../press-tooling';
+import { findFirstPress, toOpeningWords } from '../press-tooling';
 import { PrintButton } from '../print-button';
 import { showFieldWords } from '../show-field-words';
-import { toDepthChartOption } from './depth-chart-option';
+import { type ChartBend, toDepthChartOption } from './depth-chart-option';
 import { isGuess, refit, traceCurve } from './depth-curve';
 import { type DepthTexts, readDepthQuestion } from './depth-question';
 import { PasteDialog } from './paste-dialog';
@@ -53,10 +53,11 @@ export class DepthPage {
   protected readonly units = this.session.shopFormat().units;
   protected readonly rules = FORMING_RULES;
 
+  private readonly first = findFirstPress(this.store.presses());
   private readonly defaults: DepthTexts = {
-    machine: this.store.presses().find((press) => press.openings.length > 0)?.code ?? '',
-    punch: '',
-    opening: '',
+    machine: this.first?.code ?? '',
+    punch: this.first?.punches[0]?.code ?? '',
+    opening: this.first?.openings[0]?.code ?? '',
     material: 'mild-steel',
     thickness: this.units === 'us' ? '10 ga' : '3 mm',
     angle: '90',
@@ -119,16 +120,16 @@ export class DepthPage {
   private readonly curveFit = computed(() => {
     const fit = this.served();
     const { radiusPerOpening } = this.question().material;
-    return fit && refit(fit, this.listed(), radiusPerOpening, (trial) => this.findShoulder(trial));
+    return fit && refit(fit, this.listed(), radiusPerOpening);
   });
   private readonly bendSetup = computed<BendSetup | null>(() => {
     const { punch, opening, thicknessMm } = this.question();
-    if (!punch || !opening || Number.isNaN(thicknessMm)) return null;
+    if (!punch || !opening || opening.shoulderRadiusMm === null || Number.isNaN(thicknessMm)) return null;
     return {
       openingMm: opening.openingMm,
       thicknessMm,
       punchRadiusMm: punch.noseRadiusMm,
-      shoulderRadiusMm: shoulderRadiusMm(opening),
+      shoulderRadiusMm: opening.shoulderRadiusMm,
     };
   });
   private readonly depth = computed(() => {
@@ -149,6 +150,15 @@ export class DepthPage {
     effect(() => {
       const { issues } = this.question();
       untracked(() => showFieldWords(this.form, issues));
+    });
+    // Tools belong to a press: another press starts with its own first ones.
+    effect(() => {
+      const { punch, opening } = this.question();
+      untracked(() => {
+        const { controls } = this.form;
+        if (punch && controls.punch.value !== punch.code) controls.punch.setValue(punch.code);
+        if (opening && controls.opening.value !== opening.code) controls.opening.setValue(opening.code);
+      });
     });
   }
 
@@ -202,13 +212,6 @@ export class DepthPage {
     });
   }
 
-  private findShoulder({ dieOpeningId, shoulderRadiusMm: noted, openingMm }: TrialBendDto): number {
-    if (noted !== null) return Number(noted);
-    const opening = this.question().press?.openings.find(({ code }) => code === dieOpeningId);
-    const unknown = { code: '', dieName: '', dieAngle: null, lengthMm: null, ratedKnPerM: null };
-    return shoulderRadiusMm(opening ?? { ...unknown, openingMm: Number(openingMm), shoulderRadiusMm: null });
-  }
-
   private toDepthWords() {
     const [answer, { insideAngle }] = [this.depth(), this.question()];
     if (!answer) return null;
@@ -251,16 +254,27 @@ export class DepthPage {
     };
   }
 
+  private toChartBend(bend: { trialBendId: string; isOutlier?: boolean }): ChartBend[] {
+    const trial = this.listed().find(({ trialBendId }) => trialBendId === bend.trialBendId);
+    if (!trial) return [];
+    const kind = trial.isFullLength ? 'full length' : 'measured';
+    return [
+      {
+        depthMm: Number(trial.depthMm),
+        insideAngle: Number(trial.measuredAngle),
+        kind: bend.isOutlier ? 'outlier' : kind,
+      },
+    ];
+  }
+
   private toChart() {
     const [fit, setup, served, answer] = [this.curveFit(), this.bendSetup(), this.served(), this.depth()];
     if (!fit || !setup || !served) return null;
     const curve = traceCurve(fit, setup);
     if (curve.length === 0) return null;
-    const bends = fit.bends.map(({ trial, isOutlier }) => ({
-      depthMm: trial.depthMm,
-      insideAngle: trial.insideAngle,
-      isOutlier,
-    }));
+    const bends = [...served.bends, ...(served.correction ? [served.correction] : [])].flatMap((bend) =>
+      this.toChartBend(bend),
+    );
     const asked = answer?.ok
       ? { depthMm: answer.value.depthMm, insideAngle: this.question().insideAngle }
       : null;

@@ -63,6 +63,9 @@ import { toAngleWords, toLengthWords, toNumberWords, toSizeWords } from '../form
     table {
       min-width: 760px;
     }
+    td {
+      white-space: nowrap;
+    }
     .end {
       text-align: right;
       white-space: nowrap;

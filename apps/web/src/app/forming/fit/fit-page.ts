@@ -8,7 +8,7 @@ import { keepInAddress, toTextForm } from '../address-form';
 import { toAngleWords, toPercentWords, toSizeWords } from '../forming-words';
 import { FormingStore } from '../forming-store';
 import { PrintButton } from '../print-button';
-import { shoulderRadiusMm } from '../press-tooling';
+import { findFirstPress, shoulderRadiusMm } from '../press-tooling';
 import { showFieldWords } from '../show-field-words';
 import { type DrawnBend } from './bend-drawing';
 import { BendSketch } from './bend-sketch';
@@ -40,10 +40,12 @@ export class FitPage {
   protected readonly units = inject(SessionStore).shopFormat().units;
   protected readonly notes = [FIT_NOTES.offCentre, FIT_NOTES.segmentedPunch, FIT_NOTES.narrowDie];
 
+  private readonly first = findFirstPress(this.store.presses());
   private readonly defaults: FitTexts = {
     ...FIT_DEFAULTS[this.units],
-    machine: this.store.presses()[0]?.code ?? '',
-    openings: this.store.presses()[0]?.openings.length ? '' : COMMON_OPENINGS[this.units],
+    machine: this.first?.code ?? '',
+    punch: this.first?.punches[0]?.code ?? '',
+    openings: this.first?.openings.length ? '' : COMMON_OPENINGS[this.units],
   };
   protected readonly form = toTextForm(this.defaults);
   private readonly texts = keepInAddress(this.form, this.defaults);
@@ -87,6 +89,15 @@ export class FitPage {
       const { issues } = this.question();
       untracked(() => showFieldWords(this.form, issues));
     });
+    // Punches belong to a press: another press starts with its own first one.
+    effect(() => {
+      const { press, punch } = this.question();
+      untracked(() => {
+        if (press && punch && this.form.controls.punch.value !== punch.code) {
+          this.form.controls.punch.setValue(punch.code);
+        }
+      });
+    });
   }
 
   protected choose(code: string): void {
@@ -123,6 +134,6 @@ export class FitPage {
     const rated = press ? ` · ${press.name}` : '';
     const flange =
       input.flangeMm === null ? '' : ` · shortest flange ${toSizeWords(input.flangeMm, this.units)}`;
-    return `${material.name} ${toSizeWords(input.thicknessMm, this.units)} · ${toSizeWords(input.lengthMm, this.units)} long · ${toAngleWords(input.insideAngle)} inside (turned ${toAngleWords(180 - input.insideAngle)})${flange}${rated} · line ${toPercentWords(input.lineShare)}`;
+    return `${material.name} ${toSizeWords(input.thicknessMm, this.units)} · ${toSizeWords(input.lengthMm, this.units)} long · ${toAngleWords(input.insideAngle)} inside (turned ${toAngleWords(180 - input.insideAngle)})${flange}${rated} · kept under ${toPercentWords(input.lineShare)} of the rating`;
   }
 }

@@ -4,7 +4,7 @@ import { parseLength, type UnitSystem } from '@brakeven/values';
 import { type BendMaterial } from '../bend-material';
 import { FieldReader } from '../field-reader';
 import { LENGTH_UNIT_OF, toSizeWords } from '../forming-words';
-import { type PressTooling, type RackOpening } from '../press-tooling';
+import { type PressTooling, type RackOpening, type RackPunch } from '../press-tooling';
 import { type FieldWords } from '../show-field-words';
 
 /** What is asked, as typed; also the names in the address. */
@@ -39,6 +39,7 @@ export interface FitQuestion {
   input: FitInput | null;
   material: BendMaterial;
   press: PressTooling | null;
+  punch: RackPunch | null;
   openings: readonly RackOpening[];
   /** What a gauge leaves open. */
   note: string | null;
@@ -90,7 +91,7 @@ export function readFitQuestion(texts: FitTexts, facts: FitFacts): FitQuestion {
   };
   if (reader.issues.length === 0) reader.addAll(checkFitInput(input));
   const { issues } = reader;
-  return { input: issues.length === 0 ? input : null, material, press, openings, note, issues };
+  return { input: issues.length === 0 ? input : null, material, press, punch, openings, note, issues };
 }
 
 /** The material of a code; the first where the code is unknown. */

@@ -1,7 +1,7 @@
 import { type PressRun } from '@brakeven/contract';
 import { type GridColumn } from '@brakeven/ui';
 import { type UnitSystem } from '@brakeven/values';
-import { toForceBand, toForceWords, toPercentWords, toSizeWords } from '../forming-words';
+import { toForceBandNumbers, toForceNumber, toPercentWords, toSizeWords } from '../forming-words';
 
 /** Who looks at the runs, and what they may do with one. */
 export interface RunView {
@@ -18,23 +18,23 @@ type RunColumn = GridColumn<PressRun>;
 export function toRunColumns(view: RunView): RunColumn[] {
   const size = (millimetres: string) => toSizeWords(Number(millimetres), view.units);
   const columns: RunColumn[] = [
-    { id: 'runOn', header: 'Run on', kind: 'date', value: (run) => run.runOn, isSortable: true, width: 122 },
+    { id: 'runOn', header: 'Run on', kind: 'date', value: (run) => run.runOn, isSortable: true, width: 112 },
     {
       id: 'job',
       header: 'Job',
       value: (run) => `${run.jobNumber} ${run.jobTitle}`,
       href: (run) => (view.canOpenJobs ? `/jobs/${run.jobId}` : null),
       isSortable: true,
-      minWidth: 130,
+      minWidth: 110,
       flex: 2,
     },
-    { id: 'machine', header: 'Machine', value: (run) => run.machine, isSortable: true, width: 104 },
+    { id: 'machine', header: 'Machine', value: (run) => run.machine, isSortable: true, width: 82 },
     {
       id: 'material',
       header: 'Material',
       value: (run) => `${size(run.thicknessMm)} ${run.material}`,
       isSortable: true,
-      minWidth: 140,
+      minWidth: 124,
       flex: 2,
     },
     {
@@ -42,14 +42,14 @@ export function toRunColumns(view: RunView): RunColumn[] {
       header: 'Opening',
       value: (run) => size(run.openingMm),
       isSortable: true,
-      width: 104,
+      width: 88,
     },
     {
       id: 'bendLengthMm',
-      header: 'Bend length',
+      header: 'Length',
       value: (run) => size(run.bendLengthMm),
       isSortable: true,
-      width: 116,
+      width: 90,
     },
     {
       id: 'strokes',
@@ -57,7 +57,7 @@ export function toRunColumns(view: RunView): RunColumn[] {
       kind: 'count',
       value: (run) => run.strokes,
       isSortable: true,
-      width: 92,
+      width: 82,
     },
     {
       id: 'pieces',
@@ -65,21 +65,21 @@ export function toRunColumns(view: RunView): RunColumn[] {
       kind: 'count',
       value: (run) => run.pieces,
       isSortable: true,
-      width: 88,
+      width: 76,
     },
     {
       id: 'computed',
-      header: 'Force computed',
-      value: (run) => toForceBand(Number(run.forceLowKn), Number(run.forceHighKn), view.units),
-      width: 152,
+      header: 'Computed',
+      value: (run) => toForceBandNumbers(Number(run.forceLowKn), Number(run.forceHighKn), view.units),
+      width: 104,
     },
     {
       id: 'forceUsedKn',
-      header: 'Force shown',
+      header: 'Shown',
       value: (run) =>
-        run.highestForceKn === null ? null : toForceWords(Number(run.highestForceKn), view.units),
+        run.highestForceKn === null ? null : toForceNumber(Number(run.highestForceKn), view.units),
       isSortable: true,
-      width: 118,
+      width: 84,
     },
     toShareColumn(),
     {
@@ -87,7 +87,7 @@ export function toRunColumns(view: RunView): RunColumn[] {
       header: 'Run',
       value: (run) => (run.isGood ? 'good' : 'not good'),
       tone: (run) => (run.isGood ? 'good' : 'loss'),
-      width: 96,
+      width: 84,
     },
   ];
   return [...columns.filter(({ id }) => !view.isNarrow || NARROW.includes(id)), ...toActions(view)];
@@ -104,7 +104,7 @@ function toShareColumn(): RunColumn {
       run.share === null ? 'no rating' : `${toPercentWords(run.share)} of the ${run.ratingOf}`,
     tone: (run) => toShareTone(run),
     isSortable: true,
-    width: 142,
+    width: 116,
   };
 }
 
@@ -121,7 +121,7 @@ function toActions({ voidRun }: RunView): RunColumn[] {
       header: '',
       value: () => null,
       actions: (run) => [{ label: 'Void', run: () => voidRun(run) }],
-      width: 84,
+      width: 70,
     },
   ];
 }

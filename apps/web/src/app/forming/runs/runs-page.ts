@@ -62,6 +62,7 @@ export class RunsPage {
   private readonly typed = new Subject<string>();
   private readonly units = this.session.shopFormat().units;
 
+  protected readonly forceUnit = this.units === 'us' ? 'US tons' : 'kN';
   protected readonly canSeeAll = computed(() => this.session.can('press-runs.view'));
   protected readonly line = computed(() => toPercentWords(this.store.lineShare()));
   protected readonly presses = this.store.presses;

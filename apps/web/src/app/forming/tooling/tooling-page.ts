@@ -12,6 +12,7 @@ import { SessionStore } from '../../session/session-store';
 import { Notifier } from '../../shell/notifier';
 import { toAngleWords } from '../forming-words';
 import { FormingStore } from '../forming-store';
+import { listPresses } from '../press-tooling';
 import { DieDialog } from './die-dialog';
 import { GaugeCard } from './gauge-card';
 import { LineDialog } from './line-dialog';
@@ -40,8 +41,8 @@ export class ToolingPage {
   protected readonly canEdit = computed(() => this.session.can('tooling.edit'));
   protected readonly known = this.store.known;
   protected readonly presses = computed(() => {
-    const { machines, punches, dies } = this.known();
-    return machines.map((machine) => ({
+    const { punches, dies } = this.known();
+    return listPresses(this.known()).map((machine) => ({
       machine,
       punches: punches.filter(({ machineId }) => machineId === machine.machineId),
       dies: dies.filter(({ machineId }) => machineId === machine.machineId),
