@@ -23,6 +23,10 @@ const pictures = {
     await page.locator('app-workings-drawer ol > li').first().waitFor();
   },
   jobs: (page) => openGrid(page, '/jobs'),
+  job: (page) => openJob(page, ''),
+  estimate: (page) => openJob(page, '/estimate'),
+  materials: (page) => goTo(page, '/materials'),
+  'month-end': (page) => goTo(page, '/month-end'),
   hours: (page) => openGrid(page, '/hours?period=all'),
   machines: async (page) => {
     await goTo(page, '/machines');
@@ -89,6 +93,17 @@ async function goTo(page, path) {
   await page.goto(path);
   await page.locator('app-shell main h1').first().waitFor();
   await waitUntilSettled(page);
+}
+
+/**
+ * The job that lost money.
+ * @param {Page} page
+ * @param {string} part
+ */
+async function openJob(page, part) {
+  const answer = await page.request.get('/api/jobs?sort=margin&direction=asc&status=invoiced&limit=1');
+  const { items } = await answer.json();
+  await goTo(page, `/jobs/${items[0].jobId}${part}`);
 }
 
 /**
