@@ -13,6 +13,7 @@ export * from './lib/examine/examine-database';
 export * from './lib/export-jobs/export-jobs';
 export * from './lib/forming/estimate-blank';
 export * from './lib/forming/estimate-depth';
+export * from './lib/forming/estimate-fit';
 export * from './lib/forming/estimate-force';
 export * from './lib/import-timesheet/adjust-mapping';
 export * from './lib/import-timesheet/check-timesheet';

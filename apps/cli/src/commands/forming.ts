@@ -11,19 +11,23 @@ import { type Command } from 'commander';
 import { type Cli, UsageError } from '../cli';
 import { printPairs, printTable } from '../print-table';
 import { readWorkbookFile } from '../read-file';
+import { addFormingOfShop } from './forming-shop';
 
 const AFTER_HELP = `
 Lengths as they are written in the shop: 10 ga, 3/16, 1 1/2 in, 0.1345", 5' 6", 4.5mm. A bare number is in the unit of
 the first length that has one, and so is the answer; inches if none has.
-Angles are inside angles of the finished part: 180 is flat. No database is needed.`;
+Angles are inside angles of the finished part: 180 is flat. Only fit, tools and runs need a database.`;
 
-/** `forming force`, `forming blank`, `forming depth` */
+/** `forming force`, `forming blank`, `forming depth`, and what needs the shop’s own tools */
 export function addForming(program: Command, cli: Cli): void {
-  const forming = program.command('forming').description('Estimate bends: force, blank, depth of the ram');
+  const forming = program
+    .command('forming')
+    .description('Estimate bends: force, fit, blank, depth of the ram');
   forming.addHelpText('after', AFTER_HELP);
   addForce(forming, cli);
   addBlank(forming, cli);
   addDepth(forming, cli);
+  addFormingOfShop(forming, cli);
 }
 
 function addForce(forming: Command, cli: Cli): void {

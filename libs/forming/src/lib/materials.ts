@@ -156,10 +156,13 @@ export const MATERIALS: readonly FormingMaterial[] = [
   },
 ];
 
-/** Finds a material by its code, name or an alias, whatever the case. */
-export function findMaterial(text: string): FormingMaterial | undefined {
+/** Finds a material by its code, name or an alias, whatever the case; among those shipped if no others are given. */
+export function findMaterial(
+  text: string,
+  materials: readonly FormingMaterial[] = MATERIALS,
+): FormingMaterial | undefined {
   const plain = text.trim().toLowerCase();
-  return MATERIALS.find(
+  return materials.find(
     ({ code, name, aliases }) => code === plain || name.toLowerCase() === plain || aliases.includes(plain),
   );
 }

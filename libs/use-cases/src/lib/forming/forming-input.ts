@@ -1,5 +1,6 @@
 import { AppError, type Issue } from '@brakeven/contract';
 import {
+  type FindGauge,
   findMaterial,
   findResultUnit,
   type FormingMaterial,
@@ -21,6 +22,12 @@ import {
 /** The unit that lengths of an answer are in. */
 export type ResultUnit = 'in' | 'mm';
 
+/** What a shop has instead of the materials and gauges that are shipped. */
+export interface ShopFigures {
+  materials: readonly FormingMaterial[];
+  findGauge: FindGauge;
+}
+
 /**
  * Reads texts into figures and keeps what is wrong with them, so that all of it is told at once. A bare number is in
  * the unit that the answer is in.
@@ -30,7 +37,10 @@ export class FormingInput {
   readonly unit: ResultUnit;
 
   /** `lengthTexts`: the lengths in the order in which they were given; the first that is written with a unit rules. */
-  constructor(lengthTexts: readonly (string | undefined)[]) {
+  constructor(
+    lengthTexts: readonly (string | undefined)[],
+    private readonly shop?: ShopFigures,
+  ) {
     this.unit = findResultUnit(lengthTexts.filter((text) => text !== undefined));
   }
 
@@ -44,7 +54,8 @@ export class FormingInput {
   }
 
   thickness(field: string, text: string, material: FormingMaterial | null): SheetThickness | null {
-    return this.take(field, parseThickness(text, material?.gaugeSystem ?? null, this.unit)) ?? null;
+    const system = material?.gaugeSystem ?? null;
+    return this.take(field, parseThickness(text, system, this.unit, this.shop?.findGauge)) ?? null;
   }
 
   tensileMpa(field: string, text: string): number {
@@ -53,9 +64,10 @@ export class FormingInput {
   }
 
   material(field: string, text: string): FormingMaterial | null {
-    const material = findMaterial(text);
+    const materials = this.shop?.materials ?? MATERIALS;
+    const material = findMaterial(text, materials);
     if (material) return material;
-    const codes = MATERIALS.map(({ code }) => code).join(', ');
+    const codes = materials.map(({ code }) => code).join(', ');
     this.add({
       field,
       code: 'unknown_material',
