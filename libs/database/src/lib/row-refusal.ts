@@ -2,8 +2,7 @@
 export type RowRefusal =
   | { kind: 'stock'; material: string; on: string; job: string | null; missingKg: string }
   | { kind: 'return'; material: string; on: string; job: string; excessKg: string }
-  | { kind: 'before-job'; job: string; openedOn: string; on: string; table: DatedTable }
-  | { kind: 'closed-month'; closedThrough: string };
+  | { kind: 'before-job'; job: string; openedOn: string; on: string; table: DatedTable };
 
 /** Tables whose rows are not dated before their job; `job` where its opening was moved past its rows. */
 export type DatedTable = 'material_issue' | 'outside_service' | 'invoice' | 'job';
@@ -29,7 +28,6 @@ const READERS: Readonly<Record<string, (detail: string) => RowRefusal>> = {
     kind: 'before-job',
     ...(JSON.parse(detail) as Omit<Extract<RowRefusal, { kind: 'before-job' }>, 'kind'>),
   }),
-  BK004: (detail) => ({ kind: 'closed-month', closedThrough: detail }),
 };
 
 interface StockDetail {

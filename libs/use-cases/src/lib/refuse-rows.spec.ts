@@ -44,12 +44,6 @@ describe('refusals of the books', () => {
     );
   });
 
-  it('say through when the books are closed', () => {
-    expect(toRefusalWords({ kind: 'closed-month', closedThrough: '2026-03-31' }, 'us')).toMatch(
-      /closed through Mar 31, 2026/,
-    );
-  });
-
   it('leave any other error as it came', async () => {
     const failure = refusalOf('23505', 'Key (number)=(1) already exists.');
     await expect(refusingRows('us', {}, () => Promise.reject(failure))).rejects.toBe(failure);

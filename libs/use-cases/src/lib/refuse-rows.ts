@@ -17,9 +17,9 @@ export type RefusedFields = Partial<Record<RowRefusal['kind'], string>>;
 
 /**
  * Runs work that writes dated rows, and turns the rules of the books that it may break into refusals with plain
- * words in the shop's unit: stock that does not cover, more returned than drawn, dated before the job, a closed month.
+ * words in the shop's unit: stock that does not cover, more returned than drawn, dated before the job.
  *
- * @throws AppError `conflict` (stock, return, closed month) or `invalid_input` (dated before the job); any other
+ * @throws AppError `conflict` (stock, return) or `invalid_input` (dated before the job); any other
  *   error as it came
  */
 export async function refusingRows<T>(
@@ -45,7 +45,6 @@ const CODES: Readonly<Record<RowRefusal['kind'], { code: ErrorCode; issue: strin
   stock: { code: 'conflict', issue: 'stock_short' },
   return: { code: 'conflict', issue: 'over_returned' },
   'before-job': { code: 'invalid_input', issue: 'before_job' },
-  'closed-month': { code: 'conflict', issue: 'month_closed' },
 };
 
 /** What was refused and what to do about it, in words; weights in pounds or kilograms as the shop shows them. */
@@ -62,8 +61,6 @@ export function toRefusalWords(refusal: RowRefusal, units: UnitSystem): string {
     }
     case 'before-job':
       return toBeforeJobWords(refusal);
-    case 'closed-month':
-      return `The books are closed through ${day(refusal.closedThrough)}. What is dated before then is posted in the first open month; an owner can open the month again under Month end.`;
   }
 }
 
