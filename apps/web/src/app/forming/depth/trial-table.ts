@@ -8,7 +8,7 @@ import { toAngleWords, toLengthWords, toNumberWords, toSizeWords } from '../form
   selector: 'app-trial-table',
   imports: [LocalDatePipe, StatusTag],
   template: `
-    <div class="scroll-x">
+    <div class="scroll-x" tabindex="0" role="region" aria-label="Trial bends">
       <table class="figures">
         <thead>
           <tr>
@@ -41,10 +41,7 @@ import { toAngleWords, toLengthWords, toNumberWords, toSizeWords } from '../form
                   <app-status-tag word="outlier" tone="loss" />
                 }
                 @if (row.trial.isFullLength) {
-                  <app-status-tag
-                    [word]="row.isCorrection ? 'full length, moves the datum' : 'full length'"
-                    tone="blue"
-                  />
+                  <app-status-tag [word]="row.isCorrection ? 'sets the datum' : 'full length'" tone="blue" />
                 }
                 @if (canVoid()) {
                   <button type="button" class="button quiet" (click)="voided.emit(row.trial)">Void</button>
@@ -61,7 +58,7 @@ import { toAngleWords, toLengthWords, toNumberWords, toSizeWords } from '../form
   `,
   styles: `
     table {
-      min-width: 760px;
+      min-width: 700px;
     }
     td {
       white-space: nowrap;

@@ -1,7 +1,7 @@
 import { ChangeDetectionStrategy, Component, computed, inject, input, output } from '@angular/core';
 import { type BendFit, type FitRow } from '@brakeven/forming';
 import { SHOP_FORMAT, StatusTag } from '@brakeven/ui';
-import { toForceBand, toLengthWords, toPercentWords, toSizeWords } from '../forming-words';
+import { toForceBandNumbers, toLengthWords, toPercentWords, toSizeWords } from '../forming-words';
 import { type RackOpening } from '../press-tooling';
 import { toVerdictTag } from './fit-verdict';
 
@@ -26,6 +26,7 @@ export class FitTable {
     const { rows, best } = this.fit();
     return rows.map((row) => this.toShownRow(row, row.opening.code === best));
   });
+  protected readonly forceUnit = computed(() => (this.format().units === 'us' ? 'US tons' : 'kN'));
   protected readonly line = computed(() => toPercentWords(this.lineShare()));
 
   private toShownRow(row: FitRow, isBest: boolean) {
@@ -37,7 +38,7 @@ export class FitTable {
       dieName: this.openings().find(({ code }) => code === opening.code)?.dieName ?? '',
       opening: toSizeWords(opening.openingMm, units),
       ratio: row.openingOverThickness.toFixed(1),
-      force: force ? toForceBand(force.lowKn, force.highKn, units) : '–',
+      force: force ? toForceBandNumbers(force.lowKn, force.highKn, units) : '–',
       share: share === null ? null : toPercentWords(share),
       barPercent: share === null ? 0 : Math.min(100, share * 100),
       rating: row.rating?.of ?? null,

@@ -18,23 +18,23 @@ type RunColumn = GridColumn<PressRun>;
 export function toRunColumns(view: RunView): RunColumn[] {
   const size = (millimetres: string) => toSizeWords(Number(millimetres), view.units);
   const columns: RunColumn[] = [
-    { id: 'runOn', header: 'Run on', kind: 'date', value: (run) => run.runOn, isSortable: true, width: 112 },
+    { id: 'runOn', header: 'Run on', kind: 'date', value: (run) => run.runOn, isSortable: true, width: 106 },
     {
       id: 'job',
       header: 'Job',
       value: (run) => `${run.jobNumber} ${run.jobTitle}`,
       href: (run) => (view.canOpenJobs ? `/jobs/${run.jobId}` : null),
       isSortable: true,
-      minWidth: 110,
+      minWidth: 96,
       flex: 2,
     },
-    { id: 'machine', header: 'Machine', value: (run) => run.machine, isSortable: true, width: 82 },
+    { id: 'machine', header: 'Machine', value: (run) => run.machine, isSortable: true, width: 80 },
     {
       id: 'material',
       header: 'Material',
       value: (run) => `${size(run.thicknessMm)} ${run.material}`,
       isSortable: true,
-      minWidth: 124,
+      minWidth: 100,
       flex: 2,
     },
     {
@@ -42,14 +42,14 @@ export function toRunColumns(view: RunView): RunColumn[] {
       header: 'Opening',
       value: (run) => size(run.openingMm),
       isSortable: true,
-      width: 88,
+      width: 80,
     },
     {
       id: 'bendLengthMm',
       header: 'Length',
       value: (run) => size(run.bendLengthMm),
       isSortable: true,
-      width: 90,
+      width: 94,
     },
     {
       id: 'strokes',
@@ -71,7 +71,7 @@ export function toRunColumns(view: RunView): RunColumn[] {
       id: 'computed',
       header: 'Computed',
       value: (run) => toForceBandNumbers(Number(run.forceLowKn), Number(run.forceHighKn), view.units),
-      width: 104,
+      width: 98,
     },
     {
       id: 'forceUsedKn',
@@ -100,11 +100,10 @@ function toShareColumn(): RunColumn {
   return {
     id: 'share',
     header: 'Of the rating',
-    value: (run) =>
-      run.share === null ? 'no rating' : `${toPercentWords(run.share)} of the ${run.ratingOf}`,
+    value: (run) => (run.share === null ? 'no rating' : `${toPercentWords(run.share)} of ${run.ratingOf}`),
     tone: (run) => toShareTone(run),
     isSortable: true,
-    width: 116,
+    width: 124,
   };
 }
 
@@ -121,7 +120,7 @@ function toActions({ voidRun }: RunView): RunColumn[] {
       header: '',
       value: () => null,
       actions: (run) => [{ label: 'Void', run: () => voidRun(run) }],
-      width: 70,
+      width: 76,
     },
   ];
 }
