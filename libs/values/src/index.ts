@@ -3,6 +3,7 @@ export * from './lib/date-text';
 export * from './lib/decimal';
 export * from './lib/density';
 export * from './lib/force';
+export * from './lib/force-per-length';
 export * from './lib/hours';
 export * from './lib/length';
 export * from './lib/local-date';

@@ -64,6 +64,35 @@ export const REGISTER = {
       status: 'text',
     },
   },
+  punch: {
+    id: 'punchId',
+    columns: {
+      machineId: 'uuid',
+      name: 'text',
+      noseRadiusMm: 'numeric(12,5)',
+      angle: 'numeric(7,4)',
+      lengthMm: 'numeric(12,5)',
+      forceLimitKnPerM: 'numeric(12,5)',
+    },
+  },
+  die: {
+    id: 'dieId',
+    columns: {
+      machineId: 'uuid',
+      name: 'text',
+      lengthMm: 'numeric(12,5)',
+      forceLimitKnPerM: 'numeric(12,5)',
+    },
+  },
+  dieOpening: {
+    id: 'dieOpeningId',
+    columns: {
+      dieId: 'uuid',
+      openingMm: 'numeric(12,5)',
+      angle: 'numeric(7,4)',
+      shoulderRadiusMm: 'numeric(12,5)',
+    },
+  },
   material: {
     id: 'materialId',
     columns: {

@@ -138,6 +138,18 @@ describe('written sheets', () => {
         ...{ sheets: 2, pieces: 24, blankLengthMm: '469.9', blankWidthMm: '234.95', weightKg: '12.5' },
       },
     ],
+    punches: [
+      {
+        ...{ machine: 'P2', punch: 'Sharp', noseRadiusMm: '0', angle: '88.5' },
+        ...{ lengthMm: '835', forceLimitKnPerM: '600' },
+      },
+    ],
+    dies: [
+      {
+        ...{ machine: 'P2', die: 'Block', openingMm: '25.4', angle: null, shoulderRadiusMm: '2.5' },
+        ...{ lengthMm: null, forceLimitKnPerM: '583.756' },
+      },
+    ],
     outsideServices: [
       {
         date: day('2026-02-19'),
@@ -174,7 +186,7 @@ describe('written sheets', () => {
   const toKept = (setup: Partial<SetupData>) =>
     JSON.parse(
       JSON.stringify(setup, (key, value) =>
-        typeof value === 'string' && /(?:Kg|Mm|Mpa|KgM3)$/.test(key)
+        typeof value === 'string' && /(?:Kg|Mm|Mpa|KgM3|PerM)$/.test(key)
           ? Number(value).toFixed(key === 'pricePerKg' ? 6 : 3)
           : (value as unknown),
       ),

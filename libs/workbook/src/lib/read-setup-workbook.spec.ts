@@ -22,6 +22,8 @@ async function readBytes(bytes: Uint8Array, units: 'us' | 'metric' = 'us'): Prom
 
 /** The sheets that read-setup-costs.spec.ts is about. */
 const NO_COSTS = {
+  punches: [],
+  dies: [],
   materials: [],
   sheetLots: [],
   issues: [],
@@ -243,6 +245,8 @@ describe('written set-up workbooks', () => {
       'Machine rates',
       'Overhead',
       'Jobs',
+      'Punches',
+      'Dies',
       'Materials',
       'Sheet lots',
       'Issues',

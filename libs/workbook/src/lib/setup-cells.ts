@@ -19,7 +19,7 @@ import {
   toPercent,
   toRate,
 } from '@brakeven/values';
-import { isGaugeText } from '@brakeven/forming';
+import { isGaugeText, parseAngle } from '@brakeven/forming';
 import { findSetupChoices } from './setup-choices';
 import { type SetupCellKind, type SetupColumn } from './setup-plan';
 import { findSetupQuantity } from './setup-quantities';
@@ -71,7 +71,10 @@ const READERS: Readonly<Record<SetupCellKind, ReadCell>> = {
   minutes: (cell, context) => readAmount(cell, context, (amount) => roundHalfUp(D(amount), 4).toFixed()),
   yesNo: readYesNo,
   force: readQuantity,
+  forcePerLength: readQuantity,
   length: readQuantity,
+  radius: (cell, context) => readQuantity(cell, context, { mayBeZero: true }),
+  angle: readAngle,
   mass: readQuantity,
   density: readQuantity,
   strength: readQuantity,
@@ -199,17 +202,33 @@ function readYesNo(cell: RawCell, { column }: SetupColumnContext): SetupReading 
     : accept(value);
 }
 
-/** A number in the column's unit, or a text with a unit of its own; above 0. */
-function readQuantity(cell: RawCell, { column, unit }: SetupColumnContext): SetupReading {
+/** A number in the column's unit, or a text with a unit of its own; above 0, unless nothing makes sense too. */
+function readQuantity(
+  cell: RawCell,
+  { column, unit }: SetupColumnContext,
+  { mayBeZero = false }: { mayBeZero?: boolean } = {},
+): SetupReading {
   const form = findSetupQuantity(column.kind);
   if (!form) throw new Error(`${column.kind} is no quantity.`);
-  if (cell.kind === 'number' && !cell.isPercent && cell.value > 0) {
+  if (cell.kind === 'number' && !cell.isPercent && (cell.value > 0 || (mayBeZero && cell.value === 0))) {
     return accept(form.toBase(cell.value, unit).toFixed());
   }
   const parsed = form.parse(cell.text, unit);
-  if (cell.kind === 'text' && parsed.ok && parsed.value.gt(0)) return accept(parsed.value.toFixed());
+  const isEnough = parsed.ok && (parsed.value.gt(0) || (mayBeZero && parsed.value.isZero()));
+  if (cell.kind === 'text' && isEnough) return accept(parsed.value.toFixed());
   const why = parsed.ok ? `The ${form.noun} must be above 0.` : parsed.message;
-  return refuse(`${form.noun}_unreadable`, cell, `holds '${cell.text}'. ${why}`);
+  return refuse(`${form.noun.replaceAll(' ', '_')}_unreadable`, cell, `holds '${cell.text}'. ${why}`);
+}
+
+/** The angle of a tool, in degrees. */
+function readAngle(cell: RawCell, { column }: SetupColumnContext): SetupReading {
+  const parsed = parseAngle(cell.text);
+  const isAngle = cell.kind === 'text' || (cell.kind === 'number' && !cell.isPercent);
+  if (isAngle && parsed.ok && parsed.value >= 1 && parsed.value <= 179) {
+    return accept(roundHalfUp(D(parsed.value), 4).toFixed());
+  }
+  const wanted = `${column.header} must be 1 to 179 degrees, such as ${column.example}.`;
+  return refuse('angle_unreadable', cell, `holds '${cell.text}'. ${wanted}`);
 }
 
 /** Whole numbers from here on are gauges as likely as inches. */

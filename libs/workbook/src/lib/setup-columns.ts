@@ -4,12 +4,14 @@ import { MONEY_PLANS } from './setup-money-plans';
 import { type SetupColumn, type SetupSheetPlan } from './setup-plan';
 import { REGISTER_PLANS } from './setup-register-plans';
 import { STOCK_PLANS } from './setup-stock-plans';
+import { TOOL_PLANS } from './setup-tool-plans';
 
 export const EXPLAINING_SHEET = 'How to fill this in';
 
 /** The sheets of the set-up workbook and their columns, in the order in which they are written. */
 export const SETUP_PLANS: readonly SetupSheetPlan[] = [
   ...REGISTER_PLANS,
+  ...TOOL_PLANS,
   ...STOCK_PLANS,
   ...MONEY_PLANS,
   ...ESTIMATE_PLANS,

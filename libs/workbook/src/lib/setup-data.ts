@@ -72,6 +72,35 @@ export interface SetupJob {
   readonly status: JobStatus;
 }
 
+export interface SetupPunch {
+  /** Code of the press. */
+  readonly machine: string;
+  readonly punch: string;
+  /** Millimetres, exact decimal text; so is the length. */
+  readonly noseRadiusMm: string;
+  /** Degrees, decimal text. */
+  readonly angle: string | null;
+  readonly lengthMm: string | null;
+  /** Kilonewtons per metre, decimal text. */
+  readonly forceLimitKnPerM: string | null;
+}
+
+/** One opening of a die. */
+export interface SetupDieOpening {
+  /** Code of the press. */
+  readonly machine: string;
+  readonly die: string;
+  /** Millimetres, exact decimal text; so are radius and length. */
+  readonly openingMm: string;
+  /** Degrees, decimal text. */
+  readonly angle: string | null;
+  readonly shoulderRadiusMm: string | null;
+  /** Of the die, like its force limit. */
+  readonly lengthMm: string | null;
+  /** Kilonewtons per metre, decimal text. */
+  readonly forceLimitKnPerM: string | null;
+}
+
 export interface SetupMaterial {
   readonly name: string;
   readonly grade: string | null;
@@ -165,6 +194,8 @@ export interface SetupData {
   readonly machineRates: readonly SetupMachineRate[];
   readonly overhead: readonly SetupOverhead[];
   readonly jobs: readonly SetupJob[];
+  readonly punches: readonly SetupPunch[];
+  readonly dies: readonly SetupDieOpening[];
   readonly materials: readonly SetupMaterial[];
   readonly sheetLots: readonly SetupSheetLot[];
   readonly issues: readonly SetupIssue[];

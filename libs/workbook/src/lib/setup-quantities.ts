@@ -3,22 +3,26 @@ import {
   type Decimal,
   densityIn,
   findDensityUnit,
+  findForcePerLengthUnit,
   findForceUnit,
   findLengthUnit,
   findMassUnit,
   findStressUnit,
   forceIn,
+  forcePerLengthIn,
   lengthIn,
   massIn,
   type Parsed,
   parseDensity,
   parseForce,
+  parseForcePerLength,
   parseLength,
   parseMass,
   parseStress,
   stressIn,
   toDensity,
   toForce,
+  toForcePerLength,
   toLength,
   toMass,
   toStress,
@@ -69,6 +73,14 @@ function quantity<U extends string, Q extends Decimal>(
   };
 }
 
+const LENGTHS = {
+  units: { us: 'in', metric: 'mm' },
+  findUnit: findLengthUnit,
+  parse: parseLength,
+  to: toLength,
+  in: lengthIn,
+} as const;
+
 const QUANTITIES: Readonly<Partial<Record<SetupCellKind, SetupQuantity>>> = {
   force: quantity(
     'force',
@@ -82,13 +94,20 @@ const QUANTITIES: Readonly<Partial<Record<SetupCellKind, SetupQuantity>>> = {
     },
     { us: 'tons', metric: 'kN' },
   ),
-  length: quantity('length', '(in), (ft) or (mm)', {
-    units: { us: 'in', metric: 'mm' },
-    findUnit: findLengthUnit,
-    parse: parseLength,
-    to: toLength,
-    in: lengthIn,
-  }),
+  forcePerLength: quantity(
+    'force per length',
+    '(tons/ft), (kN/m) or (tonnes/m)',
+    {
+      units: { us: 'US ton/ft', metric: 'kN/m' },
+      findUnit: findForcePerLengthUnit,
+      parse: parseForcePerLength,
+      to: toForcePerLength,
+      in: forcePerLengthIn,
+    },
+    { us: 'tons/ft', metric: 'kN/m' },
+  ),
+  length: quantity('length', '(in), (ft) or (mm)', LENGTHS),
+  radius: quantity('radius', '(in), (ft) or (mm)', LENGTHS),
   mass: quantity('weight', '(lb) or (kg)', {
     units: { us: 'lb', metric: 'kg' },
     findUnit: findMassUnit,

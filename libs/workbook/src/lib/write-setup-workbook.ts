@@ -35,7 +35,10 @@ const NUMBER_FORMATS: Readonly<Record<SetupCellKind, string>> = {
   minutes: '0.####',
   yesNo: TEXT_FORMAT,
   force: '0.##',
+  forcePerLength: '0.##',
   length: '0.###',
+  radius: '0.####',
+  angle: '0.##',
   mass: '0.###',
   density: '0.####',
   strength: '0.##',
@@ -55,6 +58,7 @@ const NUMBERS: ReadonlySet<SetupCellKind> = new Set([
   'count',
   'hours',
   'minutes',
+  'angle',
 ] as const);
 const WEIGHT_UNITS = { us: 'lb', metric: 'kg' } as const;
 const EXPLANATION = [

@@ -15,6 +15,8 @@ const none: SetupCounts = {
   machineRates: 0,
   overhead: 0,
   jobs: 0,
+  punches: 0,
+  dies: 0,
   materials: 0,
   sheetLots: 0,
   issues: 0,

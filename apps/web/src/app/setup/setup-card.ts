@@ -82,6 +82,8 @@ const NONE = {
   machineRates: 0,
   overhead: 0,
   jobs: 0,
+  punches: 0,
+  dies: 0,
   materials: 0,
   sheetLots: 0,
   issues: 0,

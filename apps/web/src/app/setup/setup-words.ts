@@ -10,6 +10,8 @@ export const SHEET_WORDS: Record<SetupSheet, string> = {
   machineRates: 'Machine rates',
   overhead: 'Overhead',
   jobs: 'Jobs',
+  punches: 'Punches',
+  dies: 'Dies',
   materials: 'Materials',
   sheetLots: 'Sheet lots',
   issues: 'Issues',

@@ -28,6 +28,7 @@ import { planMachineCosts, planMachineRates, planMachines, planOperations } from
 import { planMaterials } from './plan-materials';
 import { planPeople } from './plan-people';
 import { planSheetLots } from './plan-sheet-lots';
+import { planDies, planPunches } from './plan-tools';
 import { SetupDraft, type SetupRegister } from './setup-draft';
 
 /**
@@ -82,6 +83,9 @@ const WRITE_ORDER = [
   'operation',
   'overheadRate',
   'job',
+  'punch',
+  'die',
+  'dieOpening',
   'material',
   'sheetLot',
   'materialIssue',
@@ -124,6 +128,8 @@ function planSheets(draft: SetupDraft, stated: SetupFile, filledJobCells: Readon
   planOverhead(draft, stated.overhead);
   planJobs(draft, stated.jobs, (address) => address !== undefined && filledJobCells.has(address));
   checkOpenings(draft, stated.jobs);
+  planPunches(draft, stated.punches);
+  planDies(draft, stated.dies);
   planMaterials(draft, stated.materials);
   planSheetLots(draft, stated.sheetLots);
   checkStock(draft, planIssues(draft, stated.issues), stated.sheetLots);

@@ -12,6 +12,7 @@ const FORMS = {
   weight: { decimals: 10, digits: 10 },
   /** Density and strength. */
   property: { decimals: 3, digits: 7 },
+  angle: { decimals: 4, digits: 3 },
   hours: { decimals: 4, digits: 5 },
   minutes: { decimals: 4, digits: 8 },
 } as const;

@@ -74,6 +74,8 @@ export const SHEET_STOCK: SetupEstimateLine = {
 export const COSTS: SetupData = {
   ...DATA,
   jobs: [GUARDS],
+  punches: [],
+  dies: [],
   materials: [ROLLED],
   sheetLots: [LOT],
   issues: [ISSUE, RETURN],
