@@ -29,9 +29,11 @@ import { buildCosts } from './build-costs';
 import { buildSetup } from './build-setup';
 import { buildTimesheet, buildUnsettledTimesheet } from './build-timesheets';
 import { planCosts, type PlannedCosts } from './plan-costs';
+import { buildTools, planRuns, planTrials } from './plan-forming';
 import { type PlannedJob, planJobs } from './plan-jobs';
 import { type PlannedEntry, planWeeks } from './plan-weeks';
 import { createRandom } from './random';
+import { seedForming } from './seed-forming';
 import { SHOP, SIGN_INS, WEEKS } from './story';
 
 const SEED = 20260301;
@@ -89,6 +91,12 @@ export async function seedDemoShop(tools: DemoTools): Promise<'made' | 'there' |
   if ((await listUsers(context)).length >= SIGN_INS.length) return 'there';
   const demo = planDemo(todayIn(SHOP.timeZone, tools.now));
   await importHistory(asBookkeeper(context), demo, tools);
+  tools.onProgress?.('Trial bends and press runs');
+  await seedForming(
+    context,
+    planRuns(demo.firstMonday, demo.weeks.slice(0, -1)),
+    planTrials(demo.firstMonday),
+  );
   await closeOldMonths(asBookkeeper(context), addDays(todayIn(SHOP.timeZone, tools.now), -DAYS_LEFT_OPEN));
   await createSignIns(context);
   return 'made';
@@ -117,6 +125,7 @@ async function importHistory(context: ShopContext, demo: Demo, tools: DemoTools)
     const { firstMonday, jobs, costs } = demo;
     const bytes = await writeSetupWorkbook({
       ...buildSetup(firstMonday, jobs, { isHistory }),
+      ...buildTools(),
       ...buildCosts(firstMonday, jobs, costs, { isHistory }),
     });
     await importSetup(context, { name: 'Set-up.xlsx', bytes }, {}, { reader: tools.reader });
