@@ -87,7 +87,8 @@ function toForceBand({ forceLow, forceHigh }: FitEstimateRow): string {
 const VERDICTS = { fits: 'fits', 'with-care': 'with care', no: 'no' } as const;
 
 function toVerdict({ verdict, objections }: FitEstimateRow): string {
-  return [VERDICTS[verdict], ...objections.map(({ words }) => words)].join(': ');
+  const words = objections.map((objection) => objection.words).join(' ');
+  return words === '' ? VERDICTS[verdict] : `${VERDICTS[verdict]}: ${words}`;
 }
 
 async function listTools(cli: Cli, shop: string): Promise<void> {

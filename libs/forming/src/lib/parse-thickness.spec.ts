@@ -26,6 +26,14 @@ describe('a thickness', () => {
     expect(inchesOf(text)).toBeCloseTo(Number(inches), 12);
   });
 
+  it('is read from the gauges of a shop that has its own', () => {
+    const findGauge = (system: GaugeSystem, gauge: number) =>
+      system === 'stainless' && gauge === 10 ? 0.134 : undefined;
+    const read = parseThickness('10 ga', 'stainless', 'in', findGauge);
+    expect(read.ok && lengthIn(read.value.thickness, 'in').toNumber()).toBe(0.134);
+    expect(parseThickness('10 ga', 'steel', 'in', findGauge)).toMatchObject({ code: 'unknown_gauge' });
+  });
+
   it('is refused as a gauge without a material, and where the table has no such gauge', () => {
     expect(parseThickness('16 ga', null, 'in')).toMatchObject({
       code: 'gauge_needs_material',
