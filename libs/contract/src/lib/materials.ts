@@ -37,7 +37,7 @@ export const materialSchema = z.object({
   stockKg: weightSchema,
   /** What the stock has cost. */
   stockValue: moneySchema.optional(),
-  /** Value ÷ weight in stock; of the last stock there was if there is none now, null if there never was any. */
+  /** Value ÷ weight in stock; of the last stock there was if there is none now, null if there never was a lot. */
   averagePerKg: rateSchema.nullable().optional(),
   /** The lot received last, with the size of its sheets to start the next from. */
   lastLot: z
