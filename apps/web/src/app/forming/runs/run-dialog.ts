@@ -74,21 +74,21 @@ export class RunDialog {
     this.value();
     return this.form.controls.jobId.value;
   });
-  protected readonly choices = rxResource({
-    params: () => ({ jobId: this.jobId() || undefined }),
-    stream: ({ params }) => this.api.getChoices(params.jobId),
-    defaultValue: { jobs: [], entries: [] },
+  // Jobs are asked for once: they must not go from the field while the entries of the chosen one are fetched.
+  protected readonly choices = rxResource({ stream: () => this.api.getChoices() });
+  private readonly ofJob = rxResource({
+    params: () => this.jobId() || undefined,
+    stream: ({ params }) => this.api.getChoices(params),
   });
-  private readonly offered = computed(() =>
-    this.choices.hasValue() ? this.choices.value() : { jobs: [], entries: [] },
-  );
+  private readonly offeredJobs = computed(() => (this.choices.hasValue() ? this.choices.value().jobs : []));
+  private readonly offeredEntries = computed(() => (this.ofJob.hasValue() ? this.ofJob.value().entries : []));
   protected readonly jobs = computed(() => [
     { value: '', label: '' },
-    ...this.offered().jobs.map(({ jobId, number, title }) => ({ value: jobId, label: `${number} ${title}` })),
+    ...this.offeredJobs().map(({ jobId, number, title }) => ({ value: jobId, label: `${number} ${title}` })),
   ]);
   protected readonly entries = computed(() => [
     { value: '', label: 'none' },
-    ...this.offered().entries.map((entry) => ({
+    ...this.offeredEntries().map((entry) => ({
       value: entry.entryId,
       label: `${formatLocalDate(toLocalDate(entry.workedOn))} · ${entry.employee} · ${entry.operation} · ${formatHours(entry.hours)} h`,
     })),
