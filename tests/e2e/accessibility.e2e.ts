@@ -13,6 +13,13 @@ const PAGES: Readonly<Record<Role, readonly string[]>> = {
     '/jobs',
     '/customers',
     '/hours',
+    '/forming/fit',
+    '/forming/depth',
+    '/forming/card',
+    '/forming/blank',
+    '/forming/runs',
+    '/forming/setup-card',
+    '/forming/tooling',
     '/machines',
     '/timesheets',
     '/month-end',
@@ -23,8 +30,8 @@ const PAGES: Readonly<Record<Role, readonly string[]>> = {
     '/nowhere',
   ],
   bookkeeper: ['/timesheets', '/jobs', '/people', '/month-end', '/materials'],
-  lead: ['/jobs', '/machines', '/materials'],
-  operator: ['/hours', '/payback'],
+  lead: ['/jobs', '/forming/runs', '/machines', '/materials'],
+  operator: ['/hours', '/forming/fit', '/forming/runs', '/payback'],
 };
 const WIDTHS_PX = [390, 1024, 1440];
 

@@ -46,7 +46,9 @@ describe('The owner sets the shop up', () => {
     await page.getByLabel('New password', { exact: true }).fill('a folded sheet of steel');
     await page.getByLabel('New password once more').fill('a folded sheet of steel');
     await page.getByRole('button', { name: 'Change password' }).click();
-    await eventually(async () => expect(await own.listRail()).toEqual(['Jobs', 'Hours', 'Machines']));
+    await eventually(async () =>
+      expect(await own.listRail()).toEqual(['Jobs', 'Hours', 'Forming', 'Machines', 'Materials']),
+    );
     await own.choose('Jobs');
     expect(await own.heading.textContent()).toBe('Jobs');
     expect(complaints).toEqual([]);

@@ -26,7 +26,7 @@ describe('Each role sees its own', () => {
   it('keeps money and other people’s hours from the operator', async () => {
     const { visitor, shell } = await start('operator');
     await shell.goTo('/');
-    expect(await shell.listRail()).toEqual(['Hours']);
+    expect(await shell.listRail()).toEqual(['Hours', 'Forming']);
 
     await visitor.page.getByRole('button', { name: 'All', exact: true }).click();
     const hours = new DataGrid(visitor.page, 'Time entries');
@@ -58,7 +58,7 @@ describe('Each role sees its own', () => {
   it('shows the lead hours of jobs without money', async () => {
     const { visitor, shell } = await start('lead');
     await shell.goTo('/jobs');
-    expect(await shell.listRail()).toEqual(['Jobs', 'Hours', 'Machines']);
+    expect(await shell.listRail()).toEqual(['Jobs', 'Hours', 'Forming', 'Machines', 'Materials']);
     const jobs = new DataGrid(visitor.page, 'Jobs');
     expect(toHours(await jobs.readTotal('hours'))).toBeGreaterThan(0);
     for (const column of ['labour', 'machine', 'overhead', 'total', 'quotedPrice']) {
@@ -82,8 +82,16 @@ describe('Each role sees its own', () => {
   it('keeps payback and machines from the bookkeeper, who sees what jobs cost', async () => {
     const { visitor, shell } = await start('bookkeeper');
     await shell.goTo('/');
-    expect(await shell.listRail()).toEqual(['Jobs', 'Hours', 'Timesheets', 'People & rates']);
-    for (const path of ['/payback', '/machines', '/shop']) {
+    expect(await shell.listRail()).toEqual([
+      'Jobs',
+      'Customers',
+      'Hours',
+      'Timesheets',
+      'Month end',
+      'People & rates',
+      'Materials',
+    ]);
+    for (const path of ['/payback', '/forming', '/machines', '/shop']) {
       await expectRefusedPage(shell, path);
     }
     await shell.goTo('/jobs');

@@ -28,6 +28,11 @@ const pictures = {
   materials: (page) => goTo(page, '/materials'),
   'month-end': (page) => goTo(page, '/month-end'),
   hours: (page) => openGrid(page, '/hours?period=all'),
+  'forming-fit': (page) => goTo(page, '/forming/fit'),
+  'forming-blank': (page) => goTo(page, '/forming/blank'),
+  'forming-depth': (page) => goTo(page, '/forming/depth'),
+  'forming-card': (page) => goTo(page, '/forming/card'),
+  'forming-runs': (page) => goTo(page, '/forming/runs'),
   machines: async (page) => {
     await goTo(page, '/machines');
     await page.getByRole('link', { name: 'Press 2' }).click();
