@@ -8,7 +8,7 @@ import { toAngleWords, toLengthWords, toNumberWords, toSizeWords } from '../form
   selector: 'app-trial-table',
   imports: [LocalDatePipe, StatusTag],
   template: `
-    <div class="scroll-x" tabindex="0" role="region" aria-label="Trial bends">
+    <div class="scroll-x" tabindex="0" role="region" aria-label="Table of trial bends">
       <table class="figures">
         <thead>
           <tr>
