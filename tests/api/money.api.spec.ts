@@ -30,8 +30,8 @@ const MONEY_NAMES = [
   'workInProgress',
   'variance',
 ];
-/** Hours of a setting, which are kept with two decimals. */
-const HOURS_NAMES = ['overtimeThresholdHours'];
+/** What is no money whatever its decimals: hours of a setting, and quantities that say their unit. */
+const QUANTITY_NAME = /^(overtimeThresholdHours|radiusPerOpening|\w+(Mm|Mpa|Kn|KnPerM))$/;
 /** Money and rates are the only texts that are a number with two, three, five or six decimals. */
 const MONEY_TEXT = /^-?\d+\.(\d{2}|\d{3}|\d{5,6})$/;
 
@@ -43,6 +43,7 @@ beforeAll(async () => {
   const toFile = (name: string, bytes: Uint8Array) => ({ name, bytes });
   await importSetup(context, toFile('s.xlsx', await writeSetupWorkbook(SETUP, { units: 'us' })), {}, tools);
   await addMoneyOnJob();
+  await addTools();
   const week = await writeTimesheetWorkbook({ title: 'Week 10', rows: WEEK });
   await importTimesheet(context, toFile('w.xlsx', week), {}, tools);
 });
@@ -127,6 +128,8 @@ async function findIds(): Promise<Record<string, string>> {
       .select(['materialId', 'issueId'])
       .executeTakeFirstOrThrow();
     const customer = await trx.selectFrom('customer').select('customerId').executeTakeFirstOrThrow();
+    const punch = await trx.selectFrom('punch').select(['machineId', 'punchId']).executeTakeFirstOrThrow();
+    const opening = await trx.selectFrom('dieOpening').select('dieOpeningId').executeTakeFirstOrThrow();
     const rows = {
       ...machine,
       ...job,
@@ -135,6 +138,9 @@ async function findIds(): Promise<Record<string, string>> {
       ...employee,
       ...issue,
       ...customer,
+      ...punch,
+      ...opening,
+      materialCode: 'mild-steel',
       fromJobId: job.jobId,
     };
     return { ...rows, from: '2024-03-04', month: '2024-03' };
@@ -163,11 +169,29 @@ async function addMoneyOnJob(): Promise<void> {
   });
 }
 
+/** A punch and a die on the machine, so that questions of forming have something to ask about. */
+async function addTools(): Promise<void> {
+  const { shop } = api;
+  await shop.inShop(async (trx) => {
+    const { machineId } = await trx.selectFrom('machine').select('machineId').executeTakeFirstOrThrow();
+    const tool = { shopId: shop.shop.shopId, machineId, name: 'Straight' };
+    await trx
+      .insertInto('punch')
+      .values({ ...tool, noseRadiusMm: '1.6' })
+      .execute();
+    const { dieId } = await trx.insertInto('die').values(tool).returning('dieId').executeTakeFirstOrThrow();
+    await trx
+      .insertInto('dieOpening')
+      .values({ shopId: tool.shopId, dieId, openingMm: '25.4', shoulderRadiusMm: '3' })
+      .execute();
+  });
+}
+
 /** Paths of whatever looks like money in an answer. */
 function findMoney(value: unknown, path = ''): string[] {
   if (typeof value === 'string') return MONEY_TEXT.test(value) ? [`${path} = ${value}`] : [];
   if (typeof value !== 'object' || value === null) return [];
-  const entries = Object.entries(value).filter(([key]) => !HOURS_NAMES.includes(key));
+  const entries = Object.entries(value).filter(([key]) => !QUANTITY_NAME.test(key));
   return entries.flatMap(([key, inner]) =>
     MONEY_NAMES.includes(key) ? [`${path}.${key}`] : findMoney(inner, `${path}.${key}`),
   );

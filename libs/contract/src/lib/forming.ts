@@ -66,7 +66,7 @@ export const materialCodeSchema = z
   .string()
   .regex(
     /^[a-z0-9][a-z0-9.-]{0,39}$/,
-    'A code has small letters, digits, points and hyphens, at most 40, such as hardox-450.',
+    'A code has small letters, digits, points and hyphens, at most 40, such as wear-plate-450.',
   );
 
 /** A material that is bent, with the figures that forces, weights and radii are computed from. */

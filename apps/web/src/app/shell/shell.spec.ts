@@ -63,7 +63,7 @@ describe('Shell', () => {
   it('shows each role its own pages and marks the one that is open', async () => {
     const { element } = await render('operator');
     const links = [...element.querySelectorAll<HTMLElement>('.rail a')];
-    expect(links.map((link) => link.textContent?.trim())).toEqual(['Hours']);
+    expect(links.map((link) => link.textContent?.trim())).toEqual(['Hours', 'Forming']);
     expect(links[0]?.getAttribute('aria-current')).toBe('page');
   });
 

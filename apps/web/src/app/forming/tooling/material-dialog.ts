@@ -42,7 +42,7 @@ export interface BendMaterialDialogData {
       @if (!data.material) {
         <app-form-field
           label="Code"
-          hint="in links and commands, such as hardox-450"
+          hint="in links and commands, such as wear-plate-450"
           [control]="fields.code"
         />
       }
