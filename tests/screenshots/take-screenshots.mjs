@@ -31,7 +31,16 @@ const pictures = {
   'forming-fit': (page) => goTo(page, '/forming/fit'),
   'forming-blank': (page) => goTo(page, '/forming/blank'),
   'forming-depth': (page) => goTo(page, '/forming/depth'),
-  'forming-card': (page) => goTo(page, '/forming/card'),
+  'forming-fit-1024': async (page) => {
+    await page.setViewportSize({ width: 1024, height: 1400 });
+    await goTo(page, '/forming/fit');
+  },
+  'forming-card': async (page) => {
+    await goTo(page, '/forming/card');
+    await page.pdf({ path: join(folder, 'forming-card.pdf'), preferCSSPageSize: true });
+    // As it is printed.
+    await page.emulateMedia({ media: 'print' });
+  },
   'forming-runs': (page) => goTo(page, '/forming/runs'),
   machines: async (page) => {
     await goTo(page, '/machines');
@@ -72,6 +81,8 @@ async function takeAll() {
     await signIn(page);
     mkdirSync(folder, { recursive: true });
     for (const [name, open] of Object.entries(pictures)) {
+      await page.emulateMedia({ media: 'screen' });
+      await page.setViewportSize({ width: Number(width), height: 900 });
       await open(page);
       await waitUntilSettled(page);
       await page.screenshot({ path: join(folder, `${name}.png`) });
