@@ -171,6 +171,8 @@ export class MonthEndPage {
       next: (end: MonthEnd) => {
         this.isWorking.set(false);
         this.shown.set(end);
+        // By its own address: without one, the page would go on to the next month to be closed.
+        this.show(end.month);
         this.months.reload();
         void this.rollup.refresh();
         this.notifier.say(done);
