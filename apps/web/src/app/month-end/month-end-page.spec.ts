@@ -2,7 +2,7 @@ import { HttpErrorResponse } from '@angular/common/http';
 import { signal } from '@angular/core';
 import { TestBed } from '@angular/core/testing';
 import { MatDialog } from '@angular/material/dialog';
-import { provideRouter } from '@angular/router';
+import { provideRouter, Router } from '@angular/router';
 import { type MonthEnd, type Role } from '@brakeven/contract';
 import { WORKINGS_OPENER } from '@brakeven/ui';
 import { of, Subject, throwError } from 'rxjs';
@@ -31,7 +31,7 @@ describe('MonthEndPage', () => {
     api.get.mockReturnValue(of(month));
     TestBed.configureTestingModule({
       providers: [
-        provideRouter([]),
+        provideRouter([{ path: 'month-end/:month', children: [] }]),
         provideSession(role),
         { provide: MonthsApi, useValue: api },
         { provide: RollupStore, useValue: rollup },
@@ -65,6 +65,7 @@ describe('MonthEndPage', () => {
     expect(JSON.stringify(config?.data)).toContain('Left to look at: days without timesheets.');
     expect(api.close).toHaveBeenCalledWith('2026-11');
     expect(page.text).toContain('November 2026 is closed');
+    expect(TestBed.inject(Router).url).toBe('/month-end/2026-11');
     expect(page.all('app-tie-out-card input')).toEqual([]);
   });
 
