@@ -108,6 +108,8 @@ function toAnswerLines(
   return {
     symbol: 'none',
     silent: true,
+    // Lines would be rounded to two decimals, off the curve.
+    precision: 6,
     data: [
       {
         xAxis: at(answer.depthMm),
