@@ -35,6 +35,9 @@ export interface AngleAnswer {
 /** Degrees that an answer may lie beyond the angles that were measured. */
 export const EXTRAPOLATION_MAX = 10;
 
+/** Degrees to either side beyond which an answer would only pretend to know. */
+export const BAND_MAX = 20;
+
 /** Another sheet or opening counts as a neighbour up to this factor. */
 export const NEIGHBOUR_FACTOR_MAX = 1.6;
 
@@ -46,7 +49,7 @@ const SAME_MM = 0.005;
 
 /**
  * The ram's reading for an inside angle. Rules in words: `FORMING_RULES.ramDepth`, `.ramDepthFit`, `.transfer`.
- * Codes: `out_of_range`, `angle_out_of_reach`, `beyond_trials`, `too_far_from_trials`, `thickness_over_opening`.
+ * Codes: `out_of_range`, `angle_out_of_reach`, `beyond_trials`, `too_far_from_trials`, `thickness_over_opening`, `too_uncertain`.
  */
 export function findDepth(fit: RamDepthFit, setup: BendSetup, insideAngle: number): Parsed<DepthAnswer> {
   const bend = toAirBend(setup, fit.radiusPerOpening);
@@ -62,6 +65,7 @@ export function findDepth(fit: RamDepthFit, setup: BendSetup, insideAngle: numbe
   const depthMm = depthAt(turned);
   const isGuess = !isTried(fit, setup);
   const bandAngle = bandOf(fit, setup, depthMm, isGuess);
+  if (!(bandAngle <= BAND_MAX)) return tooUncertain(bandAngle);
   const [lowMm, highMm] = [depthAt(turned - bandAngle), depthAt(turned + bandAngle)];
   return accepted({ depthMm, lowMm, highMm, bandAngle, isGuess });
 }
@@ -75,6 +79,7 @@ export function findAngle(fit: RamDepthFit, setup: BendSetup, depthMm: number): 
   if (beyond) return refused(beyond.code, beyond.message);
   const isGuess = !isTried(fit, setup);
   const band = bandOf(fit, setup, depthMm, isGuess);
+  if (!(band <= BAND_MAX)) return tooUncertain(band);
   return accepted({ insideAngle, low: insideAngle - band, high: insideAngle + band, isGuess });
 }
 
@@ -103,6 +108,14 @@ export function computeDepthCard(
 ): DepthCardCell[] {
   return setups.flatMap((setup) =>
     insideAngles.map((insideAngle) => ({ setup, insideAngle, answer: findDepth(fit, setup, insideAngle) })),
+  );
+}
+
+function tooUncertain<T>(bandAngle: number): Parsed<T> {
+  const width = Number.isFinite(bandAngle) ? `by ${Math.round(bandAngle)} degrees` : 'by any angle';
+  return refused(
+    'too_uncertain',
+    `The next bend could be off ${width}: the trial bends do not agree with each other or with the tools. Check their readings, the opening and the thickness, or bend more.`,
   );
 }
 

@@ -46,6 +46,21 @@ describe('bends without noise', () => {
     }
   });
 
+  it('that do not agree with each other give no answer, instead of one with a band of everything', () => {
+    const jumbled = [75, 90, 105, 135].map((angle) => trialOf(angle));
+    const fit = fitOf(
+      jumbled.map((trial, index) => ({
+        ...trial,
+        insideAngle: trial.insideAngle + ([14, -12, 15, -9][index] ?? 0),
+      })),
+    );
+    expect(findDepth(fit, SETUP, 90)).toMatchObject({ ok: false, code: 'too_uncertain' });
+    expect(findAngle(fit, SETUP, jumbled[1]?.depthMm ?? 0)).toMatchObject({
+      ok: false,
+      code: 'too_uncertain',
+    });
+  });
+
   it('of a perfectly plastic sheet give no springback', () => {
     const trials = [80, 95, 110, 130].map((angle) => trialOf(angle, SETUP, -3.1, 0));
     const fit = fitOf(trials);

@@ -31,10 +31,13 @@ const MM_PER_IN = 25.4;
         @for (row of rows(); track row.gauge) {
           <li>
             <span class="gauge">{{ row.gauge }} ga</span>
-            <span [title]="row.source">{{ row.words }}</span>
-            @if (row.isOwn) {
-              <app-status-tag word="own" tone="blue" />
-            }
+            <span>
+              {{ row.words }}
+              @if (row.isOwn) {
+                <app-status-tag word="own" tone="blue" />
+                <span class="small">{{ row.source }}</span>
+              }
+            </span>
             @if (canEdit()) {
               <button
                 type="button"
@@ -73,7 +76,7 @@ const MM_PER_IN = 25.4;
     }
     ul {
       display: grid;
-      grid-template-columns: repeat(auto-fill, minmax(230px, 1fr));
+      grid-template-columns: repeat(auto-fill, minmax(min(300px, 100%), 1fr));
       gap: 2px 20px;
       margin-top: 8px;
       padding: 0;
