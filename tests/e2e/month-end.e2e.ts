@@ -28,15 +28,20 @@ describe('A month is closed and reopened', () => {
     const owner = await visitors.visitAs('owner');
     await owner.page.goto(new URL(bookkeeper.page.url()).pathname);
     await owner.page.getByRole('heading', { name: `${month} is closed` }).waitFor();
-    expect(await readTotals(owner)).toEqual(before);
+    // The owner sees what the machines earned besides.
+    const closed = await readTotals(owner);
+    expect(closed).toMatchObject(before);
     await owner.page.getByRole('button', { name: 'Reopen…' }).click();
     const form = new FormDialog(owner.page);
     await form.fill({ Reason: 'A week of timesheets was missing' });
     await form.submit('Reopen');
     await owner.page.getByRole('button', { name: `Close ${month}` }).waitFor();
-    expect(await readTotals(owner)).toEqual(before);
+    expect(await readTotals(owner)).toEqual(closed);
     const closings = owner.page.getByRole('region', { name: 'Closed months' });
-    await closings.getByText(/A week of timesheets was missing/).waitFor();
+    await closings
+      .getByText(/A week of timesheets was missing/)
+      .first()
+      .waitFor();
     expect([...bookkeeper.complaints, ...owner.complaints]).toEqual([]);
   });
 
