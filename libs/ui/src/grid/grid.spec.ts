@@ -53,13 +53,13 @@ class Host {
 describe('Grid', () => {
   const opened: unknown[] = [];
 
-  const render = async (awaited: string, source?: PageSource<Row>) => {
+  const render = async (awaited: string | string[], source?: PageSource<Row>) => {
     const fixture = TestBed.createComponent(Host);
     if (source) fixture.componentInstance.source.set(source);
     const element = fixture.nativeElement as HTMLElement;
     document.body.append(element);
     const deadline = Date.now() + 8_000;
-    const isShown = () => element.querySelector(awaited) !== null;
+    const isShown = () => [awaited].flat().every((part) => element.querySelector(part) !== null);
     while (!isShown() && Date.now() < deadline) {
       await fixture.whenStable();
       await new Promise((resolve) => setTimeout(resolve, 50));
@@ -78,7 +78,11 @@ describe('Grid', () => {
   });
 
   it('shows rows of the source with their figures and links, and the totals', async () => {
-    const { element, host } = await render('a[href="/jobs/1"]');
+    const { element, host } = await render([
+      'a[href="/jobs/1"]',
+      '[row-index="0"] .figure',
+      '[row-index="b-0"]',
+    ]);
     element.querySelector<HTMLElement>('.figure')?.click();
     element.querySelector<HTMLElement>('a')?.click();
     expect(opened).toEqual([{ figure: 'job.total' }]);
