@@ -4,9 +4,12 @@ import { DataGrid } from './pages/data-grid';
 import { toHours } from './pages/figure-text';
 import { Shell } from './pages/shell';
 
-/** Names under which the API sends money; an answer with none of them holds none. */
+/**
+ * Names under which the API sends money; an answer with none of them holds none. `material` is money where it is an
+ * amount, and else the name of a material, which everybody may read.
+ */
 const MONEY =
-  /"(?!entriesWithoutRate)(?:wage\w*|burden\w*|labour|overtime|overhead|material|outside|total|amount|net|outlay|invoiced|margin|workInProgress|cost|freight|value|average\w*|remaining|earned\w*|quotedPrice|\w+Rate|rate|runningCost\w*|costItems|rates)":(?!null|\[\])/;
+  /"(?:(?!entriesWithoutRate)(?:wage\w*|burden\w*|labour|overtime|overhead|outside|total|amount|net|outlay|invoiced|margin|workInProgress|cost|freight|value|average\w*|remaining|earned\w*|quotedPrice|\w+Rate|rate|runningCost\w*|costItems|rates)":(?!null|\[\])|material":"-?\d+\.\d\d")/;
 
 // What is refused is so before anything is looked up.
 const PAYBACK_OF_SOME_MACHINE = '/api/machines/01900000-0000-7000-8000-000000000000/payback';
