@@ -1,5 +1,5 @@
 import { type Routes } from '@angular/router';
-import { type EstimatePage } from './estimate/estimate-page';
+import { leaveGuard } from '../forms/leave-guard';
 
 export const jobsRoutes: Routes = [
   { path: '', title: 'Jobs', loadComponent: () => import('./jobs-page').then((m) => m.JobsPage) },
@@ -7,7 +7,7 @@ export const jobsRoutes: Routes = [
     path: ':jobId/estimate',
     title: 'Estimate',
     loadComponent: () => import('./estimate/estimate-page').then((m) => m.EstimatePage),
-    canDeactivate: [(page: EstimatePage) => page.canLeave()],
+    canDeactivate: [leaveGuard],
   },
   { path: ':jobId', title: 'Job', loadComponent: () => import('./job-page').then((m) => m.JobPage) },
 ];

@@ -16,12 +16,14 @@ import { RouterLink } from '@angular/router';
 import { type Estimate, type EstimateChoices, type EstimateInput, type FigureRef } from '@brakeven/contract';
 import { ErrorState, Figure, LoadingSkeleton, MoneyPipe, PageHeader, SHOP_FORMAT } from '@brakeven/ui';
 import { isLocalDate, moneyText, todayIn } from '@brakeven/values';
-import { filter, forkJoin, type Observable, of, startWith, switchMap } from 'rxjs';
+import { filter, forkJoin, of, startWith, switchMap } from 'rxjs';
 import { EstimatesApi } from '../../api/estimates-api';
 import { JobsApi } from '../../api/jobs-api';
 import { toShownProblem } from '../../api/problem-text';
 import { confirm } from '../../forms/confirm-dialog';
 import { FormField } from '../../forms/form-field';
+import { guardUnsaved } from '../../forms/guard-unsaved';
+import { type Leavable } from '../../forms/leave-guard';
 import { Notifier } from '../../shell/notifier';
 import { previewEstimate, toMarginText } from './estimate-cost';
 import {
@@ -67,13 +69,12 @@ const BUILD_UP = [
   templateUrl: './estimate-page.html',
   styleUrl: './estimate-page.scss',
   host: {
-    '(window:beforeunload)': 'warnOfUnsaved($event)',
     '(keydown.control.s)': 'saveByKey($event)',
     '(keydown.meta.s)': 'saveByKey($event)',
   },
   changeDetection: ChangeDetectionStrategy.OnPush,
 })
-export class EstimatePage {
+export class EstimatePage implements Leavable {
   private readonly api = inject(EstimatesApi);
   private readonly jobsApi = inject(JobsApi);
   private readonly notifier = inject(Notifier);
@@ -136,6 +137,11 @@ export class EstimatePage {
     toMarginText(this.quotedPrice(), this.preview().cost.total),
   );
 
+  readonly canLeave = guardUnsaved(
+    () => this.form().dirty,
+    'What you changed in this estimate is not saved.',
+  );
+
   constructor() {
     effect(() => {
       if (!this.answer.hasValue()) return;
@@ -149,16 +155,6 @@ export class EstimatePage {
 
   private get units() {
     return this.format().units;
-  }
-
-  /** Whether the page may be left; asks if something is not saved. */
-  canLeave(): boolean | Observable<boolean> {
-    if (!this.form().dirty) return true;
-    return confirm(this.dialog, {
-      title: 'Leave without saving?',
-      text: ['What you changed in this estimate is not saved.'],
-      action: 'Leave without saving',
-    });
   }
 
   protected linesOf(kind: LineKind): LineForm[] {
@@ -291,10 +287,6 @@ export class EstimatePage {
   protected reload(): void {
     this.answer.reload();
     this.choicesOf.reload();
-  }
-
-  protected warnOfUnsaved(event: BeforeUnloadEvent): void {
-    if (this.form().dirty) event.preventDefault();
   }
 
   private quote(price: string, then: () => void): void {
