@@ -26,6 +26,7 @@ export * from './lib/machine-queries';
 export * from './lib/migrate';
 export * from './lib/month-checks';
 export * from './lib/month-queries';
+export * from './lib/overtime-weeks';
 export * from './lib/payback-figures';
 export * from './lib/people-queries';
 export * from './lib/register-rows';

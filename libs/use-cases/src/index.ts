@@ -77,6 +77,7 @@ export * from './lib/show-jobs/job-costs';
 export * from './lib/show-jobs/list-jobs';
 export * from './lib/show-payback/get-payback';
 export * from './lib/show-workings/get-books-workings';
+export * from './lib/show-workings/get-hours-workings';
 export * from './lib/show-workings/get-job-workings';
 export * from './lib/show-workings/get-overtime-workings';
 export * from './lib/show-workings/get-payback-workings';

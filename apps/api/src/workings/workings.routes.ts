@@ -1,6 +1,7 @@
 import { ENDPOINTS } from '@brakeven/contract';
 import {
   getBooksWorkings,
+  getHoursWorkings,
   getJobHoursWorkings,
   getJobWorkings,
   getOvertimeWorkings,
@@ -16,5 +17,6 @@ export function mountWorkings({ mount }: Api): void {
   mount(ENDPOINTS.getPaybackWorkings, ({ context, query }) => getPaybackWorkings(context, query));
   mount(ENDPOINTS.getOvertimeWorkings, ({ context, query }) => getOvertimeWorkings(context, query));
   mount(ENDPOINTS.getBooksWorkings, ({ context, query }) => getBooksWorkings(context, query));
+  mount(ENDPOINTS.getHoursWorkings, ({ context, query }) => getHoursWorkings(context, query));
   mount(ENDPOINTS.getStockWorkings, ({ context, query }) => getStockWorkings(context, query));
 }

@@ -86,6 +86,14 @@ export const BOOKS_FIGURES = [
   'books.running',
 ] as const;
 
+/** Hours of days, of one employee or of all, as a month's are held against payroll. */
+export const HOURS_FIGURES = [
+  'hours.timesheets',
+  'hours.overtime',
+  'hours.costed',
+  'hours.difference',
+] as const;
+
 /** Figures of a job's estimate. */
 export const ESTIMATE_FIGURES = [
   'estimate.hours',
@@ -104,15 +112,19 @@ export const FIGURES = [
   ...PAYBACK_FIGURES,
   ...SOURCE_FIGURES,
   ...BOOKS_FIGURES,
+  ...HOURS_FIGURES,
   ...ESTIMATE_FIGURES,
 ] as const;
 export type Figure = (typeof FIGURES)[number];
 
 /**
- * Which figure is meant. `job.*` without `jobId`: over all jobs that `customerId`, `search` and `status` leave.
+ * Which figure is meant. `job.*` without `jobId`: over all jobs that `customerId`, `search` and `status` leave, or
+ * over those that have no customer.
  * `payback.*` needs `machineId`; with `jobId` only that job's share, with `from`/`to` only those days;
  * `payback.costItem` needs `costItemId` too. `overtime.week` needs `employeeId` and, as `from`, a day of the week;
  * `books.*` is of the days in the books from `from` through `to`; with `part` only what went to overhead, or came late.
+ * `hours.*` is of the days worked from `from` through `to`, and of all employees without `employeeId`;
+ * `hours.difference` is of a whole month.
  * `stock.issue` needs `issueId`; `stock.value` needs `materialId`, and is before the issue if there is an `issueId`.
  */
 export const figureRefSchema = z.object({
@@ -128,6 +140,8 @@ export const figureRefSchema = z.object({
   /** Of `estimate.variance`. */
   category: z.enum(JOB_COST_CATEGORIES).optional(),
   part: z.enum(['overhead', 'late']).optional(),
+  /** Of jobs: only those that have none. */
+  without: z.literal('customer').optional(),
   from: localDateSchema.optional(),
   to: localDateSchema.optional(),
   search: z.string().max(100).optional(),
@@ -245,6 +259,14 @@ export const workingsEndpoints = {
     method: 'get',
     path: '/workings/books',
     summary: 'The lines behind a total of a month',
+    permission: 'months.view',
+    query: workingsQuerySchema,
+    response: workingsSchema,
+  }),
+  getHoursWorkings: endpoint({
+    method: 'get',
+    path: '/workings/hours',
+    summary: 'The entries, weeks or lines behind hours of a month, as they are held against payroll',
     permission: 'months.view',
     query: workingsQuerySchema,
     response: workingsSchema,

@@ -1,5 +1,5 @@
 import { sql } from 'kysely';
-import { JOB_FIGURE_COLUMNS, JOB_FIGURES } from './job-figures';
+import { JOB_FIGURE_COLUMNS, JOB_FIGURES, LAST_WORKED_ON } from './job-figures';
 import { inReadingOrder } from './keyset';
 import { type ShopTransaction } from './tenancy';
 
@@ -25,7 +25,7 @@ export async function listCustomerFigureRows(
   const isMeant = customerId === undefined ? sql`true` : sql`customer_id = ${customerId}::uuid`;
   const { rows } = await sql<CustomerFiguresRow>`
     with figures as (
-      select j.customer_id, j.job_id, j.status, ${JOB_FIGURE_COLUMNS} from job j ${JOB_FIGURES}
+      select j.customer_id, j.job_id, j.status, ${LAST_WORKED_ON} as last_worked_on, ${JOB_FIGURE_COLUMNS} from job j ${JOB_FIGURES}
       where ${customerId === undefined ? sql`true` : sql`j.customer_id = ${customerId}::uuid`}
     )
     select c.customer_id, c.name, count(g.job_id)::int as jobs,
@@ -41,6 +41,16 @@ export async function listCustomerFigureRows(
     group by c.customer_id, c.name
     order by c.name is null, ${inReadingOrder(sql`c.name`)}, c.customer_id`.execute(trx);
   return rows;
+}
+
+/** A customer's name; null if there is no such customer. */
+export async function findCustomerName(trx: ShopTransaction, customerId: string): Promise<string | null> {
+  const found = await trx
+    .selectFrom('customer')
+    .select('name')
+    .where('customerId', '=', customerId)
+    .executeTakeFirst();
+  return found?.name ?? null;
 }
 
 /** The id of another customer of the same name, whatever its case; null if there is none. */

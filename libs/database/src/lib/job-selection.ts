@@ -9,6 +9,8 @@ export interface JobSelection {
   search?: string;
   status?: JobTable['status'];
   customerId?: string;
+  /** Only those that have none. */
+  without?: 'customer';
 }
 
 /** The condition on `job j left join customer c`. */
@@ -18,12 +20,14 @@ export function isJobSelected({
   search,
   status,
   customerId,
+  without,
 }: JobSelection): RawBuilder<boolean> {
   const conditions: RawBuilder<unknown>[] = [];
   if (jobId !== undefined) conditions.push(sql`j.job_id = ${jobId}::uuid`);
   if (number !== undefined) conditions.push(sql`lower(j.number) = lower(${number})`);
   if (status !== undefined) conditions.push(sql`j.status = ${status}`);
   if (customerId !== undefined) conditions.push(sql`j.customer_id = ${customerId}::uuid`);
+  if (without === 'customer') conditions.push(sql`j.customer_id is null`);
   if (search !== undefined && search !== '') {
     const pattern = containing(search);
     conditions.push(sql`(j.number ilike ${pattern} or j.title ilike ${pattern} or c.name ilike ${pattern})`);

@@ -1,4 +1,5 @@
 import { sql } from 'kysely';
+import { type WeekRule, weekShares, type WorkedDays } from './overtime-weeks';
 import { type RateGapRow } from './rollup-state';
 import { type JobTable } from './tables';
 import { type ShopTransaction } from './tenancy';
@@ -154,12 +155,6 @@ export interface TieOutRow {
   payrollHours: string | null;
 }
 
-/** Week and threshold that overtime goes by; a threshold of null computes none. */
-export interface WeekRule {
-  weekStart: number;
-  thresholdHours: string | null;
-}
-
 /**
  * Hours of a month by employee: of the timesheets, of them above the weekly threshold (a week's are shared out over
  * its days by hours, as its premium is, so that a week across two months counts in both), those in the cost lines or
@@ -167,25 +162,18 @@ export interface WeekRule {
  */
 export async function listTieOutRows(
   trx: ShopTransaction,
-  { from, to }: { from: string; to: string },
-  { weekStart, thresholdHours }: WeekRule,
+  days: WorkedDays,
+  rule: WeekRule,
   employeeId?: string,
 ): Promise<TieOutRow[]> {
+  const { from, to } = days;
   const isMeant = (column: string) =>
     employeeId === undefined ? sql`true` : sql`${sql.ref(column)} = ${employeeId}`;
   const { rows } = await sql<TieOutRow>`
-    with week as (
-      select employee_id, sum(hours) as week_hours,
-        coalesce(sum(hours) filter (where worked_on between ${from}::date and ${to}::date), 0) as hours
-      from time_entry
-      where voided_at is null and ${isMeant('employee_id')}
-        and worked_on between ${from}::date - 6 and ${to}::date + 6
-      group by employee_id, worked_on - (extract(dow from worked_on)::integer - ${weekStart}::integer + 7) % 7
-    ),
-    worked as (
-      select employee_id, sum(hours) as hours,
-        round(sum(greatest(week_hours - ${thresholdHours}::numeric, 0) * hours / week_hours), 4) as overtime_hours
-      from week where hours > 0 group by employee_id
+    with worked as (
+      select employee_id, sum(hours) as hours, sum(overtime_hours) as overtime_hours
+      from (${weekShares(days, rule, employeeId)}) week
+      group by employee_id
     ),
     costed as (
       select employee_id, sum(hours) as hours

@@ -16,6 +16,7 @@ import {
   type MonthTotalRow,
   type ShopTransaction,
   type TieOutRow,
+  type WeekRule,
 } from '@brakeven/database';
 import { addDays, D, hoursText, moneyText, toHours, toMoney } from '@brakeven/values';
 import { inShopOf, type ShopContext, todayOf } from '../context';
@@ -69,12 +70,16 @@ export async function readMonthEnd(
 /** Hours of the month by employee, or of the one asked for. */
 export async function readTieOut(
   trx: ShopTransaction,
-  { shop }: ShopContext,
+  context: ShopContext,
   days: MonthDays,
   employeeId?: string,
 ): Promise<MonthTieOut[]> {
-  const rule = { weekStart: shop.weekStart, thresholdHours: shop.overtimeThresholdHours };
-  return (await listTieOutRows(trx, days, rule, employeeId)).map(toTieOut);
+  return (await listTieOutRows(trx, days, weekRuleOf(context), employeeId)).map(toTieOut);
+}
+
+/** Week and threshold that the shop's overtime goes by. */
+export function weekRuleOf({ shop }: ShopContext): WeekRule {
+  return { weekStart: shop.weekStart, thresholdHours: shop.overtimeThresholdHours };
 }
 
 function findMonth({ months }: MonthStates, month: string): MonthSummary {

@@ -14,6 +14,7 @@ import {
   toPercent,
   toRate,
 } from '@brakeven/values';
+import { PLAIN_LINE } from '../show-workings/item-workings';
 import { type WorkingsHead } from '../show-workings/workings-request';
 import { type StoredEstimate } from './estimate-cost';
 
@@ -137,20 +138,13 @@ function toFacts(row: EstimateLineRow) {
       ? `${plain(row.setupHours)} h set-up + ${row.pieces} × ${plain(row.minutesPerPiece)} min`
       : null;
   return {
+    ...PLAIN_LINE,
     lineId: row.estimateLineId,
     on: null,
-    postedOn: null,
-    isLate: false,
-    takesBackOn: null,
     label: row.material ?? row.operation ?? (row.description || 'Outside work'),
     detail: [pieces, row.kind === 'outside' ? null : row.description].filter(Boolean).join(' · ') || null,
-    job: null,
     operation: row.operation,
     machine: row.machine,
-    rateFactor: null,
-    rateValidFrom: null,
-    figure: null,
-    source: null,
   };
 }
 

@@ -2,20 +2,31 @@ import { AppError, type FigureRef, type Workings, type WorkingsQuery } from '@br
 import { computePriceForMargin, RULES } from '@brakeven/costing';
 import {
   type EstimateSum,
-  type JobSelection,
+  type JobTotals,
   listEstimateItems,
   type ShopTransaction,
   sumEstimateItems,
+  sumJobs,
 } from '@brakeven/database';
-import { D, formatPercent, hoursText, moneyText, toHours, toMoney, toPercent } from '@brakeven/values';
+import {
+  D,
+  formatMoney,
+  formatPercent,
+  hoursText,
+  moneyText,
+  toHours,
+  toMoney,
+  toPercent,
+} from '@brakeven/values';
 import { inShopOf, type ShopContext } from '../context';
 import { getJobRow } from '../show-jobs/get-job';
 import { readItemWorkings } from '../show-workings/item-workings';
 import {
   type LinePaging,
-  readStatus,
+  readJobFilter,
   refused,
   splitRequest,
+  toInput,
   type WorkingsHead,
 } from '../show-workings/workings-request';
 import { readEstimate, type StoredEstimate } from './estimate-cost';
@@ -32,7 +43,7 @@ export async function getEstimateWorkings(context: ShopContext, query: WorkingsQ
   if (!isEstimateFigure(figure)) throw refused('figure', 'This is no figure of an estimate.');
   return inShopOf(context, (trx) =>
     jobId === undefined
-      ? readOfJobs(trx, { ...ref, figure }, paging)
+      ? readOfJobs(context, trx, { ...ref, figure }, paging)
       : readOfJob(context, trx, { ...ref, figure, jobId }),
   );
 }
@@ -91,14 +102,16 @@ const SUMS: Partial<Record<EstimateFigure, { column: EstimateSum; rule: string }
   'estimate.variance': { column: 'variance', rule: RULES.variance },
 };
 
-async function readOfJobs(trx: ShopTransaction, ref: EstimateRef, paging: LinePaging): Promise<Workings> {
-  const { figure, search, customerId } = ref;
+async function readOfJobs(
+  context: ShopContext,
+  trx: ShopTransaction,
+  ref: EstimateRef,
+  paging: LinePaging,
+): Promise<Workings> {
+  const { figure } = ref;
   const summed = SUMS[figure];
   if (!summed) throw refused('jobId', 'Say of which job this figure is.');
-  const status = readStatus(ref);
-  const jobs: JobSelection = { search, status, customerId };
-  const isFiltered = [search, status, customerId].some((one) => one !== undefined);
-  const whose = isFiltered ? 'the jobs found' : 'all jobs';
+  const { jobs, whose } = await readJobFilter(trx, ref);
   const workings = await readItemWorkings(
     {
       figure: ref,
@@ -114,5 +127,21 @@ async function readOfJobs(trx: ShopTransaction, ref: EstimateRef, paging: LinePa
   );
   if (figure === 'estimate.hours')
     return { ...workings, unit: 'hours', amount: hoursText(toHours(workings.amount)) };
-  return { ...workings, amount: moneyText(toMoney(D(workings.amount))) };
+  const inputs =
+    figure === 'estimate.variance' ? toVarianceInputs(context, ref, await sumJobs(trx, jobs)) : [];
+  return { ...workings, inputs, amount: moneyText(toMoney(D(workings.amount))) };
+}
+
+/** Two figures of the jobs that have an estimate, so that their difference is the variance. */
+function toVarianceInputs(
+  { shop }: ShopContext,
+  ref: EstimateRef,
+  { estimatedJobs, estimatedJobsCost, estimate }: JobTotals,
+): Workings['inputs'] {
+  const money = (amount: string) => formatMoney(amount, shop.currency);
+  const whose = estimatedJobs === 1 ? '1 job with an estimate' : `${estimatedJobs} jobs with an estimate`;
+  return [
+    toInput(`Cost of ${whose}`, money(estimatedJobsCost)),
+    { ...toInput('Their estimate', money(estimate ?? '0')), figure: { ...ref, figure: 'estimate.total' } },
+  ];
 }

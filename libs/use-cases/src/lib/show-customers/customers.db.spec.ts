@@ -1,7 +1,8 @@
 import { randomUUID } from 'node:crypto';
-import { customerDetailSchema, customerListSchema } from '@brakeven/contract';
+import { customerDetailSchema, customerListSchema, type Figure } from '@brakeven/contract';
 import { createTestShop, type TestShop } from '@brakeven/test-shop';
 import { runRollup } from '../roll-up-costs/run-rollup';
+import { expectToAddUp, readAll } from '../show-workings/testing/read-workings';
 import { getCustomer, listCustomerFigures, renameCustomer } from './customers';
 
 jest.setTimeout(30_000);
@@ -67,6 +68,25 @@ describe('customers', () => {
     ]);
     expect(totals).toMatchObject({ jobs: 3, total: '210.00', invoiced: '165.00', margin: '-45.00' });
   });
+
+  it.each(['total', 'invoiced', 'margin', 'workInProgress'] as const)(
+    'open their %s, and that of the jobs of nobody, into what adds up to it',
+    async (name) => {
+      await work();
+      const { items, totals } = await listCustomerFigures(shop.context());
+      const figure: Figure = `job.${name}`;
+      for (const { customerId, name: customer, [name]: shown } of items) {
+        const whose = customerId === null ? { without: 'customer' as const } : { customerId };
+        const workings = await readAll(shop.context(), { figure, ...whose });
+        expectToAddUp(workings);
+        expect([workings.amount, workings.title]).toEqual([
+          shown,
+          expect.stringContaining(customer ?? 'the jobs without a customer'),
+        ]);
+      }
+      expect((await readAll(shop.context(), { figure })).amount).toBe(totals[name]);
+    },
+  );
 
   it('list their invoices, latest first', async () => {
     await work();

@@ -141,6 +141,13 @@ export const BOOKS_LINE_FIGURES: Readonly<Record<BooksFigure, LineFigure>> = {
   'books.running': LINE_FIGURES['payback.running'],
 };
 
+/** The hours of labour lines and of entries without a wage, whose they may be. */
+export const COSTED_HOURS = hours(
+  'Hours in the costs',
+  'The hours of the labour lines of the days, and of entries that have no wage on their day, as last rolled up.',
+  'labour',
+);
+
 /** The premiums of one employee's week. */
 export const OVERTIME_WEEK = money('Overtime premium', RULES.overtime, 'overtime');
 

@@ -1,5 +1,7 @@
 import { BOOKS_FIGURES, JOB_FIGURES, PAYBACK_FIGURES, type FigureRef } from '@brakeven/contract';
-import { D } from '@brakeven/values';
+import { D, sum } from '@brakeven/values';
+import { getMonth } from '../close-months/month-end';
+import { savePayrollHours } from '../close-months/payroll-hours';
 import { type ShopContext } from '../context';
 import { runRollup } from '../roll-up-costs/run-rollup';
 import { getJob, listJobLines } from '../show-jobs/get-job';
@@ -7,6 +9,7 @@ import { listJobs } from '../show-jobs/list-jobs';
 import { getPayback } from '../show-payback/get-payback';
 import { WORKED_NOW } from '../testing/worked-shop';
 import { getBooksWorkings } from './get-books-workings';
+import { getHoursWorkings } from './get-hours-workings';
 import { getOvertimeWorkings } from './get-overtime-workings';
 import { getPaybackWorkings } from './get-payback-workings';
 import { getStockWorkings } from './get-stock-workings';
@@ -243,6 +246,73 @@ describe('workings of a shop with every category and a closed month', () => {
     });
   });
 
+  describe('of hours held against payroll', () => {
+    const march = { month: '2026-03', days: { from: '2026-03-01', to: '2026-03-31' } };
+    const may = { month: '2026-05', days: { from: '2026-05-01', to: '2026-05-31' } };
+
+    it.each([march, may])(
+      'add up to what $month shows, of each employee and of all',
+      async ({ month, days }) => {
+        const { tieOut } = await getMonth(owner, { month });
+        const figures = { timesheets: 'hours', overtime: 'overtimeHours', costed: 'costedHours' } as const;
+        for (const [kind, shown] of Object.entries(figures)) {
+          const figure = `hours.${kind}` as FigureRef['figure'];
+          for (const row of tieOut) {
+            const { employeeId } = row;
+            const workings = await readAll(owner, { figure, employeeId, ...days }, 3);
+            expectToAddUp(workings);
+            expect([figure, workings.amount]).toEqual([figure, row[shown as 'hours']]);
+            expect(workings.title).toContain(row.employee);
+          }
+          const ofAll = await readAll(owner, { figure, ...days });
+          expectToAddUp(ofAll);
+          expect(ofAll.amount).toBe(sum(tieOut.map((row) => D(row[shown as 'hours']))).toFixed(4));
+        }
+      },
+    );
+
+    it('lead from an entry to its cell, and from a week to its premium', async () => {
+      const entries = await readAll(owner, { figure: 'hours.timesheets', ...march.days });
+      expect(entries.lines.filter(({ source }) => source?.fileName === 'march week 1.xlsx')).not.toEqual([]);
+      const { employees } = shop;
+      const overtime = await readAll(owner, {
+        figure: 'hours.overtime',
+        employeeId: employees.wen,
+        ...may.days,
+      });
+      expect(overtime.lines).toMatchObject([{ on: '2026-05-11', label: 'wen Abara', category: 'overtime' }]);
+      const premium = await readAll(owner, overtime.lines[0]?.figure ?? { figure: 'overtime.week' });
+      const above = premium.inputs.find(({ label }) => label === 'Hours above')?.value;
+      expect(above).toBe(`${D(overtime.amount).toFixed()}\u00a0h`);
+    });
+
+    it('say nothing of wages', async () => {
+      const { lines, inputs } = await readAll(owner, { figure: 'hours.costed', ...may.days });
+      expect(lines.length).toBeGreaterThan(0);
+      expect(lines.filter(({ rate, rateFactor }) => rate !== null || rateFactor !== null)).toEqual([]);
+      expect(inputs).toEqual([]);
+    });
+
+    it('take the timesheets from what payroll has, once it is entered', async () => {
+      const [first, ...others] = (await getMonth(owner, { month: '2026-05' })).tieOut;
+      const { employeeId } = first ?? { employeeId: '' };
+      const ref: FigureRef = { figure: 'hours.difference', employeeId, ...may.days };
+      await expect(readAll(owner, ref)).rejects.toMatchObject({ code: 'not_found' });
+      const saved = await savePayrollHours(owner, { month: '2026-05', employeeId }, { hours: '100' });
+      const difference = await readAll(owner, ref);
+      expectToAddUp(difference);
+      expect(difference.amount).toBe(saved.difference);
+      const ofAll: FigureRef = { figure: 'hours.difference', ...may.days };
+      await expect(readAll(owner, ofAll)).rejects.toMatchObject({ code: 'not_found' });
+      for (const other of others) {
+        await savePayrollHours(owner, { month: '2026-05', employeeId: other.employeeId }, { hours: '60.5' });
+      }
+      const whole = await readAll(owner, ofAll);
+      expectToAddUp(whole);
+      expect(whole.parts.map(({ figure }) => figure?.employeeId)).toContain(employeeId);
+    });
+  });
+
   it('name vendor, invoice and credit note', async () => {
     const labels = async (figure: 'job.outside' | 'job.invoiced') =>
       (await readAll(owner, { figure, jobId: shop.jobs.covers })).lines.map(
@@ -298,6 +368,9 @@ describe('workings of a shop with every category and a closed month', () => {
       [getStockWorkings, { figure: 'stock.value' }, 'materialId'],
       [getStockWorkings, { figure: 'job.total' }, 'figure'],
       [getBooksWorkings, { figure: 'job.total' }, 'figure'],
+      [getHoursWorkings, { figure: 'job.hours' }, 'figure'],
+      [getHoursWorkings, { figure: 'hours.costed', to: '2026-03-31' }, 'from'],
+      [getHoursWorkings, { figure: 'hours.costed', from: '2026-03-01' }, 'to'],
       [getPaybackWorkings, { figure: 'payback.costItem', machineId: press }, 'costItemId'],
     ] as const;
     for (const [read, ref, field] of refusals) {
@@ -312,6 +385,8 @@ describe('workings of a shop with every category and a closed month', () => {
     const elsewhere = '0198aaaa-0000-7000-8000-000000000abc';
     const missing: FigureRef[] = [
       { figure: 'overtime.week', employeeId: elsewhere, from: '2026-05-11' },
+      { figure: 'hours.timesheets', employeeId: elsewhere, from: '2026-05-01', to: '2026-05-31' },
+      { figure: 'job.total', customerId: elsewhere },
       { figure: 'stock.issue', issueId: elsewhere },
       { figure: 'stock.value', materialId: elsewhere },
       { figure: 'stock.value', materialId: shop.materialId, issueId: elsewhere },

@@ -18,7 +18,7 @@ import { readLineWorkings } from './line-workings';
 import {
   describeNarrowing,
   type LinePaging,
-  readStatus,
+  readJobFilter,
   refused,
   splitRequest,
   type WorkingsHead,
@@ -59,45 +59,40 @@ function readWorkings(
   ref: FigureRef & { figure: JobFigure },
   paging: LinePaging,
 ): Promise<Workings> {
-  const { figure, jobId, operationId, from, to, search, customerId } = ref;
-  const status = readStatus(ref);
-  // One job is meant whatever filter it was found by.
-  const jobs: JobSelection = jobId === undefined ? { search, status, customerId } : { jobId };
+  const { figure, jobId, operationId, from, to } = ref;
   return inShopOf(context, async (trx) => {
-    if (figure === 'job.quotedPrice') return readQuotes(trx, ref, jobs, paging);
-    if (figure === 'job.workInProgress') return readWorkInProgress(trx, ref, jobs, paging);
+    const { jobs, whose } = await readJobs(trx, ref);
+    if (figure === 'job.quotedPrice') return readQuotes(trx, ref, jobs, whose, paging);
+    if (figure === 'job.workInProgress') return readWorkInProgress(trx, ref, jobs, whose, paging);
     const lineFigure = LINE_FIGURES[figure];
-    const head = await readHead(trx, ref, lineFigure.title, jobs);
+    const title = `${lineFigure.title} of ${whose}${await describeNarrowing(trx, ref)}`;
+    const head = { figure: ref, title };
     const selection = { jobId, operationId, from, to, jobs: jobId === undefined ? jobs : undefined };
     return readLineWorkings(trx, head, lineFigure, selection, paging, context.shop.currency);
   });
 }
 
-async function readHead(
+/** One job is meant whatever filter it was found by. */
+async function readJobs(
   trx: ShopTransaction,
   ref: FigureRef,
-  title: string,
-  { jobId, search, status, customerId }: JobSelection,
-): Promise<WorkingsHead> {
-  const narrowing = await describeNarrowing(trx, ref);
-  if (jobId !== undefined) {
-    const job = await getJobRow(trx, { jobId });
-    return { figure: ref, title: `${title} of job ${job.number}, ${job.title}${narrowing}` };
-  }
-  const isFiltered = [search, status, customerId].some((one) => one !== undefined);
-  return { figure: ref, title: `${title} of ${isFiltered ? 'the jobs found' : 'all jobs'}${narrowing}` };
+): Promise<{ jobs: JobSelection; whose: string }> {
+  const { jobId } = ref;
+  if (jobId === undefined) return readJobFilter(trx, ref);
+  const job = await getJobRow(trx, { jobId });
+  return { jobs: { jobId }, whose: `job ${job.number}, ${job.title}` };
 }
 
-async function readQuotes(
+function readQuotes(
   trx: ShopTransaction,
   ref: FigureRef,
   jobs: JobSelection,
+  whose: string,
   paging: LinePaging,
 ): Promise<Workings> {
-  const head = await readHead(trx, toWhole(ref), 'Quoted price', jobs);
   const rule = 'The price quoted to the customer, as written on the job. Jobs without one are left out.';
   return readItemWorkings(
-    { ...head, rule },
+    { figure: toWhole(ref), title: `Quoted price of ${whose}`, rule },
     {
       sum: () => sumQuotes(trx, jobs),
       list: (after, limit) => listQuoteRows(trx, jobs, after, limit),
@@ -115,12 +110,11 @@ async function readWorkInProgress(
   trx: ShopTransaction,
   ref: FigureRef,
   jobs: JobSelection,
+  whose: string,
   paging: LinePaging,
 ): Promise<Workings> {
-  const head = {
-    ...(await readHead(trx, toWhole(ref), 'Work in progress', jobs)),
-    rule: RULES.workInProgress,
-  };
+  const title = `Work in progress of ${whose}`;
+  const head = { figure: toWhole(ref), title, rule: RULES.workInProgress };
   if (jobs.jobId !== undefined) return toJobInProgress(head, await getJobRow(trx, jobs));
   return readItemWorkings(
     head,

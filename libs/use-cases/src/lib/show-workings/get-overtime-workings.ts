@@ -1,15 +1,12 @@
-import { AppError, type Workings, type WorkingsQuery } from '@brakeven/contract';
+import { type Workings, type WorkingsQuery } from '@brakeven/contract';
 import { computeWeekPremium, type WeekPremium } from '@brakeven/costing';
-import { findEmployeeName, listPaidEntries, type PaidEntry, type ShopTransaction } from '@brakeven/database';
+import { listPaidEntries, type PaidEntry } from '@brakeven/database';
 import {
   addDays,
   type DayOfWeek,
-  formatHours,
   formatLocalDate,
   formatMoney,
   formatRate,
-  type Hours,
-  hoursText,
   type LocalDate,
   startOfWeek,
   toHours,
@@ -19,7 +16,7 @@ import {
 import { inShopOf, type ShopContext } from '../context';
 import { OVERTIME_WEEK } from './figures';
 import { readLineWorkings } from './line-workings';
-import { refused, splitRequest, toInput } from './workings-request';
+import { getEmployeeName, hoursIn, refused, splitRequest, toInput } from './workings-request';
 
 interface Week {
   employeeId: string;
@@ -56,12 +53,6 @@ export async function getOvertimeWorkings(context: ShopContext, query: WorkingsQ
 function toWeek(employeeId: string, day: LocalDate, weekStart: number): Week {
   const from = startOfWeek(day, weekStart as DayOfWeek);
   return { employeeId, from, to: addDays(from, 6) };
-}
-
-async function getEmployeeName(trx: ShopTransaction, employeeId: string): Promise<string> {
-  const name = await findEmployeeName(trx, employeeId);
-  if (name !== null) return name;
-  throw new AppError('not_found', 'There is no such employee in this shop.');
 }
 
 function toInputs({ shop }: ShopContext, entries: readonly PaidEntry[]): Workings['inputs'] {
@@ -104,8 +95,4 @@ function toPremiumInputs(week: WeekPremium, currency: string): Workings['inputs'
     toInput('Regular rate, straight-time pay ÷ hours', rate),
     toInput(`Premium, ½ × regular rate × ${hoursIn(overtimeHours)}`, formatMoney(premium, currency)),
   ];
-}
-
-function hoursIn(hours: Hours): string {
-  return `${formatHours(hoursText(hours))}\u00a0h`;
 }

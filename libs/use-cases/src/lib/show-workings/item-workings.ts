@@ -35,27 +35,37 @@ export async function readItemWorkings(
   };
 }
 
+/** What a row says that is no cost line and came from no file. */
+export const PLAIN_LINE = {
+  postedOn: null,
+  isLate: false,
+  takesBackOn: null,
+  detail: null,
+  job: null,
+  operation: null,
+  machine: null,
+  quantity: null,
+  unit: null,
+  rate: null,
+  rateFactor: null,
+  rateValidFrom: null,
+  figure: null,
+  source: null,
+} as const satisfies Partial<WorkingsLine>;
+
 function toWorkingsLine(row: ItemRow, toFigure: ItemSource['toFigure']): WorkingsLine {
   const { id, on, category, label, detail, job, quantity, amount } = row;
   return {
+    ...PLAIN_LINE,
     lineId: id,
     on,
-    postedOn: null,
-    isLate: false,
-    takesBackOn: null,
     category,
     label,
     detail: detail ?? null,
     job,
-    operation: null,
-    machine: null,
     quantity: quantity ?? null,
     unit: quantity === undefined ? null : 'kg',
-    rate: null,
-    rateFactor: null,
-    rateValidFrom: null,
     amount,
     figure: toFigure?.(row) ?? null,
-    source: null,
   };
 }

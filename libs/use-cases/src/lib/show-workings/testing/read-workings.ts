@@ -2,6 +2,7 @@ import { type FigureRef, type Workings, workingsSchema } from '@brakeven/contrac
 import { D, sum } from '@brakeven/values';
 import { type ShopContext } from '../../context';
 import { getBooksWorkings } from '../get-books-workings';
+import { getHoursWorkings } from '../get-hours-workings';
 import { getJobWorkings } from '../get-job-workings';
 import { getOvertimeWorkings } from '../get-overtime-workings';
 import { getPaybackWorkings } from '../get-payback-workings';
@@ -11,6 +12,7 @@ const PAGE = 17;
 
 const READERS: Readonly<Record<string, typeof getJobWorkings>> = {
   books: getBooksWorkings,
+  hours: getHoursWorkings,
   job: getJobWorkings,
   overtime: getOvertimeWorkings,
   payback: getPaybackWorkings,
