@@ -13,6 +13,7 @@ import * as showOvertimeSettings from './202612011040-show-overtime-settings';
 import * as keepCorrections from './202612011050-keep-corrections';
 import * as createTooling from './202612011100-create-tooling';
 import * as createBends from './202612011105-create-bends';
+import * as keepRunCorrections from './202612011130-keep-run-corrections';
 
 /** All migrations by name, in order; listed here so that they can be bundled with the command line. */
 export const migrations: Record<string, Migration> = {
@@ -30,4 +31,5 @@ export const migrations: Record<string, Migration> = {
   '202612011050-keep-corrections': keepCorrections,
   '202612011100-create-tooling': createTooling,
   '202612011105-create-bends': createBends,
+  '202612011130-keep-run-corrections': keepRunCorrections,
 };

@@ -54,7 +54,7 @@ export * from './lib/manage-tooling/reference';
 export * from './lib/manage-users/users';
 export * from './lib/open-database';
 export { getForceDistribution } from './lib/press-runs/force-distribution';
-export { createPressRun } from './lib/press-runs/log-press-run';
+export { correctPressRun, createPressRun } from './lib/press-runs/log-press-run';
 export {
   getPressRunChoices,
   getSetupCard,

@@ -1,5 +1,6 @@
 import { ENDPOINTS } from '@brakeven/contract';
 import {
+  correctPressRun,
   createDie,
   createFormingMaterial,
   createPressRun,
@@ -76,6 +77,7 @@ function mountPressRuns({ mount }: Api): void {
   mount(ENDPOINTS.getPressRunChoices, ({ context, query }) => getPressRunChoices(context, query));
   mount(ENDPOINTS.getForceDistribution, ({ context, query }) => getForceDistribution(context, query));
   mount(ENDPOINTS.createPressRun, ({ context, body }) => createPressRun(context, body));
+  mount(ENDPOINTS.correctPressRun, ({ context, params, body }) => correctPressRun(context, params, body));
   mount(ENDPOINTS.voidPressRun, ({ context, params }) => voidPressRun(context, params));
   mount(ENDPOINTS.restorePressRun, ({ context, params }) => restorePressRun(context, params));
   mount(ENDPOINTS.getSetupCard, ({ context, params }) => getSetupCard(context, params));

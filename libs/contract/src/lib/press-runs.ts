@@ -212,6 +212,16 @@ export const pressRunEndpoints = {
     body: pressRunInputSchema,
     response: pressRunSchema,
   }),
+  correctPressRun: endpoint({
+    method: 'patch',
+    path: '/press-runs/:pressRunId',
+    summary:
+      'Correct a press run: it is voided and another takes its place; an operator only one logged by the own account',
+    permission: 'press-runs.log',
+    params: pressRunId,
+    body: pressRunInputSchema,
+    response: pressRunSchema,
+  }),
   voidPressRun: endpoint({
     method: 'post',
     path: '/press-runs/:pressRunId/void',
@@ -223,7 +233,7 @@ export const pressRunEndpoints = {
   restorePressRun: endpoint({
     method: 'post',
     path: '/press-runs/:pressRunId/restore',
-    summary: 'Take back the voiding of a press run',
+    summary: 'Take back the voiding of a press run, unless a correction of it counts',
     permission: 'press-runs.log',
     params: pressRunId,
     response: null,

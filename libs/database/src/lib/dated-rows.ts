@@ -8,6 +8,7 @@ const ID_COLUMNS = {
   materialIssue: 'issueId',
   outsideService: 'outsideServiceId',
   invoice: 'invoiceId',
+  pressRun: 'pressRunId',
 } as const satisfies Partial<Record<keyof Tables, string>>;
 
 /** A table of dated rows. */

@@ -1,4 +1,4 @@
-import { type Insertable, type RawBuilder, sql } from 'kysely';
+import { type RawBuilder, sql } from 'kysely';
 import {
   allOf,
   containing,
@@ -9,7 +9,6 @@ import {
   orderByKey,
   type SortKey,
 } from './keyset';
-import { type PressRunTable } from './tables';
 import { type ShopTransaction } from './tenancy';
 
 /** Which press runs are meant. */
@@ -207,24 +206,6 @@ function isSelected(selection: PressRunSelection): RawBuilder<boolean> {
 function isFound(pattern: string): RawBuilder<boolean> {
   return sql`(j.number ilike ${pattern} or j.title ilike ${pattern} or m.name ilike ${pattern}
     or d.name ilike ${pattern} or r.note ilike ${pattern})`;
-}
-
-/** Adds a press run. */
-export async function insertPressRun(trx: ShopTransaction, row: Insertable<PressRunTable>): Promise<void> {
-  await trx.insertInto('pressRun').values(row).execute();
-}
-
-/** Voids a press run in a person's name, or restores it with null. */
-export async function setPressRunVoided(
-  trx: ShopTransaction,
-  pressRunId: string,
-  voidedBy: string | null,
-): Promise<void> {
-  await trx
-    .updateTable('pressRun')
-    .set({ voidedAt: voidedBy === null ? null : sql<Date>`coalesce(voided_at, now())`, voidedBy })
-    .where('pressRunId', '=', pressRunId)
-    .execute();
 }
 
 /** Jobs that can be run on, latest opened first. */

@@ -117,4 +117,6 @@ export interface PressRunTable {
   createdAt: Instant;
   voidedAt: InstantOrNull;
   voidedBy: string | null;
+  /** The first row that this one took the place of. */
+  corrects: string | null;
 }

@@ -6,7 +6,13 @@ import {
   type PressRun,
   type pressRunInputSchema,
 } from '@brakeven/contract';
-import { findRunEntry, findRunJob, insertPressRun, type ShopTransaction } from '@brakeven/database';
+import {
+  findRunEntry,
+  findRunJob,
+  insertDatedRow,
+  replaceDatedRow,
+  type ShopTransaction,
+} from '@brakeven/database';
 import { type BendForce, checkForceInput, computeBendForce, type ForceInput } from '@brakeven/forming';
 import { formatLocalDate, toLocalDate } from '@brakeven/values';
 import { v7 as newId } from 'uuid';
@@ -14,43 +20,66 @@ import { type z } from 'zod';
 import { inShopOf, type ShopContext, todayOf } from '../context';
 import { readSetupTools, type SetupTools } from '../manage-tooling/setup-tools';
 import { getFormingMaterial, readFormingMaterials, toRuleMaterial } from '../manage-tooling/shop-materials';
-import { readPressRun } from './press-runs';
+import { lockPressRun, readPressRun } from './press-runs';
 
-type RunValues = z.output<typeof pressRunInputSchema>;
+type RunInput = z.output<typeof pressRunInputSchema>;
 
 /**
  * Logs a press run with the force that both rules compute for it now.
  * @throws AppError `invalid_input` (no such job, tool, material or time entry, a sheet as thick as the opening, a bend
  *   longer than bed or die, dated after today or before the job)
  */
-export function createPressRun(context: ShopContext, body: RunValues): Promise<PressRun> {
+export function createPressRun(context: ShopContext, body: RunInput): Promise<PressRun> {
   return inShopOf(context, async (trx) => {
-    const tools = await readSetupTools(trx, body);
-    const material = getFormingMaterial(await readFormingMaterials(trx), body.materialCode);
-    const forceInput = toForceInput(body, tools, material);
-    const runOn = body.runOn ?? todayOf(context);
-    refuse([
-      ...(await checkJob(context, trx, body.jobId, runOn)),
-      ...checkForceInput(forceInput).map(({ field, ...issue }) => ({
-        field: FIELDS[field] ?? field,
-        ...issue,
-      })),
-      ...checkRoom(body, tools),
-      ...(await checkEntry(context, trx, body)),
-    ]);
-    const pressRunId = newId();
-    await insertPressRun(trx, {
-      ...body,
-      ...toStoredForce(computeBendForce(forceInput)),
-      shopId: context.shop.shopId,
-      pressRunId,
-      runOn,
-      note: body.note === '' ? null : body.note,
-      loggedBy: context.actor.name,
-      loggedByUserId: context.actor.userId,
-    });
-    return readPressRun(trx, pressRunId);
+    const { actor, shop } = context;
+    const id = newId();
+    const values = await toRunValues(context, trx, body);
+    const logger = { loggedBy: actor.name, loggedByUserId: actor.userId };
+    await insertDatedRow(trx, 'pressRun', { shopId: shop.shopId, id }, { ...values, ...logger });
+    return readPressRun(trx, id);
   });
+}
+
+/**
+ * Corrects a press run: it is voided and another, logged by the same person, takes its place; who may not see all, only
+ * one that the own account has logged.
+ * @throws AppError `not_found`; `conflict` if it was voided meanwhile; as `createPressRun`
+ */
+export function correctPressRun(
+  context: ShopContext,
+  { pressRunId }: { pressRunId: string },
+  body: RunInput,
+): Promise<PressRun> {
+  return inShopOf(context, async (trx) => {
+    const run = await lockPressRun(context, trx, pressRunId);
+    if (run.isVoided) {
+      throw new AppError('conflict', 'This press run was voided meanwhile. Load the page again.');
+    }
+    const values = await toRunValues(context, trx, { runOn: run.runOn, ...body });
+    const { loggedBy, loggedByUserId } = run;
+    const replacement = { id: pressRunId, newId: newId(), voidedBy: context.actor.name };
+    await replaceDatedRow(trx, 'pressRun', replacement, { ...values, loggedBy, loggedByUserId });
+    return readPressRun(trx, replacement.newId);
+  });
+}
+
+/** What is kept of a run besides who logged it. */
+async function toRunValues(context: ShopContext, trx: ShopTransaction, body: RunInput) {
+  const tools = await readSetupTools(trx, body);
+  const material = getFormingMaterial(await readFormingMaterials(trx), body.materialCode);
+  const forceInput = toForceInput(body, tools, material);
+  const runOn = body.runOn ?? todayOf(context);
+  refuse([
+    ...(await checkJob(context, trx, body.jobId, runOn)),
+    ...checkForceInput(forceInput).map(({ field, ...issue }) => ({
+      field: FIELDS[field] ?? field,
+      ...issue,
+    })),
+    ...checkRoom(body, tools),
+    ...(await checkEntry(context, trx, body)),
+  ]);
+  const note = body.note === '' ? null : body.note;
+  return { ...body, ...toStoredForce(computeBendForce(forceInput)), runOn, note };
 }
 
 function refuse(issues: readonly Issue[]): void {
@@ -65,7 +94,7 @@ const FIELDS: Readonly<Record<string, string>> = {
   tensile: 'materialCode',
 };
 
-function toForceInput(body: RunValues, { opening }: SetupTools, material: FormingMaterialDto): ForceInput {
+function toForceInput(body: RunInput, { opening }: SetupTools, material: FormingMaterialDto): ForceInput {
   return {
     tensileMpa: toRuleMaterial(material).tensileUsed.toNumber(),
     thicknessMm: Number(body.thicknessMm),
@@ -97,7 +126,7 @@ async function checkJob(
 }
 
 /** A bend longer than bed or die was not made there; one of the lengths is wrong. */
-function checkRoom({ bendLengthMm }: RunValues, { machine, die }: SetupTools): Issue[] {
+function checkRoom({ bendLengthMm }: RunInput, { machine, die }: SetupTools): Issue[] {
   const rooms = [
     { of: `the bed of ${machine.name}`, lengthMm: machine.bedLengthMm },
     { of: `die ${die.name}`, lengthMm: die.lengthMm },
@@ -112,7 +141,7 @@ function checkRoom({ bendLengthMm }: RunValues, { machine, die }: SetupTools): I
 async function checkEntry(
   { actor }: ShopContext,
   trx: ShopTransaction,
-  { entryId, jobId }: RunValues,
+  { entryId, jobId }: RunInput,
 ): Promise<Issue[]> {
   if (entryId === null) return [];
   const entry = await findRunEntry(trx, entryId);

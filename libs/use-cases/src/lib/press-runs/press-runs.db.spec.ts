@@ -3,7 +3,7 @@ import { computeBendForce, findLowestRating, MATERIALS } from '@brakeven/forming
 import { createTestShop, type TestShop } from '@brakeven/test-shop';
 import fc from 'fast-check';
 import { getForceDistribution } from './force-distribution';
-import { createPressRun } from './log-press-run';
+import { correctPressRun, createPressRun } from './log-press-run';
 import { getPressRunChoices, getSetupCard, listPressRuns, restorePressRun, voidPressRun } from './press-runs';
 
 let shop: TestShop;
@@ -150,6 +150,50 @@ describe('a press run', () => {
     );
     const [listed] = (await listPressRuns(lead(), query())).items;
     expect(listed).toMatchObject({ forceHighKn: run.forceHighKn, openingMm: '50' });
+  });
+});
+
+describe('a correction of a press run', () => {
+  it('takes its place, logged by the same person, with its own force', async () => {
+    const wrong = await createPressRun(operator(), runOf({ runOn: '2026-03-01' }));
+    const right = await correctPressRun(lead(), wrong, runOf({ bendLengthMm: '1200', strokes: 41 }));
+    expect(right).toMatchObject({
+      runOn: '2026-03-01',
+      strokes: 41,
+      loggedBy: 'Test operator',
+      voidedAt: null,
+    });
+    expect(Number(right.forceHighKn)).toBeCloseTo(2 * Number(wrong.forceHighKn), 4);
+    expect((await listPressRuns(operator(), query())).items).toEqual([right]);
+    expect((await listPressRuns(lead(), query({ show: 'voided' }))).items).toMatchObject([
+      { pressRunId: wrong.pressRunId, voidedBy: 'Test lead' },
+    ]);
+  });
+
+  it('keeps what it replaced from coming back, until it is voided itself', async () => {
+    const first = await createPressRun(lead(), runOf());
+    const second = await correctPressRun(lead(), first, runOf({ pieces: 19 }));
+    const third = await correctPressRun(lead(), second, runOf({ pieces: 18 }));
+    for (const replaced of [first, second]) {
+      await expect(restorePressRun(lead(), replaced)).rejects.toMatchObject({ code: 'conflict' });
+      await expect(correctPressRun(lead(), replaced, runOf())).rejects.toMatchObject({ code: 'conflict' });
+    }
+    await voidPressRun(lead(), third);
+    await restorePressRun(lead(), first);
+    expect((await listPressRuns(lead(), query())).items).toEqual([first]);
+    await expect(restorePressRun(lead(), third)).rejects.toMatchObject({ code: 'conflict' });
+  });
+
+  it('is refused to an operator who did not log the run, and when it is wrong itself, and then nothing changes', async () => {
+    const theirs = await createPressRun(lead(), runOf());
+    await expect(correctPressRun(operator(), theirs, runOf())).rejects.toMatchObject({ code: 'not_found' });
+    await expect(correctPressRun(lead(), { pressRunId: USER }, runOf())).rejects.toMatchObject({
+      code: 'not_found',
+    });
+    await expect(correctPressRun(lead(), theirs, runOf({ bendLengthMm: '1831' }))).rejects.toMatchObject({
+      issues: [{ field: 'bendLengthMm', code: 'too_long' }],
+    });
+    expect((await listPressRuns(lead(), query())).items).toEqual([theirs]);
   });
 });
 

@@ -8,7 +8,9 @@ import {
   type SetupCard,
 } from '@brakeven/contract';
 import {
+  findDatedRow,
   findRunJob,
+  hasLiveCorrection,
   listLastGoodRuns,
   listPressRunRows,
   listRunEntries,
@@ -16,7 +18,7 @@ import {
   type PressRunRow,
   type PressRunSelection,
   pressRunSortType,
-  setPressRunVoided,
+  setDatedRowVoided,
   type ShopTransaction,
 } from '@brakeven/database';
 import { inShopOf, type ShopContext } from '../context';
@@ -83,23 +85,43 @@ export function getSetupCard(context: ShopContext, { jobId }: { jobId: string })
  * Voids a press run; who may not see all, only one that the own account has logged.
  * @throws AppError `not_found`
  */
-export function voidPressRun(context: ShopContext, key: { pressRunId: string }): Promise<void> {
-  return setVoided(context, key.pressRunId, context.actor.name);
-}
-
-/** Takes back the voiding of a press run. @throws AppError `not_found` */
-export function restorePressRun(context: ShopContext, key: { pressRunId: string }): Promise<void> {
-  return setVoided(context, key.pressRunId, null);
-}
-
-function setVoided(context: ShopContext, pressRunId: string, voidedBy: string | null): Promise<void> {
+export function voidPressRun(context: ShopContext, { pressRunId }: { pressRunId: string }): Promise<void> {
   return inShopOf(context, async (trx) => {
-    const selection = toSelection(context, { pressRunId, show: 'all' });
-    if (selection) {
-      await getPressRunRow(trx, selection);
-      await setPressRunVoided(trx, pressRunId, voidedBy);
-    } else throw notFound();
+    const { isVoided } = await lockPressRun(context, trx, pressRunId);
+    if (!isVoided) await setDatedRowVoided(trx, 'pressRun', pressRunId, context.actor.name);
   });
+}
+
+/**
+ * Takes back the voiding of a press run.
+ * @throws AppError `not_found`; `conflict` while a correction of it counts
+ */
+export function restorePressRun(context: ShopContext, { pressRunId }: { pressRunId: string }): Promise<void> {
+  return inShopOf(context, async (trx) => {
+    const { isVoided } = await lockPressRun(context, trx, pressRunId);
+    if (!isVoided) return;
+    if (await hasLiveCorrection(trx, 'pressRun', pressRunId)) {
+      const message =
+        'This press run was corrected, and what took its place counts. Correct or void that one.';
+      throw new AppError('conflict', message);
+    }
+    await setDatedRowVoided(trx, 'pressRun', pressRunId, null);
+  });
+}
+
+/**
+ * A press run that may be changed by who asks, kept from others until the transaction ends.
+ * @throws AppError `not_found`
+ */
+export async function lockPressRun(
+  context: ShopContext,
+  trx: ShopTransaction,
+  pressRunId: string,
+): Promise<PressRunRow & { isVoided: boolean }> {
+  const locked = await findDatedRow(trx, 'pressRun', pressRunId);
+  const selection = toSelection(context, { pressRunId, show: 'all' });
+  if (!locked || !selection) throw notFound();
+  return { ...(await getPressRunRow(trx, selection)), ...locked };
 }
 
 /**
