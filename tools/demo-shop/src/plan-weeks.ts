@@ -34,11 +34,14 @@ function planWeek(week: number, jobs: readonly PlannedJob[], random: Random): Pl
   const open = jobs.filter((job) => job.openedWeek <= week && week <= job.lastWeek && job.hoursLeft.size > 0);
   const upkeep = jobs.find((job) => job.number === UPKEEP_JOB.number);
   if (!upkeep) throw new Error('The upkeep job is missing.');
-  const press = { left: pressHours(week) * 4 * random.between(0.82, 1.12) };
+  const pressQuarterHoursPerDay = (pressHours(week) * 4 * random.between(0.82, 1.12)) / 5;
+  const press = { left: 0 };
   const entries: PlannedEntry[] = [];
-  for (let day = 0; day < 5; day += 1)
+  for (let day = 0; day < 5; day += 1) {
+    press.left += pressQuarterHoursPerDay;
     for (const employee of PEOPLE.filter((person) => person.skills.length > 0))
       entries.push(...planDay({ week, day, employee, open, upkeep, press }, random));
+  }
   return entries;
 }
 
