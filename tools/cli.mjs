@@ -3,19 +3,47 @@ import { spawn } from 'node:child_process';
 import { constants } from 'node:os';
 import { builtFile } from './setup/build.mjs';
 import { createProgress, runScript } from './setup/progress.mjs';
-import { findReadyEnvironment, setUp, tellWaiting } from './setup/set-up.mjs';
+import {
+  areProgramsReady,
+  findReadyEnvironment,
+  setUp,
+  setUpPrograms,
+  tellWaiting,
+} from './setup/set-up.mjs';
 import { withSetupLock } from './setup/setup-lock.mjs';
 import { errorText } from './setup/workspace.mjs';
 
 // Standard output belongs to the command.
 const progress = createProgress(process.stderr);
+const args = process.argv.slice(2);
+
+/** The commands that look nothing up; every other one finds the database started and up to date. */
+const WITHOUT_DATABASE = /^(forming (force|blank|depth)|setup template)\b/;
 
 await runScript(async () => {
-  const environment =
-    findReadyEnvironment(['cli']) ??
-    (await withSetupLock(() => setUp(['cli'], progress, { stopsAtEnd: false }), tellWaiting(progress)));
+  const environment = needsDatabase() ? await prepareDatabase() : await preparePrograms();
   return runCommand({ ...process.env, ...environment });
 });
+
+function needsDatabase() {
+  const isQuestion =
+    args.length === 0 || args.some((arg) => ['--help', '-h', '--version', '-V'].includes(arg));
+  return !isQuestion && !WITHOUT_DATABASE.test(args.join(' '));
+}
+
+async function prepareDatabase() {
+  return (
+    findReadyEnvironment(['cli']) ??
+    (await withSetupLock(() => setUp(['cli'], progress, { stopsAtEnd: false }), tellWaiting(progress)))
+  );
+}
+
+async function preparePrograms() {
+  if (!areProgramsReady(['cli'])) {
+    await withSetupLock(() => setUpPrograms(['cli'], progress), tellWaiting(progress));
+  }
+  return {};
+}
 
 /**
  * Runs the command where the caller stands, so that its relative paths are the caller's. A Ctrl-C reaches it
@@ -26,7 +54,7 @@ await runScript(async () => {
 function runCommand(env) {
   const isByNpm = process.env.npm_lifecycle_event === 'cli';
   const cwd = (isByNpm && process.env.INIT_CWD) || process.cwd();
-  const child = spawn(process.execPath, [builtFile('cli'), ...process.argv.slice(2)], {
+  const child = spawn(process.execPath, [builtFile('cli'), ...args], {
     cwd,
     env,
     stdio: 'inherit',

@@ -29,16 +29,31 @@ export async function setUp(programs, progress, options) {
 }
 
 /**
+ * The part of `setUp` that a command without a database needs.
+ * @param {Program[]} programs
+ * @param {Progress} progress
+ */
+export async function setUpPrograms(programs, progress) {
+  await ensureNpmPackages(progress);
+  await ensureBuilt(programs, progress);
+}
+
+/** @param {Program[]} programs */
+export function areProgramsReady(programs) {
+  return areNpmPackagesCurrent() && areBuilt(programs);
+}
+
+/**
  * @param {Program[]} programs
  * @returns {DatabaseEnvironment | null} where the database is, when nothing at all has to be set up
  */
 export function findReadyEnvironment(programs) {
   const configuration = findConfiguration();
-  if (configuration?.checkout !== root || !areNpmPackagesCurrent()) {
+  if (configuration?.checkout !== root || !areProgramsReady(programs)) {
     return null;
   }
   const server = new DatabaseCluster(configuration.database).findServer();
-  if (!server?.isReady || !isMigrated() || !areBuilt(programs)) {
+  if (!server?.isReady || !isMigrated()) {
     return null;
   }
   return programEnvironment({
