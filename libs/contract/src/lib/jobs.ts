@@ -99,7 +99,7 @@ export const jobSchema = jobFiguresSchema.extend({
   isBillable: z.boolean(),
   status: z.enum(JOB_STATUSES),
   lastWorkedOn: localDateSchema.nullable(),
-  /** Entries on the job that have no rate on their date, so that its cost is not complete. */
+  /** Entries on the job without a rate on their date, or of a week whose premium lacks one: its cost is not complete. */
   entriesWithoutRate: z.number().int(),
 });
 export type Job = z.infer<typeof jobSchema>;
@@ -133,7 +133,13 @@ export const jobPageSchema = z.object({
   items: z.array(jobSchema),
   nextCursor: z.string().nullable(),
   /** Over all jobs of the filter, not only this page. */
-  totals: jobFiguresSchema.extend({ jobs: z.number().int(), quotedPrice: moneySchema.optional() }),
+  totals: jobFiguresSchema.extend({
+    jobs: z.number().int(),
+    quotedPrice: moneySchema.optional(),
+    /** Jobs that have an estimate, and what those cost: that less `estimate` is `variance`. */
+    estimatedJobs: z.number().int().optional(),
+    estimatedJobsCost: moneySchema.optional(),
+  }),
 });
 export type JobPage = z.infer<typeof jobPageSchema>;
 

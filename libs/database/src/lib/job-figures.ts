@@ -54,8 +54,7 @@ const ESTIMATED_COST = sql`case l.kind
  */
 export const JOB_FIGURES = sql`
   cross join lateral (
-    select ${JOB_SUMS}, ${sumOf('invoiced')} as invoiced,
-      max(d.posted_on) filter (where d.category = 'labour') as last_worked_on
+    select ${JOB_SUMS}, ${sumOf('invoiced')} as invoiced
     from job_day d where d.shop_id = j.shop_id and d.job_id = j.job_id
   ) f
   left join lateral (
@@ -74,6 +73,11 @@ export const JOB_FIGURES = sql`
         ::numeric(16,2) as work_in_progress,
       f.total - e.estimate as variance
   ) m`;
+
+/** Of `job j`: the last day that somebody worked on it, which is not the day in the books of what came late. */
+export const LAST_WORKED_ON = sql`(
+  select max(t.worked_on) from time_entry t
+  where t.shop_id = j.shop_id and t.job_id = j.job_id and t.voided_at is null)`;
 
 /** What `JOB_FIGURES` gives of one job. */
 export const JOB_FIGURE_COLUMNS = sql`f.*, e.estimated_hours, e.estimate, m.*`;

@@ -1,6 +1,12 @@
 import { type JobSort } from '@brakeven/contract';
 import { sql } from 'kysely';
-import { JOB_FIGURE_COLUMNS, JOB_FIGURE_TOTALS, JOB_FIGURES, type JobFigureColumns } from './job-figures';
+import {
+  JOB_FIGURE_COLUMNS,
+  JOB_FIGURE_TOTALS,
+  JOB_FIGURES,
+  type JobFigureColumns,
+  LAST_WORKED_ON,
+} from './job-figures';
 import { isJobSelected, JOB_WITH_CUSTOMER, type JobSelection } from './job-selection';
 import {
   type Direction,
@@ -43,7 +49,7 @@ const SORT_KEYS = {
   invoiced: figure('f.invoiced'),
   margin: figure('m.margin'),
   workInProgress: figure('m.work_in_progress'),
-  lastWorkedOn: { expression: sql`f.last_worked_on`, type: 'date', isNullable: true },
+  lastWorkedOn: { expression: LAST_WORKED_ON, type: 'date', isNullable: true },
 } as const satisfies Record<JobSort, SortKey>;
 
 /** The type that a cursor's value has for a sort. */
@@ -64,6 +70,7 @@ export interface JobRow extends JobFigureColumns {
   isBillable: boolean;
   status: JobTable['status'];
   lastWorkedOn: string | null;
+  /** Those whose cost on the job is not known. */
   entriesWithoutRate: number;
   sortValue: string | null;
 }
@@ -76,6 +83,12 @@ export interface JobPaging {
   limit: number;
 }
 
+/** A premium that is not known yet is missing on the job only where the shop lets jobs bear it. */
+const ENTRIES_WITHOUT_RATE = sql`(
+  select count(distinct g.entry_id) from rate_gap g join shop s on s.shop_id = g.shop_id
+  where g.shop_id = j.shop_id and g.job_id = j.job_id
+    and (g.category in ('labour', 'machine', 'overhead') or g.category = 'overtime' and s.overtime_to = 'jobs'))`;
+
 /** A page of jobs with their figures as they are rolled up. */
 export async function listJobRows(
   trx: ShopTransaction,
@@ -87,9 +100,7 @@ export async function listJobRows(
   const { rows } = await sql<JobRow>`
     select j.job_id, j.number, j.customer_id, c.name as customer, j.title, j.quantity, j.opened_on, j.due_on,
       j.quoted_price, j.is_billable, j.status, ${JOB_FIGURE_COLUMNS}, (${key.expression})::text as sort_value,
-      (select count(distinct g.entry_id) from rate_gap g
-        where g.shop_id = j.shop_id and g.job_id = j.job_id and g.category in ('labour', 'machine', 'overhead')
-      ) as entries_without_rate
+      ${LAST_WORKED_ON} as last_worked_on, ${ENTRIES_WITHOUT_RATE} as entries_without_rate
     from ${JOB_WITH_CUSTOMER} ${JOB_FIGURES}
     where ${isJobSelected(selection)} and ${isAfter(key, id, direction, after)}
     order by ${orderByKey(key, id, direction)}
@@ -101,12 +112,17 @@ export async function listJobRows(
 export interface JobTotals extends JobFigureColumns {
   jobs: number;
   quotedPrice: string;
+  /** Jobs that have an estimate, and what those cost: their cost − `estimate` is `variance`. */
+  estimatedJobs: number;
+  estimatedJobsCost: string;
 }
 
 /** Sums over all jobs of a selection. */
 export async function sumJobs(trx: ShopTransaction, selection: JobSelection): Promise<JobTotals> {
   const { rows } = await sql<JobTotals>`
-    select count(*) as jobs, coalesce(sum(quoted_price), 0)::numeric(16,2) as quoted_price, ${JOB_FIGURE_TOTALS}
+    select count(*) as jobs, coalesce(sum(quoted_price), 0)::numeric(16,2) as quoted_price, ${JOB_FIGURE_TOTALS},
+      count(estimate) as estimated_jobs,
+      coalesce(sum(total) filter (where estimate is not null), 0)::numeric(16,2) as estimated_jobs_cost
     from (
       select j.quoted_price, ${JOB_FIGURE_COLUMNS} from ${JOB_WITH_CUSTOMER} ${JOB_FIGURES}
       where ${isJobSelected(selection)}

@@ -1,6 +1,5 @@
 import { sql } from 'kysely';
 import { type WeekRule, weekShares, type WorkedDays } from './overtime-weeks';
-import { type RateGapRow } from './rollup-state';
 import { type JobTable } from './tables';
 import { type ShopTransaction } from './tenancy';
 
@@ -121,28 +120,6 @@ export async function countDaysWaiting(trx: ShopTransaction, to: string): Promis
     .where('workedOn', '<=', to)
     .executeTakeFirstOrThrow();
   return row.days;
-}
-
-/** Entries posted in a period that lack a rate, by category and by employee, machine or, for overhead, the shop. */
-export async function listMonthGapRows(
-  trx: ShopTransaction,
-  from: string,
-  to: string,
-): Promise<RateGapRow[]> {
-  const { rows } = await sql<RateGapRow>`
-    select g.category, subject.name as subject, count(*) as entries,
-      min(g.worked_on)::text as first_day, max(g.worked_on)::text as last_day
-    from rate_gap g
-    left join employee e on e.shop_id = g.shop_id and e.employee_id = g.employee_id
-    left join machine m on m.shop_id = g.shop_id and m.machine_id = g.machine_id
-    cross join lateral (
-      select case when g.category in ('labour', 'overtime') then e.name when g.category = 'overhead' then null
-        else m.name end as name
-    ) subject
-    where g.posted_on between ${from}::date and ${to}::date
-    group by g.category, subject.name
-    order by g.category, subject.name`.execute(trx);
-  return rows;
 }
 
 /** An employee's hours of a period, from three sides. */

@@ -1,4 +1,4 @@
-import { sql } from 'kysely';
+import { type RawBuilder, sql } from 'kysely';
 import { type CostLineTable } from './tables';
 import { type ShopTransaction } from './tenancy';
 
@@ -40,18 +40,38 @@ export interface RateGapRow {
   lastDay: string;
 }
 
-/** Groups the gaps that the rollup found; with a machine, those that its payback lacks. */
-export async function listRateGapRows(trx: ShopTransaction, machineId?: string): Promise<RateGapRow[]> {
-  const ofPayback = sql`g.machine_id = ${machineId ?? null} and g.worked_on >= m.in_service_on
-    and g.category in ('labour', 'earned', 'running')`;
+/** Which gaps are meant: those posted in a period, or those that a machine's payback lacks. */
+export type RateGapSelection = { posted: { from: string; to: string } } | { machineId: string };
+
+/** Groups the gaps that the rollup found, all of them unless some are asked for; a premium lacks a wage. */
+export async function listRateGapRows(
+  trx: ShopTransaction,
+  selection?: RateGapSelection,
+): Promise<RateGapRow[]> {
   const { rows } = await sql<RateGapRow>`
-    select g.category, case g.category when 'labour' then e.name when 'overhead' then null else m.name end as subject,
-      count(*) as entries, min(g.worked_on) as first_day, max(g.worked_on) as last_day
+    select g.category, subject.name as subject, count(*) as entries, min(g.worked_on) as first_day,
+      max(g.worked_on) as last_day
     from rate_gap g
     left join employee e on e.shop_id = g.shop_id and e.employee_id = g.employee_id
     left join machine m on m.shop_id = g.shop_id and m.machine_id = g.machine_id
-    where ${machineId === undefined ? sql`true` : ofPayback}
-    group by g.category, 2, case g.category when 'labour' then g.employee_id when 'overhead' then null else g.machine_id end
-    order by g.category, 2`.execute(trx);
+    cross join lateral (
+      select
+        case when g.category in ('labour', 'overtime') then e.employee_id
+          when g.category <> 'overhead' then m.machine_id end as id,
+        case when g.category in ('labour', 'overtime') then e.name when g.category <> 'overhead' then m.name end as name
+    ) subject
+    where ${isMeant(selection)}
+    group by g.category, subject.id, subject.name
+    order by g.category, subject.name, subject.id`.execute(trx);
   return rows;
+}
+
+function isMeant(selection: RateGapSelection | undefined): RawBuilder<boolean> {
+  if (selection === undefined) return sql`true`;
+  if ('posted' in selection) {
+    const { from, to } = selection.posted;
+    return sql`g.posted_on between ${from}::date and ${to}::date`;
+  }
+  return sql`g.machine_id = ${selection.machineId}::uuid and g.worked_on >= m.in_service_on
+    and g.category in ('labour', 'earned', 'running')`;
 }

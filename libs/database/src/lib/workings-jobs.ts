@@ -1,5 +1,5 @@
 import { type RawBuilder, sql } from 'kysely';
-import { JOB_FIGURES } from './job-figures';
+import { JOB_FIGURES, LAST_WORKED_ON } from './job-figures';
 import { isJobSelected, JOB_WITH_CUSTOMER, type JobSelection } from './job-selection';
 import { allOf, isAfter, type KeysetPosition, orderByKey, type SortKey } from './keyset';
 import { type PaybackMachine } from './payback-figures';
@@ -46,7 +46,7 @@ export function sumOtherJobs(
 function workInProgress(jobs: JobSelection): RawBuilder<unknown> {
   const isInProgress = sql`j.status in ('open', 'finished')`;
   return sql`
-    select j.job_id, f.last_worked_on as on_day, j.title as label, j.number as job, m.work_in_progress as amount
+    select j.job_id, ${LAST_WORKED_ON} as on_day, j.title as label, j.number as job, m.work_in_progress as amount
     from ${JOB_WITH_CUSTOMER} ${JOB_FIGURES}
     where ${allOf([isJobSelected(jobs), isInProgress, sql`m.work_in_progress > 0`])}`;
 }

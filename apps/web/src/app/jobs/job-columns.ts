@@ -132,12 +132,17 @@ export function toJobTotals(totals: JobPage['totals'], filter: JobFilter): GridT
     const value = totals[field] ?? null;
     return [field, { value, figure: value === null ? null : { figure, ...filter } }];
   });
-  const jobs = totals.jobs.toLocaleString('en-US');
   return {
     ...Object.fromEntries(figures),
     number: { value: 'Total', isText: true },
-    title: { value: `${jobs} ${totals.jobs === 1 ? 'job' : 'jobs'}`, isText: true },
+    title: { value: toCountWords(totals), isText: true },
   };
+}
+
+/** Estimate and variance are those of the jobs that have an estimate, so that these are counted apart. */
+function toCountWords({ jobs, estimatedJobs = jobs }: JobPage['totals']): string {
+  const words = `${jobs.toLocaleString('en-US')} ${jobs === 1 ? 'job' : 'jobs'}`;
+  return estimatedJobs === jobs ? words : `${words}, ${estimatedJobs.toLocaleString('en-US')} estimated`;
 }
 
 /** Whether a column shows money or what comes of an estimate. */

@@ -59,6 +59,13 @@ describe('toJobTotals', () => {
     expect(totals['labour']?.value).toBeNull();
     expect(totals['title']?.value).toBe('1 job');
   });
+
+  it('say of how many jobs the estimate and the variance are', () => {
+    const wordsOf = (estimatedJobs: number) =>
+      toJobTotals({ jobs: 12, estimatedJobs, hours: '80.0000', machineHours: '32.0000' }, {})['title']?.value;
+    expect(wordsOf(7)).toBe('12 jobs, 7 estimated');
+    expect(wordsOf(12)).toBe('12 jobs');
+  });
 });
 
 describe('toLineColumns', () => {

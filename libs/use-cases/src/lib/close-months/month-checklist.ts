@@ -3,7 +3,7 @@ import {
   countDaysWaiting,
   findThrough,
   listMissingTimesheetRows,
-  listMonthGapRows,
+  listRateGapRows,
   listRefusalRows,
   listUninvoicedJobRows,
   type ShopTransaction,
@@ -30,7 +30,7 @@ export async function readChecklist(
     })),
     uninvoicedJobs: jobs.map((job) => ({ ...job, cost: moneyText(toMoney(job.cost)) })),
     rollup: { daysWaiting: await countDaysWaiting(trx, to), through: await findThrough(trx) },
-    gaps: await listMonthGapRows(trx, from, to),
+    gaps: await listRateGapRows(trx, { posted: { from, to } }),
   };
 }
 

@@ -8,10 +8,15 @@ import {
   jobPageSchema,
 } from '@brakeven/contract';
 import { computeJobCost } from '@brakeven/costing';
+import { createTestShop, type TestShop } from '@brakeven/test-shop';
 import { D, hoursText, moneyText, sum } from '@brakeven/values';
 import { type ShopContext } from '../context';
+import { saveEstimate } from '../estimate-jobs/estimates';
+import { getEstimateWorkings } from '../estimate-jobs/get-estimate-workings';
 import { getRollupStatus } from '../roll-up-costs/get-rollup-status';
 import { computeExpectedCosts } from '../roll-up-costs/testing/expected-costs';
+import { runRollup } from '../roll-up-costs/run-rollup';
+import { listCustomerFigures } from '../show-customers/customers';
 import { createWorkedShop, WORKED_NOW, type WorkedShop } from '../testing/worked-shop';
 import { changeJobStatus, createJob, listCustomers, updateJob } from './change-job';
 import { getJob, listJobLines } from './get-job';
@@ -162,6 +167,83 @@ describe('jobs', () => {
     const jobId = '0198aaaa-0000-7000-8000-000000000abc';
     await expect(getJob(owner, { jobId })).rejects.toMatchObject({ code: 'not_found' });
     await expect(listJobLines(owner, { jobId, limit: 5 })).rejects.toMatchObject({ code: 'not_found' });
+  });
+});
+
+describe('jobs of which something is special', () => {
+  let shop: TestShop;
+  let owner: ShopContext;
+  let ids: { employeeId: string; jobId: string; operationId: string };
+  const rollUp = () => runRollup(owner, {});
+  const work = (workedOn: string, hours = '8') => shop.addEntries([{ ...ids, workedOn, hours }]);
+
+  beforeEach(async () => {
+    shop = await createTestShop({ overtimeTo: 'jobs' });
+    owner = shop.context('owner', { now: WORKED_NOW });
+    ids = {
+      employeeId: await shop.addEmployee(),
+      jobId: await shop.addJob({ number: '3001' }),
+      operationId: await shop.addOperation(),
+    };
+    await shop.addOverheadRate({ validFrom: '2026-01-01', ratePerLabourHour: '10' });
+  });
+  afterEach(() => shop.close());
+
+  it('were worked on last on the day of the work, not on the one that late work is posted on', async () => {
+    await shop.addPayRate({ employeeId: ids.employeeId, validFrom: '2026-01-01', wagePerHour: '30' });
+    await work('2026-03-10');
+    await rollUp();
+    await shop.addMonthClose('2026-03-01');
+    const [late] = await work('2026-03-12');
+    await rollUp();
+    expect((await getJob(owner, ids)).lastWorkedOn).toBe('2026-03-12');
+    expect((await listCustomerFigures(owner)).items).toMatchObject([{ lastWorkedOn: '2026-03-12' }]);
+    await shop.inShop((trx) =>
+      trx
+        .updateTable('timeEntry')
+        .set({ voidedAt: new Date() })
+        .where('entryId', '=', late ?? '')
+        .execute(),
+    );
+    await rollUp();
+    expect((await getJob(owner, ids)).lastWorkedOn).toBe('2026-03-10');
+  });
+
+  it('are not complete while a premium that they bear lacks a wage, though their own entries have one', async () => {
+    await shop.addPayRate({ employeeId: ids.employeeId, validFrom: '2026-03-05', wagePerHour: '30' });
+    const other = await shop.addJob();
+    await shop.addEntries([{ ...ids, jobId: other, workedOn: '2026-03-02', hours: '24' }]);
+    await work('2026-03-05', '24');
+    await rollUp();
+    expect((await getJob(owner, ids)).entriesWithoutRate).toBe(1);
+    const { gaps } = await getRollupStatus(owner);
+    const premium = gaps.find(({ category }) => category === 'overtime');
+    expect(premium).toMatchObject({ subject: expect.stringMatching(/^Employee/), entries: 2 });
+    await shop.inShop((trx) => trx.updateTable('shop').set({ overtimeTo: 'overhead' }).execute());
+    await rollUp();
+    expect((await getJob(owner, ids)).entriesWithoutRate).toBe(0);
+  });
+
+  it('are totalled so that cost less estimate is the variance, of those that have an estimate', async () => {
+    await shop.addPayRate({ employeeId: ids.employeeId, validFrom: '2026-01-01', wagePerHour: '30' });
+    const without = await shop.addJob({ number: '3002' });
+    await work('2026-03-10');
+    await shop.addEntries([{ ...ids, jobId: without, workedOn: '2026-03-11', hours: '5' }]);
+    await rollUp();
+    const estimate = { estimatedOn: '2026-03-01', scrapAllowancePercent: '0', marginPercent: '20' };
+    const outside = { kind: 'outside', amount: '300.00', description: 'All of it' } as const;
+    await saveEstimate(owner, ids, { ...estimate, lines: [outside] });
+    const { totals } = jobPageSchema.parse(
+      await listJobs(owner, { sort: 'number', direction: 'asc', limit: 10 }),
+    );
+    expect(totals).toMatchObject({ jobs: 2, estimatedJobs: 1, total: '520.00', estimatedJobsCost: '320.00' });
+    expect(totals).toMatchObject({ estimate: '300.00', variance: '20.00' });
+    const workings = await getEstimateWorkings(owner, { figure: 'estimate.variance', limit: 5 });
+    expect(workings.inputs.map(({ label, value }) => [label, value])).toEqual([
+      ['Cost of 1 job with an estimate', '$320.00'],
+      ['Their estimate', '$300.00'],
+    ]);
+    expect([workings.amount, workings.lineCount]).toEqual(['20.00', 1]);
   });
 });
 

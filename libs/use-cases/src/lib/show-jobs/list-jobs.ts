@@ -1,5 +1,5 @@
 import { AppError, type JobFilter, type JobListQuery, type JobPage, type JobSort } from '@brakeven/contract';
-import { type JobSelection, jobSortType, listJobRows, sumJobs } from '@brakeven/database';
+import { type JobSelection, jobSortType, type JobTotals, listJobRows, sumJobs } from '@brakeven/database';
 import { inShopOf, type ShopContext } from '../context';
 import { cutPage, positionSchema, readCursor, writeCursor } from '../page-cursor';
 import { seesMoney, toJob, toJobFigures } from './job-dto';
@@ -31,16 +31,22 @@ export async function listJobs(context: ShopContext, query: JobListQuery): Promi
   const selection = toJobSelection(query);
   return inShopOf(context, async (trx) => {
     const found = await listJobRows(trx, selection, { sort, direction, after, limit: limit + 1 });
-    const { jobs, quotedPrice, ...sums } = await sumJobs(trx, selection);
+    const sums = await sumJobs(trx, selection);
     const { rows, nextCursor } = cutPage(found, limit, (last) =>
       writeCursor(list, { value: last.sortValue, id: last.jobId }),
     );
     return {
       items: rows.map((row) => toJob(context, row)),
       nextCursor,
-      totals: { jobs, ...toJobFigures(context, sums), ...(seesMoney(context) ? { quotedPrice } : {}) },
+      totals: toTotals(context, sums),
     };
   });
+}
+
+function toTotals(context: ShopContext, sums: JobTotals): JobPage['totals'] {
+  const { jobs, quotedPrice, estimatedJobs, estimatedJobsCost } = sums;
+  const ofMoney = seesMoney(context) ? { quotedPrice, estimatedJobs, estimatedJobsCost } : {};
+  return { jobs, ...toJobFigures(context, sums), ...ofMoney };
 }
 
 /**

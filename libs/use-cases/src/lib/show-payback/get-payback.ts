@@ -47,7 +47,7 @@ export function getPayback(context: ShopContext, { machineId }: { machineId: str
       curve: toCurve(found),
       month: await readMonth(trx, found),
       ...(await readJobs(trx, machine)),
-      gaps: await listRateGapRows(trx, machineId),
+      gaps: await listRateGapRows(trx, { machineId }),
     };
   });
 }
