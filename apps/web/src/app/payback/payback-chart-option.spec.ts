@@ -22,7 +22,7 @@ const draw = (change: Parameters<typeof makePayback>[0] = {}, today = '2026-12-0
   const facts = { payback: makePayback(change), today: toLocalDate(today), currency: 'USD' };
   const option = toPaybackChartOption(facts, palette);
   const [actual, straight] = option['series'] as [Series, Series];
-  const xAxis = option['xAxis'] as { max: string };
+  const xAxis = option['xAxis'] as { min: string; max: string };
   const yAxis = option['yAxis'] as { axisLabel: { formatter: (amount: number) => string } };
   return { actual, straight, xAxis, yAxis };
 };
@@ -31,10 +31,18 @@ describe('toPaybackChartOption', () => {
   it('draws what was up to the day costs are rolled up through', () => {
     expect(draw().actual.data).toEqual([
       ['2026-03-03', -38260],
+      ['2026-03-26', -38260],
       ['2026-03-27', -36900.1],
       ['2026-11-24', -18098],
       ['2026-11-26', -18098],
     ]);
+  });
+
+  it('begins with the first work where the machine stood in service for years before', () => {
+    const { curve } = makePayback();
+    const early = curve.map((point, index) => (index === 0 ? { ...point, on: '2018-05-01' } : point));
+    expect(draw({ curve: early }).xAxis.min).toBe('2026-03-26');
+    expect(draw().xAxis.min).toBe('2026-03-03');
   });
 
   it('draws the straight line from there to even, and marks the day', () => {

@@ -40,6 +40,7 @@ export function toPaybackChartOption(facts: PaybackChartFacts, palette: ChartPal
     tooltip: toTooltip(palette, currency),
     xAxis: {
       type: 'time',
+      min: findFirstDay(facts),
       max: findLastDay(facts),
       axisLine: { show: false },
       axisTick: { show: false },
@@ -83,7 +84,7 @@ export function toContinuation({ curve, breakEven, remaining, asOf }: Payback): 
 }
 
 function toActualSeries({ payback, today }: PaybackChartFacts, palette: ChartPalette): object {
-  const points: Point[] = payback.curve.map(({ on, netCash }) => [on, Number(netCash)]);
+  const points = toPoints(payback);
   const last = points.at(-1);
   if (last && payback.asOf && payback.asOf > last[0]) points.push([payback.asOf, last[1]]);
   const { date, method } = payback.breakEven;
@@ -98,6 +99,15 @@ function toActualSeries({ payback, today }: PaybackChartFacts, palette: ChartPal
     markLine: toReferenceLines(today, palette),
     markPoint: method === 'reached' && date ? toEvenMark(date, palette) : undefined,
   };
+}
+
+/** The curve, level from the day in service up to the first day with work. */
+function toPoints({ curve }: Payback): Point[] {
+  const points: Point[] = curve.map(({ on, netCash }) => [on, Number(netCash)]);
+  const [inService, firstWork] = points;
+  if (!inService || !firstWork) return points;
+  const dayBefore = addDays(toLocalDate(firstWork[0]), -1);
+  return dayBefore > inService[0] ? [inService, [dayBefore, inService[1]], ...points.slice(1)] : points;
 }
 
 function toContinuationSeries({ breakEven }: Payback, points: Point[], palette: ChartPalette): object {
@@ -164,11 +174,23 @@ function toTooltip(palette: ChartPalette, currency: string): object {
   };
 }
 
-function findLastDay({ payback, today }: PaybackChartFacts): LocalDate {
+/** The day in service; the first day with work, if the machine was in service long before anybody logged hours. */
+function findFirstDay({
+  payback,
+  today,
+}: Pick<PaybackChartFacts, 'payback' | 'today'>): LocalDate | undefined {
+  const [inService, firstWork] = payback.curve.map(({ on }) => toLocalDate(on));
+  if (!inService || !firstWork) return inService;
+  const idleDays = daysBetween(inService, firstWork);
+  return idleDays > daysBetween(firstWork, today) ? addDays(firstWork, -1) : inService;
+}
+
+function findLastDay(facts: PaybackChartFacts): LocalDate {
+  const { payback, today } = facts;
   const even = payback.breakEven.date;
   const end = even && even > today ? toLocalDate(even) : today;
   const limit = addYears(today, YEARS_AHEAD_MAX);
-  const first = toLocalDate(payback.curve[0]?.on ?? today);
+  const first = findFirstDay(facts) ?? today;
   // Room for the words beside the last mark.
   return end < limit ? addDays(end, Math.ceil(daysBetween(first, end) * 0.08)) : limit;
 }
