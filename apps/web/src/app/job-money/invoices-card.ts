@@ -1,76 +1,83 @@
 import { ChangeDetectionStrategy, Component, computed, inject, input, output } from '@angular/core';
-import { rxResource, takeUntilDestroyed } from '@angular/core/rxjs-interop';
 import { MatDialog } from '@angular/material/dialog';
-import { type FigureRef, type Invoice } from '@brakeven/contract';
-import { Figure, LoadingSkeleton, LocalDatePipe, MoneyPipe, StatusTag } from '@brakeven/ui';
+import { type Invoice, type InvoiceList } from '@brakeven/contract';
 import { todayIn } from '@brakeven/values';
 import { JobMoneyApi } from '../api/job-money-api';
 import { SessionStore } from '../session/session-store';
-import { LoadError } from '../shell/load-error';
+import { type DatedRows } from './dated-rows';
+import { DatedRowsCard } from './dated-rows-card';
 import { type InvoiceDialogData } from './invoice-dialog';
-import { RowChanges } from './row-changes';
+import { openRowDialog } from './open-row-dialog';
 
 /** What was invoiced for a job and credited again, dated, with the sum that counts as its income. */
 @Component({
   selector: 'app-invoices-card',
-  imports: [Figure, LoadError, LoadingSkeleton, LocalDatePipe, MoneyPipe, StatusTag],
-  providers: [RowChanges],
-  templateUrl: './invoices-card.html',
-  styleUrl: './voided-row.scss',
+  imports: [DatedRowsCard],
+  template: `<app-dated-rows-card [rows]="rows()" (changed)="changed.emit()" />`,
   changeDetection: ChangeDetectionStrategy.OnPush,
 })
 export class InvoicesCard {
   private readonly api = inject(JobMoneyApi);
   private readonly session = inject(SessionStore);
   private readonly dialog = inject(MatDialog);
-  private readonly changes = inject(RowChanges);
 
   readonly jobId = input.required<string>();
   readonly changed = output();
 
-  protected readonly list = rxResource({
-    params: () => this.jobId(),
-    stream: ({ params }) => this.api.listInvoices(params),
+  protected readonly rows = computed((): DatedRows<Invoice, InvoiceList> => {
+    const jobId = this.jobId();
+    return {
+      heading: 'Invoices',
+      empty: [
+        'Nothing invoiced yet.',
+        'Invoices and credit notes of the job stand here; together they are its income.',
+      ],
+      totalLabel: 'Invoiced',
+      columns: [
+        { heading: 'Number', cell: (invoice) => ({ text: toName(invoice) }) },
+        { heading: 'Description', cell: ({ description }) => ({ text: description }) },
+        {
+          heading: 'Amount',
+          isNumber: true,
+          cell: (invoice) => ({ amount: toSigned(invoice) }),
+          total: ({ total }) => ({
+            amount: total,
+            ref: { figure: 'job.invoiced', jobId },
+            label: 'Invoiced',
+          }),
+        },
+      ],
+      canEdit: this.session.can('jobs.edit'),
+      actions: [{ label: 'Add an invoice', run: () => this.edit(null) }],
+      load: () => this.api.listInvoices(jobId),
+      idOf: ({ invoiceId }) => invoiceId,
+      dateOf: ({ invoicedOn }) => invoicedOn,
+      nameOf: toName,
+      correct: (invoice) => this.edit(invoice),
+      void: ({ invoiceId }) => this.api.voidInvoice(invoiceId),
+      restore: ({ invoiceId }) => this.api.restoreInvoice(invoiceId),
+    };
   });
-  protected readonly canEdit = computed(() => this.session.can('jobs.edit'));
-  protected readonly totalRef = computed<FigureRef>(() => ({ figure: 'job.invoiced', jobId: this.jobId() }));
-  protected readonly nameOf = toName;
 
-  constructor() {
-    this.changes.changed.pipe(takeUntilDestroyed()).subscribe(() => {
-      this.list.reload();
-      this.changed.emit();
-    });
-  }
-
-  protected signed({ kind, amount }: Invoice): string {
-    return kind === 'credit-note' ? `-${amount}` : amount;
-  }
-
-  protected async edit(invoice: Invoice | null): Promise<void> {
-    const { InvoiceDialog } = await import('./invoice-dialog');
+  private edit(invoice: Invoice | null) {
     const today = todayIn(this.session.shopFormat().timeZone);
-    const data: InvoiceDialogData = { jobId: this.jobId(), invoice, kind: 'invoice', today };
-    this.dialog
-      .open<unknown, InvoiceDialogData, Invoice>(InvoiceDialog, { data, width: '520px' })
-      .afterClosed()
-      .subscribe((saved) => {
-        if (saved) this.changes.tell(`${toName(saved)} ${invoice ? 'corrected' : 'added'}.`);
-      });
-  }
-
-  protected voidRow(invoice: Invoice): void {
-    const { invoiceId } = invoice;
-    this.changes.void(toName(invoice), this.api.voidInvoice(invoiceId), () =>
-      this.api.restoreInvoice(invoiceId),
+    return openRowDialog<InvoiceDialogData, Invoice>(
+      this.dialog,
+      async () => (await import('./invoice-dialog')).InvoiceDialog,
+      {
+        data: { jobId: this.jobId(), invoice, kind: 'invoice', today },
+        width: '520px',
+        tell: (saved) => `${toName(saved)} ${invoice ? 'corrected' : 'added'}.`,
+      },
     );
-  }
-
-  protected restore(invoice: Invoice): void {
-    this.changes.restore(toName(invoice), this.api.restoreInvoice(invoice.invoiceId));
   }
 }
 
 function toName({ kind, number }: Invoice): string {
   return `${kind === 'credit-note' ? 'Credit note' : 'Invoice'} ${number}`;
+}
+
+/** A credit note counts against the invoices. */
+function toSigned({ kind, amount }: Invoice): string {
+  return kind === 'credit-note' ? `-${amount}` : amount;
 }

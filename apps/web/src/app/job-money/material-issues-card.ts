@@ -1,64 +1,90 @@
 import { ChangeDetectionStrategy, Component, computed, inject, input, output } from '@angular/core';
-import { rxResource, takeUntilDestroyed } from '@angular/core/rxjs-interop';
 import { MatDialog } from '@angular/material/dialog';
-import { RouterLink } from '@angular/router';
-import { type FigureRef, type IssueKind, type MaterialIssue } from '@brakeven/contract';
-import { Figure, LoadingSkeleton, LocalDatePipe, MassPipe, StatusTag } from '@brakeven/ui';
+import { type IssueKind, type JobMaterialList, type MaterialIssue } from '@brakeven/contract';
 import { todayIn } from '@brakeven/values';
 import { MaterialsApi } from '../api/materials-api';
 import { type IssueStart } from '../materials/issue-form';
 import { toSizeWords } from '../materials/ledger-columns';
 import { fromJobIssue } from '../materials/to-issue-row';
 import { SessionStore } from '../session/session-store';
-import { LoadError } from '../shell/load-error';
-import { RowChanges } from './row-changes';
+import { type DatedColumn, type DatedRows } from './dated-rows';
+import { DatedRowsCard } from './dated-rows-card';
+import { openRowDialog } from './open-row-dialog';
 
 /** What a job drew from stock and gave back, with the cost that it bears. A lead sees weights only. */
 @Component({
   selector: 'app-material-issues-card',
-  imports: [Figure, LoadError, LoadingSkeleton, LocalDatePipe, MassPipe, RouterLink, StatusTag],
-  providers: [RowChanges],
-  templateUrl: './material-issues-card.html',
-  styleUrl: './voided-row.scss',
+  imports: [DatedRowsCard],
+  template: `<app-dated-rows-card [rows]="rows()" (changed)="changed.emit()" />`,
   changeDetection: ChangeDetectionStrategy.OnPush,
 })
 export class MaterialIssuesCard {
   private readonly api = inject(MaterialsApi);
   private readonly session = inject(SessionStore);
   private readonly dialog = inject(MatDialog);
-  private readonly changes = inject(RowChanges);
 
   readonly jobId = input.required<string>();
   readonly changed = output();
 
-  protected readonly list = rxResource({
-    params: () => this.jobId(),
-    stream: ({ params }) => this.api.listOfJob(params),
+  protected readonly rows = computed((): DatedRows<MaterialIssue, JobMaterialList> => {
+    const jobId = this.jobId();
+    return {
+      heading: 'Material',
+      empty: ['No material issued.', 'What the job draws from stock stands here, at the average of its day.'],
+      totalLabel: 'Total',
+      columns: this.listColumns(),
+      canEdit: this.session.can('materials.edit'),
+      actions: [
+        { label: 'Take back', isSecond: true, run: () => this.edit(null, 'return') },
+        { label: 'Issue material', run: () => this.edit(null, 'issue') },
+      ],
+      load: () => this.api.listOfJob(jobId),
+      idOf: ({ issueId }) => issueId,
+      dateOf: ({ issuedOn }) => issuedOn,
+      nameOf: toName,
+      correct: (issue) => this.edit(issue, issue.kind),
+      void: ({ issueId }) => this.api.voidIssue(issueId),
+      restore: ({ issueId }) => this.api.restoreIssue(issueId),
+    };
   });
-  protected readonly canEdit = computed(() => this.session.can('materials.edit'));
-  protected readonly hasMoney = computed(() => this.session.can('materials.money'));
-  protected readonly totalRef = computed<FigureRef>(() => ({ figure: 'job.material', jobId: this.jobId() }));
-  protected readonly nameOf = toName;
 
-  constructor() {
-    this.changes.changed.pipe(takeUntilDestroyed()).subscribe(() => {
-      this.list.reload();
-      this.changed.emit();
-    });
+  private listColumns(): DatedColumn<MaterialIssue, JobMaterialList>[] {
+    const amount: DatedColumn<MaterialIssue, JobMaterialList> = {
+      heading: 'Amount',
+      isNumber: true,
+      cell: (issue) => toAmountCell(issue),
+      total: ({ total }) => ({
+        amount: total,
+        ref: { figure: 'job.material', jobId: this.jobId() },
+        label: 'Material',
+      }),
+    };
+    return [
+      {
+        heading: 'Material',
+        cell: ({ kind, material, materialId }) => ({
+          text: material,
+          link: ['/materials', materialId],
+          ...(kind === 'return' && { tag: 'returned' }),
+        }),
+      },
+      { heading: 'How much', cell: (issue) => ({ text: this.toSize(issue), aside: issue.note }) },
+      {
+        heading: 'Weight',
+        isNumber: true,
+        cell: (issue) => ({ massKg: toSignedKg(issue) }),
+        total: ({ weightKg }) => ({ massKg: weightKg }),
+      },
+      ...(this.session.can('materials.money') ? [amount] : []),
+    ];
   }
 
-  protected toSize({ sheets, pieces, blankLengthMm, blankWidthMm }: MaterialIssue): string {
+  private toSize({ sheets, pieces, blankLengthMm, blankWidthMm }: MaterialIssue): string {
     const size = { sheets, pieces, lengthMm: blankLengthMm, widthMm: blankWidthMm };
     return toSizeWords(size, this.session.shopFormat().units);
   }
 
-  /** As the job bears it: what came back counts against it. */
-  protected signed({ kind, weightKg }: MaterialIssue): string {
-    return kind === 'return' ? `-${weightKg}` : weightKg;
-  }
-
-  protected async edit(issue: MaterialIssue | null, kind: IssueKind): Promise<void> {
-    const { IssueDialog } = await import('../materials/issue-dialog');
+  private edit(issue: MaterialIssue | null, kind: IssueKind) {
     const { units, timeZone } = this.session.shopFormat();
     const data: IssueStart = {
       issue: issue && fromJobIssue(issue),
@@ -68,24 +94,26 @@ export class MaterialIssuesCard {
       today: todayIn(timeZone),
       units,
     };
-    this.dialog
-      .open<unknown, IssueStart, MaterialIssue>(IssueDialog, { data, width: '560px' })
-      .afterClosed()
-      .subscribe((saved) => {
-        if (saved) this.changes.tell(`${toName(saved)} ${issue ? 'corrected' : 'entered'}.`);
-      });
-  }
-
-  protected voidRow(issue: MaterialIssue): void {
-    const { issueId } = issue;
-    this.changes.void(toName(issue), this.api.voidIssue(issueId), () => this.api.restoreIssue(issueId));
-  }
-
-  protected restore(issue: MaterialIssue): void {
-    this.changes.restore(toName(issue), this.api.restoreIssue(issue.issueId));
+    return openRowDialog<IssueStart, MaterialIssue>(
+      this.dialog,
+      async () => (await import('../materials/issue-dialog')).IssueDialog,
+      { data, width: '560px', tell: (saved) => `${toName(saved)} ${issue ? 'corrected' : 'entered'}.` },
+    );
   }
 }
 
 function toName({ kind, material }: MaterialIssue): string {
   return `${kind === 'return' ? 'Return' : 'Issue'} of ${material}`;
+}
+
+/** As the job bears it: what came back counts against it. */
+function toSignedKg({ kind, weightKg }: MaterialIssue): string {
+  return kind === 'return' ? `-${weightKg}` : weightKg;
+}
+
+/** What is voided has no cost any more. */
+function toAmountCell(issue: MaterialIssue) {
+  const { amount, issueId, voidedAt } = issue;
+  if (voidedAt !== null) return { text: '–' };
+  return { amount, ref: { figure: 'stock.issue' as const, issueId }, label: toName(issue) };
 }
