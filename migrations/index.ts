@@ -14,6 +14,8 @@ import * as keepCorrections from './202612011050-keep-corrections';
 import * as createTooling from './202612011100-create-tooling';
 import * as createBends from './202612011105-create-bends';
 import * as keepRunCorrections from './202612011130-keep-run-corrections';
+import * as keepStockValue from './202612011140-keep-stock-value';
+import * as keepInServiceDay from './202612011150-keep-in-service-day';
 
 /** All migrations by name, in order; listed here so that they can be bundled with the command line. */
 export const migrations: Record<string, Migration> = {
@@ -32,4 +34,6 @@ export const migrations: Record<string, Migration> = {
   '202612011100-create-tooling': createTooling,
   '202612011105-create-bends': createBends,
   '202612011130-keep-run-corrections': keepRunCorrections,
+  '202612011140-keep-stock-value': keepStockValue,
+  '202612011150-keep-in-service-day': keepInServiceDay,
 };

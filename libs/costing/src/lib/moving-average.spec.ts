@@ -2,6 +2,7 @@ import { D, moneyText, rateText, toLocalDate, toMass, toMoney } from '@brakeven/
 import {
   computeLandedLotCost,
   computeMovingAverage,
+  findStrandedValue,
   type JobMove,
   type StockMove,
   toMaterialLine,
@@ -170,4 +171,28 @@ it('lines of issues cost the job, lines of returns give back, and lots are no li
 
 it('a lot costs its price and its freight', () => {
   expect(moneyText(computeLandedLotCost(toMoney('1180.00'), toMoney('64.95')))).toBe('1244.95');
+});
+
+describe('findStrandedValue', () => {
+  const findOf = (moves: StockMove[]) => {
+    const ledger = computeMovingAverage(moves);
+    return ledger.ok ? findStrandedValue(ledger.moves)?.move.moveId : 'not covered';
+  };
+  const taken = (amount: string) =>
+    job('issue', 'issue-1', '2026-03-03', '100', { postedAmount: toMoney(amount) });
+
+  it('names the issue of a closed month that leaves value without weight, or less than nothing', () => {
+    const cheap = lot('lot-1', '2026-03-02', '100', '150.00');
+    expect(findOf([cheap, taken('150.00')])).toBeUndefined();
+    expect(findOf([cheap, taken('149.99')])).toBe('issue-1');
+    expect(findOf([cheap, taken('150.01')])).toBe('issue-1');
+    const more = lot('lot-2', '2026-03-02', '50', '75.00');
+    expect(findOf([cheap, more, taken('149.99')])).toBeUndefined();
+    expect(findOf([cheap, more, taken('225.01')])).toBe('issue-1');
+  });
+
+  it('finds nothing where each issue takes the average of its moment', () => {
+    expect(findOf(twoLots)).toBeUndefined();
+    expect(findOf([...twoLots, job('issue', 'issue-3', '2026-03-06', '70')])).toBeUndefined();
+  });
 });

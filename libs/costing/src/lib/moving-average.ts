@@ -104,6 +104,20 @@ export function computeMovingAverage(moves: readonly StockMove[]): StockLedger {
   };
 }
 
+/**
+ * The first issue after which value is left in a stock of nothing, or less than nothing in it, which the next lot would
+ * bear; undefined if there is none. Only an amount that stays because its month is closed can make it so.
+ */
+export function findStrandedValue(
+  moves: readonly ValuedMove[],
+): (ValuedMove & { move: JobMove }) | undefined {
+  return moves.find(
+    (valued): valued is ValuedMove & { move: JobMove } =>
+      valued.move.kind !== 'lot' &&
+      (valued.balanceAmount.lt(0) || (valued.balanceWeight.isZero() && !valued.balanceAmount.isZero())),
+  );
+}
+
 /** The landed cost of a lot: its price and its freight. Rule in words: `RULES.landedLotCost`. */
 export function computeLandedLotCost(cost: Money, freight: Money): Money {
   return sum([cost, freight]);

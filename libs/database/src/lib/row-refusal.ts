@@ -2,6 +2,10 @@
 export type RowRefusal =
   | { kind: 'stock'; material: string; on: string; job: string | null; missingKg: string }
   | { kind: 'return'; material: string; on: string; job: string; excessKg: string }
+  /** An issue of a closed month whose amount, which stays, no longer fits the stock. */
+  | { kind: 'closed-issue'; material: string; on: string; job: string }
+  /** A machine's day in service moved across work that a closed month holds; `on` is the first of it. */
+  | { kind: 'in-service'; machine: string; on: string; closedThrough: string }
   | { kind: 'before-job'; job: string; openedOn: string; on: string; table: DatedTable };
 
 /** Tables whose rows are not dated before their job; `job` where its opening was moved past its rows. */
@@ -26,9 +30,13 @@ const READERS: Readonly<Record<string, (detail: string) => RowRefusal>> = {
   },
   BK003: (detail) => ({
     kind: 'before-job',
-    ...(JSON.parse(detail) as Omit<Extract<RowRefusal, { kind: 'before-job' }>, 'kind'>),
+    ...(JSON.parse(detail) as Detail<'before-job'>),
   }),
+  BK004: (detail) => ({ kind: 'closed-issue', ...(JSON.parse(detail) as Detail<'closed-issue'>) }),
+  BK005: (detail) => ({ kind: 'in-service', ...(JSON.parse(detail) as Detail<'in-service'>) }),
 };
+
+type Detail<Kind extends RowRefusal['kind']> = Omit<Extract<RowRefusal, { kind: Kind }>, 'kind'>;
 
 interface StockDetail {
   material: string;

@@ -30,6 +30,22 @@ describe('refusals of the books', () => {
     );
   });
 
+  it('tell of a closed month what stays, and how the change can be made', async () => {
+    const stock = { material: '11 ga mild steel', on: '2026-03-10', job: '1042' };
+    const stranded = refusingRows('us', {}, () => Promise.reject(refusalOf('BK004', JSON.stringify(stock))));
+    await expect(stranded).rejects.toMatchObject({
+      code: 'conflict',
+      message: expect.stringMatching(/job 1042 was charged for 11 ga mild steel.*Reopen the month/),
+    });
+    const machine = { machine: 'Press 2', on: '2026-03-10', closedThrough: '2026-03-31' };
+    const moved = refusingRows('us', { 'in-service': 'inServiceOn' }, () =>
+      Promise.reject(refusalOf('BK005', JSON.stringify(machine))),
+    );
+    await expect(moved).rejects.toMatchObject({
+      issues: [{ field: 'inServiceOn', message: expect.stringContaining('up to Mar 31, 2026') }],
+    });
+  });
+
   it('name the field of a date before the job, and the rows in the way of a later opening', async () => {
     const detail = { job: '1042', openedOn: '2026-03-10', on: '2026-03-05', table: 'invoice' };
     const work = () => Promise.reject(refusalOf('BK003', JSON.stringify(detail)));

@@ -17,9 +17,10 @@ export type RefusedFields = Partial<Record<RowRefusal['kind'], string>>;
 
 /**
  * Runs work that writes dated rows, and turns the rules of the books that it may break into refusals with plain
- * words in the shop's unit: stock that does not cover, more returned than drawn, dated before the job.
+ * words in the shop's unit: stock that does not cover, more returned than drawn, dated before the job, at odds with
+ * what closed months hold.
  *
- * @throws AppError `conflict` (stock, return) or `invalid_input` (dated before the job); any other
+ * @throws AppError `conflict` (stock, return, closed months) or `invalid_input` (dated before the job); any other
  *   error as it came
  */
 export async function refusingRows<T>(
@@ -45,6 +46,8 @@ const CODES: Readonly<Record<RowRefusal['kind'], { code: ErrorCode; issue: strin
   stock: { code: 'conflict', issue: 'stock_short' },
   return: { code: 'conflict', issue: 'over_returned' },
   'before-job': { code: 'invalid_input', issue: 'before_job' },
+  'closed-issue': { code: 'conflict', issue: 'month_closed' },
+  'in-service': { code: 'conflict', issue: 'month_closed' },
 };
 
 /** What was refused and what to do about it, in words; weights in pounds or kilograms as the shop shows them. */
@@ -61,6 +64,10 @@ export function toRefusalWords(refusal: RowRefusal, units: UnitSystem): string {
     }
     case 'before-job':
       return toBeforeJobWords(refusal);
+    case 'closed-issue':
+      return `On ${day(refusal.on)}, in a month that is closed, job ${refusal.job} was charged for ${refusal.material}, and that charge stays. After this change the stock could not bear it: value would be left without any metal, or less than nothing. Reopen the month, make this change and close it again, or date what is new in an open month.`;
+    case 'in-service':
+      return `${refusal.machine} worked on ${day(refusal.on)}, in a month that is closed, and whether that counts towards its payback stays as it is. Give a day that moves past no work up to ${day(refusal.closedThrough)}, or reopen the months first.`;
   }
 }
 

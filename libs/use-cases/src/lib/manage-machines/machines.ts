@@ -5,6 +5,7 @@ import {
   listMachineRateBasisRows,
   listMachineRateRows,
   listMachineRows,
+  lockBooks,
   type ShopTransaction,
   updateMachineRow,
 } from '@brakeven/database';
@@ -12,6 +13,7 @@ import { D, moneyText, rateText, toMoney, toRate } from '@brakeven/values';
 import { v7 as newId } from 'uuid';
 import { inShopOf, type ShopContext } from '../context';
 import { refusingConflicts } from '../refuse-conflict';
+import { refusingRows } from '../refuse-rows';
 import { toMachineRateBasis } from './rate-basis';
 
 const CONFLICTS = {
@@ -48,19 +50,23 @@ export function createMachine(context: ShopContext, body: MachineInput): Promise
 }
 
 /**
- * Changes a machine; another in-service date moves what counts towards its payback.
- * @throws AppError `not_found`, `conflict` (code taken), `invalid_input`
+ * Changes a machine; another in-service date moves what counts towards its payback, and is not moved across work that
+ * a closed month holds.
+ * @throws AppError `not_found`, `conflict` (code taken, closed month), `invalid_input`
  */
 export function updateMachine(
   context: ShopContext,
   { machineId }: { machineId: string },
   body: MachineInput,
 ): Promise<Machine> {
-  return refusingConflicts(CONFLICTS, () =>
-    inShopOf(context, async (trx) => {
-      await updateMachineRow(trx, machineId, body);
-      return readMachine(context, trx, machineId);
-    }),
+  return refusingRows(context.shop.units, { 'in-service': 'inServiceOn' }, () =>
+    refusingConflicts(CONFLICTS, () =>
+      inShopOf(context, async (trx) => {
+        await lockBooks(trx, context.shop.shopId);
+        await updateMachineRow(trx, machineId, body);
+        return readMachine(context, trx, machineId);
+      }),
+    ),
   );
 }
 

@@ -8,6 +8,7 @@ import {
   updateMachineCostItem,
   updateMachineRate,
 } from './machine-costs';
+import { runRollup } from '../roll-up-costs/run-rollup';
 import { createMachine, getMachine, listMachines, updateMachine } from './machines';
 
 let shop: TestShop;
@@ -49,6 +50,34 @@ describe('machines', () => {
     ]);
     expect(await getMachine(shop.context(), { machineId })).toEqual(machine);
     expect(await listMachines(shop.context())).toEqual([machine]);
+  });
+
+  it('keep their day in service where a closed month holds work on either side of it', async () => {
+    const { machineId } = await createMachine(shop.context(), press);
+    await createMachineRate(shop.context(), { machineId }, rates);
+    const employeeId = await shop.addEmployee();
+    await shop.addPayRate({ employeeId, validFrom: '2026-01-01', wagePerHour: '30' });
+    await shop.addOverheadRate({ validFrom: '2026-01-01', ratePerLabourHour: '10' });
+    const work = {
+      employeeId,
+      machineId,
+      jobId: await shop.addJob(),
+      operationId: await shop.addOperation(),
+    };
+    await shop.addEntries([{ ...work, workedOn: '2026-03-10', hours: '8' }]);
+    const owner = shop.context('owner', { now: () => new Date('2026-04-20T18:00:00Z') });
+    await runRollup(owner, {});
+    await shop.addMonthClose('2026-03-01');
+    const move = (inServiceOn: string | null) =>
+      updateMachine(owner, { machineId }, { ...press, inServiceOn });
+    for (const day of ['2026-03-11', '2026-04-01', null])
+      await expect(move(day)).rejects.toMatchObject({
+        code: 'conflict',
+        issues: [{ field: 'inServiceOn', code: 'month_closed' }],
+        message: expect.stringContaining('Press 2 worked on Mar 10, 2026, in a month that is closed'),
+      });
+    expect(await move('2026-03-10')).toMatchObject({ inServiceOn: '2026-03-10' });
+    expect(await move('2026-02-02')).toMatchObject({ inServiceOn: '2026-02-02' });
   });
 
   it('are shown without any money to those who may not see it', async () => {

@@ -254,6 +254,30 @@ describe('stock', () => {
     expect(await listJobMaterial(shop.context(), { jobId })).toMatchObject({ total: '250.00' });
   });
 
+  it('lets no lot change under an issue of a closed month so that value is left without metal', async () => {
+    const cheap = await receive({ ...MARCH_LOT, number: 'A', cost: '80' });
+    const dear = await receive({ ...MARCH_LOT, number: 'B', cost: '280' });
+    const all = await issue({ issuedOn: '2026-03-10', weightKg: '100' });
+    expect(all.amount).toBe('200.00');
+    await shop.addMonthClose('2026-03-01');
+    const atOdds = {
+      code: 'conflict',
+      issues: [{ code: 'month_closed' }],
+      message: expect.stringMatching(
+        /^On Mar 10, 2026, in a month that is closed, job 1042 .*Reopen the month/,
+      ),
+    };
+    // 300 less the 200 that stay would leave 100 with no metal; 100 less 200 would leave less than nothing.
+    await expect(voidSheetLot(shop.context(), cheap)).rejects.toMatchObject(atOdds);
+    await expect(voidSheetLot(shop.context(), dear)).rejects.toMatchObject(atOdds);
+    // A price put right late is borne by the metal that is left.
+    await updateSheetLot(shop.context(), dear, lotOf({ ...MARCH_LOT, number: 'B', cost: '330' }));
+    expect(await getMaterial(shop.context(), { materialId })).toMatchObject({
+      stockKg: '100',
+      stockValue: '250.00',
+    });
+  });
+
   it('takes back no more than the job drew', async () => {
     await receive(MARCH_LOT);
     const drawn = await issue({ issuedOn: '2026-03-04', weightKg: '30' });

@@ -1,6 +1,8 @@
 import { SETUP_SHEET_NAMES } from '@brakeven/contract';
 import {
   computeMovingAverage,
+  findStrandedValue,
+  type JobMove,
   type StockLedger,
   type StockMove,
   type StockShortage,
@@ -81,10 +83,14 @@ function checkMaterial(
     const code = shortage.of === 'stock' ? 'stock_short' : 'over_returned';
     const row = issues.get(shortage.move.moveId);
     if (row) draft.refuse('issues', row, findWeightCell(row), { code, message });
-    else return refuseAtCause(draft, materialId, shortage, { issues, lots, trouble: { code, message } });
+    else return refuseAtCause(draft, materialId, shortage.move, { issues, lots, trouble: { code, message } });
     moves = moves.filter(({ moveId }) => moveId !== shortage.move.moveId);
     ledger = computeMovingAverage(moves);
   }
+  const stranded = ledger.ok ? findStrandedValue(ledger.moves)?.move : undefined;
+  if (!stranded) return;
+  const trouble = { code: 'month_closed', message: toStrandedWords(draft, materialId, stranded) };
+  refuseAtCause(draft, materialId, stranded, { issues, lots, trouble });
 }
 
 interface Causes {
@@ -93,11 +99,11 @@ interface Causes {
   trouble: { code: string; message: string };
 }
 
-/** The last issue that the workbook adds before the one that lacks stock, else a lot that it changes. */
+/** The last issue that the workbook adds before the one in trouble, else a lot that it changes. */
 function refuseAtCause(
   draft: SetupDraft,
   materialId: string,
-  { move }: StockShortage,
+  move: JobMove,
   { issues, lots, trouble }: Causes,
 ): void {
   const added = ofMaterial(draft.tables.materialIssue.inserts, materialId).filter(
@@ -120,14 +126,24 @@ function toShortageWords(
   materialId: string,
   { of, move, missingWeight }: StockShortage,
 ): string {
-  const material = String(draft.tables.material.get(materialId)?.values['name']);
-  const job = String(draft.tables.job.get(move.jobId)?.values['number']);
   const missing = missingWeight.toFixed();
+  const about = toSubject(draft, materialId, move);
   const refusal: RowRefusal =
     of === 'stock'
-      ? { kind: 'stock', material, job, on: move.movedOn, missingKg: missing }
-      : { kind: 'return', material, job, on: move.movedOn, excessKg: missing };
+      ? { kind: 'stock', ...about, missingKg: missing }
+      : { kind: 'return', ...about, excessKg: missing };
   return toRefusalWords(refusal, draft.surroundings.units);
+}
+
+function toStrandedWords(draft: SetupDraft, materialId: string, move: JobMove): string {
+  const refusal = { kind: 'closed-issue', ...toSubject(draft, materialId, move) } as const;
+  return toRefusalWords(refusal, draft.surroundings.units);
+}
+
+function toSubject(draft: SetupDraft, materialId: string, move: JobMove) {
+  const material = String(draft.tables.material.get(materialId)?.values['name']);
+  const job = String(draft.tables.job.get(move.jobId)?.values['number']);
+  return { material, job, on: move.movedOn };
 }
 
 function findWeightCell(row: IssueRow): string {

@@ -1,29 +1,23 @@
 import { computeJobCost, computeMachineDays, JOB_COST_CATEGORIES, type PostedLine } from '@brakeven/costing';
-import { getClosedThrough, type ShopTransaction } from '@brakeven/database';
+import { type ShopTransaction } from '@brakeven/database';
 import { type TestShop } from '@brakeven/test-shop';
 import { type Decimal, hoursText, moneyText, rateText, roundHalfUp } from '@brakeven/values';
 import { type ExpectedCosts } from './expected-costs';
 
-/**
- * Everything that a rollup writes for a shop, comparable as text; the run's own id and clock left out. Machine days
- * are those of the open months.
- */
+/** Everything that a rollup writes for a shop, comparable as text; the run's own id and clock left out. */
 export type StoredCosts = Record<'lines' | 'gaps' | 'jobs' | 'machineDays' | 'machineJobDays', string[]>;
 
 const JOB_CATEGORIES = [...JOB_COST_CATEGORIES, 'invoiced', 'earned'] as const;
 
 /** Reads what the rollup wrote. */
 export function readStoredCosts(shop: TestShop): Promise<StoredCosts> {
-  return shop.inShop(async (trx) => {
-    const closedThrough = (await getClosedThrough(trx)) ?? '-infinity';
-    return {
-      lines: await readLines(trx),
-      gaps: await readGaps(trx),
-      jobs: await readJobs(trx),
-      machineDays: await readMachineDays(trx, closedThrough),
-      machineJobDays: await readMachineJobDays(trx, closedThrough),
-    };
-  });
+  return shop.inShop(async (trx) => ({
+    lines: await readLines(trx),
+    gaps: await readGaps(trx),
+    jobs: await readJobs(trx),
+    machineDays: await readMachineDays(trx),
+    machineJobDays: await readMachineJobDays(trx),
+  }));
 }
 
 /** What closed months hold, every column of it. */
@@ -54,7 +48,7 @@ export function toStoredCosts({ lines: open, gaps, frozen, inServiceOn }: Expect
   const lines = [...frozen, ...open];
   const jobIds = new Set([...lines, ...gaps].flatMap((trace) => trace.jobId ?? []));
   const ofJob = (jobId: string) => (trace: { jobId: string | null }) => trace.jobId === jobId;
-  const assigned = open.filter((line) => line.jobId !== null);
+  const assigned = lines.filter((line) => line.jobId !== null);
   // The machine days of a premium alone do not exist, and it never stands alone.
   const ofMachines = assigned.filter((line) => line.category !== 'overtime');
   const owed = gaps.filter((gap) => gap.category !== 'overtime');
@@ -191,8 +185,8 @@ async function readJobs(trx: ShopTransaction): Promise<string[]> {
   );
 }
 
-async function readMachineDays(trx: ShopTransaction, closedThrough: string): Promise<string[]> {
-  const rows = await trx.selectFrom('machineDay').selectAll().where('postedOn', '>', closedThrough).execute();
+async function readMachineDays(trx: ShopTransaction): Promise<string[]> {
+  const rows = await trx.selectFrom('machineDay').selectAll().execute();
   return sorted(
     rows.map((r) =>
       text(r.machineId, r.postedOn, r.hours, r.billableHours, r.earned, r.operatorLabour, r.running),
@@ -200,12 +194,8 @@ async function readMachineDays(trx: ShopTransaction, closedThrough: string): Pro
   );
 }
 
-async function readMachineJobDays(trx: ShopTransaction, closedThrough: string): Promise<string[]> {
-  const rows = await trx
-    .selectFrom('machineJobDay')
-    .selectAll()
-    .where('postedOn', '>', closedThrough)
-    .execute();
+async function readMachineJobDays(trx: ShopTransaction): Promise<string[]> {
+  const rows = await trx.selectFrom('machineJobDay').selectAll().execute();
   return sorted(
     rows.map((r) => text(r.machineId, r.postedOn, r.jobId, r.hours, r.earned, r.operatorLabour, r.running)),
   );
