@@ -82,19 +82,24 @@ function listQueries(name: string, { query }: Endpoint, ids: Record<string, stri
     getPaybackWorkings: [(figure) => figure.startsWith('payback.'), ['machineId', 'costItemId']],
     getOvertimeWorkings: [(figure) => figure.startsWith('overtime.'), ['employeeId', 'from']],
     getBooksWorkings: [(figure) => figure.startsWith('books.'), []],
+    getHoursWorkings: [(figure) => READABLE_HOURS.includes(figure), ['employeeId', 'from', 'to']],
     getStockWorkings: [(figure) => figure.startsWith('stock.'), ['materialId', 'issueId']],
     getEstimateWorkings: [(figure) => figure.startsWith('estimate.'), ['jobId']],
   };
   const found = workings[name];
   if (found) {
     const [isMeant, names] = found;
-    const of = new URLSearchParams(names.map((one) => [one, ids[one] ?? ''])).toString();
+    const given: Record<string, string> = { ...ASKED, ...ids };
+    const of = new URLSearchParams(names.map((one) => [one, given[one] ?? ''])).toString();
     return FIGURES.filter(isMeant).map((figure) => `?figure=${figure}&${of}`);
   }
   // One query that holds what any of them may ask for; each takes its own part.
   const isAsked = query !== undefined && !query.safeParse({}).success;
   return [isAsked ? `?${new URLSearchParams({ ...ids, ...ASKED }).toString()}` : ''];
 }
+
+/** Payroll hours, and so their difference, are there once somebody has entered them. */
+const READABLE_HOURS = ['hours.timesheets', 'hours.overtime', 'hours.costed'];
 
 const ASKED = {
   row: '5',

@@ -3,6 +3,7 @@ import { type Database, type SessionUser, type ShopContext } from '@brakeven/use
 import { type Request, type RequestHandler, type Response, type Router } from 'express';
 import { type z } from 'zod';
 import { checkInput } from './middleware/check-input';
+import { readVersion } from './middleware/document-version';
 import { type UploadedFile, readUpload } from './middleware/file-upload';
 import { type CsrfTokens } from './session/csrf-tokens';
 import { authorize } from './session/authorize';
@@ -16,6 +17,8 @@ interface PublicCall<E> {
   query: Parsed<E, 'query'>;
   body: Parsed<E, 'body'>;
   file: E extends { upload: true } ? UploadedFile : undefined;
+  /** Of a versioned document: the version that the change was made on; undefined to replace whatever is there. */
+  version: string | undefined;
   /** For the session and for streams; everything else comes parsed. */
   request: Request;
   response: Response;
@@ -66,10 +69,12 @@ export function createMount(router: Router, dependencies: MountDependencies): Mo
     const run: RequestHandler = async (request, response) => {
       const signedIn = await authorize(dependencies, request, response, endpoint.permission);
       if (endpoint.method !== 'get') dependencies.tokens.check(request);
+      const version = readVersion(endpoint, request);
       const upload = endpoint.upload ? await readUpload(request, response) : undefined;
       const call = {
         ...checkInput(endpoint, request, upload?.options),
         file: upload?.file,
+        version,
         request,
         response,
         ...signedIn,

@@ -16,9 +16,11 @@ import {
   listLikeJobs,
   quotePrice,
   saveEstimate,
+  toEstimateVersion,
   updateJob,
 } from '@brakeven/use-cases';
 import { type Api } from '../api';
+import { setVersion } from '../middleware/document-version';
 import { sendStream } from '../send-stream';
 
 /** Jobs with their figures and cost lines, and customers. */
@@ -37,9 +39,20 @@ export function mountJobs({ mount }: Api): void {
   mount(ENDPOINTS.createJob, ({ context, body }) => createJob(context, body));
   mount(ENDPOINTS.updateJob, ({ context, params, body }) => updateJob(context, params, body));
   mount(ENDPOINTS.changeJobStatus, ({ context, params, body }) => changeJobStatus(context, params, body));
-  mount(ENDPOINTS.getEstimate, ({ context, params }) => getEstimate(context, params));
-  mount(ENDPOINTS.saveEstimate, ({ context, params, body }) => saveEstimate(context, params, body));
-  mount(ENDPOINTS.deleteEstimate, ({ context, params }) => deleteEstimate(context, params));
+  mount(ENDPOINTS.getEstimate, async ({ context, params, response }) => {
+    const answer = await getEstimate(context, params);
+    setVersion(response, toEstimateVersion(answer.estimate));
+    return answer;
+  });
+  mount(ENDPOINTS.saveEstimate, async ({ context, params, body, version, response }) => {
+    const saved = await saveEstimate(context, { ...params, version }, body);
+    setVersion(response, toEstimateVersion(saved));
+    return saved;
+  });
+  mount(ENDPOINTS.deleteEstimate, async ({ context, params, version, response }) => {
+    await deleteEstimate(context, { ...params, version });
+    setVersion(response, toEstimateVersion(null));
+  });
   mount(ENDPOINTS.quotePrice, ({ context, params, body }) => quotePrice(context, params, body));
   mount(ENDPOINTS.getEstimateChoices, ({ context, query }) => getEstimateChoices(context, query));
   mount(ENDPOINTS.listLikeJobs, ({ context, params, query }) =>

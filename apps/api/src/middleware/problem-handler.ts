@@ -7,6 +7,7 @@ import { STATUS_CODES } from 'node:http';
 export const STATUS_BY_CODE: Readonly<Record<ErrorCode, number>> = {
   already_imported: 409,
   already_undone: 409,
+  changed_meanwhile: 412,
   conflict: 409,
   database_unreachable: 503,
   file_refused: 422,
@@ -29,6 +30,7 @@ export const STATUS_BY_CODE: Readonly<Record<ErrorCode, number>> = {
   sign_in_refused: 401,
   token_missing: 403,
   too_many_requests: 429,
+  version_missing: 428,
 };
 
 /** The last handler: whatever was thrown becomes problem details (RFC 9457), and what nobody expected a log entry. */

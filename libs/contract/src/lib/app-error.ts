@@ -2,6 +2,7 @@
 export const ERROR_CODES = [
   'already_imported',
   'already_undone',
+  'changed_meanwhile',
   'conflict',
   'database_unreachable',
   'file_refused',
@@ -24,6 +25,7 @@ export const ERROR_CODES = [
   'sign_in_refused',
   'token_missing',
   'too_many_requests',
+  'version_missing',
 ] as const;
 export type ErrorCode = (typeof ERROR_CODES)[number];
 

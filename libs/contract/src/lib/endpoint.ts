@@ -16,6 +16,8 @@ export interface Endpoint {
   body?: z.ZodType;
   /** Multipart upload of one file in the part `file`; `body` then describes the JSON in the part `options`. */
   upload?: true;
+  /** Answers carry the document's version as `ETag`; whoever changes it sends the one it was read with in `If-Match`. */
+  versioned?: true;
   /** `null`: no content; a media type: a file or a stream. */
   response: z.ZodType | null | string;
 }

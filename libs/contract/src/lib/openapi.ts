@@ -65,7 +65,7 @@ function toOperation(name: string, definition: Endpoint, schemas: Json): Json {
   };
 }
 
-function toParameters({ params, query, method }: Endpoint, schemas: Json): Json[] {
+function toParameters({ params, query, method, versioned }: Endpoint, schemas: Json): Json[] {
   const csrf = {
     name: CSRF_HEADER,
     in: 'header',
@@ -73,10 +73,18 @@ function toParameters({ params, query, method }: Endpoint, schemas: Json): Json[
     description: 'What the cookie XSRF-TOKEN holds; GET /session hands it out.',
     schema: { type: 'string' },
   };
+  const version = {
+    name: 'If-Match',
+    in: 'header',
+    required: true,
+    description: 'The ETag that the document was read with, or * to replace whatever is there.',
+    schema: { type: 'string' },
+  };
   return [
     ...listProperties(params, schemas).map((property) => ({ ...property, in: 'path', required: true })),
     ...listProperties(query, schemas).map((property) => ({ ...property, in: 'query' })),
     ...(method === 'get' ? [] : [csrf]),
+    ...(method !== 'get' && versioned ? [version] : []),
   ];
 }
 
@@ -113,13 +121,16 @@ function toUpload(options: z.ZodType | undefined, schemas: Json): Json {
   };
 }
 
-function toAnswer({ response }: Endpoint, schemas: Json): Json {
-  if (response === null) return { 204: { description: 'Done' } };
+function toAnswer({ response, versioned }: Endpoint, schemas: Json): Json {
+  const headers = versioned && {
+    headers: { ETag: { description: 'The version of the document.', schema: { type: 'string' } } },
+  };
+  if (response === null) return { 204: { description: 'Done', ...headers } };
   const content =
     typeof response === 'string'
       ? { [response]: { schema: { type: 'string' } } }
       : { 'application/json': { schema: toSchema(response, 'output', schemas) } };
-  return { 200: { description: 'Answer', content } };
+  return { 200: { description: 'Answer', ...headers, content } };
 }
 
 /** A schema as JSON Schema; those with an id are put among the components and referred to. */

@@ -54,6 +54,11 @@ export async function listEstimateLines(
   return rows;
 }
 
+/** Holds a job's estimate until the transaction ends: two who save at once save one after the other. */
+export async function lockEstimate(trx: ShopTransaction, jobId: string): Promise<void> {
+  await trx.selectFrom('job').select('jobId').where('jobId', '=', jobId).forUpdate().execute();
+}
+
 /** Writes an estimate in place of the one that the job has, if any. */
 export async function replaceEstimate(
   trx: ShopTransaction,
@@ -61,8 +66,7 @@ export async function replaceEstimate(
   lines: readonly Insertable<EstimateLineTable>[],
 ): Promise<void> {
   const { shopId, jobId, ...values } = head;
-  // The job's row is the lock: two who save at once save one after the other.
-  await trx.selectFrom('job').select('jobId').where('jobId', '=', jobId).forUpdate().execute();
+  await lockEstimate(trx, jobId);
   await trx
     .insertInto('estimate')
     .values({ shopId, jobId, ...values })

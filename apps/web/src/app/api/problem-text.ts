@@ -21,6 +21,7 @@ const OFFLINE = {
 const TITLES: Readonly<Record<ErrorCode, string>> = {
   already_imported: 'This file is already imported',
   already_undone: 'This import was already undone',
+  changed_meanwhile: 'Somebody else changed this meanwhile',
   conflict: 'This does not fit what is there',
   database_unreachable: 'The database cannot be reached',
   file_refused: 'This file cannot be read',
@@ -43,6 +44,7 @@ const TITLES: Readonly<Record<ErrorCode, string>> = {
   sign_in_refused: 'E-mail or password is not right',
   token_missing: 'This page has grown old',
   too_many_requests: 'Too many attempts',
+  version_missing: 'This page has grown old',
 };
 
 /** Own words where the server's detail would not help the person at the screen. */
@@ -51,6 +53,7 @@ const TEXTS: Partial<Record<ErrorCode, string>> = {
     'Nothing was changed. Try again; if it stays, tell whoever looks after the server the number below.',
   database_unreachable: 'Nothing was changed. Try again in a minute.',
   token_missing: 'Nothing was changed. Load the page again and repeat the last step.',
+  version_missing: 'Nothing was changed. Load the page again and repeat the last step.',
 };
 
 /** Turns whatever a request threw into words; the one place where codes become text. */

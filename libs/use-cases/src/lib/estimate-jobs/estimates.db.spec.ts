@@ -17,7 +17,7 @@ import { getJobCost, listJobCosts } from '../show-jobs/job-costs';
 import { listJobs } from '../show-jobs/list-jobs';
 import { draftEstimate, listLikeJobs } from './copy-estimate';
 import { getEstimateChoices } from './estimate-choices';
-import { deleteEstimate, getEstimate, quotePrice, saveEstimate } from './estimates';
+import { deleteEstimate, getEstimate, quotePrice, saveEstimate, toEstimateVersion } from './estimates';
 import { getEstimateWorkings } from './get-estimate-workings';
 
 jest.setTimeout(60_000);
@@ -118,9 +118,26 @@ describe('estimates', () => {
     await saveEstimate(owner, { jobId: ids.job }, input());
   });
 
+  it('are saved and removed only as the version that they were read in', async () => {
+    const { estimate } = await getEstimate(owner, { jobId: ids.job });
+    const ref = { jobId: ids.job, version: toEstimateVersion(estimate) };
+    const outdated = { jobId: ids.job, version: toEstimateVersion(null) };
+    await expect(saveEstimate(owner, outdated, input())).rejects.toMatchObject({ code: 'changed_meanwhile' });
+    await expect(deleteEstimate(owner, outdated)).rejects.toMatchObject({ code: 'changed_meanwhile' });
+    const both = await Promise.allSettled(
+      ['15', '25'].map((marginPercent) => saveEstimate(owner, ref, input({ marginPercent }))),
+    );
+    const refused = both.flatMap((one) => (one.status === 'rejected' ? [one.reason as unknown] : []));
+    expect(refused).toMatchObject([{ code: 'changed_meanwhile' }]);
+    const saved = await saveEstimate(owner, { jobId: ids.job }, input());
+    expect(toEstimateVersion(saved)).toBe(ref.version);
+  });
+
   it('stand beside the cost, with the variance in two parts that add up', async () => {
     const job = jobDetailSchema.parse(await getJob(owner, { jobId: ids.job }));
-    expect(job).toMatchObject({ estimate: '619.71', estimatedHours: '3.6500', variance: '-619.71' });
+    // While nothing is spent there is nothing to hold against the estimate in a list of jobs.
+    expect(job).toMatchObject({ estimate: '619.71', estimatedHours: '3.6500', variance: null });
+    expect(job.comparison?.total.variance).toBe('-619.71');
     expect(job.byOperation).toEqual([
       expect.objectContaining({ operation: 'Form', estimatedHours: '3.6500' }),
     ]);

@@ -7,10 +7,12 @@ import {
 } from '@brakeven/contract';
 import {
   deleteEstimateRows,
+  lockEstimate,
   replaceEstimate,
   type ShopTransaction,
   updateQuotedPrice,
 } from '@brakeven/database';
+import { createHash } from 'node:crypto';
 import { v7 as newId } from 'uuid';
 import { inShopOf, type ShopContext } from '../context';
 import { getJobRow } from '../show-jobs/get-job';
@@ -33,17 +35,29 @@ export function getEstimate(
   });
 }
 
+/** Names the state of an estimate, or that there is none: any change of it gives another version. */
+export function toEstimateVersion(estimate: Estimate | null): string {
+  return createHash('sha256').update(JSON.stringify(estimate)).digest('base64url').slice(0, 22);
+}
+
+/** The estimate of a job as it was when the version was read; without one, whatever it is now. */
+interface EstimateRef {
+  jobId: string;
+  version?: string;
+}
+
 /**
  * Saves the estimate of a job whole, in place of the one that it had.
- * @throws AppError `not_found` (job), `invalid_input` naming each line that refers to nothing
+ * @throws AppError `not_found` (job), `changed_meanwhile`, `invalid_input` naming each line that refers to nothing
  */
 export function saveEstimate(
   context: ShopContext,
-  { jobId }: { jobId: string },
+  { jobId, version }: EstimateRef,
   body: EstimateInput,
 ): Promise<Estimate> {
   return inShopOf(context, async (trx) => {
     await getJobRow(trx, { jobId });
+    await refuseChanged(trx, { jobId, version });
     await checkReferences(trx, body);
     const { lines, ...head } = body;
     const of = { shopId: context.shop.shopId, jobId };
@@ -58,12 +72,26 @@ export function saveEstimate(
   });
 }
 
+async function refuseChanged(trx: ShopTransaction, { jobId, version }: EstimateRef): Promise<void> {
+  await lockEstimate(trx, jobId);
+  if (version === undefined) return;
+  const stored = await readEstimate(trx, jobId);
+  if (version === toEstimateVersion(stored && toEstimate(stored))) return;
+  throw new AppError(
+    'changed_meanwhile',
+    'Somebody else changed this estimate after it was loaded here. Nothing was saved. Load it again to see what it is now, or save over it.',
+  );
+}
+
 /**
  * Removes the estimate of a job.
- * @throws AppError `not_found` if there is none
+ * @throws AppError `not_found` if there is none, `changed_meanwhile`
  */
-export async function deleteEstimate(context: ShopContext, { jobId }: { jobId: string }): Promise<void> {
-  const wasThere = await inShopOf(context, (trx) => deleteEstimateRows(trx, jobId));
+export async function deleteEstimate(context: ShopContext, ref: EstimateRef): Promise<void> {
+  const wasThere = await inShopOf(context, async (trx) => {
+    await refuseChanged(trx, ref);
+    return deleteEstimateRows(trx, ref.jobId);
+  });
   if (!wasThere) throw new AppError('not_found', 'This job has no estimate. Load the job again.');
 }
 

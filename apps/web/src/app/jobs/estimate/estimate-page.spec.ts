@@ -2,10 +2,10 @@ import { HttpErrorResponse } from '@angular/common/http';
 import { TestBed } from '@angular/core/testing';
 import { MatDialog } from '@angular/material/dialog';
 import { provideRouter } from '@angular/router';
-import { type EstimateChoices, type EstimateInput } from '@brakeven/contract';
+import { type Estimate, type EstimateChoices, type EstimateInput } from '@brakeven/contract';
 import { WORKINGS_OPENER } from '@brakeven/ui';
 import { firstValueFrom, isObservable, type Observable, of, throwError } from 'rxjs';
-import { EstimatesApi } from '../../api/estimates-api';
+import { EstimatesApi, type VersionedEstimate } from '../../api/estimates-api';
 import { JobsApi } from '../../api/jobs-api';
 import { Notifier } from '../../shell/notifier';
 import { Rendered } from '../../testing/rendered';
@@ -21,17 +21,26 @@ const choices: EstimateChoices = {
   overheadRate: '18.00',
 };
 
+const toEstimate = (input: EstimateInput | undefined) =>
+  ({ ...input, cost: {}, priceForMargin: '0.00' }) as Estimate;
+
 describe('EstimatePage', () => {
+  let stored: VersionedEstimate;
   const saved: EstimateInput[] = [];
   let undo: (() => void) | undefined;
   let answer: () => Observable<unknown>;
   let isConfirmed = false;
+  const versions: string[] = [];
 
   const render = async () => {
     const api = {
-      getEstimate: () => of({ estimate: null }),
+      getEstimate: () => of(stored),
       getChoices: () => of(choices),
-      saveEstimate: (_: string, input: EstimateInput) => (saved.push(input), answer()),
+      saveEstimate: (_: string, input: EstimateInput, version: string) => {
+        saved.push(input);
+        versions.push(version);
+        return answer();
+      },
     };
     const job = { jobId, number: '2231', title: 'Conveyor guards', quantity: 24, quotedPrice: '900.00' };
     TestBed.configureTestingModule({
@@ -63,10 +72,12 @@ describe('EstimatePage', () => {
     page.element.querySelector<HTMLInputElement>(`[aria-label="${label}"]`)?.value;
 
   beforeEach(() => {
+    stored = { estimate: null, version: '"first"' };
     saved.length = 0;
+    versions.length = 0;
     undo = undefined;
     isConfirmed = false;
-    answer = () => of({ ...saved[0], cost: {}, priceForMargin: '0.00' });
+    answer = () => of({ estimate: toEstimate(saved[0]), version: '"second"' });
   });
 
   it('begins a line with the rates of the day and the pieces of the job, and costs it as it is typed', async () => {
@@ -128,6 +139,51 @@ describe('EstimatePage', () => {
     await page.press('Save estimate');
     expect(page.textsOf('.issues').join()).toContain('Line 1: There is no such operation.');
     expect(valueOf(page, 'Min a piece, line 1')).toBe('7.5');
+  });
+
+  it('saves each time on the version that it was made from', async () => {
+    const page = await render();
+    await fill(page);
+    await page.press('Save estimate');
+    await page.enter('[aria-label="Min a piece, line 1"]', '8');
+    await page.press('Save estimate');
+    expect(versions).toEqual(['"first"', '"second"']);
+  });
+
+  describe('when somebody else has saved meanwhile', () => {
+    const theirs = { kind: 'outside' as const, amount: '310.00', description: 'Powder coat' };
+    const refuse = async () => {
+      const error = { code: 'changed_meanwhile', detail: 'Somebody else changed this estimate.', issues: [] };
+      answer = () => throwError(() => new HttpErrorResponse({ status: 412, error }));
+      const page = await render();
+      await fill(page);
+      await page.press('Save estimate');
+      expect(page.textsOf('.issues').join()).toContain('Somebody else changed this estimate.');
+      expect(valueOf(page, 'Min a piece, line 1')).toBe('7.5');
+      return page;
+    };
+
+    it('saves over it only when told to', async () => {
+      const page = await refuse();
+      answer = () => of({ estimate: toEstimate(saved[0]), version: '"third"' });
+      await page.press('Save mine over it');
+      expect(versions).toEqual(['"first"', '*']);
+      expect(page.textsOf('.issues')).toEqual([]);
+    });
+
+    it('shows what is saved, and brings back what was typed', async () => {
+      const page = await refuse();
+      const input = { estimatedOn: '2026-05-01', scrapAllowancePercent: '0', marginPercent: '20' };
+      stored = { estimate: toEstimate({ ...input, lines: [theirs] }), version: '"theirs"' };
+      await page.press('Show what is saved');
+      expect(page.text).not.toContain('Somebody else changed');
+      expect(valueOf(page, 'Min a piece, line 1')).toBeUndefined();
+      undo?.();
+      await page.settle();
+      expect(valueOf(page, 'Min a piece, line 1')).toBe('7.5');
+      await page.press('Save estimate');
+      expect(versions.at(-1)).toBe('"theirs"');
+    });
   });
 
   it('brings a removed line back where it was', async () => {

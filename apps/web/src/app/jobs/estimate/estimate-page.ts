@@ -16,8 +16,8 @@ import { RouterLink } from '@angular/router';
 import { type Estimate, type EstimateChoices, type EstimateInput, type FigureRef } from '@brakeven/contract';
 import { ErrorState, Figure, LoadingSkeleton, MoneyPipe, PageHeader, SHOP_FORMAT } from '@brakeven/ui';
 import { isLocalDate, moneyText, todayIn } from '@brakeven/values';
-import { filter, forkJoin, of, startWith, switchMap } from 'rxjs';
-import { EstimatesApi } from '../../api/estimates-api';
+import { filter, forkJoin, startWith, switchMap } from 'rxjs';
+import { ANY_VERSION, EstimatesApi, type VersionedEstimate } from '../../api/estimates-api';
 import { JobsApi } from '../../api/jobs-api';
 import { toShownProblem } from '../../api/problem-text';
 import { confirm } from '../../forms/confirm-dialog';
@@ -94,6 +94,8 @@ export class EstimatePage implements Leavable {
   protected readonly buildUp = BUILD_UP;
   protected readonly isSaving = signal(false);
   protected readonly issues = signal<readonly string[]>([]);
+  /** Somebody else saved the estimate while it was open here. */
+  protected readonly isOutdated = signal(false);
   protected readonly isSaved = signal(false);
   protected readonly quotedPrice = signal<string | null>(null);
 
@@ -104,6 +106,8 @@ export class EstimatePage implements Leavable {
     toObservable(this.form).pipe(switchMap((form) => form.valueChanges.pipe(startWith(null)))),
   );
   private readonly version = signal(0);
+  /** Of the estimate that the form began with. */
+  private savedVersion = '';
   protected readonly isDirty = computed(() => (this.watch(), this.form().dirty));
   private readonly estimatedOn = computed(() => (this.watch(), this.form().getRawValue().estimatedOn));
   private readonly choicesOf = rxResource({
@@ -148,7 +152,7 @@ export class EstimatePage implements Leavable {
       const { job, saved } = this.answer.value();
       untracked(() => {
         this.quotedPrice.set(job.quotedPrice ?? null);
-        this.show(saved.estimate, saved.estimate !== null);
+        this.showSaved(saved);
       });
     });
   }
@@ -193,7 +197,8 @@ export class EstimatePage implements Leavable {
     this.touch();
   }
 
-  protected save(): void {
+  /** Saves what is in the form, over what somebody else has saved meanwhile if that is said. */
+  protected save(version = this.savedVersion): void {
     const form = this.form();
     form.markAllAsTouched();
     const input = readEstimate(form, this.units);
@@ -208,17 +213,34 @@ export class EstimatePage implements Leavable {
     }
     this.isSaving.set(true);
     this.issues.set([]);
-    this.api.saveEstimate(this.jobId(), input).subscribe({
-      next: (estimate) => {
+    this.api.saveEstimate(this.jobId(), input, version).subscribe({
+      next: (saved) => {
         this.isSaving.set(false);
         this.notifier.say('Estimate saved.');
-        this.show(estimate, true);
+        this.showSaved(saved);
       },
       error: (error: unknown) => {
         this.isSaving.set(false);
-        const { text, issues } = toShownProblem(error);
+        const { code, text, issues } = toShownProblem(error);
+        this.isOutdated.set(code === 'changed_meanwhile');
         this.issues.set([text, ...issues.map(({ field, message }) => `${toPlace(field)}${message}`)]);
       },
+    });
+  }
+
+  protected saveOver(): void {
+    this.save(ANY_VERSION);
+  }
+
+  /** Shows what somebody else saved; what was typed can be had back. */
+  protected showTheirs(): void {
+    const typed = this.form();
+    this.api.getEstimate(this.jobId()).subscribe({
+      next: (saved) => {
+        this.showSaved(saved);
+        this.notifier.say('This is the estimate as it is saved now.', () => this.form.set(typed));
+      },
+      error: (error: unknown) => this.notifier.warn(toShownProblem(error).text),
     });
   }
 
@@ -261,11 +283,13 @@ export class EstimatePage implements Leavable {
       ],
       action: 'Remove estimate',
     })
-      .pipe(switchMap((isConfirmed) => (isConfirmed ? this.api.deleteEstimate(this.jobId()) : of('kept'))))
+      .pipe(
+        filter((isConfirmed) => isConfirmed),
+        switchMap(() => this.api.deleteEstimate(this.jobId(), this.savedVersion)),
+      )
       .subscribe({
-        next: (kept) => {
-          if (kept === 'kept') return;
-          this.show(null, false);
+        next: (version) => {
+          this.showSaved({ estimate: null, version });
           this.notifier.say('Estimate removed.');
         },
         error: (error: unknown) => this.notifier.warn(toShownProblem(error).text),
@@ -313,8 +337,14 @@ export class EstimatePage implements Leavable {
     );
   }
 
+  private showSaved({ estimate, version }: VersionedEstimate): void {
+    this.savedVersion = version;
+    this.show(estimate, estimate !== null);
+  }
+
   private show(estimate: EstimateInput | Estimate | null, isSaved: boolean): void {
     this.issues.set([]);
+    this.isOutdated.set(false);
     this.isSaved.set(isSaved);
     this.form.set(toEstimateForm(estimate, this.today(), this.units));
   }
