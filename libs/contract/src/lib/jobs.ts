@@ -76,12 +76,14 @@ export const jobFiguresSchema = jobCostSchema.extend({
   margin: moneySchema.optional(),
   /** True until the job is finished or invoiced, and over several jobs while it is true of one. */
   marginIsProvisional: z.boolean().optional(),
-  /** Cost not yet invoiced of jobs open or finished, not below 0. */
+  /** Whether it is finished and invoices are still to come, or one of several jobs is. */
+  isToInvoice: z.boolean().optional(),
+  /** Cost not yet invoiced of billable jobs open or finished, not below 0. */
   workInProgress: moneySchema.optional(),
   /** Estimated cost and hours; null without an estimate. */
   estimate: moneySchema.nullable().optional(),
   estimatedHours: hoursSchema.nullable().optional(),
-  /** total − estimate of jobs that have one: above 0 it cost more. */
+  /** total − estimate of jobs that have one and cost something: above 0 it cost more. */
   variance: moneySchema.nullable().optional(),
 });
 export type JobFigures = z.infer<typeof jobFiguresSchema>;
@@ -136,9 +138,10 @@ export const jobPageSchema = z.object({
   totals: jobFiguresSchema.extend({
     jobs: z.number().int(),
     quotedPrice: moneySchema.optional(),
-    /** Jobs that have an estimate, and what those cost: that less `estimate` is `variance`. */
-    estimatedJobs: z.number().int().optional(),
-    estimatedJobsCost: moneySchema.optional(),
+    /** Jobs that have a variance, their cost and their estimate: cost − estimate is `variance`. */
+    comparedJobs: z.number().int().optional(),
+    comparedCost: moneySchema.optional(),
+    comparedEstimate: moneySchema.optional(),
   }),
 });
 export type JobPage = z.infer<typeof jobPageSchema>;

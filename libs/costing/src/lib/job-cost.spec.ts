@@ -1,7 +1,7 @@
 import { D, hoursText, moneyText, toMoney } from '@brakeven/values';
 import { bookOf, entryOf } from '../../testing/example-shop';
 import { computeLines, type CostedEntry } from './entry-lines';
-import { computeJobCost, JOB_STATUSES, type JobCostLine, type JobStatus } from './job-cost';
+import { computeJobCost, JOB_STATUSES, type JobCostLine, type JobStanding, type JobStatus } from './job-cost';
 
 function costOf(entries: CostedEntry[], book = bookOf()) {
   const { lines, gaps } = computeLines(entries, book);
@@ -77,7 +77,8 @@ describe('the cost of a job in every category', () => {
     line('earned', '475.00', '5'),
     line('running', '30.00', '5'),
   ];
-  const costIn = (status: JobStatus, of = lines) => computeJobCost(of, [], status);
+  const costIn = (status: JobStatus, of = lines, standing: Partial<JobStanding> = {}) =>
+    computeJobCost(of, [], { status, isBillable: true, quotedPrice: null, ...standing });
 
   it('adds up what it is made of, and leaves income and payback out of it', () => {
     // 200 + 12.50 + 90 + 60 + 292.10 + 75 = 729.60; 800 − 729.60 = 70.40
@@ -111,6 +112,23 @@ describe('the cost of a job in every category', () => {
     const uninvoiced = lines.filter((of) => of.category !== 'invoiced' || of.quantity.lt(0));
     const inProgress = JOB_STATUSES.map((status) => moneyText(costIn(status, uninvoiced).workInProgress));
     expect(inProgress).toEqual(['0.00', '829.60', '829.60', '0.00', '0.00', '0.00']);
+  });
+
+  it('is no work in progress where nobody will be invoiced', () => {
+    const ownWork = costIn('open', lines.slice(0, 1), { isBillable: false });
+    expect(moneyText(ownWork.workInProgress)).toBe('0.00');
+  });
+
+  it('is to be invoiced once it is finished, until invoices come to the quoted price', () => {
+    const quotedPrice = toMoney('800.01');
+    const waiting = JOB_STATUSES.filter((status) => costIn(status, lines, { quotedPrice }).isToInvoice);
+    expect(waiting).toEqual(['finished']);
+    const isToInvoice = (of: typeof lines, standing: Partial<JobStanding>) =>
+      costIn('finished', of, standing).isToInvoice;
+    expect(isToInvoice(lines, { quotedPrice: toMoney('800') })).toBe(false);
+    expect(isToInvoice(lines, {})).toBe(false);
+    expect(isToInvoice([], {})).toBe(true);
+    expect(isToInvoice([], { isBillable: false })).toBe(false);
   });
 
   it('counts what is taken back against cost and hours', () => {

@@ -13,6 +13,14 @@ export interface JobCostLine extends LineHours {
   amount: Money;
 }
 
+/** How a job stands, apart from its lines. */
+export interface JobStanding {
+  status: JobStatus;
+  isBillable: boolean;
+  /** Null without a quote. */
+  quotedPrice: Money | null;
+}
+
 /** What a job cost in each category. */
 export type CategoryCosts = Record<JobCostCategory, Money>;
 
@@ -28,7 +36,9 @@ export interface JobCost extends CategoryCosts {
   margin: Money;
   /** True until the job is finished or invoiced: costs may still come. */
   marginIsProvisional: boolean;
-  /** Cost not yet invoiced, not below 0; nought unless the job is open or finished. */
+  /** Whether it is finished and invoices are still to come: the margin is no loss yet. */
+  isToInvoice: boolean;
+  /** Cost not yet invoiced, not below 0; nought unless the job is billable, and open or finished. */
   workInProgress: Money;
   earned: Money;
   /** How many lines are missing because no rate was valid; the figures above are too low if it is not 0. */
@@ -43,7 +53,7 @@ export interface JobCost extends CategoryCosts {
 export function computeJobCost(
   lines: readonly JobCostLine[],
   gaps: readonly GapHours[] = [],
-  status: JobStatus = 'open',
+  standing: JobStanding = { status: 'open', isBillable: true, quotedPrice: null },
 ): JobCost {
   const costs = sumCosts(lines);
   const total = sum(Object.values(costs));
@@ -55,8 +65,9 @@ export function computeJobCost(
     total,
     invoiced,
     margin: computeMargin(invoiced, total),
-    marginIsProvisional: isMarginProvisional(status),
-    workInProgress: computeWorkInProgress(total, invoiced, status),
+    marginIsProvisional: isMarginProvisional(standing.status),
+    isToInvoice: isToInvoice(invoiced, standing),
+    workInProgress: computeWorkInProgress(total, invoiced, standing),
     earned: sumCategory(lines, 'earned'),
     gapCount: gaps.length,
   };
@@ -80,9 +91,22 @@ export function isMarginProvisional(status: JobStatus): boolean {
   return status !== 'finished' && status !== 'invoiced';
 }
 
-/** Cost not yet invoiced of a job that is open or finished, not below 0. Rule in words: `RULES.workInProgress`. */
-export function computeWorkInProgress(total: Money, invoiced: Money, status: JobStatus): Money {
-  const isInProgress = status === 'open' || status === 'finished';
+/** Whether a finished billable job has no invoice yet, or invoices below its quoted price. */
+export function isToInvoice(invoiced: Money, { status, isBillable, quotedPrice }: JobStanding): boolean {
+  if (status !== 'finished' || !isBillable) return false;
+  return invoiced.isZero() || (quotedPrice !== null && invoiced.lt(quotedPrice));
+}
+
+/**
+ * Cost not yet invoiced of a billable job that is open or finished, not below 0; the shop's own work is an expense.
+ * Rule in words: `RULES.workInProgress`.
+ */
+export function computeWorkInProgress(
+  total: Money,
+  invoiced: Money,
+  { status, isBillable }: Pick<JobStanding, 'status' | 'isBillable'>,
+): Money {
+  const isInProgress = isBillable && (status === 'open' || status === 'finished');
   return toMoney(isInProgress && total.gt(invoiced) ? total.minus(invoiced) : 0);
 }
 

@@ -21,7 +21,7 @@ export const RULES = {
   jobTotal: 'Labour + overtime + machine + overhead + material + outside; each is the sum of its lines.',
   margin: 'Invoiced − total cost; provisional until the job is finished, since costs may still come.',
   workInProgress:
-    'Total cost − invoiced of jobs that are open or finished, and 0 where more is invoiced than was spent.',
+    'Total cost − invoiced of billable jobs that are open or finished, and 0 where more is invoiced than was spent.',
   posting:
     'What comes late for a closed month is posted on the first day that is open, at the rates of its own date, and marked late; what was posted in a closed month is taken back there by lines that count against it.',
   stock:

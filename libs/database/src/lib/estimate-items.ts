@@ -17,7 +17,8 @@ const itemsOf = (jobs: JobSelection, column: EstimateSum) => sql`
     select j.job_id, j.number, j.title, ${JOB_FIGURE_COLUMNS} from ${JOB_WITH_CUSTOMER} ${JOB_FIGURES}
     where ${isJobSelected(jobs)}
   ) g
-  join estimate s on s.job_id = g.job_id`;
+  join estimate s on s.job_id = g.job_id
+  where g.${sql.raw(column)} is not null`;
 
 /** A page of jobs with what is summed over their estimates, latest estimated first. */
 export async function listEstimateItems(

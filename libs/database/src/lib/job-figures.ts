@@ -16,6 +16,8 @@ export interface JobFigureColumns extends JobSums {
   invoiced: string;
   margin: string;
   marginIsProvisional: boolean;
+  /** Finished, and invoices are still to come. */
+  isToInvoice: boolean;
   workInProgress: string;
   estimatedHours: string | null;
   estimate: string | null;
@@ -69,9 +71,11 @@ export const JOB_FIGURES = sql`
   cross join lateral (
     select f.invoiced - f.total as margin,
       j.status not in ('finished', 'invoiced') as margin_is_provisional,
-      case when j.status in ('open', 'finished') then greatest(f.total - f.invoiced, 0) else 0 end
+      j.status = 'finished' and j.is_billable
+        and (f.invoiced = 0 or coalesce(f.invoiced < j.quoted_price, false)) as is_to_invoice,
+      case when j.is_billable and j.status in ('open', 'finished') then greatest(f.total - f.invoiced, 0) else 0 end
         ::numeric(16,2) as work_in_progress,
-      f.total - e.estimate as variance
+      case when f.total <> 0 then f.total - e.estimate end as variance
   ) m`;
 
 /** Of `job j`: the last day that somebody worked on it, which is not the day in the books of what came late. */
@@ -89,4 +93,5 @@ const SUMMED_IF_ANY = ['estimated_hours', 'estimate', 'variance'];
 export const JOB_FIGURE_TOTALS = sql`
   ${sql.join(SUMMED.map((column) => sql`coalesce(sum(${sql.ref(column)}), 0) as ${sql.ref(column)}`))},
   ${sql.join(SUMMED_IF_ANY.map((column) => sql`sum(${sql.ref(column)}) as ${sql.ref(column)}`))},
-  coalesce(bool_or(margin_is_provisional), false) as margin_is_provisional`;
+  coalesce(bool_or(margin_is_provisional), false) as margin_is_provisional,
+  coalesce(bool_or(is_to_invoice), false) as is_to_invoice`;

@@ -112,17 +112,19 @@ export async function listJobRows(
 export interface JobTotals extends JobFigureColumns {
   jobs: number;
   quotedPrice: string;
-  /** Jobs that have an estimate, and what those cost: their cost − `estimate` is `variance`. */
-  estimatedJobs: number;
-  estimatedJobsCost: string;
+  /** Jobs that have a variance, their cost and their estimate: cost − estimate is `variance`. */
+  comparedJobs: number;
+  comparedCost: string;
+  comparedEstimate: string;
 }
 
 /** Sums over all jobs of a selection. */
 export async function sumJobs(trx: ShopTransaction, selection: JobSelection): Promise<JobTotals> {
   const { rows } = await sql<JobTotals>`
     select count(*) as jobs, coalesce(sum(quoted_price), 0)::numeric(16,2) as quoted_price, ${JOB_FIGURE_TOTALS},
-      count(estimate) as estimated_jobs,
-      coalesce(sum(total) filter (where estimate is not null), 0)::numeric(16,2) as estimated_jobs_cost
+      count(variance) as compared_jobs,
+      coalesce(sum(total) filter (where variance is not null), 0)::numeric(16,2) as compared_cost,
+      coalesce(sum(estimate) filter (where variance is not null), 0)::numeric(16,2) as compared_estimate
     from (
       select j.quoted_price, ${JOB_FIGURE_COLUMNS} from ${JOB_WITH_CUSTOMER} ${JOB_FIGURES}
       where ${isJobSelected(selection)}

@@ -44,11 +44,10 @@ export function sumOtherJobs(
 }
 
 function workInProgress(jobs: JobSelection): RawBuilder<unknown> {
-  const isInProgress = sql`j.status in ('open', 'finished')`;
   return sql`
     select j.job_id, ${LAST_WORKED_ON} as on_day, j.title as label, j.number as job, m.work_in_progress as amount
     from ${JOB_WITH_CUSTOMER} ${JOB_FIGURES}
-    where ${allOf([isJobSelected(jobs), isInProgress, sql`m.work_in_progress > 0`])}`;
+    where ${allOf([isJobSelected(jobs), sql`m.work_in_progress > 0`])}`;
 }
 
 /** In the order of `listMachineJobNets`. */

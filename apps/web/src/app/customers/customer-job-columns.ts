@@ -1,6 +1,7 @@
 import { type Job } from '@brakeven/contract';
 import { type GridColumn } from '@brakeven/ui';
 import { toStatusTone } from '../jobs/job-status';
+import { toMarginNote } from '../jobs/margin-note';
 
 type MoneyField = 'total' | 'invoiced' | 'margin' | 'workInProgress';
 
@@ -10,7 +11,7 @@ const toMoneyColumn = (id: MoneyField, header: string): GridColumn<Job> => ({
   kind: 'money',
   value: (job) => job[id],
   figure: (job) => ({ figure: `job.${id}`, jobId: job.jobId }),
-  note: (job) => (id === 'margin' && job.marginIsProvisional ? { severity: 'quiet', text: 'so far' } : null),
+  note: (job) => (id === 'margin' ? toMarginNote(job) : null),
   isSortable: true,
   width: id === 'margin' ? 160 : 124,
 });

@@ -1,6 +1,7 @@
 import { type Figure, type FigureRef, type Job, type JobPage, type JobSort } from '@brakeven/contract';
 import { type GridColumn, type GridNote, type GridTotals } from '@brakeven/ui';
 import { toStatusTone } from './job-status';
+import { toMarginNote } from './margin-note';
 
 /** Which jobs the totals are over. */
 export type JobFilter = Pick<FigureRef, 'search' | 'status' | 'customerId'>;
@@ -67,10 +68,9 @@ const MONEY: readonly FigureColumn[] = [
   money('quotedPrice', 'Quoted', 'job.quotedPrice'),
   money('invoiced', 'Invoiced', 'job.invoiced'),
   money('margin', 'Margin', 'job.margin', {
-    note: toProvisionalNote,
+    note: toMarginNote,
     // What is done and not invoiced yet is work in progress, no loss.
-    isLoss: (job) =>
-      job.marginIsProvisional === false && Number(job.invoiced) !== 0 && isBelowZero(job.margin),
+    isLoss: (job) => job.marginIsProvisional === false && !job.isToInvoice && isBelowZero(job.margin),
     width: 140,
   }),
   money('workInProgress', 'In progress', 'job.workInProgress', { width: 100 }),
@@ -139,10 +139,10 @@ export function toJobTotals(totals: JobPage['totals'], filter: JobFilter): GridT
   };
 }
 
-/** Estimate and variance are those of the jobs that have an estimate, so that these are counted apart. */
-function toCountWords({ jobs, estimatedJobs = jobs }: JobPage['totals']): string {
+/** The variance is that of jobs with an estimate that cost something, so that these are counted apart. */
+function toCountWords({ jobs, comparedJobs = jobs }: JobPage['totals']): string {
   const words = `${jobs.toLocaleString('en-US')} ${jobs === 1 ? 'job' : 'jobs'}`;
-  return estimatedJobs === jobs ? words : `${words}, ${estimatedJobs.toLocaleString('en-US')} estimated`;
+  return comparedJobs === jobs ? words : `${words}, ${comparedJobs.toLocaleString('en-US')} with variance`;
 }
 
 /** Whether a column shows money or what comes of an estimate. */
@@ -213,11 +213,6 @@ function toGridColumn({ field, header, figure, kind, width, rest }: FigureColumn
 /** Entries without a rate cost nothing yet: the figure is not the whole. */
 function toGapNote({ entriesWithoutRate }: Job): GridNote | null {
   return entriesWithoutRate > 0 ? { severity: 'warning', text: 'no rate' } : null;
-}
-
-/** Before a job is finished its margin is what has come of it so far. */
-function toProvisionalNote({ marginIsProvisional }: Job): GridNote | null {
-  return marginIsProvisional ? { severity: 'quiet', text: 'so far' } : null;
 }
 
 /** It cost more than estimated. */

@@ -52,7 +52,12 @@ describe('the verdict on a job', () => {
     expect(saidOf({ ...lost, estimate: null, variance: null })[2]).toContain('It was not estimated.');
   });
 
-  it('does not call a job lost that is not invoiced yet', () => {
+  it('does not call a job lost that is not invoiced in full yet', () => {
+    const part = { status: 'finished', invoiced: '2000.00', margin: '-3000.00', isToInvoice: true } as const;
+    expect(saidOf({ ...part, quotedPrice: '6250.00' }).slice(0, 2)).toEqual([
+      'plan',
+      'Done, and 2000.00 of 6250.00 invoiced',
+    ]);
     expect(saidOf({ status: 'finished' }).slice(0, 2)).toEqual(['plan', 'Done, and not invoiced']);
   });
 

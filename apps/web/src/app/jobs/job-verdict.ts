@@ -98,12 +98,25 @@ function toEnded(job: JobDetail): JobVerdict {
       sentence: ['It cost ', figure(job, 'job.total', job.total), '. ', ...toAgainstEstimate(job)],
     };
   }
+  if (job.isToInvoice && job.quotedPrice) return toPartInvoiced(job, job.quotedPrice);
   const margin = D(job.margin ?? 0);
   const share = toShare(margin.abs().toFixed(2), job.invoiced ?? '0');
   return {
     tone: margin.lt(0) ? 'loss' : 'good',
     headline: [margin.lt(0) ? 'Lost ' : 'Made ', figure(job, 'job.margin', margin.abs().toFixed(2))],
     sentence: [`That is ${share} of what was invoiced. `, ...toAgainstEstimate(job)],
+  };
+}
+
+function toPartInvoiced(job: JobDetail, quotedPrice: string): JobVerdict {
+  const [invoiced, quoted] = [
+    figure(job, 'job.invoiced', job.invoiced),
+    figure(job, 'job.quotedPrice', quotedPrice),
+  ];
+  return {
+    tone: 'plan',
+    headline: ['Done, and ', invoiced, ' of ', quoted, ' invoiced'],
+    sentence: ['It cost ', figure(job, 'job.total', job.total), '. ', ...toAgainstEstimate(job)],
   };
 }
 

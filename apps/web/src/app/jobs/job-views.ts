@@ -29,7 +29,11 @@ export function toBuiltInViews(withMoney: boolean): JobView[] {
   return [
     standard,
     view('cost', 'Cost by category', COST_COLUMNS),
-    view('loss', 'Least margin first', toStandardColumns(true), { sort: 'margin', direction: 'asc' }),
+    view('loss', 'Invoiced, least margin first', toStandardColumns(true), {
+      sort: 'margin',
+      direction: 'asc',
+      filter: { status: 'invoiced' },
+    }),
   ];
 }
 

@@ -60,10 +60,10 @@ describe('toJobTotals', () => {
     expect(totals['title']?.value).toBe('1 job');
   });
 
-  it('say of how many jobs the estimate and the variance are', () => {
-    const wordsOf = (estimatedJobs: number) =>
-      toJobTotals({ jobs: 12, estimatedJobs, hours: '80.0000', machineHours: '32.0000' }, {})['title']?.value;
-    expect(wordsOf(7)).toBe('12 jobs, 7 estimated');
+  it('say of how many jobs the variance is', () => {
+    const wordsOf = (comparedJobs: number) =>
+      toJobTotals({ jobs: 12, comparedJobs, hours: '80.0000', machineHours: '32.0000' }, {})['title']?.value;
+    expect(wordsOf(7)).toBe('12 jobs, 7 with variance');
     expect(wordsOf(12)).toBe('12 jobs');
   });
 });

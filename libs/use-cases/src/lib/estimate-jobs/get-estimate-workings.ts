@@ -102,6 +102,9 @@ const SUMS: Partial<Record<EstimateFigure, { column: EstimateSum; rule: string }
   'estimate.variance': { column: 'variance', rule: RULES.variance },
 };
 
+const NOT_ESTIMATED = 'Jobs without an estimate are left out.';
+const NOT_COMPARED = 'Jobs without an estimate, and those on which nothing was spent, are left out.';
+
 async function readOfJobs(
   context: ShopContext,
   trx: ShopTransaction,
@@ -116,7 +119,7 @@ async function readOfJobs(
     {
       figure: ref,
       title: `${TITLES[figure]} of ${whose}`,
-      rule: `${summed.rule} Jobs without an estimate are left out.`,
+      rule: `${summed.rule} ${figure === 'estimate.variance' ? NOT_COMPARED : NOT_ESTIMATED}`,
     },
     {
       sum: () => sumEstimateItems(trx, jobs, summed.column),
@@ -127,21 +130,19 @@ async function readOfJobs(
   );
   if (figure === 'estimate.hours')
     return { ...workings, unit: 'hours', amount: hoursText(toHours(workings.amount)) };
-  const inputs =
-    figure === 'estimate.variance' ? toVarianceInputs(context, ref, await sumJobs(trx, jobs)) : [];
+  const inputs = figure === 'estimate.variance' ? toVarianceInputs(context, await sumJobs(trx, jobs)) : [];
   return { ...workings, inputs, amount: moneyText(toMoney(D(workings.amount))) };
 }
 
-/** Two figures of the jobs that have an estimate, so that their difference is the variance. */
+/** Two figures of the same jobs, so that their difference is the variance. */
 function toVarianceInputs(
   { shop }: ShopContext,
-  ref: EstimateRef,
-  { estimatedJobs, estimatedJobsCost, estimate }: JobTotals,
+  { comparedJobs, comparedCost, comparedEstimate }: JobTotals,
 ): Workings['inputs'] {
   const money = (amount: string) => formatMoney(amount, shop.currency);
-  const whose = estimatedJobs === 1 ? '1 job with an estimate' : `${estimatedJobs} jobs with an estimate`;
+  const whose = comparedJobs === 1 ? '1 job' : `${comparedJobs} jobs`;
   return [
-    toInput(`Cost of ${whose}`, money(estimatedJobsCost)),
-    { ...toInput('Their estimate', money(estimate ?? '0')), figure: { ...ref, figure: 'estimate.total' } },
+    toInput(`Cost of ${whose} with an estimate`, money(comparedCost)),
+    toInput('Their estimate', money(comparedEstimate)),
   ];
 }

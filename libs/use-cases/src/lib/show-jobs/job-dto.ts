@@ -18,12 +18,14 @@ export function toJobCost(context: ShopContext, sums: JobSums): JobCostFigures {
 export function toJobFigures(context: ShopContext, row: JobFigureColumns): JobFigures {
   const cost = toJobCost(context, row);
   if (!seesMoney(context)) return cost;
-  const { invoiced, margin, marginIsProvisional, workInProgress, estimate, estimatedHours, variance } = row;
+  const { invoiced, margin, marginIsProvisional, isToInvoice, workInProgress } = row;
+  const { estimate, estimatedHours, variance } = row;
   return {
     ...cost,
     invoiced,
     margin,
     marginIsProvisional,
+    isToInvoice,
     workInProgress,
     estimate,
     estimatedHours,

@@ -233,11 +233,14 @@ describe('jobs of which something is special', () => {
     const estimate = { estimatedOn: '2026-03-01', scrapAllowancePercent: '0', marginPercent: '20' };
     const outside = { kind: 'outside', amount: '300.00', description: 'All of it' } as const;
     await saveEstimate(owner, ids, { ...estimate, lines: [outside] });
+    const notBegun = await shop.addJob({ number: '3003' });
+    await saveEstimate(owner, { jobId: notBegun }, { ...estimate, lines: [outside] });
     const { totals } = jobPageSchema.parse(
       await listJobs(owner, { sort: 'number', direction: 'asc', limit: 10 }),
     );
-    expect(totals).toMatchObject({ jobs: 2, estimatedJobs: 1, total: '520.00', estimatedJobsCost: '320.00' });
-    expect(totals).toMatchObject({ estimate: '300.00', variance: '20.00' });
+    expect(totals).toMatchObject({ jobs: 3, total: '520.00', estimate: '600.00' });
+    const compared = { comparedJobs: 1, comparedCost: '320.00', comparedEstimate: '300.00' };
+    expect(totals).toMatchObject({ ...compared, variance: '20.00' });
     const workings = await getEstimateWorkings(owner, { figure: 'estimate.variance', limit: 5 });
     expect(workings.inputs.map(({ label, value }) => [label, value])).toEqual([
       ['Cost of 1 job with an estimate', '$320.00'],
@@ -321,13 +324,23 @@ describe('changing jobs', () => {
     expect(await listCustomers(owner)).toEqual(before);
   });
 
+  it('have no work in progress where nobody will be invoiced', async () => {
+    const jobId = shop.jobs.guards;
+    const job = await getJob(owner, { jobId });
+    const change = { number: job.number, title: job.title, status: 'open' } as const;
+    const own = await updateJob(owner, { jobId }, input({ ...change, isBillable: false }));
+    expect(own).toMatchObject({ total: job.total, workInProgress: '0.00' });
+    const billable = await updateJob(owner, { jobId }, input({ ...change, isBillable: true }));
+    expect(billable.workInProgress).toBe(job.total);
+  });
+
   it('says where they stand, and whether their margin may still change', async () => {
     const jobId = shop.jobs.guards;
     const finished = await changeJobStatus(owner, { jobId }, { status: 'finished' });
-    expect(finished).toMatchObject({ status: 'finished', marginIsProvisional: false });
+    expect(finished).toMatchObject({ status: 'finished', marginIsProvisional: false, isToInvoice: true });
     expect(finished.workInProgress).toBe(finished.total);
     const lost = await changeJobStatus(owner, { jobId }, { status: 'lost' });
-    expect(lost).toMatchObject({ workInProgress: '0.00', marginIsProvisional: true });
+    expect(lost).toMatchObject({ workInProgress: '0.00', marginIsProvisional: true, isToInvoice: false });
     const nowhere = { jobId: '0198aaaa-0000-7000-8000-000000000abc' };
     await expect(changeJobStatus(owner, nowhere, { status: 'open' })).rejects.toMatchObject({
       code: 'not_found',

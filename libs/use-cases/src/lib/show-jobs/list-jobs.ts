@@ -44,8 +44,8 @@ export async function listJobs(context: ShopContext, query: JobListQuery): Promi
 }
 
 function toTotals(context: ShopContext, sums: JobTotals): JobPage['totals'] {
-  const { jobs, quotedPrice, estimatedJobs, estimatedJobsCost } = sums;
-  const ofMoney = seesMoney(context) ? { quotedPrice, estimatedJobs, estimatedJobsCost } : {};
+  const { jobs, quotedPrice, comparedJobs, comparedCost, comparedEstimate } = sums;
+  const ofMoney = seesMoney(context) ? { quotedPrice, comparedJobs, comparedCost, comparedEstimate } : {};
   return { jobs, ...toJobFigures(context, sums), ...ofMoney };
 }
 
