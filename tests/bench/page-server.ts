@@ -25,20 +25,28 @@ export interface PageServerOptions {
 
 const logger = pino(destination({ dest: '/dev/null', sync: false }));
 
-function createWholeApp({ databaseUrl, sessionSecret }: PageServerOptions): Express {
+interface PageServer {
+  app: Express;
+  /** Ends its connections to the database. */
+  close(): Promise<unknown>;
+}
+
+function createWholeApp({ databaseUrl, sessionSecret }: PageServerOptions): PageServer {
   const pool = new pg.Pool({ connectionString: databaseUrl, max: 4 });
-  return createApp({
-    db: openDatabase(databaseUrl),
+  const db = openDatabase(databaseUrl);
+  const app = createApp({
+    db,
     sessionStore: createSessionStore(pool, (message) => logger.error(message)),
     sessionSecret,
     reader: createReader(),
     logger,
     progress: new ProgressHub(),
   });
+  return { app, close: () => Promise.all([pool.end(), db.destroy()]) };
 }
 
 /** The page's own part of the API: all that a request passes through but session, account and permission. */
-function createOpenApp({ databaseUrl }: PageServerOptions, who: Omit<ShopContext, 'db' | 'now'>): Express {
+function createOpenApp({ databaseUrl }: PageServerOptions, who: Omit<ShopContext, 'db' | 'now'>): PageServer {
   const context = { ...who, db: openDatabase(databaseUrl) };
   const { listEntries: endpoint } = ENDPOINTS;
   const app = express();
@@ -52,12 +60,14 @@ function createOpenApp({ databaseUrl }: PageServerOptions, who: Omit<ShopContext
     response.set('Cache-Control', 'no-store').json(answer);
   });
   app.use('/api', router);
-  return app;
+  return { app, close: () => context.db.destroy() };
 }
 
 process.once('message', (options: PageServerOptions) => {
-  const app = options.everybodyIs ? createOpenApp(options, options.everybodyIs) : createWholeApp(options);
+  const { app, close } = options.everybodyIs
+    ? createOpenApp(options, options.everybodyIs)
+    : createWholeApp(options);
   const server = createServer(app);
   server.listen(0, '127.0.0.1', () => process.send?.((server.address() as AddressInfo).port));
+  process.once('disconnect', () => void close().finally(() => process.exit()));
 });
-process.once('disconnect', () => process.exit());

@@ -31,7 +31,8 @@ const bench: Bench = async ({ makeDatabase }) => {
     signedIn: () => timeMs(() => ask(signedIn.address, headers)),
     open: () => timeMs(() => ask(open.address, {})),
   });
-  [signedIn, open].forEach(({ server }) => server.disconnect());
+  agent.destroy();
+  await Promise.all([signedIn, open].map(stopServer));
   await shop.close();
   const perSecond = (ms: number): string => `${Math.round((REQUESTS / ms) * 1_000)} requests/s`;
   return [
@@ -69,6 +70,13 @@ async function startServer(
   server.send(options);
   const [port] = (await once(server, 'message')) as [number];
   return { server, address: `http://127.0.0.1:${port}` };
+}
+
+/** Waits until its connections to the database are ended, so that the cluster may be stopped. */
+async function stopServer({ server }: { server: ChildProcess }): Promise<void> {
+  const exited = once(server, 'exit');
+  server.disconnect();
+  await exited;
 }
 
 /** @returns the cookies of the session */
