@@ -2,9 +2,10 @@ import { ChangeDetectionStrategy, Component, computed, inject, input, viewChild 
 import { rxResource, takeUntilDestroyed } from '@angular/core/rxjs-interop';
 import { MatDialog } from '@angular/material/dialog';
 import { Router, RouterLink } from '@angular/router';
-import { type CustomerDetail, type Job, type JobListQuery } from '@brakeven/contract';
+import { type CustomerDetail, type FigureRef, type Job, type JobListQuery } from '@brakeven/contract';
 import {
   EmptyState,
+  Figure,
   Grid,
   LoadingSkeleton,
   LocalDatePipe,
@@ -26,6 +27,7 @@ import { CUSTOMER_JOB_COLUMNS } from './customer-job-columns';
   selector: 'app-customer-page',
   imports: [
     EmptyState,
+    Figure,
     Grid,
     LoadError,
     LoadingSkeleton,
@@ -75,6 +77,10 @@ export class CustomerPage {
         this.customer.reload();
         this.grid()?.refresh();
       });
+  }
+
+  protected ref(figure: FigureRef['figure']): FigureRef {
+    return { figure, customerId: this.customerId() };
   }
 
   protected async rename(customer: CustomerDetail): Promise<void> {

@@ -52,6 +52,7 @@ const detail: CustomerDetail = { ...harbor, customerId: 'c1', name: 'Harbor Boat
 
 const api = { list: jest.fn(), get: jest.fn() };
 const jobs = { listJobs: jest.fn() };
+const opener = { open: jest.fn() };
 
 beforeEach(() => {
   jest.resetAllMocks();
@@ -63,7 +64,7 @@ beforeEach(() => {
       { provide: CustomersApi, useValue: api },
       { provide: JobsApi, useValue: jobs },
       { provide: RollupStore, useValue: { rolledUp: NEVER } },
-      { provide: WORKINGS_OPENER, useValue: { open: jest.fn() } },
+      { provide: WORKINGS_OPENER, useValue: opener },
     ],
   });
 });
@@ -82,6 +83,21 @@ describe('CustomersPage', () => {
     expect(page.find('Harbor Boats').getAttribute('href')).toBe('/c1');
   });
 
+  it('opens the workings of each sum, those of all jobs and of jobs of nobody too', async () => {
+    api.list.mockReturnValue(
+      of({ items: [harbor, nobody], totals: { ...figures, jobs: 3, total: '280.00' } }),
+    );
+    const page = await render(CustomersPage);
+    await page.press('Margin, Harbor Boats: $25.00');
+    await page.press('Invoiced, Jobs without a customer: $165.00');
+    await page.press('Cost of all: $280.00');
+    expect(opener.open.mock.calls).toEqual([
+      [{ figure: 'job.margin', customerId: 'c1' }],
+      [{ figure: 'job.invoiced', without: 'customer' }],
+      [{ figure: 'job.total' }],
+    ]);
+  });
+
   it('says where customers come from while there are none', async () => {
     api.list.mockReturnValue(of({ items: [], totals: { ...figures, jobs: 0 } }));
     expect((await render(CustomersPage)).text).toContain('added with the first job that names it');
@@ -94,6 +110,8 @@ describe('CustomerPage', () => {
     const page = await render(CustomerPage, { customerId: 'c1' });
     expect(page.text).toContain('Margin provisional $25.00 Invoiced $165.00 Cost $140.00');
     expect(page.textsOf('tbody tr')).toEqual(['Mar 20, 2026 Credit note C-3 1042 Late −$15.00']);
+    await page.press('$140.00');
+    expect(opener.open).toHaveBeenCalledWith({ figure: 'job.total', customerId: 'c1' });
     const grid = page.fixture.debugElement.query(By.directive(Grid)).componentInstance as Grid<Job>;
     grid.source()?.load({ cursor: undefined, limit: 50, sort: 'margin', direction: 'asc' });
     expect(jobs.listJobs).toHaveBeenLastCalledWith(
@@ -109,5 +127,8 @@ describe('the columns of a customer’s jobs', () => {
     expect(margin?.figure?.(job)).toEqual({ figure: 'job.margin', jobId: 'j1' });
     expect(margin?.note?.(job)).toMatchObject({ text: 'so far' });
     expect(margin?.note?.({ ...job, marginIsProvisional: false })).toBeNull();
+    expect(margin?.note?.({ ...job, marginIsProvisional: false, isToInvoice: true })).toMatchObject({
+      text: 'to invoice',
+    });
   });
 });

@@ -61,6 +61,11 @@ type Amounts = Pick<MonthTotal, 'amount' | 'toOverhead' | 'late'>;
       }
     </section>
   `,
+  styles: `
+    tbody th {
+      min-width: 130px;
+    }
+  `,
   changeDetection: ChangeDetectionStrategy.OnPush,
 })
 export class MonthTotalsCard {

@@ -1,6 +1,6 @@
 import { ChangeDetectionStrategy, Component, computed, input, output } from '@angular/core';
-import { type MonthTieOut } from '@brakeven/contract';
-import { EmptyState, HoursPipe } from '@brakeven/ui';
+import { type FigureRef, type MonthTieOut } from '@brakeven/contract';
+import { EmptyState, Figure } from '@brakeven/ui';
 import { D, hoursText, parseHoursText, sum, toHours } from '@brakeven/values';
 
 /** Hours of payroll as typed for an employee. */
@@ -15,13 +15,16 @@ export type PayrollProblems = Readonly<Record<string, string>>;
 /** Hours of the month by employee: timesheets, cost lines, and payroll's, which are typed in here and kept at once. */
 @Component({
   selector: 'app-tie-out-card',
-  imports: [EmptyState, HoursPipe],
+  imports: [EmptyState, Figure],
   templateUrl: './tie-out-card.html',
   styleUrl: './tie-out-card.scss',
   changeDetection: ChangeDetectionStrategy.OnPush,
 })
 export class TieOutCard {
   readonly rows = input.required<readonly MonthTieOut[]>();
+  /** The month's first and last day. */
+  readonly from = input.required<string>();
+  readonly to = input.required<string>();
   readonly problems = input<PayrollProblems>({});
   readonly canEdit = input(false);
   readonly saved = output<PayrollEntry>();
@@ -54,6 +57,11 @@ export class TieOutCard {
       return this.refused.emit({ employeeId, message: 'A month has from 0 to 744 hours.' });
     const hours = hoursText(parsed.value);
     if (hours !== payrollHours || this.problems()[employeeId]) this.saved.emit({ employeeId, hours });
+  }
+
+  /** Of one employee, or of all. */
+  protected ref(figure: FigureRef['figure'], row?: MonthTieOut): FigureRef {
+    return { figure, from: this.from(), to: this.to(), ...(row && { employeeId: row.employeeId }) };
   }
 
   protected isOff(difference: string | null): boolean {
