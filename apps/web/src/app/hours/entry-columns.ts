@@ -22,7 +22,7 @@ const DATE: EntryColumn = {
   kind: 'date',
   value: (row) => row.workedOn,
   isSortable: true,
-  width: 126,
+  width: 116,
 };
 const EMPLOYEE: EntryColumn = {
   id: 'employee',
@@ -54,7 +54,7 @@ const HOURS: EntryColumn = {
   kind: 'hours',
   value: (row) => row.hours,
   isSortable: true,
-  width: 92,
+  width: 84,
 };
 const GOOD: EntryColumn = {
   id: 'goodPieces',
@@ -62,7 +62,7 @@ const GOOD: EntryColumn = {
   kind: 'count',
   value: (row) => row.goodPieces,
   isSortable: true,
-  width: 84,
+  width: 76,
 };
 const SCRAP: EntryColumn = {
   id: 'scrapPieces',
@@ -70,9 +70,9 @@ const SCRAP: EntryColumn = {
   kind: 'count',
   value: (row) => row.scrapPieces,
   isSortable: true,
-  width: 84,
+  width: 76,
 };
-const NOTE: EntryColumn = { id: 'note', header: 'Note', value: (row) => row.note, minWidth: 110, flex: 2 };
+const NOTE: EntryColumn = { id: 'note', header: 'Note', value: (row) => row.note, minWidth: 100, flex: 2 };
 
 /** The columns of the hours grid; links only to pages that the role may open. */
 export function toEntryColumns(view: EntryView): EntryColumn[] {
@@ -108,7 +108,7 @@ function toSourceColumn({ canOpenSources }: EntryView): EntryColumn {
 function listActionColumns({ voidEntry }: EntryView): EntryColumn[] {
   if (!voidEntry) return [];
   const actions = (row: TimeEntry) => [{ label: 'Void', run: () => voidEntry(row) }];
-  return [{ id: 'actions', header: 'Actions', value: () => null, actions, width: 88 }];
+  return [{ id: 'actions', header: 'Actions', value: () => null, actions, width: 84 }];
 }
 
 /** The totals row over all entries of the filter; the count stands where there is a column for words. */

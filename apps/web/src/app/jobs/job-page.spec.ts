@@ -101,7 +101,7 @@ describe('JobPage', () => {
 
   it('says that a cost is not complete', async () => {
     const { element } = await render(withMoney);
-    expect(element.querySelector('.gap')?.textContent?.replace(/\s+/g, ' ')).toContain(
+    expect(element.querySelector('.remark')?.textContent?.replace(/\s+/g, ' ')).toContain(
       '2 entries have no rate',
     );
   });

@@ -124,7 +124,7 @@ const ROWS_AT_FIRST = 12;
     }
     th a {
       display: inline-block;
-      min-width: 130px;
+      min-width: 185px;
       overflow-wrap: anywhere;
     }
     .more {
