@@ -138,8 +138,8 @@ describe('PaybackPage', () => {
       lastDay: '2026-03-02',
     } as const;
     const { element, textOf } = await render(makePayback({ gaps: [gap] }));
-    expect(textOf('.gap')).toContain('Jon Reyes has no wage for 2 entries');
-    expect(element.querySelector('.gap a')?.getAttribute('href')).toBe('/people');
+    expect(textOf('.remark')).toContain('Jon Reyes has no wage for 2 entries');
+    expect(element.querySelector('.remark a')?.getAttribute('href')).toBe('/people');
   });
 
   it('says what to do when there is no machine, and what happened when it fails', async () => {
