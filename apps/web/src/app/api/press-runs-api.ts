@@ -36,6 +36,11 @@ export class PressRunsApi {
     return this.http.post<PressRun>('/api/press-runs', input);
   }
 
+  /** The run is voided and another takes its place. */
+  correct(pressRunId: string, input: PressRunInput): Observable<PressRun> {
+    return this.http.patch<PressRun>(`/api/press-runs/${pressRunId}`, input);
+  }
+
   void(pressRunId: string): Observable<void> {
     return this.http.post<void>(`/api/press-runs/${pressRunId}/void`, {});
   }

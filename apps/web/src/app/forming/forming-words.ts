@@ -25,6 +25,13 @@ export function toSizeWords(millimetres: number, units: UnitSystem): string {
   return `${number}\u00a0${LENGTH_UNIT_OF[units]}`;
 }
 
+/** Millimetres as they are typed into a field: in the shop's unit where four decimals hold them, else in mm. */
+export function toSizeText(millimetres: string, units: UnitSystem): string {
+  const inches = Number((Number(millimetres) / MM_PER_UNIT.us).toFixed(4));
+  const isHeld = Math.abs(inches * MM_PER_UNIT.us - Number(millimetres)) < 1e-5;
+  return units === 'us' && isHeld ? `${inches} in` : `${Number(millimetres)} mm`;
+}
+
 /** A force in the shop's unit, one decimal: 42.1 US tons or 374.5 kN. */
 export function toForceWords(kilonewtons: number, units: UnitSystem): string {
   return formatForce(toForce(kilonewtons.toFixed(6), 'kN'), units);

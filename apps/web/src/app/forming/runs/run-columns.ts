@@ -8,8 +8,8 @@ export interface RunView {
   units: UnitSystem;
   canOpenJobs: boolean;
   isNarrow: boolean;
-  /** Absent for those who may not. */
-  voidRun?: (run: PressRun) => void;
+  correctRun: (run: PressRun) => void;
+  voidRun: (run: PressRun) => void;
 }
 
 type RunColumn = GridColumn<PressRun>;
@@ -81,7 +81,7 @@ export function toRunColumns(view: RunView): RunColumn[] {
       isSortable: true,
       width: 84,
     },
-    toShareColumn(),
+    toShareColumn(view),
     {
       id: 'isGood',
       header: 'Run',
@@ -90,20 +90,21 @@ export function toRunColumns(view: RunView): RunColumn[] {
       width: 84,
     },
   ];
-  return [...columns.filter(({ id }) => !view.isNarrow || NARROW.includes(id)), ...toActions(view)];
+  return [...columns.filter(({ id }) => !view.isNarrow || NARROW.includes(id)), toActions(view)];
 }
 
 /** On a telephone: what was bent, and what it took. */
-const NARROW = ['runOn', 'job', 'forceUsedKn', 'share'];
+const NARROW = ['runOn', 'job', 'share'];
 
-function toShareColumn(): RunColumn {
+function toShareColumn({ isNarrow }: RunView): RunColumn {
+  const of = ({ ratingOf }: PressRun) => (isNarrow ? '' : ` of ${ratingOf}`);
   return {
     id: 'share',
-    header: 'Of the rating',
-    value: (run) => (run.share === null ? 'no rating' : `${toPercentWords(run.share)} of ${run.ratingOf}`),
+    header: isNarrow ? 'Force' : 'Of the rating',
+    value: (run) => (run.share === null ? 'no rating' : `${toPercentWords(run.share)}${of(run)}`),
     tone: (run) => toShareTone(run),
     isSortable: true,
-    width: 124,
+    width: isNarrow ? 88 : 124,
   };
 }
 
@@ -112,15 +113,15 @@ function toShareTone({ share, isAboveLine }: PressRun): 'loss' | 'plan' | null {
   return isAboveLine ? 'plan' : null;
 }
 
-function toActions({ voidRun }: RunView): RunColumn[] {
-  if (!voidRun) return [];
-  return [
-    {
-      id: 'actions',
-      header: '',
-      value: () => null,
-      actions: (run) => [{ label: 'Void', run: () => voidRun(run) }],
-      width: 76,
-    },
-  ];
+function toActions({ correctRun, voidRun }: RunView): RunColumn {
+  return {
+    id: 'actions',
+    header: '',
+    value: () => null,
+    actions: (run) => [
+      { label: 'Correct', run: () => correctRun(run) },
+      { label: 'Void', run: () => voidRun(run) },
+    ],
+    width: 132,
+  };
 }

@@ -2,6 +2,7 @@ import { ChangeDetectionStrategy, Component, computed, effect, inject, untracked
 import { rxResource, toSignal } from '@angular/core/rxjs-interop';
 import { ReactiveFormsModule } from '@angular/forms';
 import { MAT_DIALOG_DATA } from '@angular/material/dialog';
+import { type PressRun, type PressRunChoices } from '@brakeven/contract';
 import { formatHours, formatLocalDate, todayIn, toLocalDate } from '@brakeven/values';
 import { startWith } from 'rxjs';
 import { PressRunsApi } from '../../api/press-runs-api';
@@ -14,13 +15,29 @@ import { toForceBand } from '../forming-words';
 import { toOpeningWords } from '../press-tooling';
 import { previewForce, toRunForm, toRunInput } from './run-form';
 
-/** Logs a run: what was bent with what, and the highest force that the gauge showed. */
+export interface RunDialogData {
+  facts: FitFacts;
+  /** The run to be corrected; null for a new one. */
+  run: PressRun | null;
+}
+
+/** Logs or corrects a run: what was bent with what, and the highest force that the gauge showed. */
 @Component({
   selector: 'app-run-dialog',
   imports: [FormDialog, FormField, LoadError, ReactiveFormsModule],
   template: `
     @let fields = form.controls;
-    <app-form-dialog heading="Log a press run" submitLabel="Log the run" [form]="form" [save]="save">
+    <app-form-dialog
+      [heading]="run ? 'Correct a press run' : 'Log a press run'"
+      [submitLabel]="run ? 'Save' : 'Log the run'"
+      [form]="form"
+      [save]="save"
+    >
+      @if (run) {
+        <p lead class="muted">
+          The run as it was is voided and this one takes its place, with the force computed anew.
+        </p>
+      }
       @if (choices.error(); as error) {
         <app-load-error lead [error]="error" (retried)="choices.reload()" />
       }
@@ -65,9 +82,12 @@ import { previewForce, toRunForm, toRunInput } from './run-form';
   changeDetection: ChangeDetectionStrategy.OnPush,
 })
 export class RunDialog {
-  protected readonly facts = inject<FitFacts>(MAT_DIALOG_DATA);
+  private readonly data = inject<RunDialogData>(MAT_DIALOG_DATA);
+  protected readonly facts = this.data.facts;
+  protected readonly run = this.data.run;
   private readonly api = inject(PressRunsApi);
-  protected readonly form = toRunForm(this.facts, todayIn(inject(SessionStore).shopFormat().timeZone));
+  private readonly today = todayIn(inject(SessionStore).shopFormat().timeZone);
+  protected readonly form = toRunForm(this.facts, this.today, this.run);
   private readonly value = toSignal(this.form.valueChanges.pipe(startWith(null)));
 
   private readonly jobId = computed(() => {
@@ -83,8 +103,8 @@ export class RunDialog {
   private readonly offeredJobs = computed(() => (this.choices.hasValue() ? this.choices.value().jobs : []));
   private readonly offeredEntries = computed(() => (this.ofJob.hasValue() ? this.ofJob.value().entries : []));
   protected readonly jobs = computed(() => [
-    { value: '', label: '' },
-    ...this.offeredJobs().map(({ jobId, number, title }) => ({ value: jobId, label: `${number} ${title}` })),
+    ...(this.run ? [] : [{ value: '', label: '' }]),
+    ...this.listJobs().map(({ jobId, number, title }) => ({ value: jobId, label: `${number} ${title}` })),
   ]);
   protected readonly entries = computed(() => [
     { value: '', label: 'none' },
@@ -93,6 +113,13 @@ export class RunDialog {
       label: `${formatLocalDate(toLocalDate(entry.workedOn))} · ${entry.employee} · ${entry.operation} · ${formatHours(entry.hours)} h`,
     })),
   ]);
+  private listJobs(): PressRunChoices['jobs'] {
+    const jobs = this.offeredJobs();
+    if (!this.run || jobs.some(({ jobId }) => jobId === this.run?.jobId)) return jobs;
+    const { jobId, jobNumber, jobTitle } = this.run;
+    return [{ jobId, number: jobNumber, title: jobTitle }, ...jobs];
+  }
+
   private readonly press = computed(() => {
     this.value();
     return this.facts.presses.find(({ code }) => code === this.form.controls.machine.value);
@@ -126,7 +153,18 @@ export class RunDialog {
         if (!press?.punches.some(({ code }) => code === punchId.value)) punchId.setValue('');
       });
     });
+    // An entry of another job, or one that was voided, is not offered and cannot stay chosen.
+    effect(() => {
+      if (!this.ofJob.hasValue()) return;
+      const [offered, { entryId }] = [this.offeredEntries(), this.form.controls];
+      untracked(() => {
+        if (!offered.some((entry) => entry.entryId === entryId.value)) entryId.setValue('');
+      });
+    });
   }
 
-  protected readonly save = () => this.api.create(toRunInput(this.form, this.facts));
+  protected readonly save = () => {
+    const input = toRunInput(this.form, this.facts, this.run);
+    return this.run ? this.api.correct(this.run.pressRunId, input) : this.api.create(input);
+  };
 }

@@ -1,13 +1,5 @@
-import {
-  ChangeDetectionStrategy,
-  Component,
-  computed,
-  DOCUMENT,
-  inject,
-  input,
-  viewChild,
-} from '@angular/core';
-import { rxResource, takeUntilDestroyed } from '@angular/core/rxjs-interop';
+import { ChangeDetectionStrategy, Component, computed, inject, input, viewChild } from '@angular/core';
+import { rxResource } from '@angular/core/rxjs-interop';
 import { MatDialog } from '@angular/material/dialog';
 import { Router } from '@angular/router';
 import { type PressRun, type PressRunFilter, type PressRunQuery } from '@brakeven/contract';
@@ -20,17 +12,17 @@ import {
   LoadingSkeleton,
   type PageSource,
 } from '@brakeven/ui';
-import { debounceTime, Subject } from 'rxjs';
 import { PressRunsApi } from '../../api/press-runs-api';
 import { toProblemSentence } from '../../api/problem-text';
 import { SessionStore } from '../../session/session-store';
+import { injectGridAddress, toGridOrder } from '../../shell/grid-address';
 import { LoadError } from '../../shell/load-error';
 import { Notifier } from '../../shell/notifier';
 import { toPercentWords, toSizeWords } from '../forming-words';
 import { FormingStore } from '../forming-store';
 import { toDistributionOption, toDistributionTable, toDistributionWords } from './distribution-option';
 import { toRunColumns } from './run-columns';
-import { RunDialog } from './run-dialog';
+import { RunDialog, type RunDialogData } from './run-dialog';
 
 const DEFAULT_ORDER: GridOrder = { sort: 'runOn', direction: 'desc' };
 
@@ -58,8 +50,7 @@ export class RunsPage {
   private readonly dialog = inject(MatDialog);
   private readonly router = inject(Router);
   private readonly grid = viewChild<Grid<PressRun>>(Grid);
-  private readonly isNarrow = inject(DOCUMENT).defaultView?.matchMedia('(width < 640px)').matches ?? false;
-  private readonly typed = new Subject<string>();
+  protected readonly address = injectGridAddress();
   private readonly units = this.session.shopFormat().units;
 
   protected readonly forceUnit = this.units === 'us' ? 'US tons' : 'kN';
@@ -87,16 +78,13 @@ export class RunsPage {
     const filter = this.filter();
     return { load: (request) => this.api.list({ ...filter, ...(request as Partial<PressRunQuery>) }) };
   });
-  protected readonly order = computed<GridOrder>(() =>
-    this.sort()
-      ? { sort: this.sort() ?? '', direction: this.direction() === 'asc' ? 'asc' : 'desc' }
-      : DEFAULT_ORDER,
-  );
+  protected readonly order = computed(() => toGridOrder(this.sort(), this.direction(), DEFAULT_ORDER));
   protected readonly columns = computed(() =>
     toRunColumns({
       units: this.units,
       canOpenJobs: this.session.can('jobs.view'),
-      isNarrow: this.isNarrow,
+      isNarrow: this.address.isNarrow,
+      correctRun: (run) => this.openDialog(run, 'The run is corrected.'),
       voidRun: (run) => this.void(run),
     }),
   );
@@ -118,37 +106,24 @@ export class RunsPage {
   protected readonly rowId = (run: PressRun): string => run.pressRunId;
   protected readonly rowTone = (run: PressRun): 'problem' | null => (run.isAboveLine ? 'problem' : null);
 
-  constructor() {
-    this.typed
-      .pipe(debounceTime(300), takeUntilDestroyed())
-      .subscribe((search) => this.ask({ search: search.trim() || null }));
-  }
-
-  protected ask(queryParams: Record<string, string | null>): void {
-    void this.router.navigate([], { queryParams, queryParamsHandling: 'merge', replaceUrl: true });
-  }
-
-  protected searchFor(text: string): void {
-    this.typed.next(text);
-  }
-
   protected clear(): void {
     void this.router.navigate([], { queryParams: {} });
   }
 
-  protected follow(href: string): void {
-    void this.router.navigateByUrl(href);
+  protected log(): void {
+    this.openDialog(null, 'The run is logged.');
   }
 
-  protected log(): void {
+  private openDialog(run: PressRun | null, done: string): void {
+    const data: RunDialogData = { facts: this.store.facts(), run };
     this.dialog
-      .open<RunDialog, unknown, PressRun>(RunDialog, { data: this.store.facts(), width: '640px' })
+      .open<RunDialog, RunDialogData, PressRun>(RunDialog, { data, width: '640px' })
       .afterClosed()
-      .subscribe((run) => {
-        if (!run) return;
+      .subscribe((saved) => {
+        if (!saved) return;
         this.reload();
-        const share = run.share === null ? '' : ` It took ${toPercentWords(run.share)} of the rating.`;
-        this.notifier.say(`The run is logged.${share}`);
+        const share = saved.share === null ? '' : ` It took ${toPercentWords(saved.share)} of the rating.`;
+        this.notifier.say(`${done}${share}`);
       });
   }
 
