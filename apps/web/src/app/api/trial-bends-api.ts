@@ -11,7 +11,7 @@ import {
   type TrialBendPaste,
   type TrialBendPasteResult,
 } from '@brakeven/contract';
-import { type Observable } from 'rxjs';
+import { map, type Observable } from 'rxjs';
 import { toQueryParams } from './query-params';
 
 /** Which trial bends are meant. */
@@ -33,6 +33,12 @@ export class TrialBendsApi {
   list(filter: TrialBendFilter): Observable<TrialBendPage> {
     const params = toQueryParams({ ...filter, limit: SHOWN_MAX });
     return this.http.get<TrialBendPage>('/api/trial-bends', { params });
+  }
+
+  /** The latest of all set-ups; undefined if there is none. */
+  getLatest(): Observable<TrialBendDto | undefined> {
+    const params = toQueryParams({ limit: 1 });
+    return this.http.get<TrialBendPage>('/api/trial-bends', { params }).pipe(map(({ items }) => items[0]));
   }
 
   create(input: TrialBendInput): Observable<TrialBendDto> {

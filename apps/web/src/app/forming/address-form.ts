@@ -23,9 +23,14 @@ export function toTextForm<T extends Texts<T>>(texts: T): TextForm<T> {
 
 /**
  * Keeps the fields of a form in the address, so that a result is a link that can be sent on: a field at its default is
- * left out. Answers what the fields say now. To be called while a component is made.
+ * left out, unless the default may be another tomorrow, as the shop's tools and bends change. Answers what the fields
+ * say now. To be called while a component is made.
  */
-export function keepInAddress<T extends Texts<T>>(form: TextForm<T>, defaults: T): Signal<T> {
+export function keepInAddress<T extends Texts<T>>(
+  form: TextForm<T>,
+  defaults: T,
+  passing: readonly (keyof T)[] = [],
+): Signal<T> {
   const [router, route, destroyed] = [inject(Router), inject(ActivatedRoute), inject(DestroyRef)];
   const read = () => form.getRawValue() as T;
   let written = '';
@@ -37,9 +42,13 @@ export function keepInAddress<T extends Texts<T>>(form: TextForm<T>, defaults: T
   take(route.snapshot.queryParamMap);
   const texts = toSignal(form.valueChanges.pipe(startWith(null), map(read)), { requireSync: true });
   route.queryParamMap.pipe(takeUntilDestroyed(destroyed)).subscribe(take);
-  form.valueChanges.pipe(debounceTime(QUIET_MS), takeUntilDestroyed(destroyed)).subscribe(() => {
+  const isWhole = passing.every((name) => route.snapshot.queryParamMap.has(String(name)));
+  const changes = isWhole ? form.valueChanges : form.valueChanges.pipe(startWith(null));
+  const left: Partial<T> = { ...defaults };
+  for (const name of passing) delete left[name];
+  changes.pipe(debounceTime(QUIET_MS), takeUntilDestroyed(destroyed)).subscribe(() => {
     written = toKey(read());
-    const queryParams = toQuery(read(), defaults);
+    const queryParams = toQuery(read(), left);
     const extras = {
       relativeTo: route,
       queryParams,
@@ -56,13 +65,10 @@ function readAddress<T extends Texts<T>>(params: ParamMap, defaults: T): T {
   return Object.fromEntries(texts) as T;
 }
 
-/** What goes into the address; null takes a name out of it. */
-function toQuery<T extends Texts<T>>(texts: T, defaults: T): Record<string, string | null> {
+/** What goes into the address; null takes a name out of it, that of a text which is left out. */
+function toQuery<T extends Texts<T>>(texts: T, left: Partial<T>): Record<string, string | null> {
   return Object.fromEntries(
-    Object.entries<string>(texts).map(([name, text]) => [
-      name,
-      text === defaults[name as keyof T] ? null : text,
-    ]),
+    Object.entries<string>(texts).map(([name, text]) => [name, text === left[name as keyof T] ? null : text]),
   );
 }
 

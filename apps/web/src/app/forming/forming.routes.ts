@@ -1,4 +1,5 @@
 import { type Routes } from '@angular/router';
+import { latestTrial } from './depth/latest-trial';
 import { FormingPage } from './forming-page';
 import { FormingStore } from './forming-store';
 
@@ -17,6 +18,7 @@ export const formingRoutes: Routes = [
       {
         path: 'depth',
         title: 'Ram depth',
+        resolve: { latest: latestTrial },
         loadComponent: () => import('./depth/depth-page').then((m) => m.DepthPage),
       },
       {

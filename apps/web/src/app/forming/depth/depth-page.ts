@@ -2,7 +2,7 @@ import { ChangeDetectionStrategy, Component, computed, effect, inject, untracked
 import { rxResource } from '@angular/core/rxjs-interop';
 import { ReactiveFormsModule } from '@angular/forms';
 import { MatDialog } from '@angular/material/dialog';
-import { RouterLink } from '@angular/router';
+import { ActivatedRoute, RouterLink } from '@angular/router';
 import { type TrialBendDto } from '@brakeven/contract';
 import { type BendSetup, findAngle, findDepth, FORMING_RULES } from '@brakeven/forming';
 import { Chart, type ChartPalette, EmptyState, LoadingSkeleton } from '@brakeven/ui';
@@ -16,12 +16,13 @@ import { Notifier } from '../../shell/notifier';
 import { keepInAddress, toTextForm } from '../address-form';
 import { toAngleWords, toLengthWords, toNumberWords, toSizeWords } from '../forming-words';
 import { FormingStore } from '../forming-store';
-import { findFirstPress, toOpeningWords } from '../press-tooling';
+import { toOpeningWords } from '../press-tooling';
 import { PrintButton } from '../print-button';
 import { showFieldWords } from '../show-field-words';
 import { type ChartBend, toDepthChartOption } from './depth-chart-option';
 import { isGuess, refit, traceCurve } from './depth-curve';
-import { type DepthTexts, readDepthQuestion } from './depth-question';
+import { readDepthQuestion } from './depth-question';
+import { SETUP_TEXTS, toDepthDefaults } from './depth-defaults';
 import { PasteDialog } from './paste-dialog';
 import { TrialDialog, type TrialDialogData } from './trial-dialog';
 import { TrialTable } from './trial-table';
@@ -53,18 +54,10 @@ export class DepthPage {
   protected readonly units = this.session.shopFormat().units;
   protected readonly rules = FORMING_RULES;
 
-  private readonly first = findFirstPress(this.store.presses());
-  private readonly defaults: DepthTexts = {
-    machine: this.first?.code ?? '',
-    punch: this.first?.punches[0]?.code ?? '',
-    opening: this.first?.openings[0]?.code ?? '',
-    material: 'mild-steel',
-    thickness: this.units === 'us' ? '10 ga' : '3 mm',
-    angle: '90',
-    reading: '',
-  };
+  private readonly latest = inject(ActivatedRoute).snapshot.data['latest'] as TrialBendDto | null;
+  private readonly defaults = toDepthDefaults(this.store.presses(), this.latest, this.units);
   protected readonly form = toTextForm(this.defaults);
-  private readonly texts = keepInAddress(this.form, this.defaults);
+  private readonly texts = keepInAddress(this.form, this.defaults, SETUP_TEXTS);
   protected readonly question = computed(() => readDepthQuestion(this.texts(), this.store.facts()));
   protected readonly canLog = computed(() => this.session.can('press-runs.log'));
   protected readonly materials = this.store.materialOptions;

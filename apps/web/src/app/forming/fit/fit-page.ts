@@ -48,7 +48,7 @@ export class FitPage {
     openings: this.first?.openings.length ? '' : COMMON_OPENINGS[this.units],
   };
   protected readonly form = toTextForm(this.defaults);
-  private readonly texts = keepInAddress(this.form, this.defaults);
+  private readonly texts = keepInAddress(this.form, this.defaults, ['machine']);
   protected readonly question = computed(() => readFitQuestion(this.texts(), this.store.facts()));
   protected readonly fit = computed(() => {
     const { input } = this.question();
