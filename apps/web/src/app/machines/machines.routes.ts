@@ -1,4 +1,5 @@
 import { type Routes } from '@angular/router';
+import { leaveGuard } from '../forms/leave-guard';
 
 export const machinesRoutes: Routes = [
   { path: '', title: 'Machines', loadComponent: () => import('./machines-page').then((m) => m.MachinesPage) },
@@ -12,5 +13,6 @@ export const machinesRoutes: Routes = [
     title: 'Machine-hour rate',
     data: { permission: 'machines.money' },
     loadComponent: () => import('./rate-builder-page').then((m) => m.RateBuilderPage),
+    canDeactivate: [leaveGuard],
   },
 ];

@@ -1,8 +1,9 @@
 import { HttpErrorResponse } from '@angular/common/http';
 import { TestBed } from '@angular/core/testing';
+import { MatDialog, type MatDialogRef } from '@angular/material/dialog';
 import { provideRouter, Router } from '@angular/router';
 import { type Machine, type MachineRate, type MachineRecovery } from '@brakeven/contract';
-import { of, throwError } from 'rxjs';
+import { firstValueFrom, type Observable, of, throwError } from 'rxjs';
 import { MachinesApi } from '../api/machines-api';
 import { RollupStore } from '../shell/rollup-store';
 import { provideSession } from '../testing/fake-session';
@@ -124,6 +125,19 @@ describe('RateBuilderPage', () => {
       runningCostPerHour: '2.3925',
       basis: built.basis,
     });
+  });
+
+  it('asks before changes are left that are not saved, and not once they are', async () => {
+    await open(machine, 'r2');
+    const ask = jest.spyOn(TestBed.inject(MatDialog), 'open');
+    ask.mockReturnValue({ afterClosed: () => of(false) } as MatDialogRef<unknown>);
+    const { canLeave } = page.fixture.componentInstance;
+    expect(canLeave()).toBe(true);
+    await page.press('Take it as running cost');
+    expect(await firstValueFrom(canLeave() as Observable<boolean>)).toBe(false);
+    await page.press('Save the rate');
+    expect(canLeave()).toBe(true);
+    expect(ask).toHaveBeenCalledTimes(1);
   });
 
   it('stays filled and says why when the server refuses', async () => {

@@ -17,6 +17,8 @@ import { map, startWith, switchMap } from 'rxjs';
 import { MachinesApi } from '../api/machines-api';
 import { type ShownProblem, toShownProblem } from '../api/problem-text';
 import { FormField } from '../forms/form-field';
+import { guardUnsaved } from '../forms/guard-unsaved';
+import { type Leavable } from '../forms/leave-guard';
 import { parsedBy, showIssues } from '../forms/parsed-by';
 import { textControl } from '../forms/text-control';
 import { findCurrentRate } from '../rates/current-rate';
@@ -47,7 +49,7 @@ import { RecoveryCard } from './recovery-card';
   styleUrl: './rate-builder-page.scss',
   changeDetection: ChangeDetectionStrategy.OnPush,
 })
-export class RateBuilderPage {
+export class RateBuilderPage implements Leavable {
   readonly machineId = input.required<string>();
   /** The rate to build anew, from the address; absent for a new one. */
   readonly rate = input<string>();
@@ -99,8 +101,12 @@ export class RateBuilderPage {
   });
   protected readonly isCorrection = computed(() => this.own() !== undefined);
 
+  readonly canLeave = guardUnsaved(() => this.form().dirty, 'What you changed in this rate is not saved.');
+
   protected takeSuggestion(rate: string): void {
-    this.form().controls.runningCostPerHour.setValue(rate);
+    const { runningCostPerHour } = this.form().controls;
+    runningCostPerHour.setValue(rate);
+    runningCostPerHour.markAsDirty();
   }
 
   protected save(): void {
