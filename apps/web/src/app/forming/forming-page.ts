@@ -41,7 +41,14 @@ const PARTS: readonly FormingPart[] = [
     </app-page-header>
     <nav aria-label="Parts of Forming">
       @for (part of parts(); track part.path) {
-        <a [routerLink]="part.path" routerLinkActive="here" ariaCurrentWhenActive="page">{{ part.label }}</a>
+        <a
+          #link
+          [routerLink]="part.path"
+          routerLinkActive="here"
+          ariaCurrentWhenActive="page"
+          (isActiveChange)="$event && show(link)"
+          >{{ part.label }}</a
+        >
       }
     </nav>
     <app-forming-caution />
@@ -62,4 +69,10 @@ export class FormingPage {
   private readonly session = inject(SessionStore);
   protected readonly store = inject(FormingStore);
   protected readonly parts = computed(() => PARTS.filter(({ permission }) => this.session.can(permission)));
+
+  /** On a telephone not all parts fit: the chosen one is scrolled to. */
+  protected show(link: HTMLElement): void {
+    const row = link.parentElement;
+    if (row) row.scrollLeft = link.offsetLeft - row.offsetLeft - (row.clientWidth - link.offsetWidth) / 2;
+  }
 }

@@ -17,6 +17,7 @@ const SECTIONS = [
   { id: 'settings', label: 'Settings' },
   { id: 'users', label: 'Users' },
   { id: 'operations', label: 'Operations' },
+  { id: 'tools', label: 'Dies and punches' },
   { id: 'setup', label: 'Set-up workbook' },
   { id: 'audit', label: 'Audit trail' },
 ] as const;

@@ -3,11 +3,12 @@ import { MatDialog } from '@angular/material/dialog';
 import { type ShopGauge } from '@brakeven/contract';
 import { GAUGE_NOTES, GAUGE_SOURCES, GAUGE_SYSTEMS, type GaugeSystem, listGauges } from '@brakeven/forming';
 import { StatusTag } from '@brakeven/ui';
+import { type UnitSystem } from '@brakeven/values';
 import { FormingApi } from '../../api/forming-api';
 import { toProblemSentence } from '../../api/problem-text';
 import { SessionStore } from '../../session/session-store';
 import { Notifier } from '../../shell/notifier';
-import { toSizeWords } from '../forming-words';
+import { toNumberWords } from '../forming-words';
 import { GaugeDialog, type GaugeDialogData } from './gauge-dialog';
 
 const MM_PER_IN = 25.4;
@@ -148,6 +149,13 @@ export class GaugeCard {
 
   private toRow(gauge: number, millimetres: number, source: string, isOwn: boolean) {
     const thicknessMm = String(Number(millimetres.toFixed(5)));
-    return { gauge, thicknessMm, words: toSizeWords(millimetres, this.units), source, isOwn };
+    return { gauge, thicknessMm, words: toGaugeWords(millimetres, this.units), source, isOwn };
   }
+}
+
+/** A thickness as charts print it, all with the same decimals. */
+function toGaugeWords(millimetres: number, units: UnitSystem): string {
+  return units === 'us'
+    ? `${toNumberWords(millimetres / MM_PER_IN, 4)}\u00a0in`
+    : `${toNumberWords(millimetres, 3)}\u00a0mm`;
 }

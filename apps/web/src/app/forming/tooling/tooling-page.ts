@@ -10,7 +10,7 @@ import { confirm } from '../../forms/confirm-dialog';
 import { STRESS_UNITS, toStressText } from '../../materials/stock-text';
 import { SessionStore } from '../../session/session-store';
 import { Notifier } from '../../shell/notifier';
-import { toAngleWords } from '../forming-words';
+import { toAngleWords, toNumberWords } from '../forming-words';
 import { FormingStore } from '../forming-store';
 import { listPresses } from '../press-tooling';
 import { DieDialog } from './die-dialog';
@@ -19,11 +19,12 @@ import { LineDialog } from './line-dialog';
 import { BendMaterialDialog } from './material-dialog';
 import { PunchDialog } from './punch-dialog';
 import { LIMIT_UNITS, toLimitText } from './tool-text';
+import { ToolActions } from './tool-actions';
 
 /** The tools of each press and the figures that bends are computed from, each with where it comes from. */
 @Component({
   selector: 'app-tooling-page',
-  imports: [EmptyState, ForcePipe, GaugeCard, LengthPipe, StatusTag],
+  imports: [EmptyState, ForcePipe, GaugeCard, LengthPipe, StatusTag, ToolActions],
   templateUrl: './tooling-page.html',
   styleUrl: './tooling-page.scss',
   changeDetection: ChangeDetectionStrategy.OnPush,
@@ -53,8 +54,14 @@ export class ToolingPage {
     return toLimitText(kilonewtonsPerM, this.units) || '–';
   }
 
+  /** To one decimal of a ksi, or a whole MPa, below which no two sheets agree. */
   protected stress(mpa: string | null): string {
-    return toStressText(mpa, this.units) || '–';
+    if (mpa === null) return '–';
+    return toNumberWords(Number(toStressText(mpa, this.units)), this.units === 'us' ? 1 : 0);
+  }
+
+  protected density({ densityKgM3 }: FormingMaterialDto): string {
+    return toNumberWords(Number(densityKgM3) / 1000, 2);
   }
 
   protected angle(degrees: string | null): string {
