@@ -143,7 +143,7 @@ export async function listPressRunRows(
   return rows;
 }
 
-/** Of each material, thickness, opening and bend length of a job, the latest good run; the latest of them first. */
+/** Of each machine, material, thickness and bend length of a job, the latest good run; the latest of them first. */
 export async function listLastGoodRuns(trx: ShopTransaction, jobId: string): Promise<PressRunRow[]> {
   const { rows } = await sql<PressRunRow>`
     select * from (
@@ -225,8 +225,12 @@ export function listRunnableJobs(trx: ShopTransaction) {
 export function listRunEntries(trx: ShopTransaction, jobId: string, employeeId?: string) {
   return trx
     .selectFrom('timeEntry as t')
-    .innerJoin('employee as e', 'e.employeeId', 't.employeeId')
-    .innerJoin('operation as o', 'o.operationId', 't.operationId')
+    .innerJoin('employee as e', (join) =>
+      join.onRef('e.shopId', '=', 't.shopId').onRef('e.employeeId', '=', 't.employeeId'),
+    )
+    .innerJoin('operation as o', (join) =>
+      join.onRef('o.shopId', '=', 't.shopId').onRef('o.operationId', '=', 't.operationId'),
+    )
     .select(['t.entryId', 't.workedOn', 'e.name as employee', 'o.name as operation', 't.hours'])
     .where('t.jobId', '=', jobId)
     .where('t.voidedAt', 'is', null)

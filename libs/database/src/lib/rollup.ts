@@ -30,18 +30,20 @@ export async function beginRollup(trx: ShopTransaction, shopId: string): Promise
 
 /**
  * Takes the days up to `through` off the list of those that wait. Whoever marks one of them meanwhile waits for
- * this transaction and then marks it again, so that no change falls between two rollups.
+ * this transaction and then marks it again, and a day that is marked first meanwhile stays on the list, so that no
+ * change falls between two rollups.
  */
 export async function takeDirtyDays(trx: ShopTransaction, through: string): Promise<string[]> {
-  const days = await trx
+  const rows = await trx
     .selectFrom('dirtyDay')
     .select('workedOn')
     .where('workedOn', '<=', through)
     .orderBy('workedOn')
     .forUpdate()
     .execute();
-  await trx.deleteFrom('dirtyDay').where('workedOn', '<=', through).execute();
-  return days.map((day) => day.workedOn);
+  const days = rows.map((row) => row.workedOn);
+  await sql`delete from dirty_day where worked_on = any (${days}::date[])`.execute(trx);
+  return days;
 }
 
 /**

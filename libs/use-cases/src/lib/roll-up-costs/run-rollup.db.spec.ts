@@ -150,6 +150,22 @@ describe('a rollup', () => {
     expect(await readStoredCosts(shop)).toEqual(toStoredCosts(await computeExpectedCosts(shop)));
   });
 
+  it('keeps a day waiting that is marked while it takes the others', async () => {
+    await addHours(shop, '2026-03-04', '8');
+    const held = await holdRows(shop, 'dirty_day');
+    const running = rollUp();
+    try {
+      await held.untilBlocked();
+      await addHours(shop, '2026-03-05', '6');
+    } finally {
+      await held.release();
+    }
+    expect(await running).toMatchObject({ days: 1 });
+    expect(await getRollupStatus(shop.context())).toMatchObject({ daysWaiting: 1, entriesWaiting: 1 });
+    await rollUp();
+    expect(await readStoredCosts(shop)).toEqual(toStoredCosts(await computeExpectedCosts(shop)));
+  });
+
   it('leaves everything as it was when it is killed in the middle, and goes through afterwards', async () => {
     await addHours(shop, '2026-03-04', '8');
     await rollUp();
@@ -258,7 +274,7 @@ describe('the rollup status', () => {
     await addHours(shop, '2026-03-11', '2');
     await runRollup(shop.context('owner', { now }), {});
     await addHours(shop, '2026-03-11', '1');
-    const held = await holdJobDays(shop);
+    const held = await holdRows(shop, 'job_day');
     const running = runRollup(shop.context('owner', { now }), {});
     try {
       await held.untilBlocked();
@@ -271,11 +287,11 @@ describe('the rollup status', () => {
   });
 });
 
-/** Locks the shop's job days, which the rollup writes after the lines, so that it stops in the middle. */
-async function holdJobDays(shop: Shop) {
+/** Locks rows of the shop: the days that wait are taken first, job days are written after the lines. */
+async function holdRows(shop: Shop, table: 'dirty_day' | 'job_day') {
   const holder = await shop.db.startTransaction().execute();
   await sql`select set_config('app.shop_id', ${shop.shop.shopId}, true)`.execute(holder);
-  await sql`select from job_day for update`.execute(holder);
+  await sql`select from ${sql.table(table)} for update`.execute(holder);
   const { rows } = await sql<{ pid: number }>`select pg_backend_pid() as pid`.execute(holder);
   const findBlocked = async () => {
     const blocked = await sql<{ pid: number }>`
@@ -294,7 +310,7 @@ async function holdJobDays(shop: Shop) {
 }
 
 async function killWhileWriting(shop: Shop, start: () => Promise<unknown>): Promise<void> {
-  const held = await holdJobDays(shop);
+  const held = await holdRows(shop, 'job_day');
   try {
     const outcome = start().then(
       () => 'went through',
