@@ -5,6 +5,7 @@ import { TestBed } from '@angular/core/testing';
 import { provideRouter, Router } from '@angular/router';
 import { type Role, type Session } from '@brakeven/contract';
 import { authGuard, homeGuard, permissionGuard } from './auth-guard';
+import { Notifier } from '../shell/notifier';
 import { sessionInterceptor } from './session-interceptor';
 import { SessionStore } from './session-store';
 
@@ -135,6 +136,20 @@ describe('the session', () => {
     await new Promise((resolve) => setTimeout(resolve));
     expect(store.session()).toBeNull();
     expect(router.parseUrl(router.url).queryParams).toEqual({ returnTo: '/hours', expired: 'true' });
+  });
+
+  it('keeps the shop’s units for somebody who stays with unsaved work after the session has run out', async () => {
+    await signInAs('owner');
+    await router.navigateByUrl('/hours');
+    const stays = jest.spyOn(router, 'navigate').mockResolvedValue(false);
+    TestBed.inject(HttpClient)
+      .get('/api/entries')
+      .subscribe({ error: () => undefined });
+    http.expectOne('/api/entries').flush({}, { status: 401, statusText: 'Unauthorized' });
+    await new Promise((resolve) => setTimeout(resolve));
+    expect(stays).toHaveBeenCalledTimes(1);
+    expect(store.session()).not.toBeNull();
+    expect(TestBed.inject(Notifier).notice()?.text).toContain('Sign in in another tab');
   });
 
   it('leaves other refusals to whoever asked', async () => {
