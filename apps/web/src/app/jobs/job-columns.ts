@@ -71,7 +71,7 @@ const MONEY: readonly FigureColumn[] = [
     note: toMarginNote,
     // What is done and not invoiced yet is work in progress, no loss.
     isLoss: (job) => job.marginIsProvisional === false && !job.isToInvoice && isBelowZero(job.margin),
-    width: 140,
+    width: 160,
   }),
   money('workInProgress', 'In progress', 'job.workInProgress', { width: 100 }),
 ];
@@ -158,15 +158,15 @@ const WORDS: readonly GridColumn<Job>[] = [
     href: (job) => `/jobs/${job.jobId}`,
     isSortable: true,
     isPinned: true,
-    width: 78,
+    width: 70,
   },
-  { id: 'title', header: 'Title', value: (job) => job.title, isSortable: true, minWidth: 116, flex: 2 },
+  { id: 'title', header: 'Title', value: (job) => job.title, isSortable: true, minWidth: 112, flex: 1 },
   {
     id: 'customer',
     header: 'Customer',
     value: (job) => job.customer,
     isSortable: true,
-    minWidth: 104,
+    minWidth: 112,
     flex: 1.5,
   },
   {
@@ -194,7 +194,7 @@ const DATES: readonly GridColumn<Job>[] = [
 ];
 
 function toDateColumn(id: JobSort, header: string, value: GridColumn<Job>['value']): GridColumn<Job> {
-  return { id, header, kind: 'date', value, isSortable: true, width: 120 };
+  return { id, header, kind: 'date', value, isSortable: true, width: 112 };
 }
 
 function toGridColumn({ field, header, figure, kind, width, rest }: FigureColumn): GridColumn<Job> {
