@@ -128,6 +128,8 @@ describe('JobPage', () => {
   it('says what to do while no time is on the job', async () => {
     const { element } = await render({ ...withMoney, total: '0.00', lastWorkedOn: null });
     expect(element.querySelector('app-empty-state')?.textContent).toContain('No time on this job yet');
+    // Nor is anybody led to a page that is not for their role.
+    expect(element.querySelector('app-empty-state a')).toBeNull();
     expect(element.querySelector('app-grid')).toBeNull();
   });
 

@@ -86,6 +86,7 @@ export class JobPage {
   protected readonly canEdit = computed(() => this.session.can('jobs.edit'));
   protected readonly hasMoney = computed(() => this.job()?.total !== undefined);
   protected readonly seesMaterials = computed(() => this.session.can('materials.view'));
+  protected readonly mayImport = computed(() => this.session.can('timesheets.use'));
   protected readonly seesRows = computed(() => this.session.can('jobs.money'));
   protected readonly toStatusTone = toStatusTone;
 
