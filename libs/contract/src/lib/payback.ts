@@ -62,7 +62,17 @@ export const paybackSchema = paybackFiguresSchema.extend({
       net: moneySchema,
     })
     .nullable(),
-  topJobs: z.array(z.object({ jobId: idSchema, number: z.string(), title: z.string(), net: moneySchema })),
+  topJobs: z.array(
+    z.object({
+      jobId: idSchema,
+      number: z.string(),
+      title: z.string(),
+      /** What its hours on the machine earned, less what those cost to run. */
+      net: moneySchema,
+      /** What the whole job lost, by all of its cost and its invoices; null if it did not, or is not done. */
+      loss: moneySchema.nullable(),
+    }),
+  ),
   otherJobs: z.object({ jobs: z.number().int(), net: moneySchema }),
   gaps: z.array(rateGapSchema),
 });

@@ -1,4 +1,5 @@
 import { sql } from 'kysely';
+import { JOB_FIGURES, type JobFigureColumns } from './job-figures';
 import { type MachineDayRow } from './rollup-run';
 import { type ShopTransaction } from './tenancy';
 
@@ -56,7 +57,10 @@ export async function listMachineDays(
     .execute();
 }
 
-export interface MachineJobNet {
+export interface MachineJobNet extends Pick<
+  JobFigureColumns,
+  'margin' | 'marginIsProvisional' | 'isToInvoice'
+> {
   jobId: string;
   number: string;
   title: string;
@@ -64,22 +68,31 @@ export interface MachineJobNet {
   net: string;
 }
 
-/** What each job brought a machine, most first; `jobs` and `allNet` are over all of them, not only those listed. */
+/**
+ * What each job brought a machine, most first, beside how the whole job stands; `jobs` and `allNet` are over all of
+ * them, not only those listed.
+ */
 export async function listMachineJobNets(
   trx: ShopTransaction,
   { machineId, inServiceOn }: PaybackMachine,
   limit: number,
 ): Promise<(MachineJobNet & { jobs: number; allNet: string })[]> {
   const { rows } = await sql<MachineJobNet & { jobs: number; allNet: string }>`
-    select n.job_id, j.number, j.title, n.net, count(*) over () as jobs, sum(n.net) over () as all_net
+    select j.job_id, j.number, j.title, n.net, n.jobs, n.all_net,
+      m.margin, m.margin_is_provisional, m.is_to_invoice
     from (
-      select shop_id, job_id, sum(earned - operator_labour - running) as net
-      from machine_job_day
-      where machine_id = ${machineId}::uuid and posted_on >= ${inServiceOn}::date
-      group by 1, 2
+      select k.*, count(*) over () as jobs, sum(k.net) over () as all_net,
+        row_number() over (order by k.net desc, o.number) as place
+      from (
+        select shop_id, job_id, sum(earned - operator_labour - running) as net
+        from machine_job_day
+        where machine_id = ${machineId}::uuid and posted_on >= ${inServiceOn}::date
+        group by 1, 2
+      ) k
+      join job o on o.shop_id = k.shop_id and o.job_id = k.job_id
     ) n
-    join job j on j.shop_id = n.shop_id and j.job_id = n.job_id
-    order by n.net desc, j.number
-    limit ${limit}`.execute(trx);
+    join job j on j.shop_id = n.shop_id and j.job_id = n.job_id ${JOB_FIGURES}
+    where n.place <= ${limit}
+    order by n.place`.execute(trx);
   return rows;
 }

@@ -46,6 +46,7 @@ export function makePayback(change: Partial<Payback> = {}): Payback {
         number: '2231',
         title: 'Conveyor guards',
         net: '1204.00',
+        loss: null,
       },
     ],
     otherJobs: { jobs: 11, net: '831.04' },

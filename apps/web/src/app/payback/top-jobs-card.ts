@@ -4,12 +4,12 @@ import { type FigureRef, type Payback } from '@brakeven/contract';
 import { EmptyState, Figure } from '@brakeven/ui';
 import { toJobShareRef, toPaybackRef } from './payback-refs';
 
-/** The jobs that have added most to the payback. */
+/** The jobs that have added most to the payback; one of them may still have lost money as a whole. */
 @Component({
   selector: 'app-top-jobs-card',
   imports: [EmptyState, Figure, RouterLink],
   template: `
-    <h2>Jobs that paid most</h2>
+    <h2>Jobs whose machine hours paid most</h2>
     @if (payback().topJobs.length > 0) {
       <table class="figures">
         <tbody>
@@ -17,6 +17,16 @@ import { toJobShareRef, toPaybackRef } from './payback-refs';
             <tr>
               <th scope="row">
                 <a [routerLink]="['/jobs', job.jobId]">{{ job.number }}</a> {{ job.title }}
+                @if (job.loss; as loss) {
+                  <p class="loss">
+                    the job as a whole lost
+                    <app-figure
+                      [value]="loss"
+                      [ref]="{ figure: 'job.margin', jobId: job.jobId }"
+                      [label]="'Loss of job ' + job.number"
+                    />
+                  </p>
+                }
               </th>
               <td class="number">
                 <app-figure [value]="job.net" [ref]="ref(job.jobId)" [label]="'Net of job ' + job.number" />
@@ -49,6 +59,12 @@ import { toJobShareRef, toPaybackRef } from './payback-refs';
   styles: `
     :host {
       display: block;
+    }
+
+    .loss {
+      margin: 2px 0 0;
+      color: var(--rust-text);
+      font: var(--mat-sys-body-small);
     }
   `,
   changeDetection: ChangeDetectionStrategy.OnPush,

@@ -4,6 +4,8 @@ import { D, moneyText, sum, toLocalDate, toMoney } from '@brakeven/values';
 import { type ShopContext } from '../context';
 import { runRollup } from '../roll-up-costs/run-rollup';
 import { computeExpectedCosts } from '../roll-up-costs/testing/expected-costs';
+import { changeJobStatus } from '../show-jobs/change-job';
+import { getJob } from '../show-jobs/get-job';
 import { createWorkedShop, WORKED_NOW, type WorkedShop } from '../testing/worked-shop';
 import { getMachinePayback, getPayback } from './get-payback';
 
@@ -71,6 +73,17 @@ describe('a machine’s payback', () => {
     expect(topJobs.map((job) => job.number)).toEqual(expect.arrayContaining(['1042', '1043', '900']));
     expect(nets.map(Number)).toEqual(nets.map(Number).sort((a, b) => b - a));
     expect(otherJobs).toEqual({ jobs: 0, net: '0.00' });
+  });
+
+  it('tells of a job whose hours paid most that it lost money as a whole', async () => {
+    const topJobs = async () => (await getPayback(owner, { machineId })).topJobs;
+    expect((await topJobs()).map(({ loss }) => loss)).toEqual([null, null, null]);
+    const jobId = (await topJobs())[0]?.jobId ?? '';
+    const { status } = await getJob(owner, { jobId });
+    const { total, margin } = await changeJobStatus(owner, { jobId }, { status: 'invoiced' });
+    expect(margin).toBe(`-${total}`);
+    expect((await topJobs())[0]).toMatchObject({ jobId, loss: total });
+    await changeJobStatus(owner, { jobId }, { status });
   });
 
   it('names the month’s charge-out rate, and none when it changed within the month', async () => {

@@ -5,6 +5,7 @@ import {
   listMachineRateRows,
   listRateGapRows,
   type MachineDayFigures,
+  type MachineJobNet,
   type PaybackMachine,
   type ShopTransaction,
 } from '@brakeven/database';
@@ -125,12 +126,24 @@ async function readJobs(
   const [first] = jobs;
   const topNet = sum(jobs.map((job) => D(job.net)));
   return {
-    topJobs: jobs.map(({ jobId, number, title, net }) => ({ jobId, number, title, net })),
+    topJobs: jobs.map((job) => ({
+      jobId: job.jobId,
+      number: job.number,
+      title: job.title,
+      net: job.net,
+      loss: toLoss(job),
+    })),
     otherJobs: {
       jobs: first ? first.jobs - jobs.length : 0,
       net: moneyText(D(first?.allNet ?? '0').minus(topNet) as Money),
     },
   };
+}
+
+/** What a job that is done has lost as a whole, however much its machine hours earned. */
+function toLoss({ margin, marginIsProvisional, isToInvoice }: MachineJobNet): string | null {
+  const isLost = !marginIsProvisional && !isToInvoice && D(margin).lt(0);
+  return isLost ? moneyText(toMoney(D(margin).negated())) : null;
 }
 
 function sumHours(days: readonly MachineDayFigures[], key: 'hours' | 'billableHours'): string {
