@@ -2,27 +2,41 @@ import { AppError, type Invoice, type invoiceInputSchema, type InvoiceList } fro
 import { type InvoiceRow, listInvoiceRows, type ShopTransaction } from '@brakeven/database';
 import { type Money, moneyText, sum, toMoney } from '@brakeven/values';
 import { type z } from 'zod';
-import {
-  addDatedRow,
-  type ChangeTools,
-  correctDatedRow,
-  type DatedRows,
-  setVoided,
-} from '../change-dated-rows';
+import { changeDatedRows } from '../change-dated-rows';
 import { inShopOf, type ShopContext } from '../context';
 import { getJobRow } from '../show-jobs/get-job';
 
 type InvoiceValues = z.output<typeof invoiceInputSchema>;
 
-const INVOICES: DatedRows<'invoice'> = {
+const changes = changeDatedRows({
   table: 'invoice',
+  idField: 'invoiceId',
   dateField: 'invoicedOn',
   fields: { 'before-job': 'invoicedOn' },
   conflicts: {
     invoice_number: { field: 'number', message: 'This number is on the job already.' },
   },
   noun: 'invoice',
-};
+  getParent: getInvoiceRow,
+  toValues: async (trx, { jobId }: { jobId: string }, body: InvoiceValues) => {
+    await getJobRow(trx, { jobId });
+    return { jobId, ...body };
+  },
+  toItem: (context, invoiceId) =>
+    inShopOf(context, async (trx) => toInvoice(await getInvoiceRow(trx, invoiceId))),
+});
+
+/** Adds an invoice or a credit note to a job; refuses a number that is taken, and a date before the job's or after today. */
+export const createInvoice = changes.create;
+
+/** Corrects an invoice or a credit note; as `createInvoice`, and refuses one voided meanwhile. */
+export const updateInvoice = changes.correct;
+
+/** Voids an invoice or a credit note. */
+export const voidInvoice = changes.void;
+
+/** Takes back the voiding of an invoice or a credit note; refuses one whose number is taken by now. */
+export const restoreInvoice = changes.restore;
 
 /**
  * Invoices and credit notes of a job, latest first, those voided among them; the total is of those that count.
@@ -35,64 +49,6 @@ export function listInvoices(context: ShopContext, { jobId }: { jobId: string })
     const live = rows.filter(({ voidedAt }) => voidedAt === null);
     return { items: rows.map(toInvoice), total: moneyText(sum(live.map(toSignedAmount))) };
   });
-}
-
-/**
- * Adds an invoice or a credit note to a job.
- * @throws AppError `not_found` (job), `conflict` (number taken), `invalid_input` (dated before the job or after today)
- */
-export async function createInvoice(
-  context: ShopContext,
-  { jobId }: { jobId: string },
-  body: InvoiceValues,
-  tools: ChangeTools = {},
-): Promise<Invoice> {
-  const toValues = async (trx: ShopTransaction) => {
-    await getJobRow(trx, { jobId });
-    return { jobId, ...body };
-  };
-  return readInvoice(context, await addDatedRow(context, INVOICES, toValues, tools));
-}
-
-/**
- * Corrects an invoice or a credit note: it is voided and another takes its place.
- * @throws AppError `not_found`, `conflict` (number taken, voided meanwhile), `invalid_input`
- */
-export async function updateInvoice(
-  context: ShopContext,
-  { invoiceId }: { invoiceId: string },
-  body: InvoiceValues,
-  tools: ChangeTools = {},
-): Promise<Invoice> {
-  const toValues = async (trx: ShopTransaction) => {
-    const { jobId } = await getInvoiceRow(trx, invoiceId);
-    return { jobId, ...body };
-  };
-  return readInvoice(context, await correctDatedRow(context, INVOICES, invoiceId, toValues, tools));
-}
-
-/**
- * Voids an invoice or a credit note.
- * @throws AppError `not_found`
- */
-export function voidInvoice(
-  context: ShopContext,
-  { invoiceId }: { invoiceId: string },
-  tools: ChangeTools = {},
-): Promise<void> {
-  return setVoided(context, INVOICES, { id: invoiceId, isVoided: true }, tools);
-}
-
-/**
- * Takes back the voiding of an invoice or a credit note.
- * @throws AppError `not_found`, `conflict` (number taken by now), `invalid_input`
- */
-export function restoreInvoice(
-  context: ShopContext,
-  { invoiceId }: { invoiceId: string },
-  tools: ChangeTools = {},
-): Promise<void> {
-  return setVoided(context, INVOICES, { id: invoiceId, isVoided: false }, tools);
 }
 
 /** An invoice as it is sent. */
@@ -114,10 +70,6 @@ export function toInvoice(row: InvoiceRow): Invoice {
 function toSignedAmount({ kind, amount }: InvoiceRow): Money {
   const money = toMoney(amount);
   return kind === 'credit-note' ? toMoney(money.negated()) : money;
-}
-
-function readInvoice(context: ShopContext, invoiceId: string): Promise<Invoice> {
-  return inShopOf(context, async (trx) => toInvoice(await getInvoiceRow(trx, invoiceId)));
 }
 
 async function getInvoiceRow(trx: ShopTransaction, invoiceId: string): Promise<InvoiceRow> {

@@ -12,13 +12,7 @@ import {
 } from '@brakeven/database';
 import { D, moneyText, rateText, sum, toMoney, toRate } from '@brakeven/values';
 import { type z } from 'zod';
-import {
-  addDatedRow,
-  type ChangeTools,
-  correctDatedRow,
-  type DatedRows,
-  setVoided,
-} from '../change-dated-rows';
+import { changeDatedRows, type ChangeTools } from '../change-dated-rows';
 import { inShopOf, type ShopContext } from '../context';
 import { toPlainText } from '../quantity-text';
 import { getJobRow } from '../show-jobs/get-job';
@@ -27,8 +21,9 @@ import { computeStockWeight } from './stock-weight';
 
 type IssueValues = z.output<typeof materialIssueInputSchema>;
 
-const ISSUES: DatedRows<'materialIssue'> = {
+const changes = changeDatedRows({
   table: 'materialIssue',
+  idField: 'issueId',
   dateField: 'issuedOn',
   fields: { stock: 'weightKg', return: 'weightKg', 'before-job': 'issuedOn' },
   conflicts: {
@@ -37,59 +32,33 @@ const ISSUES: DatedRows<'materialIssue'> = {
     material_issue_weight_kg_check: { field: 'weightKg', message: 'Must be more than 0.' },
   },
   noun: 'issue',
-};
+  // Job and material stand in the body: a correction may name others.
+  getParent: async () => null,
+  toValues: (trx, _none: null, body: IssueValues) => toIssueValues(trx, body),
+  toItem: readIssue,
+});
 
 /**
  * Issues material to a job, or takes it back; the job bears it at the average of its moment.
  * @throws AppError `invalid_input` (no such job or material, dated before the job, no weight), `conflict` (the stock
  *   does not cover it, more returned than drawn)
  */
-export async function createMaterialIssue(
+export function createMaterialIssue(
   context: ShopContext,
   body: IssueValues,
-  tools: ChangeTools = {},
+  tools?: ChangeTools,
 ): Promise<MaterialIssue> {
-  const issueId = await addDatedRow(context, ISSUES, (trx) => toIssueValues(trx, body), tools);
-  return readIssue(context, issueId);
+  return changes.create(context, null, body, tools);
 }
 
-/**
- * Corrects an issue or a return: it is voided and another takes its place.
- * @throws AppError `not_found`; as `createMaterialIssue`
- */
-export async function updateMaterialIssue(
-  context: ShopContext,
-  { issueId }: { issueId: string },
-  body: IssueValues,
-  tools: ChangeTools = {},
-): Promise<MaterialIssue> {
-  const toValues = (trx: ShopTransaction) => toIssueValues(trx, body);
-  return readIssue(context, await correctDatedRow(context, ISSUES, issueId, toValues, tools));
-}
+/** Corrects an issue or a return; as `createMaterialIssue`, and refuses one voided meanwhile. */
+export const updateMaterialIssue = changes.correct;
 
-/**
- * Voids an issue or a return.
- * @throws AppError `not_found`, `conflict` (a later return gives back what it drew, a later issue draws what it returned)
- */
-export function voidMaterialIssue(
-  context: ShopContext,
-  { issueId }: { issueId: string },
-  tools: ChangeTools = {},
-): Promise<void> {
-  return setVoided(context, ISSUES, { id: issueId, isVoided: true }, tools);
-}
+/** Voids an issue or a return; refuses one that a later return gives back from, or a later issue draws from. */
+export const voidMaterialIssue = changes.void;
 
-/**
- * Takes back the voiding of an issue or a return.
- * @throws AppError `not_found`, `conflict` (the stock no longer covers it)
- */
-export function restoreMaterialIssue(
-  context: ShopContext,
-  { issueId }: { issueId: string },
-  tools: ChangeTools = {},
-): Promise<void> {
-  return setVoided(context, ISSUES, { id: issueId, isVoided: false }, tools);
-}
+/** Takes back the voiding of an issue or a return; refuses what the stock no longer covers. */
+export const restoreMaterialIssue = changes.restore;
 
 /**
  * What a job drew and gave back, latest first, those voided among them; weight and total of those that count.
