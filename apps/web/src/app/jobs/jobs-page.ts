@@ -63,8 +63,9 @@ export class JobsPage implements OnInit {
   protected readonly statuses = JOB_STATUS_ORDER;
   protected readonly toStatusWord = toStatusWord;
   protected readonly rowId = (job: Job): string => job.jobId;
+  protected readonly hasMoney = computed(() => this.session.can('jobs.money'));
   protected readonly choices = computed(() =>
-    toJobColumns(this.session.can('jobs.money')).map((column) => ({
+    toJobColumns(this.hasMoney()).map((column) => ({
       ...column,
       isFixed: column.id === 'number',
     })),
