@@ -1,15 +1,8 @@
 import {
-  computeEntryLines,
-  computeMovingAverage,
-  computeOvertimeLines,
-  computePostings,
+  computeShopPostings,
   type CostedEntry,
-  type CostSource,
-  findPostedMaterial,
-  findPostedOvertime,
   type Invoice,
   type MachineRate,
-  netFrozenLines,
   type OutsideService,
   type OverheadRate,
   type OvertimeRule,
@@ -17,12 +10,8 @@ import {
   type PostedLine,
   type Postings,
   type RateBook,
-  type SourceLine,
   type StockMove,
-  toInvoiceLine,
-  toMaterialLine,
-  toOutsideLine,
-  toSourceLine,
+  type Voidable,
 } from '@brakeven/costing';
 import { getClosedThrough, type ShopTransaction } from '@brakeven/database';
 import { type TestShop } from '@brakeven/test-shop';
@@ -54,13 +43,16 @@ export function computeExpectedCosts(shop: TestShop): Promise<ExpectedCosts> {
     const found = await getClosedThrough(trx);
     const closedThrough = found === null ? null : toLocalDate(found);
     const frozen = await readFrozenLines(trx, found);
-    const net = netFrozenLines(frozen, closedThrough);
-    const sources = [
-      ...(await readEntrySources(trx, book, net)),
-      ...(await readIssueSources(trx, net)),
-      ...(await readAmountSources(trx)),
-    ];
-    const postings = computePostings({ sources, stored: frozen, closedThrough });
+    const postings = computeShopPostings({
+      entries: await readEntries(trx),
+      stock: await readStock(trx),
+      outsideServices: await readOutsideServices(trx),
+      invoices: await readInvoices(trx),
+      book,
+      overtime: await readOvertimeRule(trx),
+      stored: frozen,
+      closedThrough,
+    });
     return { ...postings, frozen, closedThrough, inServiceOn: new Map(book.inServiceOn) };
   });
 }
@@ -125,30 +117,6 @@ async function readFrozenLines(trx: ShopTransaction, closedThrough: string | nul
   }));
 }
 
-type FrozenLines = ReadonlyMap<string, readonly SourceLine[]>;
-
-async function readEntrySources(
-  trx: ShopTransaction,
-  book: RateBook,
-  frozen: FrozenLines,
-): Promise<CostSource[]> {
-  const entries = await readEntries(trx);
-  const live = entries.filter((entry) => entry.isLive);
-  const rule = await readOvertimeRule(trx);
-  const overtime = computeOvertimeLines(live, book, rule, findPostedOvertime(frozen));
-  return entries.map((entry) => {
-    const { lines, gaps } = computeEntryLines(entry, book);
-    const isOfEntry = ({ entryId }: { entryId: string }) => entryId === entry.entryId;
-    const premiums = overtime.lines.filter((line) => line.sourceId === entry.entryId);
-    return {
-      sourceId: entry.entryId,
-      isLive: entry.isLive,
-      lines: [...lines.map(toSourceLine), ...premiums],
-      gaps: [...gaps, ...overtime.gaps.filter(isOfEntry)],
-    };
-  });
-}
-
 async function readOvertimeRule(trx: ShopTransaction): Promise<OvertimeRule> {
   const shop = await trx.selectFrom('shop').selectAll().executeTakeFirstOrThrow();
   return {
@@ -158,7 +126,7 @@ async function readOvertimeRule(trx: ShopTransaction): Promise<OvertimeRule> {
   };
 }
 
-async function readEntries(trx: ShopTransaction): Promise<(CostedEntry & { isLive: boolean })[]> {
+async function readEntries(trx: ShopTransaction): Promise<Voidable<CostedEntry>[]> {
   const entries = await trx.selectFrom('timeEntry').selectAll().execute();
   const jobs = await trx.selectFrom('job').select(['jobId', 'isBillable']).execute();
   const operations = await trx.selectFrom('operation').selectAll().execute();
@@ -176,63 +144,51 @@ async function readEntries(trx: ShopTransaction): Promise<(CostedEntry & { isLiv
   }));
 }
 
-async function readIssueSources(trx: ShopTransaction, frozen: FrozenLines): Promise<CostSource[]> {
+/** The moves of each material. */
+async function readStock(trx: ShopTransaction): Promise<Voidable<StockMove>[][]> {
   const materials = await trx.selectFrom('material').select('materialId').execute();
-  const lots = await trx.selectFrom('sheetLot').selectAll().where('voidedAt', 'is', null).execute();
+  const lots = await trx.selectFrom('sheetLot').selectAll().execute();
   const issues = await trx.selectFrom('materialIssue').selectAll().execute();
-  const posted = findPostedMaterial(frozen);
-  const lines = materials.flatMap(({ materialId }) => {
-    const moves: StockMove[] = [
-      ...lots
-        .filter((lot) => lot.materialId === materialId)
-        .map((lot) => ({
-          kind: 'lot' as const,
-          moveId: lot.lotId,
-          movedOn: toLocalDate(lot.receivedOn),
-          weight: D(lot.weightKg) as Mass,
-          landedCost: sum([toMoney(lot.cost), toMoney(lot.freight)]),
-        })),
-      ...issues
-        .filter((issue) => issue.materialId === materialId && issue.voidedAt === null)
-        .map((issue) => ({
-          kind: issue.kind,
-          moveId: issue.issueId,
-          movedOn: toLocalDate(issue.issuedOn),
-          jobId: issue.jobId,
-          weight: D(issue.weightKg) as Mass,
-          postedAmount: posted.get(issue.issueId),
-        })),
-    ];
-    const ledger = computeMovingAverage(moves);
-    if (!ledger.ok) throw new Error('The database let a stock fall below nothing.');
-    return ledger.moves.flatMap((move) => toMaterialLine(move) ?? []);
-  });
-  return issues.map((issue) => ({
-    sourceId: issue.issueId,
-    isLive: issue.voidedAt === null,
-    lines: lines.filter((line) => line.sourceId === issue.issueId),
+  return materials.map(({ materialId }) => [
+    ...lots
+      .filter((lot) => lot.materialId === materialId)
+      .map((lot) => ({
+        kind: 'lot' as const,
+        moveId: lot.lotId,
+        movedOn: toLocalDate(lot.receivedOn),
+        weight: D(lot.weightKg) as Mass,
+        landedCost: sum([toMoney(lot.cost), toMoney(lot.freight)]),
+        isLive: lot.voidedAt === null,
+      })),
+    ...issues
+      .filter((issue) => issue.materialId === materialId)
+      .map((issue) => ({
+        kind: issue.kind,
+        moveId: issue.issueId,
+        movedOn: toLocalDate(issue.issuedOn),
+        jobId: issue.jobId,
+        weight: D(issue.weightKg) as Mass,
+        isLive: issue.voidedAt === null,
+      })),
+  ]);
+}
+
+async function readOutsideServices(trx: ShopTransaction): Promise<Voidable<OutsideService>[]> {
+  const rows = await trx.selectFrom('outsideService').selectAll().execute();
+  return rows.map((row) => ({
+    ...row,
+    incurredOn: toLocalDate(row.incurredOn),
+    amount: toMoney(row.amount),
+    isLive: row.voidedAt === null,
   }));
 }
 
-async function readAmountSources(trx: ShopTransaction): Promise<CostSource[]> {
-  const services = await trx.selectFrom('outsideService').selectAll().execute();
-  const invoices = await trx.selectFrom('invoice').selectAll().execute();
-  return [
-    ...services.map((row): CostSource => {
-      const incurredOn = toLocalDate(row.incurredOn);
-      const service: OutsideService = { ...row, incurredOn, amount: toMoney(row.amount) };
-      const isLive = row.voidedAt === null;
-      return {
-        sourceId: row.outsideServiceId,
-        isLive,
-        lines: [toOutsideLine(service)],
-      };
-    }),
-    ...invoices.map((row): CostSource => {
-      const invoicedOn = toLocalDate(row.invoicedOn);
-      const invoice: Invoice = { ...row, invoicedOn, amount: toMoney(row.amount) };
-      const isLive = row.voidedAt === null;
-      return { sourceId: row.invoiceId, isLive, lines: [toInvoiceLine(invoice)] };
-    }),
-  ];
+async function readInvoices(trx: ShopTransaction): Promise<Voidable<Invoice>[]> {
+  const rows = await trx.selectFrom('invoice').selectAll().execute();
+  return rows.map((row) => ({
+    ...row,
+    invoicedOn: toLocalDate(row.invoicedOn),
+    amount: toMoney(row.amount),
+    isLive: row.voidedAt === null,
+  }));
 }
