@@ -87,7 +87,8 @@ describe('cells that cannot be read', () => {
   });
 
   it('are refused where they are 0 and should not be', async () => {
-    expect(toWords(await read('not-ok/setup-costs-noughts.xlsx'))).toEqual([
+    const setup = await read('not-ok/setup-costs-noughts.xlsx');
+    expect(toWords(setup)).toEqual([
       'refused count_unreadable Sheet lots D2',
       'refused length_unreadable Sheet lots E2',
       'refused weight_unreadable Sheet lots F2',
@@ -99,6 +100,8 @@ describe('cells that cannot be read', () => {
       'refused count_unreadable Estimates C2',
       'refused amount_zero Estimates D2',
     ]);
+    const counts = setup.problems.filter(({ code }) => code === 'count_unreadable');
+    expect(counts.filter(({ message }) => !message.includes('a whole number above 0'))).toEqual([]);
   });
 });
 

@@ -188,10 +188,11 @@ function readCount(cell: RawCell, { column }: SetupColumnContext): SetupReading 
   const number = findNumber(cell);
   const least = column.isAboveZero ? 1 : 0;
   if (number !== null && D(number).isInteger() && D(number).gte(least)) return accept(Number(number));
+  const range = column.isAboveZero ? 'above 0' : 'not below 0';
   return refuse(
     'count_unreadable',
     cell,
-    `holds '${cell.text}'. ${column.header} must be a whole number, such as ${column.example}.`,
+    `holds '${cell.text}'. ${column.header} must be a whole number ${range}, such as ${column.example}.`,
   );
 }
 
