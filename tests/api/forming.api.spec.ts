@@ -47,7 +47,7 @@ describe('forming over the API', () => {
     );
   });
 
-  it('lets an operator log a run and see it, with another operator’s hidden', async () => {
+  it('lets an operator log, see and correct a run, with those of others out of reach', async () => {
     const jobId = await api.shop.addJob({ number: '1042' });
     const { dies } = (await operator.send('get', '/forming/reference')).body as FormingReference;
     const run = {
@@ -55,7 +55,7 @@ describe('forming over the API', () => {
       ...{ thicknessMm: '3.175', bendLengthMm: '600', strokes: 4, pieces: 2 },
     };
     const logged = (await operator.send('post', '/press-runs', run)).body as PressRun;
-    await lead.send('post', '/press-runs', run);
+    const led = (await lead.send('post', '/press-runs', run)).body as PressRun;
     const list = async (visitor: Visitor) =>
       ((await visitor.send('get', '/press-runs?sort=share')).body as PressRunPage).items;
     expect((await list(operator)).map(({ pressRunId }) => pressRunId)).toEqual([logged.pressRunId]);
@@ -64,6 +64,12 @@ describe('forming over the API', () => {
     expect(readProblem(bad).issues).toContainEqual(
       expect.objectContaining({ field: 'bendLengthMm', message: expect.stringContaining('4 ft') }),
     );
+    const change = { ...run, pieces: 3 };
+    expect((await operator.send('patch', `/press-runs/${led.pressRunId}`, change)).status).toBe(404);
+    const corrected = await operator.send('patch', `/press-runs/${logged.pressRunId}`, change);
+    expect(corrected.body).toMatchObject({ pieces: 3, loggedBy: logged.loggedBy });
+    expect(await list(operator)).toEqual([corrected.body]);
+    expect((await operator.send('post', `/press-runs/${logged.pressRunId}/restore`, {})).status).toBe(409);
     expect((await operator.send('get', `/jobs/${jobId}/setup-card`)).body).toMatchObject({
       jobNumber: '1042',
       runs: [{ dieAngle: '85' }],
