@@ -63,10 +63,11 @@ export function toPercentWords(share: number): string {
   return `${Math.round(share * 100)}\u00a0%`;
 }
 
-/** A number with so many decimals and a typographic minus. */
+/** A number with so many decimals and a typographic minus; none before what rounds to nought. */
 export function toNumberWords(value: number, places: number): string {
   return formatNumber(D(value.toFixed(places + 3)), LOCALE, {
     minimumFractionDigits: places,
     maximumFractionDigits: places,
+    signDisplay: 'negative',
   });
 }

@@ -33,8 +33,8 @@ import { UserDialog, type UserDialogData } from './user-dialog';
               <tr>
                 <th scope="col">Name</th>
                 <th scope="col">Role</th>
-                <th scope="col">Logs hours as</th>
-                <th scope="col">Last sign-in</th>
+                <th scope="col" class="less">Logs hours as</th>
+                <th scope="col" class="less">Last sign-in</th>
                 <th scope="col"><span class="visually-hidden">Actions</span></th>
               </tr>
             </thead>
@@ -54,8 +54,8 @@ import { UserDialog, type UserDialogData } from './user-dialog';
                     <span class="muted below">{{ user.email }}</span>
                   </th>
                   <td [attr.title]="roles[user.role].text">{{ roles[user.role].label }}</td>
-                  <td>{{ nameOf(user.employeeId) }}</td>
-                  <td class="date">{{ user.lastSignInAt ? (user.lastSignInAt | instant) : 'never' }}</td>
+                  <td class="less">{{ nameOf(user.employeeId) }}</td>
+                  <td class="date less">{{ user.lastSignInAt ? (user.lastSignInAt | instant) : 'never' }}</td>
                   <td class="actions">
                     <button
                       type="button"

@@ -113,5 +113,5 @@ export class TrialTable {
 
 function toErrorWords(degrees: number | null): string {
   if (degrees === null) return '–';
-  return `${degrees > 0 ? '+' : ''}${toNumberWords(degrees, 2)}°`;
+  return `${degrees >= 0.005 ? '+' : ''}${toNumberWords(degrees, 2)}°`;
 }

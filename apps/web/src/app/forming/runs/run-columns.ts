@@ -16,6 +16,7 @@ type RunColumn = GridColumn<PressRun>;
 
 /** The columns of the press runs: force observed beside force computed, and the share of the rating. */
 export function toRunColumns(view: RunView): RunColumn[] {
+  const isMetric = view.units === 'metric';
   const size = (millimetres: string) => toSizeWords(Number(millimetres), view.units);
   const columns: RunColumn[] = [
     { id: 'runOn', header: 'Run on', kind: 'date', value: (run) => run.runOn, isSortable: true, width: 106 },
@@ -26,30 +27,30 @@ export function toRunColumns(view: RunView): RunColumn[] {
       href: (run) => (view.canOpenJobs ? `/jobs/${run.jobId}` : null),
       isSortable: true,
       minWidth: 96,
-      flex: 2,
+      flex: 3,
     },
-    { id: 'machine', header: 'Machine', value: (run) => run.machine, isSortable: true, width: 80 },
+    { id: 'machine', header: 'Machine', value: (run) => run.machine, isSortable: true, width: 76 },
     {
       id: 'material',
       header: 'Material',
-      value: (run) => `${size(run.thicknessMm)} ${run.material}`,
+      value: (run) => `${size(run.thicknessMm)} ${toShortName(run.material)}`,
       isSortable: true,
-      minWidth: 100,
-      flex: 2,
+      minWidth: 130,
+      flex: 4,
     },
     {
       id: 'openingMm',
       header: 'Opening',
       value: (run) => size(run.openingMm),
       isSortable: true,
-      width: 80,
+      width: 78,
     },
     {
       id: 'bendLengthMm',
       header: 'Length',
       value: (run) => size(run.bendLengthMm),
       isSortable: true,
-      width: 94,
+      width: isMetric ? 84 : 74,
     },
     {
       id: 'strokes',
@@ -57,7 +58,7 @@ export function toRunColumns(view: RunView): RunColumn[] {
       kind: 'count',
       value: (run) => run.strokes,
       isSortable: true,
-      width: 82,
+      width: 76,
     },
     {
       id: 'pieces',
@@ -65,13 +66,13 @@ export function toRunColumns(view: RunView): RunColumn[] {
       kind: 'count',
       value: (run) => run.pieces,
       isSortable: true,
-      width: 76,
+      width: 70,
     },
     {
       id: 'computed',
       header: 'Computed',
       value: (run) => toForceBandNumbers(Number(run.forceLowKn), Number(run.forceHighKn), view.units),
-      width: 98,
+      width: isMetric ? 100 : 88,
     },
     {
       id: 'forceUsedKn',
@@ -79,18 +80,23 @@ export function toRunColumns(view: RunView): RunColumn[] {
       value: (run) =>
         run.highestForceKn === null ? null : toForceNumber(Number(run.highestForceKn), view.units),
       isSortable: true,
-      width: 84,
+      width: 70,
     },
     toShareColumn(view),
     {
       id: 'isGood',
-      header: 'Run',
-      value: (run) => (run.isGood ? 'good' : 'not good'),
-      tone: (run) => (run.isGood ? 'good' : 'loss'),
-      width: 84,
+      header: 'Good',
+      value: (run) => (run.isGood ? 'yes' : 'no'),
+      tone: (run) => (run.isGood ? null : 'loss'),
+      width: 62,
     },
   ];
   return [...columns.filter(({ id }) => !view.isNarrow || NARROW.includes(id)), toActions(view)];
+}
+
+/** A material without the standard that it is delivered by. */
+function toShortName(material: string): string {
+  return material.replace(/,.*$/, '');
 }
 
 /** On a telephone: what was bent, and what it took. */
@@ -104,7 +110,7 @@ function toShareColumn({ isNarrow }: RunView): RunColumn {
     value: (run) => (run.share === null ? 'no rating' : `${toPercentWords(run.share)}${of(run)}`),
     tone: (run) => toShareTone(run),
     isSortable: true,
-    width: isNarrow ? 88 : 124,
+    width: isNarrow ? 88 : 116,
   };
 }
 
@@ -122,6 +128,6 @@ function toActions({ correctRun, voidRun }: RunView): RunColumn {
       { label: 'Correct', run: () => correctRun(run) },
       { label: 'Void', run: () => voidRun(run) },
     ],
-    width: 132,
+    width: 128,
   };
 }

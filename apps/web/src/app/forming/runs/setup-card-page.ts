@@ -1,6 +1,6 @@
 import { ChangeDetectionStrategy, Component, computed, inject, input } from '@angular/core';
 import { rxResource } from '@angular/core/rxjs-interop';
-import { Router } from '@angular/router';
+import { Router, RouterLink } from '@angular/router';
 import { type SetupCard } from '@brakeven/contract';
 import { EmptyState, LoadingSkeleton, LocalDatePipe } from '@brakeven/ui';
 import { PressRunsApi } from '../../api/press-runs-api';
@@ -12,7 +12,7 @@ import { PrintButton } from '../print-button';
 /** The set-up card of a job: what its last good runs used. */
 @Component({
   selector: 'app-setup-card-page',
-  imports: [EmptyState, LoadError, LoadingSkeleton, LocalDatePipe, PrintButton],
+  imports: [EmptyState, LoadError, LoadingSkeleton, LocalDatePipe, PrintButton, RouterLink],
   templateUrl: './setup-card-page.html',
   styleUrl: './setup-card-page.scss',
   changeDetection: ChangeDetectionStrategy.OnPush,
