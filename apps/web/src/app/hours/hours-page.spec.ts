@@ -139,6 +139,9 @@ describe('HoursPage', () => {
   it('says what to do when there are no hours at all, and how to see more when they are filtered away', async () => {
     const { page } = await open('bookkeeper', { period: 'all' });
     expect(page.text).toContain('No hours yet Drop the first week’s timesheet');
+    await page.set({ period: 'month' });
+    expect(page.text).toContain('No hours in this time');
+    expect(page.find('Go to Timesheets')).toBeTruthy();
     await page.set({ search: 'nobody' });
     expect(page.text).toContain('No hours here');
     expect(page.find('Show all hours')).toBeTruthy();

@@ -19,6 +19,8 @@ describe('the checklist in words', () => {
 
   it('says that all is well where it is', () => {
     expect(toChecks(makeMonth()).map(({ state }) => state)).toEqual(Array(5).fill('done'));
+    expect(toChecks(makeMonth())[0]?.text).toBe('Everybody has hours on every weekday.');
+    expect(toChecks(makeMonth({ tieOut: [] }))[0]?.text).toBe('Nobody was to work in this month.');
   });
 
   it('counts days, rows and jobs, and what is reviewed no longer', () => {

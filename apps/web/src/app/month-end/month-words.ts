@@ -49,9 +49,9 @@ export function chooseMonth({ months }: Months): string | null {
 }
 
 /** What stands in the way or is still to be looked at, item by item. */
-export function toChecks({ checklist }: MonthEnd): CheckView[] {
+export function toChecks({ checklist, tieOut }: MonthEnd): CheckView[] {
   return [
-    toTimesheets(checklist),
+    toTimesheets(checklist, tieOut),
     toRefusals(checklist),
     toRates(checklist),
     toRollup(checklist),
@@ -96,11 +96,14 @@ function nextWeekday(day: LocalDate): LocalDate {
 
 type Checklist = MonthEnd['checklist'];
 
-function toTimesheets({ missingTimesheets }: Checklist): CheckView {
+function toTimesheets({ missingTimesheets }: Checklist, tieOut: MonthEnd['tieOut']): CheckView {
   const days = missingTimesheets.reduce((sum, { days: own }) => sum + own.length, 0);
   const title = 'Days without timesheets';
-  if (days === 0)
-    return { check: 'timesheets', state: 'done', title, text: 'Everybody has hours on every weekday.' };
+  if (days === 0) {
+    const text =
+      tieOut.length === 0 ? 'Nobody was to work in this month.' : 'Everybody has hours on every weekday.';
+    return { check: 'timesheets', state: 'done', title, text };
+  }
   const text = `${count(days, 'weekday')} of ${count(missingTimesheets.length, 'employee')} without any hours.`;
   return { check: 'timesheets', state: 'look', title, text };
 }
