@@ -12,7 +12,8 @@ describe('the rail', () => {
 
   it('shows an operator the own hours and Forming, and no group without a page', () => {
     expect(pathsOf('operator')).toEqual(['/hours', '/forming']);
-    expect(listNavigation('operator').map(({ label }) => label)).toEqual(['Money', 'Shop']);
+    expect(listNavigation('operator').map(({ label }) => label)).toEqual(['Work', 'Shop']);
+    expect(listNavigation('bookkeeper')[0]?.label).toBe('Money');
   });
 
   it('shows the lead no wages and no payback', () => {

@@ -8,6 +8,8 @@ export interface NavigationPage {
 
 export interface NavigationGroup {
   label: string;
+  /** For those who see none of it in money. */
+  labelWithoutMoney?: string;
   pages: readonly NavigationPage[];
 }
 
@@ -15,6 +17,7 @@ export interface NavigationGroup {
 export const NAVIGATION: readonly NavigationGroup[] = [
   {
     label: 'Money',
+    labelWithoutMoney: 'Work',
     pages: [
       { path: '/payback', label: 'Payback', permission: 'payback.view' },
       { path: '/jobs', label: 'Jobs', permission: 'jobs.view' },
@@ -57,6 +60,7 @@ const HOME: Readonly<Record<Role, string>> = {
 export function listNavigation(role: Role): NavigationGroup[] {
   return NAVIGATION.map((group) => ({
     ...group,
+    label: (hasPermission(role, 'jobs.money') ? null : group.labelWithoutMoney) ?? group.label,
     pages: group.pages.filter((page) => hasPermission(role, page.permission)),
   })).filter((group) => group.pages.length > 0);
 }
