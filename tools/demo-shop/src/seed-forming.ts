@@ -6,6 +6,7 @@ import {
   getPressRunChoices,
   listPressRuns,
   listTrialBends,
+  listUsers,
   type ShopContext,
   updateDepthCard,
 } from '@brakeven/use-cases';
@@ -24,13 +25,14 @@ export async function seedForming(
   const jobIds = new Map(
     (await getPressRunChoices(context, {})).jobs.map(({ number, jobId }) => [number, jobId]),
   );
+  const userIds = new Map((await listUsers(context)).map(({ name, userId }) => [name, userId]));
   const already = await countRuns(context);
   for (const run of runs.slice(already)) {
     const jobId = jobIds.get(run.job);
     if (jobId === undefined) throw new Error(`Job ${run.job} is not there to log a run on.`);
     const { job: _job, machine, punch, openingMm, loggedBy, ...values } = run;
     const keys = findKeys(reference, machine, punch, openingMm);
-    const actor = { ...context.actor, name: loggedBy };
+    const actor = { ...context.actor, name: loggedBy, userId: userIds.get(loggedBy) ?? null };
     await createPressRun({ ...context, actor }, { ...values, ...keys, jobId, entryId: null });
   }
 }

@@ -92,6 +92,8 @@ export async function seedDemoShop(tools: DemoTools): Promise<'made' | 'there' |
   const demo = planDemo(todayIn(SHOP.timeZone, tools.now));
   await importHistory(asBookkeeper(context), demo, tools);
   tools.onProgress?.('Trial bends and press runs');
+  // Whoever logs at the press needs the account by then.
+  await createSignIns(context, (signIn) => signIn.role === 'operator');
   await seedForming(
     context,
     planRuns(demo.firstMonday, demo.weeks.slice(0, -1)),
@@ -154,9 +156,12 @@ async function closeOldMonths(context: ShopContext, before: LocalDate): Promise<
 
 const startOfNextMonth = (month: string): string => addDays(toLocalDate(`${month}-28`), 4).slice(0, 8) + '01';
 
-async function createSignIns(context: ShopContext): Promise<void> {
+async function createSignIns(
+  context: ShopContext,
+  isWanted: (signIn: (typeof SIGN_INS)[number]) => boolean = () => true,
+): Promise<void> {
   const employees = await listEmployees(context);
-  for (const { name, email, role, password, employee } of SIGN_INS) {
+  for (const { name, email, role, password, employee } of SIGN_INS.filter(isWanted)) {
     const employeeId = employees.find((other) => other.number === employee)?.employeeId ?? null;
     const known = (await listUsers(context)).find((user) => user.email === email);
     const { user, temporaryPassword } = known
