@@ -89,7 +89,10 @@ function toMonthText(month: MonthEnd): string {
     ['Days not rolled up', String(checklist.rollup.daysWaiting)],
     ['Kinds of rates missing', String(checklist.gaps.length)],
     ['Late lines', `${month.lateInCount} in, ${month.lateOutCount} out`],
-    ...month.blockers.map(({ message }): [string, string] => ['Cannot be closed', message]),
+    ...(month.closedBy === null ? month.blockers : []).map(({ message }): [string, string] => [
+      'Cannot be closed',
+      message,
+    ]),
   ]);
   const totals = printTable(month.totals, [
     { title: 'Category', of: ({ category }) => category },
