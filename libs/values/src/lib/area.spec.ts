@@ -1,8 +1,8 @@
-import { areaIn, areaText, parseArea, toArea } from './area';
+import { areaIn, parseArea, toArea } from './area';
 
 describe('areas', () => {
   it('are kept in square metres, a square foot being 0.3048² of them', () => {
-    expect(areaText(toArea(120, 'sq ft'))).toBe('11.14836');
+    expect(areaIn(toArea(120, 'sq ft'), 'm²').toFixed()).toBe('11.1483648');
     expect(areaIn(toArea('11.1483648', 'm²'), 'sq ft').toFixed()).toBe('120');
   });
 

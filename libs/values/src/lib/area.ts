@@ -1,4 +1,4 @@
-import { type Branded, D, type Decimal, type DecimalInput, roundHalfUp } from './decimal';
+import { type Branded, D, type Decimal, type DecimalInput } from './decimal';
 import { type Parsed } from './parsed';
 import { fromBaseUnit, parseQuantity, toBaseUnit, type UnitTable } from './quantity';
 
@@ -22,11 +22,6 @@ export function toArea(value: DecimalInput, unit: AreaUnit): Area {
 /** How many of `unit` an area is. */
 export function areaIn(area: Area, unit: AreaUnit): Decimal {
   return fromBaseUnit(AREAS, area, unit);
-}
-
-/** An area as it is stored: square metres, five decimals, half-up. */
-export function areaText(area: Area): string {
-  return roundHalfUp(area, 5).toFixed(5);
 }
 
 /** Reads '120', '120 sq ft' or '11.2 m²'; a bare number is in `unitIfNone`. Codes as in `parseQuantity`. */

@@ -56,11 +56,6 @@ const PIECES: Readonly<Record<string, string>> = {
 
 const PATTERNS = new Map(DATE_FORMATS.map((format) => [format, toPattern(format)]));
 
-/** Whether a text names one of the declared orders. */
-export function isDateFormat(text: string): text is DateFormat {
-  return (DATE_FORMATS as readonly string[]).includes(text);
-}
-
 /**
  * Reads a text date strictly in the declared order; day and month may have one or two digits, months English names
  * or their first three letters. Nothing is guessed: another order is refused.

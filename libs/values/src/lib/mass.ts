@@ -1,4 +1,4 @@
-import { type Branded, D, type DecimalInput, type Decimal, roundHalfUp } from './decimal';
+import { type Branded, D, type DecimalInput, type Decimal } from './decimal';
 import { formatNumber } from './number-text';
 import { type Parsed } from './parsed';
 import { findUnit, fromBaseUnit, parseQuantity, toBaseUnit, type UnitTable } from './quantity';
@@ -24,11 +24,6 @@ export function toMass(value: DecimalInput, unit: MassUnit): Mass {
 /** How many of `unit` a mass is. */
 export function massIn(mass: Mass, unit: MassUnit): Decimal {
   return fromBaseUnit(MASSES, mass, unit);
-}
-
-/** A mass as it is stored: kilograms, six decimals, half-up. */
-export function massText(mass: Mass): string {
-  return roundHalfUp(mass, 6).toFixed(6);
 }
 
 /** Reads '12', '12 lb' or '5.4 kg'; a bare number is in `unitIfNone`. Codes as in `parseQuantity`. */
