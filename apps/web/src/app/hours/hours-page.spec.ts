@@ -139,7 +139,7 @@ describe('HoursPage', () => {
   it('says what to do when there are no hours at all, and how to see more when they are filtered away', async () => {
     const { page } = await open('bookkeeper', { period: 'all' });
     expect(page.text).toContain('No hours yet Drop the first week’s timesheet');
-    await page.set({ period: 'month' });
+    await page.set({ period: 'this-month' });
     expect(page.text).toContain('No hours in this time');
     expect(page.find('Go to Timesheets')).toBeTruthy();
     await page.set({ search: 'nobody' });
