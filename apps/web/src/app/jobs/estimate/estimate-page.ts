@@ -14,7 +14,7 @@ import { ReactiveFormsModule } from '@angular/forms';
 import { MatDialog } from '@angular/material/dialog';
 import { RouterLink } from '@angular/router';
 import { type Estimate, type EstimateChoices, type EstimateInput, type FigureRef } from '@brakeven/contract';
-import { ErrorState, Figure, LoadingSkeleton, MoneyPipe, PageHeader, SHOP_FORMAT } from '@brakeven/ui';
+import { ErrorState, Figure, LoadingSkeleton, PageHeader, SHOP_FORMAT } from '@brakeven/ui';
 import { isLocalDate, moneyText, todayIn } from '@brakeven/values';
 import { filter, forkJoin, startWith, switchMap } from 'rxjs';
 import { ANY_VERSION, EstimatesApi, type VersionedEstimate } from '../../api/estimates-api';
@@ -61,7 +61,6 @@ const BUILD_UP = [
     Figure,
     FormField,
     LoadingSkeleton,
-    MoneyPipe,
     PageHeader,
     ReactiveFormsModule,
     RouterLink,
