@@ -118,4 +118,18 @@ describe('A bend is settled before metal is cut', () => {
       .waitFor();
     expect(lead.complaints).toEqual([]);
   });
+
+  it('the lead corrects the run, which begins as it was logged', async () => {
+    await forming.open('runs', '?search=Journey');
+    const grid = lead.page.getByRole('group', { name: 'Press runs' });
+    await grid.getByRole('button', { name: 'Correct' }).first().click();
+    const form = new FormDialog(lead.page);
+    expect(await form.dialog.getByLabel('Strokes').inputValue()).toBe('40');
+    expect(await form.dialog.getByLabel('Highest force shown').inputValue()).toBe('36');
+    await form.fill({ Strokes: '4321' });
+    await form.submit('Save');
+    await lead.page.getByText('The run is corrected.').waitFor();
+    await grid.getByText('4,321', { exact: true }).waitFor();
+    expect(lead.complaints).toEqual([]);
+  });
 });
