@@ -215,6 +215,14 @@ describe('exit codes', () => {
     expect(json).toMatchObject({ error: { code: 'invalid_input', message: expect.stringMatching(/\w/) } });
   });
 
+  it('2 with what to write instead for what cannot be read', async () => {
+    const day = await runCli(['rollup', ...inShop, '--through', '2026-02-31']);
+    expect(day).toMatchObject({ code: 2, stderr: expect.stringContaining('as YYYY-MM-DD') });
+    const id = await runCli(['timesheets', 'undo', 'abc', ...inShop]);
+    expect(id).toMatchObject({ code: 2, stderr: expect.stringContaining('Take it from the list') });
+    expect(id.stderr).toContain('Add --help');
+  });
+
   it('2 with words and the commands when none is named, 0 when help is asked for', async () => {
     expect(await runCli([])).toMatchObject({ code: 2, stderr: expect.stringContaining('Usage: brakeven') });
     const help = await runCli(['--help']);

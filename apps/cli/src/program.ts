@@ -68,6 +68,7 @@ async function refuse(cli: Cli, error: unknown): Promise<void> {
     const isHelp = error.code === 'commander.help';
     const message = isHelp ? 'Say which command.' : error.message.replace(/^error: /, '');
     cli.refuse({ code: 'invalid_input', message, issues: [] }, EXIT.usage);
+    if (!isHelp) cli.say('Add --help to see how it is used.');
     return;
   }
   if (error instanceof AppError) {

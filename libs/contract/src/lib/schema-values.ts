@@ -1,14 +1,16 @@
 import { z } from 'zod';
 
 /** A day of work, without clock or zone: `2026-03-31`. */
-export const localDateSchema = z.iso.date().meta({ id: 'LocalDate' });
+export const localDateSchema = z.iso
+  .date('Write a day that there is as YYYY-MM-DD, for example 2026-03-31.')
+  .meta({ id: 'LocalDate' });
 /** A month of work: `2026-03`. */
 export const monthSchema = z
   .string()
   .regex(/^\d{4}-(0[1-9]|1[0-2])$/, 'Write the month as YYYY-MM, for example 2026-03.');
 /** An instant in UTC. */
 export const instantSchema = z.iso.datetime({ offset: true }).meta({ id: 'Instant' });
-export const idSchema = z.uuid().meta({ id: 'Id' });
+export const idSchema = z.uuid('This is no id. Take it from the list that shows it.').meta({ id: 'Id' });
 
 const decimal = (places: number, example: string) =>
   z

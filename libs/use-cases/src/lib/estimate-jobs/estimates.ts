@@ -1,10 +1,4 @@
-import {
-  AppError,
-  type Estimate,
-  type EstimateInput,
-  type EstimateLineInput,
-  type Issue,
-} from '@brakeven/contract';
+import { AppError, type Estimate, type EstimateInput, type Issue } from '@brakeven/contract';
 import {
   deleteEstimateRows,
   lockEstimate,
@@ -19,6 +13,7 @@ import { getJobRow } from '../show-jobs/get-job';
 import { readChoices } from './estimate-choices';
 import { readEstimate } from './estimate-cost';
 import { toEstimate } from './estimate-dto';
+import { NO_LINE_COLUMNS } from './no-line-columns';
 
 /**
  * The estimate of a job; null if it has none.
@@ -64,7 +59,13 @@ export function saveEstimate(
     await replaceEstimate(
       trx,
       { ...of, ...head },
-      lines.map((line, at) => ({ ...of, ...toColumns(line), estimateLineId: newId(), position: at + 1 })),
+      lines.map((line, at) => ({
+        ...of,
+        ...NO_LINE_COLUMNS,
+        ...line,
+        estimateLineId: newId(),
+        position: at + 1,
+      })),
     );
     const stored = await readEstimate(trx, jobId);
     if (!stored) throw new Error('An estimate is saved and yet not there.');
@@ -106,25 +107,6 @@ export async function quotePrice(
 ): Promise<void> {
   const isThere = await inShopOf(context, (trx) => updateQuotedPrice(trx, jobId, quotedPrice));
   if (!isThere) throw new AppError('not_found', 'There is no such job. Load the jobs again.');
-}
-
-/** The columns of a line; those of other kinds stay empty. */
-function toColumns(line: EstimateLineInput) {
-  const none = {
-    operationId: null,
-    machineId: null,
-    setupHours: null,
-    minutesPerPiece: null,
-    pieces: null,
-    labourRate: null,
-    machineHourRate: null,
-    overheadRate: null,
-    materialId: null,
-    weightKg: null,
-    pricePerKg: null,
-    amount: null,
-  };
-  return { ...none, ...line };
 }
 
 const UNKNOWN = {

@@ -1,6 +1,7 @@
 import { type RegisterValues } from '@brakeven/database';
 import { D, formatLocalDate, toLocalDate } from '@brakeven/values';
 import { type SetupFile } from '@brakeven/workbook';
+import { NO_LINE_COLUMNS } from '../estimate-jobs/no-line-columns';
 import { isStockKnown } from './check-stock';
 import { type EstimateDefaults } from './estimate-defaults';
 import { type SetupDraft } from './setup-draft';
@@ -17,21 +18,6 @@ export interface LineSurroundings {
   /** The line that the shop has in this place, estimated on the same day: what a row leaves blank stays as there. */
   kept: RegisterValues | undefined;
 }
-
-const EMPTY_LINE = {
-  operationId: null,
-  machineId: null,
-  setupHours: null,
-  minutesPerPiece: null,
-  pieces: null,
-  labourRate: null,
-  machineHourRate: null,
-  overheadRate: null,
-  materialId: null,
-  weightKg: null,
-  pricePerKg: null,
-  amount: null,
-} as const;
 
 /** Cells that say something on rows of a kind; every kind takes a description. */
 const CELLS = {
@@ -58,7 +44,7 @@ export function toEstimateLine(
   if (!checkCells(draft, row)) return null;
   const values = LINES[row.kind](new LineReader(draft, row, at));
   if (values === null) return null;
-  return { ...EMPTY_LINE, ...values, kind: row.kind, description: row.description ?? '' };
+  return { ...NO_LINE_COLUMNS, ...values, kind: row.kind, description: row.description ?? '' };
 }
 
 /** Whether the cells that belong to other kinds are empty; else refused in words. */
