@@ -71,7 +71,7 @@ const MONEY: readonly FigureColumn[] = [
     note: toMarginNote,
     // What is done and not invoiced yet is work in progress, no loss.
     isLoss: (job) => job.marginIsProvisional === false && !job.isToInvoice && isBelowZero(job.margin),
-    width: 160,
+    width: 156,
   }),
   money('workInProgress', 'In progress', 'job.workInProgress', { width: 100 }),
 ];
@@ -135,14 +135,18 @@ export function toJobTotals(totals: JobPage['totals'], filter: JobFilter): GridT
   return {
     ...Object.fromEntries(figures),
     number: { value: 'Total', isText: true },
-    title: { value: toCountWords(totals), isText: true },
+    title: { value: toCountWords(totals.jobs), isText: true },
+    customer: { value: toComparedWords(totals), isText: true },
   };
 }
 
 /** The variance is that of jobs with an estimate that cost something, so that these are counted apart. */
-function toCountWords({ jobs, comparedJobs = jobs }: JobPage['totals']): string {
-  const words = `${jobs.toLocaleString('en-US')} ${jobs === 1 ? 'job' : 'jobs'}`;
-  return comparedJobs === jobs ? words : `${words}, ${comparedJobs.toLocaleString('en-US')} with variance`;
+function toComparedWords({ jobs, comparedJobs = jobs }: JobPage['totals']): string | null {
+  return comparedJobs === jobs ? null : `${comparedJobs.toLocaleString('en-US')} with variance`;
+}
+
+function toCountWords(jobs: number): string {
+  return `${jobs.toLocaleString('en-US')} ${jobs === 1 ? 'job' : 'jobs'}`;
 }
 
 /** Whether a column shows money or what comes of an estimate. */
@@ -160,13 +164,13 @@ const WORDS: readonly GridColumn<Job>[] = [
     isPinned: true,
     width: 70,
   },
-  { id: 'title', header: 'Title', value: (job) => job.title, isSortable: true, minWidth: 112, flex: 1 },
+  { id: 'title', header: 'Title', value: (job) => job.title, isSortable: true, minWidth: 102, flex: 1 },
   {
     id: 'customer',
     header: 'Customer',
     value: (job) => job.customer,
     isSortable: true,
-    minWidth: 112,
+    minWidth: 118,
     flex: 1.5,
   },
   {
@@ -194,7 +198,7 @@ const DATES: readonly GridColumn<Job>[] = [
 ];
 
 function toDateColumn(id: JobSort, header: string, value: GridColumn<Job>['value']): GridColumn<Job> {
-  return { id, header, kind: 'date', value, isSortable: true, width: 112 };
+  return { id, header, kind: 'date', value, isSortable: true, width: 118 };
 }
 
 function toGridColumn({ field, header, figure, kind, width, rest }: FigureColumn): GridColumn<Job> {

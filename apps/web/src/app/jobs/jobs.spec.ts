@@ -62,9 +62,10 @@ describe('toJobTotals', () => {
 
   it('say of how many jobs the variance is', () => {
     const wordsOf = (comparedJobs: number) =>
-      toJobTotals({ jobs: 12, comparedJobs, hours: '80.0000', machineHours: '32.0000' }, {})['title']?.value;
-    expect(wordsOf(7)).toBe('12 jobs, 7 with variance');
-    expect(wordsOf(12)).toBe('12 jobs');
+      toJobTotals({ jobs: 12, comparedJobs, hours: '80.0000', machineHours: '32.0000' }, {})['customer']
+        ?.value;
+    expect(wordsOf(7)).toBe('7 with variance');
+    expect(wordsOf(12)).toBeNull();
   });
 });
 
