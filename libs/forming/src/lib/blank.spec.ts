@@ -177,3 +177,11 @@ describe('pieces from a sheet', () => {
     );
   });
 });
+
+it('a refusal names the flange or the angle that it is of', () => {
+  const issues = checkBlankInput({ ...channel, flangesMm: [40, -1, 40], insideAngles: [90, 179] });
+  expect(issues.map(({ field, message }) => [field, message.slice(0, 20)])).toEqual([
+    ['flanges', 'Flange 2 is outside '],
+    ['angles', 'Angle 2 is outside w'],
+  ]);
+});

@@ -47,8 +47,12 @@ export function checkBlankInput(input: BlankInput): FormingIssue[] {
   const { flangesMm, insideAngles } = input;
   const figures = [
     ...checkCounts(flangesMm.length, insideAngles.length),
-    ...flangesMm.flatMap((flange) => checkFigure('flanges', flange, 'flangeMm')),
-    ...insideAngles.flatMap((angle) => checkFigure('angles', angle, 'insideAngle')),
+    ...flangesMm.flatMap((flange, index) =>
+      checkFigure('flanges', flange, 'flangeMm', `Flange ${index + 1}`),
+    ),
+    ...insideAngles.flatMap((angle, index) =>
+      checkFigure('angles', angle, 'insideAngle', `Angle ${index + 1}`),
+    ),
     ...checkFigure('thickness', input.thicknessMm, 'thicknessMm'),
     ...checkFigure('radius', input.radiusMm, 'radiusMm'),
     ...checkFigure('k', input.k, 'kFactor'),

@@ -40,12 +40,20 @@ export const RANGES = {
 /** The name of a range. */
 export type RangeName = keyof typeof RANGES;
 
-/** Checks one figure against its range; a figure that is no number is out of every range. */
-export function checkFigure(field: string, value: number, range: RangeName): FormingIssue[] {
+/**
+ * Checks one figure against its range; a figure that is no number is out of every range.
+ * @param subject what the message calls it, where several figures make up one field
+ */
+export function checkFigure(
+  field: string,
+  value: number,
+  range: RangeName,
+  subject: string = field,
+): FormingIssue[] {
   const { min, max, words, isAboveMin = false }: FigureRange = RANGES[range];
   const isInside = isAboveMin ? value > min && value <= max : value >= min && value <= max;
   if (isInside) return [];
-  return [{ field, code: 'out_of_range', message: `${field} is outside what is accepted: ${words}.` }];
+  return [{ field, code: 'out_of_range', message: `${subject} is outside what is accepted: ${words}.` }];
 }
 
 /** Checks that a sheet is thinner than the opening it is bent over. */
