@@ -1,6 +1,6 @@
 import { ChangeDetectionStrategy, Component, computed, inject, signal } from '@angular/core';
 import { type AuditEvent } from '@brakeven/contract';
-import { EmptyState, InstantPipe, LoadingSkeleton } from '@brakeven/ui';
+import { EmptyState, InstantPipe, LoadingSkeleton, SHOP_FORMAT } from '@brakeven/ui';
 import { ShopApi } from '../api/shop-api';
 import { LoadError } from '../shell/load-error';
 import { toAuditLine } from './audit-change';
@@ -66,12 +66,15 @@ const EVENTS_AT_ONCE = 25;
 })
 export class AuditCard {
   private readonly api = inject(ShopApi);
+  private readonly format = inject(SHOP_FORMAT);
   private readonly events = signal<readonly AuditEvent[]>([]);
   private cursor: string | null = null;
   protected readonly isLoading = signal(false);
   protected readonly isDone = signal(false);
   protected readonly error = signal<unknown>(null);
-  protected readonly lines = computed(() => this.events().map(toAuditLine));
+  protected readonly lines = computed(() =>
+    this.events().map((event) => toAuditLine(event, this.format().units)),
+  );
 
   constructor() {
     this.load();

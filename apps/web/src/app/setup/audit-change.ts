@@ -1,5 +1,15 @@
 import { type AuditEvent } from '@brakeven/contract';
-import { formatLocalDate, isLocalDate } from '@brakeven/values';
+import {
+  formatForce,
+  formatLength,
+  formatLocalDate,
+  formatMass,
+  isLocalDate,
+  toForce,
+  toLength,
+  toMass,
+  type UnitSystem,
+} from '@brakeven/values';
 
 /** One value that an event changed; null where there was nothing before or is nothing after. */
 export interface AuditChange {
@@ -22,14 +32,21 @@ const NAME_KEYS = ['name', 'title', 'file_name', 'spelling', 'description', 'ema
 const OMITTED: readonly string[] = ['file_sha256', 'header_signature', 'mapping'];
 const NUMBER_KEYS = ['number', 'code'] as const;
 
+/** What is kept in a unit is read out in the shop's; what is kept per unit, such as a price, stays as it is. */
+const UNITS: readonly { ending: RegExp; format: (value: string, units: UnitSystem) => string }[] = [
+  { ending: /_mm$/, format: (value, units) => formatLength(toLength(value, 'mm'), units) },
+  { ending: /_kn$/, format: (value, units) => formatForce(toForce(value, 'kN'), units) },
+  { ending: /(?<!_per)_kg$/, format: (value, units) => formatMass(toMass(value, 'kg'), units) },
+];
+
 /** Turns an event into what changed, value by value; what is only a key of the database is left out. */
-export function toAuditLine(event: AuditEvent): AuditLine {
+export function toAuditLine(event: AuditEvent, units: UnitSystem): AuditLine {
   const before = event.before ?? {};
   const after = event.after ?? {};
   const keys = [...new Set([...Object.keys(before), ...Object.keys(after)])];
   const changes = keys
     .filter((key) => toText(before[key]) !== toText(after[key]))
-    .flatMap((key) => toChange(key, before[key], after[key]) ?? []);
+    .flatMap((key) => toChange(key, before[key], after[key], units) ?? []);
   return { event, subject: toWords(event.subjectKind), name: findName({ ...before, ...after }), changes };
 }
 
@@ -41,9 +58,17 @@ function findName(row: Record<string, unknown>): string | null {
 }
 
 /** Keys of the database and moments say little by themselves: of those only that they changed, where it matters. */
-function toChange(key: string, before: unknown, after: unknown): AuditChange | null {
+function toChange(key: string, before: unknown, after: unknown, units: UnitSystem): AuditChange | null {
   if (key === 'password_changed_at') return { label: 'password', before: null, after: 'changed' };
   if (OMITTED.includes(key) || key.endsWith('_at')) return null;
+  const unit = UNITS.find(({ ending }) => ending.test(key));
+  if (unit) {
+    const read = (value: unknown) => {
+      const text = toText(value);
+      return text && unit.format(text, units);
+    };
+    return { label: toWords(key.replace(unit.ending, '')), before: read(before), after: read(after) };
+  }
   if (!key.endsWith('_id')) return { label: toWords(key), before: toText(before), after: toText(after) };
   const isAnother = toText(before) !== null && key !== 'shop_id';
   return isAnother ? { label: toWords(key.slice(0, -3)), before: null, after: 'another' } : null;
