@@ -32,7 +32,11 @@ type Labelled = 'employee' | 'job' | 'operation' | 'machine';
 
 const FIRST_DAY = toLocalDate('1990-01-01');
 const LAST_DAY = toLocalDate('2199-12-31');
-const REAL_DATE = 'Write it as a real date, or say how text dates are written in this sheet.';
+const REAL_DATE = 'Write it as a real date.';
+const DECLARE_ORDER =
+  'Or say how text dates are written in this sheet: on screen under Change columns (or under To settle, where the ' +
+  'orders that read them all are offered), at the command line with --date-format.';
+const NO_DATE_FORMAT = 'Format the cell as a number or a duration, not as a date.';
 const HOURS_WANTED = 'Write hours as a number such as 7.5 or as a duration such as 7:30.';
 
 /**
@@ -54,13 +58,13 @@ export function readDateCell(cell: RawCell | undefined, forms: TextForms): CellR
     return refuse(
       'date_unreadable',
       `Cell ${cell.address} holds the text '${cell.text}', and no order of day and month is declared for text ` +
-        `dates in this sheet. ${REAL_DATE}`,
+        `dates in this sheet. ${REAL_DATE} ${DECLARE_ORDER}`,
     );
   }
   const parsed = parseDateText(cell.text, forms.dateFormat);
   return parsed.ok
     ? assertRange(parsed.value, cell.address)
-    : refuse('date_unreadable', `Cell ${cell.address}: ${parsed.message}`);
+    : refuse('date_unreadable', `Cell ${cell.address}: ${parsed.message} ${DECLARE_ORDER}`);
 }
 
 /**
@@ -77,7 +81,7 @@ export function readHoursCell(cell: RawCell | undefined, { decimalMark }: TextFo
   if (cell.kind !== 'text') {
     return refuse(
       'hours_unreadable',
-      `Cell ${cell.address} holds ${describe(cell)}, not hours. ${HOURS_WANTED}`,
+      `Cell ${cell.address} holds ${describe(cell)}, not hours. ${HOURS_WANTED}${cell.kind === 'date' ? ` ${NO_DATE_FORMAT}` : ''}`,
     );
   }
   return readHoursText(cell.text, cell.address, decimalMark);
@@ -184,7 +188,12 @@ function readHoursText(text: string, address: string, decimalMark: '.' | ','): C
     : refuse('hours_unreadable', `Cell ${address}: ${parsed.message}`);
 }
 
+/** The cell in words. A date that no work can be from is most likely a number in a cell formatted for dates. */
 function describe(cell: RawCell): string {
+  if (cell.kind === 'date' && !isLikelyDate(cell.text)) {
+    const shown = cell.text === String(cell.value) ? '' : ` (${cell.text})`;
+    return `the number ${cell.value} formatted as a date${shown}`;
+  }
   const kinds: Readonly<Partial<Record<RawCell['kind'], string>>> = {
     number: 'the number',
     date: 'the date',
@@ -193,4 +202,9 @@ function describe(cell: RawCell): string {
     text: 'the text',
   };
   return `${kinds[cell.kind] ?? 'the value'} '${cell.text}'`;
+}
+
+function isLikelyDate(text: string): boolean {
+  const day = text.slice(0, FIRST_DAY.length);
+  return /^\d{4}-\d\d-\d\d$/.test(day) && day >= FIRST_DAY && day <= LAST_DAY;
 }

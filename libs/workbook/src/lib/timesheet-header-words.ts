@@ -18,6 +18,7 @@ const HEADER_WORDS: Readonly<Record<TimesheetField, readonly string[]>> = {
       'log date',
     ],
     ...['timesheet date', 'production date', 'date performed', 'wk date', 'day worked', 'day'],
+    ...['labor date', 'labour date', 'clock date', 'job date', 'work day', 'day of work', 'dates'],
   ],
   employee: [
     ...[
@@ -44,12 +45,26 @@ const HEADER_WORDS: Readonly<Record<TimesheetField, readonly string[]>> = {
       'full name',
     ],
     ...['name', 'who'],
+    ...['emp code', 'empl', 'empl id', 'empl name', 'ee', 'ee id', 'badge id', 'clock id', 'payroll id'],
+    ...['staff id', 'operator code', 'worker code', 'crew member', 'tech', 'technician name', 'person name'],
+    ...['worked by', 'done by', 'performed by'],
   ],
   job: [
     ...['job', 'job no', 'job id', 'job code', 'job ref', 'job reference', 'job order', 'job order no'],
     ...['work order', 'work order no', 'work order id', 'wo', 'wo no', 'w o', 'shop order', 'shop order no'],
     ...['order', 'order no', 'project', 'project no', 'project code', 'traveler', 'traveler no', 'traveller'],
     ...['traveller no', 'ticket', 'ticket no', 'job name'],
+    ...['jobs', 'wo id', 'works order', 'works order no', 'mfg order', 'mfg order no', 'production order'],
+    ...['production order no', 'prod order', 'prod order no', 'manufacturing order', 'order ref', 'order id'],
+    ...[
+      'job card',
+      'job card no',
+      'job ticket',
+      'job ticket no',
+      'work ticket',
+      'project id',
+      'project name',
+    ],
   ],
   operation: [
     ...['operation', 'operation code', 'operation no', 'operation id', 'op', 'op code', 'op no', 'oper'],
@@ -65,11 +80,28 @@ const HEADER_WORDS: Readonly<Record<TimesheetField, readonly string[]>> = {
     ],
     ...['work code', 'labor code', 'labour code', 'type of work', 'work type', 'kind of work', 'work done'],
     ...['work performed', 'step', 'cost code'],
+    ...['opn', 'opn no', 'opn code', 'op id', 'op name', 'oper no', 'oper code', 'oper name', 'task name'],
+    ...[
+      'process name',
+      'process step',
+      'activity name',
+      'operation step',
+      'work step',
+      'step no',
+      'job step',
+    ],
+    ...['labor type', 'labour type'],
   ],
   machine: [
     ...['machine', 'machine no', 'machine code', 'machine id', 'machine name', 'machine used', 'press'],
     ...['press no', 'press brake', 'brake', 'equipment', 'equipment no', 'equipment id', 'work center'],
     ...['work centre', 'workcenter no', 'asset', 'asset no', 'station', 'resource', 'tool'],
+    ...['mach', 'mach no', 'mach id', 'mach code', 'mach name', 'm/c', 'm/c no', 'm/c id', 'm/c code'],
+    ...['machine center', 'machine centre', 'machine tool', 'equip', 'equip no', 'equip id', 'equip code'],
+    ...['equip name', 'equipment code', 'equipment name', 'equipment used', 'press id', 'press used'],
+    ...['press brake no', 'brake no', 'brake id', 'work center id', 'work center code', 'work centre no'],
+    ...['work centre id', 'work centre code', 'work ctr', 'work ctr no', 'workstation', 'workstation no'],
+    ...['station no', 'station id', 'resource no', 'resource id', 'asset id', 'asset tag'],
   ],
   hours: [
     ...[
@@ -85,6 +117,10 @@ const HEADER_WORDS: Readonly<Record<TimesheetField, readonly string[]>> = {
     ],
     ...['labour hours', 'man hours', 'total hours', 'total hrs', 'hours total', 'no of hours', 'time worked'],
     ...['time spent', 'duration', 'elapsed time', 'elapsed', 'h', 'time'],
+    ...['hours spent', 'hrs spent', 'working hours', 'work hrs', 'labor hrs', 'labour hrs', 'man hrs'],
+    ...['tot hrs', 'tot hours', 'hrs total', 'actual hours', 'actual hrs', 'act hrs', 'hours on job'],
+    ...['job hours', 'job hrs', 'no of hrs', 'total time', 'time in hours', 'time hrs', 'labor time'],
+    ...['labour time', 'work time', 'working time'],
   ],
   good: [
     ...[
@@ -110,6 +146,10 @@ const HEADER_WORDS: Readonly<Record<TimesheetField, readonly string[]>> = {
       'qty',
       'quantity',
     ],
+    ...['good pc', 'good units', 'units good', 'pcs ok', 'ok pcs', 'parts ok', 'ok parts', 'accepted'],
+    ...['qty accepted', 'pcs completed', 'pcs complete', 'pieces completed', 'pieces complete'],
+    ...['parts completed', 'parts complete', 'pcs produced', 'pieces produced', 'pcs done', 'pieces done'],
+    ...['parts done', 'qty run', 'no of pieces', 'no of pcs', 'no of parts', 'piece count', 'part count'],
   ],
   scrap: [
     ...['scrap', 'scrap qty', 'qty scrap', 'scrap quantity', 'quantity scrap', 'scrapped', 'qty scrapped'],
@@ -125,10 +165,14 @@ const HEADER_WORDS: Readonly<Record<TimesheetField, readonly string[]>> = {
     ],
     ...['qty rejected', 'rejected qty', 'qty reject', 'bad', 'bad pcs', 'bad parts', 'bad pieces', 'bad qty'],
     ...['qty bad', 'defects', 'defective', 'spoiled', 'spoilage', 'waste', 'ng'],
+    ...['scrap pc', 'scrap units', 'pcs scrap', 'pcs scrapped', 'pieces scrapped', 'parts scrapped'],
+    ...['pieces scrap', 'parts scrap', 'scr', 'rej', 'rej qty', 'qty rej', 'pcs rejected', 'parts rejected'],
+    ...['pieces rejected', 'reject pcs', 'defect', 'defect qty', 'defective qty', 'nok', 'not ok', 'no good'],
   ],
   note: [
     ...['note', 'notes', 'remark', 'remarks', 'comment', 'comments', 'memo', 'details', 'work description'],
     ...['description'],
+    ...['desc', 'work notes', 'job notes', 'shop notes', 'operator notes', 'operator comments', 'detail'],
   ],
 };
 
@@ -142,7 +186,7 @@ const RANKS = new Map<string, { field: TimesheetField; rank: number }>(
 export function findHeaderField(text: string): { field: TimesheetField; rank: number } | null {
   const whole = RANKS.get(toPlainHeader(text));
   if (whole) return whole;
-  const parts = text.split(/\/|\bor\b/i).map((part) => RANKS.get(toPlainHeader(part)));
+  const parts = text.split(/[/&]|\b(?:or|and)\b/i).map((part) => RANKS.get(toPlainHeader(part)));
   const [first] = parts;
   return first && parts.every((part) => part?.field === first.field) ? first : null;
 }

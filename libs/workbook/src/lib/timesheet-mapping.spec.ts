@@ -24,6 +24,26 @@ describe('header wordings', () => {
     ['Task', 'operation'],
     ['Press', 'machine'],
     ['Machine', 'machine'],
+    ['Mach', 'machine'],
+    ['Mach.', 'machine'],
+    ['Mach #', 'machine'],
+    ['M/C', 'machine'],
+    ['M/C No.', 'machine'],
+    ['Equip', 'machine'],
+    ['Equipment', 'machine'],
+    ['Work center', 'machine'],
+    ['Work ctr.', 'machine'],
+    ['Mach. / Press', 'machine'],
+    ['Workday', 'date'],
+    ['Empl.', 'employee'],
+    ['Done by', 'employee'],
+    ['Job card', 'job'],
+    ['Works order no.', 'job'],
+    ['Opn.', 'operation'],
+    ['Labor hrs', 'hours'],
+    ['Pcs OK', 'good'],
+    ['Rej.', 'scrap'],
+    ['Notes & comments', 'note'],
     ['Hrs', 'hours'],
     ['Hours worked', 'hours'],
     ['Hours (h:mm)', 'hours'],
@@ -39,12 +59,19 @@ describe('header wordings', () => {
     expect(findHeaderField(text)?.field).toBe(field);
   });
 
-  it.each(['Regular hours', 'OT hours', 'Start', 'Customer', 'Job title', 'Good/Scrap', ''])(
-    '%p is left to the user',
-    (text) => {
-      expect(findHeaderField(text)).toBeNull();
-    },
-  );
+  it.each([
+    'Regular hours',
+    'OT hours',
+    'Start',
+    'Customer',
+    'Job title',
+    'Good/Scrap',
+    'Good and scrap',
+    'Setup hrs',
+    '',
+  ])('%p is left to the user', (text) => {
+    expect(findHeaderField(text)).toBeNull();
+  });
 });
 
 describe('finding the header', () => {
