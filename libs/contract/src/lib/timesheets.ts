@@ -90,6 +90,25 @@ export const checkedRowSchema = z.object({
 });
 export type CheckedRow = z.infer<typeof checkedRowSchema>;
 
+/** A column with a header and values in the entries that no field is read from. */
+export const unusedColumnSchema = z.object({
+  column: z.string(),
+  text: z.string(),
+  /** Its first different values. */
+  samples: z.array(z.string()),
+  message: z.string(),
+});
+export type UnusedColumn = z.infer<typeof unusedColumnSchema>;
+
+/** Text dates that are not read as declared, and what could be declared to read all text dates of the column. */
+export const unreadDatesSchema = z.object({
+  /** Addresses of the cells, as far as problems are listed. */
+  cells: z.array(z.string()),
+  /** Each order that reads them all, with the first text date and the day it would become. */
+  offers: z.array(z.object({ dateFormat: z.enum(DATE_FORMATS), text: z.string(), date: localDateSchema })),
+});
+export type UnreadDates = z.infer<typeof unreadDatesSchema>;
+
 export const alreadyImportedSchema = z.object({
   importId: idSchema,
   importedAt: instantSchema,
@@ -104,6 +123,9 @@ export const timesheetCheckSchema = z.object({
   /** Cells of the header row with a sample of what stands below, for mapping by hand. */
   headerCells: z.array(z.object({ column: z.string(), text: z.string(), sample: z.string() })),
   missingFields: z.array(z.enum(TIMESHEET_FIELDS)),
+  /** None as long as columns are missing: nothing is read then. */
+  unusedColumns: z.array(unusedColumnSchema),
+  unreadDates: unreadDatesSchema.nullable(),
   rowsRead: z.number().int(),
   entriesReady: z.number().int(),
   alreadyThere: z.number().int(),
@@ -112,6 +134,8 @@ export const timesheetCheckSchema = z.object({
   hoursReady: hoursSchema,
   hoursAlreadyThere: hoursSchema,
   hoursRefused: hoursSchema,
+  /** Refused rows whose hours cannot be read; they are in no sum of hours. */
+  refusedWithoutHours: z.number().int(),
   controlTotal: z
     .object({ cell: z.string(), hours: hoursSchema, agrees: z.boolean(), difference: hoursSchema })
     .nullable(),

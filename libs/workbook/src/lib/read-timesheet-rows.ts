@@ -1,5 +1,6 @@
 import { type TimesheetField, type TimesheetMapping } from '@brakeven/contract';
 import { columnOf } from './cell-address';
+import { findUnreadDates } from './find-unread-dates';
 import { type RawCell, type SheetFile, type SheetRow } from './sheet-file';
 import {
   type CellReading,
@@ -13,6 +14,7 @@ import {
 import { getSheet } from './timesheet-mapping';
 import { type RowProblem, type SheetNotice, type TimesheetRow, type TimesheetRows } from './timesheet-row';
 import { type FieldCells, type SortedRow, sortTimesheetRows } from './timesheet-row-role';
+import { listUnusedColumns } from './unused-columns';
 
 type Columns = readonly (readonly [TimesheetField, string])[];
 
@@ -80,6 +82,15 @@ function* readInSteps(file: SheetFile, mapping: TimesheetMapping): Generator<und
     rows: yield* mapInSteps(entries, ({ row, fields }) => readEntry(row.row, fields, columns, forms)),
     controlTotal: control.controlTotal,
     problems: [...sorted.flatMap((one) => (one === total ? [] : toNotice(one))), ...control.notices],
+    unusedColumns: listUnusedColumns(
+      header,
+      entries.map(({ row }) => row),
+      mapping.columns,
+    ),
+    unreadDates: findUnreadDates(
+      entries.map(({ fields }) => fields.date),
+      forms,
+    ),
   };
 }
 

@@ -1,5 +1,5 @@
 import { type TimesheetField } from '@brakeven/contract';
-import { type LocalDate } from '@brakeven/values';
+import { type DateFormat, type LocalDate } from '@brakeven/values';
 
 export type RowProblemCode =
   | 'date_missing'
@@ -52,10 +52,38 @@ export interface SheetNotice {
   readonly cell: string;
 }
 
+/** A column with a header and values that no field is read from. */
+export interface UnusedColumn {
+  readonly column: string;
+  /** What its header says. */
+  readonly text: string;
+  /** Its first different values in the entries, three at most, long ones cut. */
+  readonly samples: readonly string[];
+  readonly message: string;
+}
+
+/** An order of day and month that reads every text date of a column. */
+export interface DateOrderOffer {
+  readonly dateFormat: DateFormat;
+  /** The first text date, and the day that it is in this order. */
+  readonly text: string;
+  readonly date: LocalDate;
+}
+
+export interface UnreadTextDates {
+  /** Addresses of the text dates that are not read. */
+  readonly cells: readonly string[];
+  /** None when no single order reads all of the column. */
+  readonly offers: readonly DateOrderOffer[];
+}
+
 export interface TimesheetRows {
   readonly sheet: string;
   readonly rows: readonly TimesheetRow[];
   /** The totals row at the foot, if there is one. */
   readonly controlTotal: { readonly row: number; readonly hours: string; readonly cell: string } | null;
   readonly problems: readonly SheetNotice[];
+  readonly unusedColumns: readonly UnusedColumn[];
+  /** Null when every text date is read. */
+  readonly unreadDates: UnreadTextDates | null;
 }

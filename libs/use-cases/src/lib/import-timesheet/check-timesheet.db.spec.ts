@@ -26,6 +26,9 @@ describe('checkTimesheet', () => {
       hoursRead: '16.2500',
       hoursReady: '16.2500',
       hoursRefused: '0.0000',
+      refusedWithoutHours: 0,
+      unusedColumns: [],
+      unreadDates: null,
       firstDay: '2026-03-02',
       lastDay: '2026-03-03',
       byEmployee: [
@@ -82,6 +85,7 @@ describe('checkTimesheet', () => {
       hoursRead: '47.2500',
       hoursReady: '16.2500',
       hoursRefused: '31.0000',
+      refusedWithoutHours: 1,
     });
     expect(check.rows.filter(({ state }) => state === 'refused')).toHaveLength(9);
   });
@@ -189,6 +193,38 @@ describe('checkTimesheet', () => {
     const columns = { date: 'A', employee: 'B', job: 'C', operation: 'D', hours: 'E' };
     const mapping = { sheet: 'CSV', headerRow: 1, columns, dateFormat: 'YYYY-MM-DD' } as const;
     expect(await shop.check(file, { mapping })).toMatchObject({ mappingFrom: 'chosen', entriesReady: 1 });
+  });
+
+  it('tells of a column that no field is read from, and no more once it is said what it is', async () => {
+    const file = toCsv(['2026-03-02,12,J-1041,FORM,P2,7.5'], {
+      header: 'Date,Employee,Job,Operation,Cell,Hours',
+    });
+    const check = await shop.check(file);
+    expect(check).toMatchObject({ entriesReady: 1, problems: [] });
+    expect(check.unusedColumns).toEqual([
+      { column: 'E', text: 'Cell', samples: ['P2'], message: "Column E 'Cell' (P2) is not used." },
+    ]);
+    expect(check.mapping?.columns).not.toHaveProperty('machine');
+    const mapping = check.mapping && {
+      ...check.mapping,
+      columns: { ...check.mapping.columns, machine: 'E' },
+    };
+    await shop.take(file, { mapping: mapping ?? undefined });
+    expect(await shop.listEntries()).toEqual([expect.stringContaining(' FORM P2 7.5')]);
+    expect(await shop.check(file)).toMatchObject({ mappingFrom: 'remembered', unusedColumns: [] });
+  });
+
+  it('offers the orders that read every text date, which then go in as declared', async () => {
+    const file = toCsv(['02/03/2026,12,J-1041,FORM,,1,,,', '02/27/2026,12,J-1041,FORM,,2,,,']);
+    const check = await shop.check(file);
+    expect(codes(check)).toEqual(['date_unreadable A2', 'date_unreadable A3']);
+    expect(check.unreadDates).toEqual({
+      cells: ['A2', 'A3'],
+      offers: [{ dateFormat: 'MM/DD/YYYY', text: '02/03/2026', date: '2026-02-03' }],
+    });
+    const mapping = check.mapping && { ...check.mapping, dateFormat: 'MM/DD/YYYY' as const };
+    const settled = await shop.check(file, { mapping: mapping ?? undefined });
+    expect(settled).toMatchObject({ unreadDates: null, problems: [], firstDay: '2026-02-03' });
   });
 
   it('answers a file without any header in words', async () => {

@@ -61,7 +61,11 @@ const ISSUES_MAX = 100;
 
 function refuseBadRows(check: TimesheetCheck, goodRowsOnly: boolean): void {
   if (check.refused === 0 || goodRowsOnly) return;
-  const message = `${check.refused} of ${check.rowsRead} rows are refused, so nothing was written. Put them right, or import the good rows without them.`;
+  const subject = `${check.refused} of ${check.rowsRead} ${check.rowsRead === 1 ? 'row' : 'rows'}`;
+  const message =
+    check.refused === 1
+      ? `${subject} is refused, so nothing was written. Put it right, or import the good rows without it.`
+      : `${subject} are refused, so nothing was written. Put them right, or import the good rows without them.`;
   const issues = check.problems
     .filter(({ severity }) => severity === 'refused')
     .slice(0, ISSUES_MAX)

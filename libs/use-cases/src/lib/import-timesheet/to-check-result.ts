@@ -40,6 +40,11 @@ export function toCheckResult(reading: TimesheetReading, assessment: Assessment)
     mappingFrom: reading.mappingFrom,
     headerCells: [...reading.headerCells],
     missingFields: reading.missingFields,
+    unusedColumns: (reading.timesheet?.unusedColumns ?? []).map((one) => ({
+      ...one,
+      samples: [...one.samples],
+    })),
+    unreadDates: toUnreadDates(reading),
     ...totals,
     controlTotal,
     alreadyImported: alreadyImported && {
@@ -56,6 +61,12 @@ export function toCheckResult(reading: TimesheetReading, assessment: Assessment)
   };
 }
 
+function toUnreadDates({ timesheet }: TimesheetReading): TimesheetCheck['unreadDates'] {
+  if (!timesheet?.unreadDates) return null;
+  const { cells, offers } = timesheet.unreadDates;
+  return { cells: cells.slice(0, PROBLEMS_LISTED_MAX), offers: [...offers] };
+}
+
 type Totals = Pick<
   TimesheetCheck,
   | 'rowsRead'
@@ -66,6 +77,7 @@ type Totals = Pick<
   | 'hoursReady'
   | 'hoursAlreadyThere'
   | 'hoursRefused'
+  | 'refusedWithoutHours'
 >;
 
 function toTotals(rows: readonly AssessedRow[]): Totals {
@@ -86,6 +98,7 @@ function toTotals(rows: readonly AssessedRow[]): Totals {
     hoursReady: hoursText(ready.hours),
     hoursAlreadyThere: hoursText(there.hours),
     hoursRefused: hoursText(refused.hours),
+    refusedWithoutHours: rows.filter(({ state, hours }) => state === 'refused' && hours === null).length,
   };
 }
 
@@ -146,7 +159,9 @@ function limitProblems(problems: readonly TimesheetProblem[]): TimesheetProblem[
   const listed = problems.slice(0, PROBLEMS_LISTED_MAX);
   const [first] = problems.slice(PROBLEMS_LISTED_MAX);
   if (!first) return listed;
-  const message = `${problems.length - PROBLEMS_LISTED_MAX} more problems from row ${first.row} on are not listed. Put right those above and check again; so many have one cause, such as a column that holds something else.`;
+  const more = problems.length - PROBLEMS_LISTED_MAX;
+  const subject = more === 1 ? '1 more problem' : `${more} more problems`;
+  const message = `${subject} from row ${first.row} on ${more === 1 ? 'is' : 'are'} not listed. Put right those above and check again; so many have one cause, such as a column that holds something else.`;
   return [
     ...listed,
     { ...first, code: 'more_problems', severity: 'warning', message, row: null, field: null, alias: null },
