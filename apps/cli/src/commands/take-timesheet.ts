@@ -2,7 +2,6 @@ import {
   AppError,
   type TimesheetCheck,
   type TimesheetField,
-  type TimesheetImported,
   type TimesheetMapping,
 } from '@brakeven/contract';
 import {
@@ -14,9 +13,9 @@ import {
 import { type Cli, EXIT, type ExitCode } from '../cli';
 import { withShop } from '../databases';
 import { openReader } from '../open-reader';
-import { printPairs, printTable } from '../print-table';
 import { readWorkbookFile } from '../read-file';
 import { showProgress } from '../show-progress';
+import { type Taken, toTakenText } from './taken-timesheet-text';
 
 /** Options of `timesheets check` and `timesheets import`. */
 export interface TakeOptions {
@@ -30,7 +29,6 @@ export interface TakeOptions {
 }
 
 export type TimesheetAction = 'check' | 'import';
-type Taken = TimesheetCheck | TimesheetImported;
 
 /** Checks or imports a timesheet and answers what came of it, refused rows included. */
 export async function takeTimesheet(
@@ -99,48 +97,10 @@ function findExitCode({ refused, missingFields }: Taken, { goodRows }: TakeOptio
 }
 
 function answer(cli: Cli, taken: Taken, exitCode: ExitCode): void {
-  cli.answer({ json: toJson(taken), text: () => toText(taken), exitCode });
+  cli.answer({ json: toJson(taken), text: () => toTakenText(taken), exitCode });
 }
 
 /** Everything but the rows as the screen shows them; an import's id only if one was made. */
 function toJson({ rows: _rows, rowsNotShown: _rowsNotShown, headerCells: _cells, ...taken }: Taken): object {
   return 'importId' in taken && taken.importId === null ? { ...taken, importId: undefined } : taken;
-}
-
-function toText(taken: Taken): string {
-  const added = 'entriesAdded' in taken;
-  const { controlTotal } = taken;
-  const counts = printPairs([
-    ['Rows read', `${taken.rowsRead}, ${taken.hoursRead} hours`],
-    [
-      added ? 'Added' : 'Ready',
-      added
-        ? `${taken.entriesAdded}, ${taken.hoursAdded} hours`
-        : `${taken.entriesReady}, ${taken.hoursReady} hours`,
-    ],
-    ['Already there', `${taken.alreadyThere}, ${taken.hoursAlreadyThere} hours`],
-    ['Refused', `${taken.refused}, ${taken.hoursRefused} hours`],
-    ...(controlTotal ? [['Total in the file', toControlWords(controlTotal)] as const] : []),
-    ...(added && taken.importId ? [['Import', taken.importId] as const] : []),
-  ]);
-  return [counts, toImportedWords(taken), toProblemTable(taken)].filter((part) => part !== '').join('\n\n');
-}
-
-function toControlWords({ hours, agrees, difference }: NonNullable<Taken['controlTotal']>): string {
-  return agrees ? `${hours} hours, agrees` : `${hours} hours, differs by ${difference}`;
-}
-
-function toImportedWords({ alreadyImported }: Taken): string {
-  if (!alreadyImported) return '';
-  const { importedAt, importedBy, importId } = alreadyImported;
-  return `This file was already imported at ${importedAt} by ${importedBy} (${importId}).`;
-}
-
-function toProblemTable({ problems }: Taken): string {
-  if (problems.length === 0) return 'No problems.';
-  return printTable(problems, [
-    { title: 'Cell', of: ({ sheet, cell }) => `${sheet}!${cell}` },
-    { title: 'Weight', of: ({ severity }) => severity },
-    { title: 'Problem', of: ({ message }) => message },
-  ]);
 }

@@ -103,5 +103,6 @@ async function undo(cli: Cli, importId: string, shop: string): Promise<void> {
     }),
   );
   const { entriesVoided, hoursVoided } = undone;
-  cli.answer({ json: undone, text: () => `Taken back: ${entriesVoided} entries, ${hoursVoided} hours.` });
+  const entries = entriesVoided === 1 ? '1 entry' : `${entriesVoided} entries`;
+  cli.answer({ json: undone, text: () => `Taken back: ${entries}, ${hoursVoided} hours.` });
 }
