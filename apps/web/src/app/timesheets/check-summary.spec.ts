@@ -21,6 +21,14 @@ describe('CheckSummary', () => {
     expect(page.textsOf('dd.rows')).toEqual(['60 rows', '47 entries', '4 entries', '9 rows']);
   });
 
+  it('does not call refused hours 0 when none of them could be read', async () => {
+    const unread = { ...check, refused: 1, hoursRefused: '0.0000', refusedWithoutHours: 1 };
+    const page = await render(CheckSummary, { check: unread });
+    expect(page.textsOf('.refused dd')).toEqual(['–', '1 row, its hours cannot be read']);
+    await page.set({ check: { ...check, refusedWithoutHours: 2 } });
+    expect(page.textsOf('.refused dd')).toEqual(['67.50', '9 rows, the hours of 2 of them cannot be read']);
+  });
+
   it('says whether the total of the sheet agrees, and by how much not', async () => {
     const controlTotal = { cell: 'E66', hours: '451.5000', agrees: false, difference: '1.5000' };
     const page = await render(CheckSummary, { check: { ...check, controlTotal } });

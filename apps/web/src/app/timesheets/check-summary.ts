@@ -1,7 +1,7 @@
 import { ChangeDetectionStrategy, Component, computed, input } from '@angular/core';
 import { type TimesheetCheck } from '@brakeven/contract';
 import { HoursPipe, LocalDatePipe, StatusTag } from '@brakeven/ui';
-import { count, countEntries } from './timesheet-words';
+import { count, countEntries, refusedWords } from './timesheet-words';
 
 /** Hours read = ready + already there + refused, always in sight and adding up, and whether the sheet's own total agrees. */
 @Component({
@@ -30,7 +30,11 @@ import { count, countEntries } from './timesheet-words';
       <span class="sign" aria-hidden="true">+</span>
       <div class="term" [class.refused]="check.refused > 0">
         <dt>Refused</dt>
-        <dd>{{ check.hoursRefused | hours }}</dd>
+        @if (check.refused > 0 && check.refused === check.refusedWithoutHours) {
+          <dd>–</dd>
+        } @else {
+          <dd>{{ check.hoursRefused | hours }}</dd>
+        }
         <dd class="rows">{{ refused() }}</dd>
       </div>
     </dl>
@@ -68,5 +72,5 @@ export class CheckSummary {
     countEntries(this.hoursAdded() === null ? this.check().entriesReady : this.entriesAdded()),
   );
   protected readonly alreadyThere = computed(() => countEntries(this.check().alreadyThere));
-  protected readonly refused = computed(() => count(this.check().refused, 'row'));
+  protected readonly refused = computed(() => refusedWords(this.check()));
 }

@@ -57,6 +57,11 @@ export class CheckTable {
   protected readonly shown = computed(() => this.filtered().slice(0, this.rowsShown()));
   protected readonly hidden = computed(() => this.filtered().length - this.shown().length);
   protected readonly problems = computed(() => this.rows().flatMap((row) => row.problems));
+  protected readonly notShownWords = computed(() => {
+    const { rowsNotShown } = this.check();
+    const [rows, are] = rowsNotShown === 1 ? ['row', 'is'] : ['rows', 'are'];
+    return `${rowsNotShown.toLocaleString('en-US')} more ${rows} without problems ${are} counted above but not listed.`;
+  });
   private readonly currentKey = signal<string | null>(null);
   protected readonly current = computed(
     () => this.problems().find((one) => toKey(one) === this.currentKey()) ?? null,

@@ -50,6 +50,21 @@ describe('MappingPanel', () => {
     });
   });
 
+  it('says what an unused column is, and that it is not used after all', async () => {
+    const unusedColumns = [
+      { column: 'F', text: 'Was', samples: ['FORM', 'WELD'], message: 'F is not used.' },
+    ];
+    const page = await render(MappingPanel, { check: { ...check, unusedColumns } }, listen);
+    expect(page.textsOf('.unused label')[0]).toContain('Column F “Was” such as FORM, WELD');
+    expect(page.textsOf('#unused-F option')).toContain('Date, instead of column A');
+    await page.enter('#unused-F', 'operation');
+    await page.enter('#unused-F', '');
+    expect(changed.map(({ columns }) => columns)).toEqual([
+      { date: 'A', employee: 'B', operation: 'F' },
+      { date: 'A', employee: 'B' },
+    ]);
+  });
+
   it('does not ask for a header row that cannot be', async () => {
     const page = await render(MappingPanel, { check }, listen);
     await page.enter('input[type=number]', '0');

@@ -3,6 +3,8 @@ import {
   Component,
   computed,
   effect,
+  ElementRef,
+  inject,
   input,
   output,
   signal,
@@ -11,7 +13,7 @@ import {
 import { type TimesheetCheck, type TimesheetField, type TimesheetMapping } from '@brakeven/contract';
 import { DATE_FORMATS } from '@brakeven/values';
 import { toMappingDraft, withColumn, withHeaderAt } from './mapping-draft';
-import { FIELD_WORDS } from './timesheet-words';
+import { count, FIELD_WORDS } from './timesheet-words';
 
 const OPTIONAL_FIELDS: readonly TimesheetField[] = ['machine', 'good', 'scrap', 'note'];
 
@@ -28,6 +30,8 @@ export class MappingPanel {
   readonly isBusy = input(false);
   /** What the server said of the mapping, field by field: `mapping.headerRow`. */
   readonly issues = input<readonly { field: string; message: string }[]>([]);
+  /** A column that is not used and that the user wants to say something about; each time anew. */
+  readonly columnAsked = input<{ column: string } | null>(null);
   readonly changed = output<TimesheetMapping>();
 
   protected readonly fields = Object.keys(FIELD_WORDS) as TimesheetField[];
@@ -40,6 +44,16 @@ export class MappingPanel {
       label: `${column} · ${text || 'no header'}${sample ? `, such as ${sample}` : ''}`,
     })),
   );
+  /** Columns that the check found no use for, with what has been said of them since. */
+  protected readonly unused = computed(() => {
+    const { sheet, headerRow, columns } = this.draft();
+    const { mapping, unusedColumns } = this.check();
+    if (mapping?.sheet !== sheet || mapping.headerRow !== headerRow) return [];
+    return unusedColumns.map((one) => ({
+      ...one,
+      field: this.fields.find((field) => columns[field] === one.column) ?? null,
+    }));
+  });
   protected readonly samples = computed(
     () => new Map(this.check().headerCells.map(({ column, sample }) => [column, sample])),
   );
@@ -57,6 +71,11 @@ export class MappingPanel {
   );
 
   constructor() {
+    const host = inject<ElementRef<HTMLElement>>(ElementRef).nativeElement;
+    effect(() => {
+      const asked = this.columnAsked();
+      if (asked) setTimeout(() => showField(host.querySelector(`#unused-${asked.column}`)));
+    });
     effect(() => {
       const mapping = this.mapping() ?? toMappingDraft(this.check());
       untracked(() => this.draft.set(mapping));
@@ -69,6 +88,18 @@ export class MappingPanel {
 
   protected setColumn(field: TimesheetField, column: string): void {
     this.change(withColumn(this.draft(), field, column || null));
+  }
+
+  /** Says what an unused column holds; nothing for not used after all. */
+  protected setField(column: string, text: string): void {
+    const field = this.fields.find((one) => one === text);
+    const held = this.fields.find((one) => this.draft().columns[one] === column);
+    if (field) this.change(withColumn(this.draft(), field, column));
+    else if (held) this.change(withColumn(this.draft(), held, null));
+  }
+
+  protected rowsOf(rows: number): string {
+    return count(rows, 'row');
   }
 
   protected setSheet(sheet: string): void {
@@ -96,4 +127,9 @@ export class MappingPanel {
     this.draft.set(mapping);
     this.changed.emit(mapping);
   }
+}
+
+function showField(field: HTMLElement | null): void {
+  field?.scrollIntoView({ block: 'center' });
+  field?.focus({ preventScroll: true });
 }

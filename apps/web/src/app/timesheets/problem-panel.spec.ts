@@ -53,6 +53,40 @@ describe('ProblemPanel', () => {
     expect(heard).toEqual(['C8']);
   });
 
+  it('offers each order that reads all text dates, with what the first would be', async () => {
+    const offers = [
+      { dateFormat: 'MM/DD/YYYY', text: '02/03/2026', date: '2026-02-03' },
+      { dateFormat: 'DD/MM/YYYY', text: '02/03/2026', date: '2026-03-02' },
+    ];
+    const date = sampleProblem(5, { code: 'date_unreadable', cell: 'A5', field: 'date' });
+    const problems = [date, sampleProblem(7)];
+    const unreadDates = { cells: ['A5'], offers };
+    const page = await render(
+      ProblemPanel,
+      { problems, chosen: [], unreadDates },
+      {
+        ...listen,
+        dateFormatChosen: (format: string | null) => heard.push(format),
+      },
+    );
+    expect(page.text).toContain('1 date written as text, first in A5. More than one order reads them all');
+    expect(page.textsOf('.offer')).toEqual([
+      'Text dates are written MM/DD/YYYY 02/03/2026 is Feb 3, 2026',
+      'Text dates are written DD/MM/YYYY 02/03/2026 is Mar 2, 2026',
+    ]);
+    expect(page.textsOf('.cells li')).toHaveLength(1);
+    await page.press('Text dates are written DD/MM/YYYY');
+    expect(heard).toEqual(['DD/MM/YYYY']);
+  });
+
+  it('leaves text dates among the cells to correct when no order reads them all', async () => {
+    const problems = [sampleProblem(5, { code: 'date_unreadable', cell: 'A5', field: 'date' })];
+    const unreadDates = { cells: ['A5'], offers: [] };
+    const page = await render(ProblemPanel, { problems, chosen: [], unreadDates }, listen);
+    expect(page.text).not.toContain('Dates to settle');
+    expect(page.textsOf('.cells .cell')).toEqual(['A5']);
+  });
+
   it('searches all that is known when no near match is right', async () => {
     const page = await render(ProblemPanel, { problems: [sampleUnknownName(6)], chosen: [] }, listen);
     await page.press('Another…');

@@ -7,7 +7,9 @@ import {
   input,
   output,
 } from '@angular/core';
-import { type TimesheetProblem } from '@brakeven/contract';
+import { type TimesheetProblem, type UnreadDates } from '@brakeven/contract';
+import { type DateFormat } from '@brakeven/values';
+import { DateOrderChoice } from './date-order-choice';
 import { type ChosenName, groupUnknownNames, type UnknownName } from './group-unknown-names';
 import { type KnownName } from './known-names';
 import { NameChoice } from './name-choice';
@@ -18,8 +20,20 @@ const LISTED_MAX = 40;
 /** What is to be settled, beside the table: names once for all their rows, then everything else cell by cell. */
 @Component({
   selector: 'app-problem-panel',
-  imports: [NameChoice],
+  imports: [DateOrderChoice, NameChoice],
   template: `
+    @if (datesToSettle(); as unread) {
+      <section aria-labelledby="dates-heading">
+        <h3 id="dates-heading">Dates to settle</h3>
+        <div class="name">
+          <app-date-order-choice
+            [unread]="unread"
+            [isDisabled]="isBusy()"
+            (chosen)="chooseDateFormat($event)"
+          />
+        </div>
+      </section>
+    }
     @if (names().length > 0) {
       <section aria-labelledby="names-heading">
         <h3 id="names-heading">
@@ -40,11 +54,27 @@ const LISTED_MAX = 40;
         </ul>
       </section>
     }
-    @if (chosen().length > 0) {
+    @if (chosen().length > 0 || dateFormat()) {
       <section aria-labelledby="chosen-heading">
         <h3 id="chosen-heading">Settled</h3>
         <p class="muted">Remembered for the next timesheet when this one is added.</p>
         <ul>
+          @if (dateFormat(); as format) {
+            <li class="settled">
+              <span
+                >Text dates are written <strong>{{ format }}</strong></span
+              >
+              <button
+                type="button"
+                class="button quiet"
+                [disabled]="isBusy()"
+                [attr.aria-label]="'Take back: text dates are written ' + format"
+                (click)="chooseDateFormat(null)"
+              >
+                Take back
+              </button>
+            </li>
+          }
           @for (name of chosen(); track name.kind + name.spelling) {
             <li class="settled">
               <span
@@ -101,15 +131,29 @@ const LISTED_MAX = 40;
 export class ProblemPanel {
   readonly problems = input.required<readonly TimesheetProblem[]>();
   readonly chosen = input.required<readonly ChosenName[]>();
+  readonly unreadDates = input<UnreadDates | null>(null);
+  /** The order of text dates that was settled here. */
+  readonly dateFormat = input<DateFormat | null>(null);
   readonly isBusy = input(false);
   readonly nameChosen = output<ChosenName>();
   readonly takenBack = output<ChosenName>();
+  /** Null takes the choice back. */
+  readonly dateFormatChosen = output<DateFormat | null>();
   readonly shown = output<TimesheetProblem>();
 
   private readonly host = inject<ElementRef<HTMLElement>>(ElementRef);
   protected readonly kindWords = KIND_WORDS;
   protected readonly names = computed(() => groupUnknownNames(this.problems()));
-  protected readonly others = computed(() => this.problems().filter(({ alias }) => alias === null));
+  protected readonly datesToSettle = computed(() => {
+    const unread = this.unreadDates();
+    return unread && unread.offers.length > 0 ? unread : null;
+  });
+  protected readonly others = computed(() => {
+    const settled = new Set(this.datesToSettle()?.cells);
+    return this.problems().filter(
+      ({ alias, code, cell }) => alias === null && !(code.startsWith('date_') && settled.has(cell)),
+    );
+  });
   protected readonly listed = computed(() => this.others().slice(0, LISTED_MAX));
 
   protected rowsOf(name: UnknownName): string {
@@ -118,6 +162,11 @@ export class ProblemPanel {
 
   protected choose(name: UnknownName, known: KnownName): void {
     this.nameChosen.emit({ kind: name.kind, spelling: name.spelling, ...known });
+    this.keepFocus();
+  }
+
+  protected chooseDateFormat(format: DateFormat | null): void {
+    this.dateFormatChosen.emit(format);
     this.keepFocus();
   }
 

@@ -67,6 +67,34 @@ export function commitWords(check: TimesheetCheck): string | null {
   return `Add the ${count(check.entriesReady, 'good row')}, leave ${check.refused.toLocaleString('en-US')} out`;
 }
 
+type Refused = Pick<TimesheetCheck, 'refused' | 'refusedWithoutHours'>;
+
+/** How many rows are refused, and of how many the hours are not known: those are in no sum. */
+export function refusedWords({ refused, refusedWithoutHours }: Refused): string {
+  const rows = count(refused, 'row');
+  if (refusedWithoutHours === 0) return rows;
+  return `${rows}, ${unreadHoursWords({ refused, refusedWithoutHours })}`;
+}
+
+/** What goes in and what stays out when the refused rows are left out. */
+export function leaveOutWords(check: TimesheetCheck): string {
+  const { refused, refusedWithoutHours, entriesReady } = check;
+  const goes = entriesReady === 1 ? 'goes' : 'go';
+  const goesIn = `${countEntries(entriesReady)} with ${formatHours(check.hoursReady)} hours ${goes} in.`;
+  const stays = refused === 1 ? 'stays out and costs' : 'stay out and cost';
+  const areKnown = refusedWithoutHours < refused;
+  const hours = areKnown ? ` with ${formatHours(check.hoursRefused)} hours` : '';
+  const unread = refusedWithoutHours > 0 ? `; ${unreadHoursWords(check)}` : '';
+  return `${goesIn} ${count(refused, 'row')}${hours} ${stays} no job anything${unread}.`;
+}
+
+function unreadHoursWords({ refused, refusedWithoutHours }: Refused): string {
+  if (refusedWithoutHours < refused) {
+    return `the hours of ${refusedWithoutHours.toLocaleString('en-US')} of them cannot be read`;
+  }
+  return `${refused === 1 ? 'its' : 'their'} hours cannot be read`;
+}
+
 /** Share of the work that is done, 0 to 100, or null when it is not known. */
 export function percentDone(progress: Pick<Progress, 'done' | 'total'>): number | null {
   if (!progress.total) return null;

@@ -41,6 +41,7 @@ describe('TimesheetsPage', () => {
 
   beforeEach(() => {
     jest.resetAllMocks();
+    Element.prototype.scrollIntoView = jest.fn();
     api.list.mockReturnValue(of([]));
     TestBed.configureTestingModule({
       providers: [
@@ -91,12 +92,50 @@ describe('TimesheetsPage', () => {
     const page = await drop(refused);
     await page.press('Add the 2 good rows, leave 1 out');
     expect(api.commit).not.toHaveBeenCalled();
-    expect(inDialog()?.textContent).toContain('1 row with 7.50 hours stay out');
+    expect(inDialog()?.textContent).toContain('1 row with 7.50 hours stays out and costs no job anything.');
+    expect(inDialog()?.textContent).toContain('Correct it in your workbook later');
     api.commit.mockReturnValue(NEVER);
     pressInDialog('Add the 2 good rows, leave 1 out');
     await new Promise((resolve) => setTimeout(resolve, 300));
     await page.settle();
     expect(api.commit.mock.calls[0]?.[1]).toMatchObject({ goodRows: true });
+  });
+
+  it('tells of a column that is not used, and opens the columns at it', async () => {
+    const message = "Column F 'Was' (FORM) is not used.";
+    const unusedColumns = [{ column: 'F', text: 'Was', samples: ['FORM'], message }];
+    const page = await drop(sampleCheck({ unusedColumns }));
+    expect(page.textsOf('app-unused-columns li')[0]).toContain(message);
+    expect(page.all('app-mapping-panel')).toHaveLength(0);
+    await page.press('Say what column F is');
+    await new Promise((resolve) => setTimeout(resolve));
+    expect(document.activeElement?.id).toBe('unused-F');
+    await page.enter('#unused-F', 'machine');
+    await new Promise((resolve) => setTimeout(resolve, 650));
+    const { columns } = api.check.mock.calls.at(-1)[1].mapping;
+    expect(columns).toEqual({ ...sampleCheck().mapping?.columns, machine: 'F' });
+  });
+
+  it('settles how text dates are written at one press, and takes it back', async () => {
+    const offers = [{ dateFormat: 'MM/DD/YYYY' as const, text: '11/23/2026', date: '2026-11-23' }];
+    const unread = sampleCheck({
+      refused: 1,
+      rows: [sampleRow(5, { state: 'refused' })],
+      problems: [sampleProblem(5, { code: 'date_unreadable', cell: 'A5', field: 'date' })],
+      unreadDates: { cells: ['A5'], offers },
+    });
+    const page = await drop(unread);
+    expect(page.text).not.toContain('Cells to correct');
+    const mapping = { ...unread.mapping, dateFormat: 'MM/DD/YYYY' as const };
+    api.check.mockReturnValue(of({ answer: { ...sampleCheck(), mapping, mappingFrom: 'chosen' } }));
+    await page.press('Text dates are written MM/DD/YYYY');
+    await new Promise((resolve) => setTimeout(resolve, 650));
+    await page.settle();
+    expect(api.check.mock.calls.at(-1)[1].mapping).toEqual(mapping);
+    expect(page.textsOf('.settled')[0]).toContain('Text dates are written MM/DD/YYYY');
+    await page.press('Take back: text dates are written MM/DD/YYYY');
+    await new Promise((resolve) => setTimeout(resolve, 650));
+    expect(api.check.mock.calls.at(-1)[1].mapping.dateFormat).toBeUndefined();
   });
 
   it('keeps the last check in sight when a further one fails', async () => {

@@ -12,7 +12,7 @@ import { MatDialog } from '@angular/material/dialog';
 import { MatProgressBarModule } from '@angular/material/progress-bar';
 import { LIMITS, type TimesheetImported } from '@brakeven/contract';
 import { ErrorState, HoursPipe, InstantPipe, LoadingSkeleton, PageHeader } from '@brakeven/ui';
-import { formatHours } from '@brakeven/values';
+import { type DateFormat } from '@brakeven/values';
 import { RouterLink } from '@angular/router';
 import { FileDrop } from '../files/file-drop';
 import { type FileRule } from '../files/find-file-problem';
@@ -28,7 +28,8 @@ import { MappingPanel } from './mapping-panel';
 import { ProblemPanel } from './problem-panel';
 import { TimesheetCheckStore } from './timesheet-check-store';
 import { splitProblems } from './row-problems';
-import { commitWords, count, countEntries, percentDone, STAGE_WORDS } from './timesheet-words';
+import { commitWords, count, countEntries, leaveOutWords, percentDone, STAGE_WORDS } from './timesheet-words';
+import { UnusedColumns } from './unused-columns';
 
 /** From the week's workbook to entries in the books: drop, settle, add, and the history to undo from. */
 @Component({
@@ -48,6 +49,7 @@ import { commitWords, count, countEntries, percentDone, STAGE_WORDS } from './ti
     PageHeader,
     ProblemPanel,
     RouterLink,
+    UnusedColumns,
   ],
   providers: [TimesheetCheckStore, KnownNames, ImportHistoryStore],
   templateUrl: './timesheets-page.html',
@@ -65,6 +67,13 @@ export class TimesheetsPage {
   protected readonly rule: FileRule = { endings: ['.xlsx', '.csv'], bytesMax: LIMITS.uploadBytesMax };
   protected readonly rowsMax = LIMITS.timesheetRowsMax.toLocaleString('en-US');
   private readonly wantsMapping = signal(false);
+  protected readonly columnAsked = signal<{ column: string } | null>(null);
+  private readonly chosenDateFormat = signal<DateFormat | null>(null);
+  /** The order of text dates that was settled beside the rows, unless the columns say otherwise by now. */
+  protected readonly dateFormat = computed(() => {
+    const chosen = this.chosenDateFormat();
+    return chosen === this.store.mapping()?.dateFormat ? chosen : null;
+  });
   protected readonly isMappingNeeded = computed(() => {
     const check = this.store.check();
     return check !== null && (check.mapping === null || check.missingFields.length > 0);
@@ -74,7 +83,7 @@ export class TimesheetsPage {
   protected readonly fileProblems = computed(() => this.problems().ofFile);
   protected readonly rowProblems = computed(() => this.problems().ofRows);
   protected readonly hasToSettle = computed(
-    () => this.rowProblems().length > 0 || this.store.chosenNames().length > 0,
+    () => this.rowProblems().length > 0 || this.store.chosenNames().length > 0 || this.dateFormat() !== null,
   );
   protected readonly isMappingOpen = computed(() => this.isMappingNeeded() || this.wantsMapping());
   protected readonly commitWords = computed(() => {
@@ -108,10 +117,25 @@ export class TimesheetsPage {
 
   protected open(file: File): void {
     this.wantsMapping.set(false);
+    this.columnAsked.set(null);
+    this.chosenDateFormat.set(null);
     this.store.open(file);
   }
 
+  protected askColumn(column: string): void {
+    this.wantsMapping.set(true);
+    this.columnAsked.set({ column });
+  }
+
+  protected chooseDateFormat(format: DateFormat | null): void {
+    const mapping = this.store.mapping();
+    if (!mapping) return;
+    this.chosenDateFormat.set(format);
+    this.store.setMapping({ ...mapping, dateFormat: format ?? undefined });
+  }
+
   protected toggleMapping(): void {
+    this.columnAsked.set(null);
     this.wantsMapping.update((wanted) => !wanted);
   }
 
@@ -129,9 +153,8 @@ export class TimesheetsPage {
     confirm(this.dialog, {
       title: `Leave ${count(check.refused, 'row')} out?`,
       text: [
-        `${countEntries(check.entriesReady)} with ${formatHours(check.hoursReady)} hours go in. ` +
-          `${count(check.refused, 'row')} with ${formatHours(check.hoursRefused)} hours stay out and cost no job anything.`,
-        'Correct them in your workbook later and drop the same file again: only what is new goes in.',
+        leaveOutWords(check),
+        `Correct ${check.refused === 1 ? 'it' : 'them'} in your workbook later and drop the same file again: only what is new goes in.`,
       ],
       action: commitWords(check) ?? '',
       tone: 'primary',
