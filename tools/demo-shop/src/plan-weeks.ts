@@ -39,10 +39,24 @@ function planWeek(week: number, jobs: readonly PlannedJob[], random: Random): Pl
   const entries: PlannedEntry[] = [];
   for (let day = 0; day < 5; day += 1) {
     press.left += pressQuarterHoursPerDay;
-    for (const employee of PEOPLE.filter((person) => person.skills.length > 0))
-      entries.push(...planDay({ week, day, employee, open, upkeep, press }, random));
+    const ofDay = takeTurns(week + day).flatMap((employee) =>
+      planDay({ week, day, employee, open, upkeep, press }, random),
+    );
+    entries.push(...ofDay.sort((a, b) => PEOPLE.indexOf(a.employee) - PEOPLE.indexOf(b.employee)));
   }
   return entries;
+}
+
+/** Whoever works, those who form taking turns at the press: the first of them finds it free. */
+function takeTurns(turn: number): Person[] {
+  const workers = PEOPLE.filter((person) => person.skills.length > 0);
+  const formers = workers.filter((person) => person.skills[0] === 'FORM');
+  const first = turn % formers.length;
+  return [
+    ...formers.slice(first),
+    ...formers.slice(0, first),
+    ...workers.filter((person) => !formers.includes(person)),
+  ];
 }
 
 interface Day {
