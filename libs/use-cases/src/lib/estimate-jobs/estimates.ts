@@ -30,7 +30,7 @@ export function getEstimate(
   });
 }
 
-/** Names the state of an estimate, or that there is none: any change of it gives another version. */
+/** Names the state of an estimate, or that there is none; any change of it gives another version. */
 export function toEstimateVersion(estimate: Estimate | null): string {
   return createHash('sha256').update(JSON.stringify(estimate)).digest('base64url').slice(0, 22);
 }
