@@ -26,8 +26,7 @@ await runScript(async () => {
 });
 
 function needsDatabase() {
-  const isQuestion =
-    args.length === 0 || args.some((arg) => ['--help', '-h', '--version', '-V'].includes(arg));
+  const isQuestion = args.length === 0 || args.some((arg) => ['--help', '-h'].includes(arg));
   return !isQuestion && !WITHOUT_DATABASE.test(args.join(' '));
 }
 

@@ -229,6 +229,11 @@ describe('exit codes', () => {
     expect(help).toMatchObject({ code: 0, stdout: expect.stringContaining('Exit codes: 0 done, 1 refused') });
   });
 
+  it('0 when whoever reads has seen enough', async () => {
+    const run = await runCli(['--help'], {}, { isReaderGone: true });
+    expect(run).toEqual({ code: 0, stdout: '', stderr: '' });
+  });
+
   it('3 when the database is out of reach, or nobody said where it is', async () => {
     for (const DATABASE_URL of ['postgres://nobody@127.0.0.1:1/none', '']) {
       const run = await runCli(['timesheets', 'list', ...inShop, '--json'], { DATABASE_URL });

@@ -10,10 +10,15 @@ export interface Run {
   stderr: string;
 }
 
-/** Runs the built program as a caller would. */
-export function runCli(args: readonly string[], env: NodeJS.ProcessEnv = {}): Promise<Run> {
+/** Runs the built program as a caller would, who may have closed the other end of its standard output. */
+export function runCli(
+  args: readonly string[],
+  env: NodeJS.ProcessEnv = {},
+  { isReaderGone = false } = {},
+): Promise<Run> {
   if (!existsSync(program)) throw new Error(`${program} is not there; npx nx build cli makes it.`);
   const child = spawn(process.execPath, [program, ...args], { env: { ...process.env, ...env } });
+  if (isReaderGone) child.stdout.destroy();
   const run: Run = { code: null, stdout: '', stderr: '' };
   child.stdout.on('data', (chunk: Buffer) => (run.stdout += chunk.toString()));
   child.stderr.on('data', (chunk: Buffer) => (run.stderr += chunk.toString()));
