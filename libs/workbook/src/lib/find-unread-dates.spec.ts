@@ -34,8 +34,9 @@ describe('text dates that are not read', () => {
   });
 
   it('are only those that another order was declared for, and the offer still reads all', async () => {
-    const { unreadDates } = await readDates(['02/03/2026', '11/23/2026'], 'DD/MM/YYYY');
+    const { unreadDates, rows } = await readDates(['02/03/2026', '11/23/2026'], 'DD/MM/YYYY');
     expect(unreadDates?.cells).toEqual(['A3']);
+    expect(rows[1]?.problems[0]?.message).toContain('declare that one under Change columns');
     expect(unreadDates?.offers.map(({ dateFormat }) => dateFormat)).toEqual(['MM/DD/YYYY']);
   });
 
@@ -48,9 +49,8 @@ describe('text dates that are not read', () => {
     const { rows } = await readDates(['11/23/2026']);
     expect(rows[0]?.problems[0]?.message).toBe(
       "Cell A2 holds the text '11/23/2026', and no order of day and month is declared for text dates in this " +
-        'sheet. Write it as a real date. Or say how text dates are written in this sheet: on screen under Change ' +
-        'columns (or under To settle, where the orders that read them all are offered), at the command line with ' +
-        '--date-format.',
+        'sheet. Declare it under Change columns, or under To settle where it is offered (at the command line: ' +
+        '--date-format), or write real dates.',
     );
   });
 });

@@ -34,8 +34,11 @@ const FIRST_DAY = toLocalDate('1990-01-01');
 const LAST_DAY = toLocalDate('2199-12-31');
 const REAL_DATE = 'Write it as a real date.';
 const DECLARE_ORDER =
-  'Or say how text dates are written in this sheet: on screen under Change columns (or under To settle, where the ' +
-  'orders that read them all are offered), at the command line with --date-format.';
+  'Declare it under Change columns, or under To settle where it is offered (at the command line: --date-format), ' +
+  'or write real dates.';
+const OTHER_ORDER =
+  'If this sheet writes its dates in another order, declare that one under Change columns (at the command line: ' +
+  '--date-format).';
 const NO_DATE_FORMAT = 'Format the cell as a number or a duration, not as a date.';
 const HOURS_WANTED = 'Write hours as a number such as 7.5 or as a duration such as 7:30.';
 
@@ -58,13 +61,13 @@ export function readDateCell(cell: RawCell | undefined, forms: TextForms): CellR
     return refuse(
       'date_unreadable',
       `Cell ${cell.address} holds the text '${cell.text}', and no order of day and month is declared for text ` +
-        `dates in this sheet. ${REAL_DATE} ${DECLARE_ORDER}`,
+        `dates in this sheet. ${DECLARE_ORDER}`,
     );
   }
   const parsed = parseDateText(cell.text, forms.dateFormat);
   return parsed.ok
     ? assertRange(parsed.value, cell.address)
-    : refuse('date_unreadable', `Cell ${cell.address}: ${parsed.message} ${DECLARE_ORDER}`);
+    : refuse('date_unreadable', `Cell ${cell.address}: ${parsed.message} ${OTHER_ORDER}`);
 }
 
 /**
