@@ -29,8 +29,9 @@ describe('toTakenText', () => {
   it('notes a column that is not used, with the option that says what it is', () => {
     const message = "Column E 'Cell' (BR1) is not used.";
     const unusedColumns = [{ column: 'E', text: 'Cell', samples: ['BR1'], message }];
-    expect(toText({ unusedColumns })).toContain(`Note: ${message} `);
-    expect(toText({ unusedColumns })).toContain('--column machine=E');
+    expect(toText({ unusedColumns })).toContain(
+      `Note: ${message} To use it, say which field it holds: --column <field>=E\n`,
+    );
   });
 
   it('names the orders that read all text dates as they are to be typed', () => {

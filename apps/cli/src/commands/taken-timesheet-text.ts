@@ -35,7 +35,7 @@ function toRefusedWords({ refused, refusedWithoutHours, hoursRefused }: Taken): 
 function listNotes({ unusedColumns, unreadDates }: Taken): string[] {
   const unused = unusedColumns.map(
     ({ message, column }) =>
-      `Note: ${message} If it holds something that is needed, say what: --column machine=${column}, for example.`,
+      `Note: ${message} To use it, say which field it holds: --column <field>=${column}`,
   );
   const orders = (unreadDates?.offers ?? []).map(
     ({ dateFormat, text, date }) => `  --date-format '${dateFormat}'   ${text} is ${date}`,
