@@ -5,7 +5,7 @@ import { type TimesheetCheck } from '@brakeven/contract';
 @Component({
   selector: 'app-unused-columns',
   template: `
-    <ul [class.known]="check().mappingFrom !== 'recognised'">
+    <ul [class.known]="check().mappingFrom === 'remembered'">
       @for (item of check().unusedColumns; track item.column) {
         <li>
           <span>{{ item.message }}</span>
