@@ -30,7 +30,8 @@ const pictures = {
   hours: (page) => openGrid(page, '/hours?period=all'),
   'forming-fit': (page) => goTo(page, '/forming/fit'),
   'forming-blank': (page) => goTo(page, '/forming/blank'),
-  'forming-depth': openDepth,
+  // It opens on the set-up of the latest trial bend.
+  'forming-depth': (page) => goTo(page, '/forming/depth'),
   'forming-fit-1024': async (page) => {
     await page.setViewportSize({ width: 1024, height: 1400 });
     await goTo(page, '/forming/fit');
@@ -120,21 +121,6 @@ async function openJob(page, part) {
   const answer = await page.request.get('/api/jobs?sort=margin&direction=asc&status=invoiced&limit=1');
   const { items } = await answer.json();
   await goTo(page, `/jobs/${items[0].jobId}${part}`);
-}
-
-/**
- * Ram depth with the tools and the sheet of the latest trial bend.
- * @param {Page} page
- */
-async function openDepth(page) {
-  const machines = await (await page.request.get('/api/machines')).json();
-  const { items } = await (await page.request.get('/api/trial-bends?limit=1')).json();
-  const { machineId, punchId: punch, dieOpeningId: opening, materialCode: material, thicknessMm } = items[0];
-  const machine = machines.find(
-    (/** @type {{ machineId: string }} */ one) => one.machineId === machineId,
-  ).code;
-  const address = { machine, punch, opening, material, thickness: `${thicknessMm} mm` };
-  await goTo(page, `/forming/depth?${new URLSearchParams(address)}`);
 }
 
 /**

@@ -71,7 +71,7 @@ const MONEY: readonly FigureColumn[] = [
     note: toMarginNote,
     // What is done and not invoiced yet is work in progress, no loss.
     isLoss: (job) => job.marginIsProvisional === false && !job.isToInvoice && isBelowZero(job.margin),
-    width: 156,
+    width: 166,
   }),
   money('workInProgress', 'In progress', 'job.workInProgress', { width: 100 }),
 ];
@@ -164,13 +164,13 @@ const WORDS: readonly GridColumn<Job>[] = [
     isPinned: true,
     width: 70,
   },
-  { id: 'title', header: 'Title', value: (job) => job.title, isSortable: true, minWidth: 102, flex: 1 },
+  { id: 'title', header: 'Title', value: (job) => job.title, isSortable: true, minWidth: 106, flex: 1 },
   {
     id: 'customer',
     header: 'Customer',
     value: (job) => job.customer,
     isSortable: true,
-    minWidth: 118,
+    minWidth: 104,
     flex: 1.5,
   },
   {

@@ -26,16 +26,16 @@ export function toRunColumns(view: RunView): RunColumn[] {
       value: (run) => `${run.jobNumber} ${run.jobTitle}`,
       href: (run) => (view.canOpenJobs ? `/jobs/${run.jobId}` : null),
       isSortable: true,
-      minWidth: 96,
+      minWidth: 92,
       flex: 3,
     },
-    { id: 'machine', header: 'Machine', value: (run) => run.machine, isSortable: true, width: 76 },
+    { id: 'machine', header: 'Machine', value: (run) => run.machine, isSortable: true, width: 70 },
     {
       id: 'material',
       header: 'Material',
       value: (run) => `${size(run.thicknessMm)} ${toShortName(run.material)}`,
       isSortable: true,
-      minWidth: 130,
+      minWidth: 120,
       flex: 4,
     },
     {
@@ -43,7 +43,7 @@ export function toRunColumns(view: RunView): RunColumn[] {
       header: 'Opening',
       value: (run) => size(run.openingMm),
       isSortable: true,
-      width: 78,
+      width: 70,
     },
     {
       id: 'bendLengthMm',
@@ -58,7 +58,7 @@ export function toRunColumns(view: RunView): RunColumn[] {
       kind: 'count',
       value: (run) => run.strokes,
       isSortable: true,
-      width: 76,
+      width: 66,
     },
     {
       id: 'pieces',
@@ -66,7 +66,7 @@ export function toRunColumns(view: RunView): RunColumn[] {
       kind: 'count',
       value: (run) => run.pieces,
       isSortable: true,
-      width: 70,
+      width: 60,
     },
     {
       id: 'computed',
@@ -80,7 +80,7 @@ export function toRunColumns(view: RunView): RunColumn[] {
       value: (run) =>
         run.highestForceKn === null ? null : toForceNumber(Number(run.highestForceKn), view.units),
       isSortable: true,
-      width: 70,
+      width: 60,
     },
     toShareColumn(view),
     {
@@ -88,7 +88,7 @@ export function toRunColumns(view: RunView): RunColumn[] {
       header: 'Good',
       value: (run) => (run.isGood ? 'yes' : 'no'),
       tone: (run) => (run.isGood ? null : 'loss'),
-      width: 62,
+      width: 54,
     },
   ];
   return [...columns.filter(({ id }) => !view.isNarrow || NARROW.includes(id)), toActions(view)];
@@ -110,7 +110,7 @@ function toShareColumn({ isNarrow }: RunView): RunColumn {
     value: (run) => (run.share === null ? 'no rating' : `${toPercentWords(run.share)}${of(run)}`),
     tone: (run) => toShareTone(run),
     isSortable: true,
-    width: isNarrow ? 88 : 116,
+    width: isNarrow ? 88 : 112,
   };
 }
 
