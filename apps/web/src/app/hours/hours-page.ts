@@ -1,13 +1,5 @@
-import {
-  ChangeDetectionStrategy,
-  Component,
-  computed,
-  DOCUMENT,
-  inject,
-  input,
-  viewChild,
-} from '@angular/core';
-import { rxResource, takeUntilDestroyed } from '@angular/core/rxjs-interop';
+import { ChangeDetectionStrategy, Component, computed, inject, input, viewChild } from '@angular/core';
+import { rxResource } from '@angular/core/rxjs-interop';
 import { Router, RouterLink } from '@angular/router';
 import { type EntryFilter, type EntryListQuery, type TimeEntry } from '@brakeven/contract';
 import {
@@ -20,11 +12,11 @@ import {
   type PageSource,
 } from '@brakeven/ui';
 import { type DayOfWeek, formatHours, formatLocalDate, toLocalDate, todayIn } from '@brakeven/values';
-import { debounceTime, Subject } from 'rxjs';
 import { EntriesApi } from '../api/entries-api';
 import { MonthsApi } from '../api/months-api';
 import { toProblemSentence } from '../api/problem-text';
 import { SessionStore } from '../session/session-store';
+import { injectGridAddress, toGridOrder } from '../shell/grid-address';
 import { LoadError } from '../shell/load-error';
 import { Notifier } from '../shell/notifier';
 import { RollupStore } from '../shell/rollup-store';
@@ -61,8 +53,7 @@ export class HoursPage {
   private readonly rollup = inject(RollupStore);
   private readonly router = inject(Router);
   private readonly grid = viewChild<Grid<TimeEntry>>(Grid);
-  private readonly isNarrow = inject(DOCUMENT).defaultView?.matchMedia('(width < 640px)').matches ?? false;
-  private readonly typed = new Subject<string>();
+  protected readonly address = injectGridAddress();
 
   protected readonly periods = Object.entries(PERIODS).map(([id, label]) => ({ id: id as Period, label }));
   protected readonly chosenPeriod = computed(() => toPeriod(this.period()));
@@ -91,16 +82,12 @@ export class HoursPage {
       load: (request) => this.api.list({ ...filter, ...(request as Partial<EntryListQuery>) }),
     };
   });
-  protected readonly order = computed<GridOrder>(() =>
-    this.sort()
-      ? { sort: this.sort() ?? '', direction: this.direction() === 'asc' ? 'asc' : 'desc' }
-      : DEFAULT_ORDER,
-  );
+  protected readonly order = computed(() => toGridOrder(this.sort(), this.direction(), DEFAULT_ORDER));
   protected readonly isOwnOnly = computed(() => !this.session.can('hours.all'));
   protected readonly columns = computed(() =>
     toEntryColumns({
       canSeeOthers: !this.isOwnOnly(),
-      isNarrow: this.isNarrow,
+      isNarrow: this.address.isNarrow,
       canOpenJobs: this.session.can('jobs.view'),
       canOpenSources: this.session.can('timesheets.use'),
       ...(this.session.can('hours.edit') && { voidEntry: (entry: TimeEntry) => this.void(entry) }),
@@ -128,36 +115,14 @@ export class HoursPage {
   );
   protected readonly rowId = (entry: TimeEntry): string => entry.entryId;
 
-  constructor() {
-    this.typed
-      .pipe(debounceTime(300), takeUntilDestroyed())
-      .subscribe((search) => this.ask({ search: search.trim() || null }));
-  }
-
-  protected ask(queryParams: Record<string, string | null>): void {
-    void this.router.navigate([], { queryParams, queryParamsHandling: 'merge', replaceUrl: true });
-  }
-
   protected setPeriod(period: Period): void {
     if (period === 'custom')
-      this.ask({ period, from: this.range().from ?? null, to: this.range().to ?? null });
-    else this.ask({ period, from: null, to: null });
-  }
-
-  protected searchFor(text: string): void {
-    this.typed.next(text);
-  }
-
-  protected setOrder({ sort, direction }: GridOrder): void {
-    this.ask({ sort, direction });
+      this.address.ask({ period, from: this.range().from ?? null, to: this.range().to ?? null });
+    else this.address.ask({ period, from: null, to: null });
   }
 
   protected clear(): void {
     void this.router.navigate([], { queryParams: { period: 'all' } });
-  }
-
-  protected follow(href: string): void {
-    void this.router.navigateByUrl(href);
   }
 
   private void(entry: TimeEntry): void {

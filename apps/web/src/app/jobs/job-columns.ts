@@ -92,23 +92,40 @@ export function chooseColumns(
   return chosen.flatMap((id) => columns.find((column) => column.id === id) ?? []);
 }
 
+const STANDARD: readonly JobSort[] = [
+  'number',
+  'title',
+  'customer',
+  'status',
+  'estimate',
+  'total',
+  'variance',
+  'invoiced',
+  'margin',
+  'workInProgress',
+  'lastWorkedOn',
+];
+const STANDARD_WITHOUT_MONEY: readonly JobSort[] = [
+  'number',
+  'title',
+  'customer',
+  'status',
+  'quantity',
+  'hours',
+  'machineHours',
+  'dueOn',
+  'lastWorkedOn',
+];
+
+/** What a telephone has room for, before the rest. */
+const FIRST_IF_NARROW: readonly JobSort[] = ['number', 'title', 'margin', 'hours', 'status'];
+
 /** What somebody sees who has chosen nothing: all of it fits beside the rail at 1440 px. */
-export function toStandardColumns(withMoney: boolean): JobSort[] {
-  return withMoney
-    ? [
-        'number',
-        'title',
-        'customer',
-        'status',
-        'estimate',
-        'total',
-        'variance',
-        'invoiced',
-        'margin',
-        'workInProgress',
-        'lastWorkedOn',
-      ]
-    : ['number', 'title', 'customer', 'status', 'quantity', 'hours', 'machineHours', 'dueOn', 'lastWorkedOn'];
+export function toStandardColumns(withMoney: boolean, isNarrow = false): JobSort[] {
+  const columns = withMoney ? STANDARD : STANDARD_WITHOUT_MONEY;
+  if (!isNarrow) return [...columns];
+  const first = FIRST_IF_NARROW.filter((id) => columns.includes(id));
+  return [...first, ...columns.filter((id) => !first.includes(id))];
 }
 
 /** What each job cost, category by category. */

@@ -6,6 +6,7 @@ import { catchError, of } from 'rxjs';
 import { toShownProblem } from '../api/problem-text';
 import { SavedViewsApi } from '../api/saved-views-api';
 import { SessionStore } from '../session/session-store';
+import { injectIsNarrow } from '../shell/is-narrow';
 import { Notifier } from '../shell/notifier';
 import { type JobView, toBuiltInViews, toOwnView } from './job-views';
 
@@ -22,7 +23,7 @@ export class JobViewsStore {
 
   private readonly withMoney = this.session.can('jobs.money');
   private readonly saved = signal<readonly SavedView[]>([]);
-  private readonly builtIn = toBuiltInViews(this.withMoney);
+  private readonly builtIn = toBuiltInViews(this.withMoney, injectIsNarrow());
   private readonly standard = this.builtIn[0]?.state.columns ?? [];
 
   readonly isReady = signal(false);

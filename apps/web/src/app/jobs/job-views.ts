@@ -17,19 +17,19 @@ const LATEST: Pick<ViewState, 'sort' | 'direction' | 'filter'> = {
 };
 
 /** The views that come with the product, the standard one first. */
-export function toBuiltInViews(withMoney: boolean): JobView[] {
+export function toBuiltInViews(withMoney: boolean, isNarrow = false): JobView[] {
   const view = (id: string, name: string, columns: readonly JobSort[], change: Partial<ViewState> = {}) => ({
     id,
     name,
     state: { columns: [...columns], ...LATEST, ...change },
     savedViewId: null,
   });
-  const standard = view('standard', 'All jobs', toStandardColumns(withMoney));
+  const standard = view('standard', 'All jobs', toStandardColumns(withMoney, isNarrow));
   if (!withMoney) return [standard];
   return [
     standard,
     view('cost', 'Cost by category', COST_COLUMNS),
-    view('loss', 'Invoiced, least margin first', toStandardColumns(true), {
+    view('loss', 'Invoiced, least margin first', toStandardColumns(true, isNarrow), {
       sort: 'margin',
       direction: 'asc',
       filter: { status: 'invoiced' },

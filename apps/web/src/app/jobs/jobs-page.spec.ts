@@ -23,6 +23,7 @@ describe('JobsPage', () => {
   let savedViews: SavedView[] = [];
 
   const render = async (may: readonly Permission[], address: Record<string, string> = {}) => {
+    window.matchMedia = jest.fn().mockReturnValue({ matches: false });
     const page = {
       items: [],
       nextCursor: null,

@@ -1,7 +1,7 @@
 import { type Job, type JobDetail } from '@brakeven/contract';
 import { type ChartPalette } from '@brakeven/ui';
 import { toCategorySummary, toCategoryTable, toWeekChartOption, toWeekTable } from './job-chart-options';
-import { toJobColumns, toJobTotals } from './job-columns';
+import { toJobColumns, toJobTotals, toStandardColumns } from './job-columns';
 import { parsePieces, toJobForm, toJobInput } from './job-form';
 import { isJobStatus, toStatusWord } from './job-status';
 import { toLineColumns } from './line-columns';
@@ -58,6 +58,12 @@ describe('toJobTotals', () => {
     expect(totals['total']).toEqual({ value: '5430.40', figure: { figure: 'job.total', status: 'open' } });
     expect(totals['labour']?.value).toBeNull();
     expect(totals['title']?.value).toBe('1 job');
+  });
+
+  it('begin on a telephone with what came of a job, or with its hours', () => {
+    expect(toStandardColumns(true, true).slice(0, 4)).toEqual(['number', 'title', 'margin', 'status']);
+    expect(toStandardColumns(false, true).slice(0, 4)).toEqual(['number', 'title', 'hours', 'status']);
+    expect([...toStandardColumns(true, true)].sort()).toEqual([...toStandardColumns(true)].sort());
   });
 
   it('say of how many jobs the variance is', () => {

@@ -1,8 +1,9 @@
-import { DestroyRef, DOCUMENT, inject } from '@angular/core';
+import { DestroyRef, inject } from '@angular/core';
 import { takeUntilDestroyed } from '@angular/core/rxjs-interop';
 import { Router } from '@angular/router';
 import { type GridOrder } from '@brakeven/ui';
 import { debounceTime, Subject } from 'rxjs';
+import { injectIsNarrow } from './is-narrow';
 
 /** Quiet time after the last keystroke before it is searched, in ms. */
 const QUIET_MS = 300;
@@ -29,7 +30,7 @@ export function injectGridAddress(): GridAddress {
     .pipe(debounceTime(QUIET_MS), takeUntilDestroyed(destroyed))
     .subscribe((text) => ask({ search: text.trim() || null }));
   return {
-    isNarrow: inject(DOCUMENT).defaultView?.matchMedia('(width < 640px)').matches ?? false,
+    isNarrow: injectIsNarrow(),
     ask,
     searchFor: (text) => typed.next(text),
     follow: (href) => void router.navigateByUrl(href),
