@@ -64,6 +64,7 @@ export interface MachineJobNet extends Pick<
   jobId: string;
   number: string;
   title: string;
+  isBillable: boolean;
   /** earned − operator's labour − running */
   net: string;
 }
@@ -78,7 +79,7 @@ export async function listMachineJobNets(
   limit: number,
 ): Promise<(MachineJobNet & { jobs: number; allNet: string })[]> {
   const { rows } = await sql<MachineJobNet & { jobs: number; allNet: string }>`
-    select j.job_id, j.number, j.title, n.net, n.jobs, n.all_net,
+    select j.job_id, j.number, j.title, j.is_billable, n.net, n.jobs, n.all_net,
       m.margin, m.margin_is_provisional, m.is_to_invoice
     from (
       select k.*, count(*) over () as jobs, sum(k.net) over () as all_net,

@@ -69,8 +69,9 @@ const MONEY: readonly FigureColumn[] = [
   money('invoiced', 'Invoiced', 'job.invoiced'),
   money('margin', 'Margin', 'job.margin', {
     note: toMarginNote,
-    // What is done and not invoiced yet is work in progress, no loss.
-    isLoss: (job) => job.marginIsProvisional === false && !job.isToInvoice && isBelowZero(job.margin),
+    // What is done and not invoiced yet is work in progress, and the shop's own work a cost: neither is a loss.
+    isLoss: (job) =>
+      job.isBillable && job.marginIsProvisional === false && !job.isToInvoice && isBelowZero(job.margin),
     width: 166,
   }),
   money('workInProgress', 'In progress', 'job.workInProgress', { width: 100 }),

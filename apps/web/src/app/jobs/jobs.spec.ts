@@ -47,6 +47,22 @@ describe('the columns of the jobs grid', () => {
     expect(total?.note?.(job)).toBeNull();
     expect(total?.note?.({ ...job, entriesWithoutRate: 2 })?.severity).toBe('warning');
   });
+
+  it('call a margin a loss once a billable job is done and invoiced', () => {
+    const margin = toJobColumns(true).find(({ id }) => id === 'margin');
+    const done = {
+      ...job,
+      isBillable: true,
+      margin: '-5.00',
+      marginIsProvisional: false,
+      isToInvoice: false,
+    };
+    expect(margin?.isLoss?.(done)).toBe(true);
+    expect(margin?.isLoss?.({ ...done, margin: '5.00' })).toBe(false);
+    expect(margin?.isLoss?.({ ...done, marginIsProvisional: true })).toBe(false);
+    expect(margin?.isLoss?.({ ...done, isToInvoice: true })).toBe(false);
+    expect(margin?.isLoss?.({ ...done, isBillable: false })).toBe(false);
+  });
 });
 
 describe('toJobTotals', () => {

@@ -84,6 +84,11 @@ describe('a machine’s payback', () => {
     expect(margin).toBe(`-${total}`);
     expect((await topJobs())[0]).toMatchObject({ jobId, loss: total });
     await changeJobStatus(owner, { jobId }, { status });
+    const own = (await topJobs()).find((job) => job.number === '900')?.jobId ?? '';
+    const ended = await changeJobStatus(owner, { jobId: own }, { status: 'finished' });
+    expect(ended).toMatchObject({ isBillable: false, margin: `-${ended.total}` });
+    expect((await topJobs()).find((job) => job.jobId === own)?.loss).toBeNull();
+    await changeJobStatus(owner, { jobId: own }, { status: 'open' });
   });
 
   it('names the month’s charge-out rate, and none when it changed within the month', async () => {

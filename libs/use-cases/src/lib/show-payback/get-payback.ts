@@ -140,9 +140,9 @@ async function readJobs(
   };
 }
 
-/** What a job that is done has lost as a whole, however much its machine hours earned. */
-function toLoss({ margin, marginIsProvisional, isToInvoice }: MachineJobNet): string | null {
-  const isLost = !marginIsProvisional && !isToInvoice && D(margin).lt(0);
+/** What a billable job that is done has lost as a whole, however much its machine hours earned. */
+function toLoss({ isBillable, margin, marginIsProvisional, isToInvoice }: MachineJobNet): string | null {
+  const isLost = isBillable && !marginIsProvisional && !isToInvoice && D(margin).lt(0);
   return isLost ? moneyText(toMoney(D(margin).negated())) : null;
 }
 
